@@ -1,0 +1,66 @@
+package solutes
+
+import "dropcrest/atmos"
+
+// Model names a water-activity model.
+type Model int
+
+const (
+	KappaModel     Model = iota // one κ, Petters & Kreidenweis 2007
+	VantHoff                    // mole fraction with a fixed factor i
+	IonInteraction              // Pitzer & Mayorga 1973, joined to concentrated data
+)
+
+// DensityRule names a rule for the volume of the solution.
+type DensityRule int
+
+const (
+	Additive DensityRule = iota // water and dry particle keep their volumes
+	Measured                    // published density polynomials
+)
+
+// TensionRule names a rule for the surface tension of the drop.
+type TensionRule int
+
+const (
+	PureWater    TensionRule = iota // IAPWS R1-76 at the temperature
+	SolutionRule                    // pure water and a linear increment per molality
+	FixedTension                    // Recipe.Tension
+)
+
+// Part is one component of a dry particle.
+type Part struct {
+	Substance Substance
+	Volume    float64 // share of the dry volume, > 0; shares add up to 1
+}
+
+// Recipe is what a particle is made of and how its solution is to be modelled.
+type Recipe struct {
+	Parts          []Part
+	Model          Model
+	Kappa          float64 // KappaModel: one κ for the whole particle; NaN: mixed from the substances
+	VantHoffFactor float64 // VantHoff: NaN: each substance's number of ions
+	DensityRule    DensityRule
+	TensionRule    TensionRule
+	Tension        float64 // N/m, FixedTension only
+	Temperature    float64 // K
+}
+
+// Dissolved is a recipe made ready for one temperature.
+type Dissolved struct {
+	Solution       Solution
+	Swelling       Swelling // nil: additive
+	Tension        Tension
+	Kappa          float64  // volume-mixed κ of the parts or the given one; NaN: not known
+	MolesPerVolume float64  // mol of solute formula units per m³ of dry particle; NaN: not known
+	WaterDensity   float64  // kg/m³
+	DryDensity     float64  // kg/m³; NaN: not known
+	Models         []string // the model in use, part by part, in words
+}
+
+// Molality returns mol of solute per kg of water at u, NaN if not known.
+func (d Dissolved) Molality(u float64) float64 { return d.MolesPerVolume / (u * d.WaterDensity) }
+
+// Dissolve makes a recipe ready. Notes say which part fell back to which model
+// and which range is left; an error says what is missing and cannot be replaced.
+func Dissolve(r Recipe) (Dissolved, []atmos.Note, error) { panic("not written yet") }

@@ -1,0 +1,90 @@
+// Package figure is a picture as data, the frame it is looked at through, and
+// its text form. Coordinates are in the units that are shown (µm, %).
+package figure
+
+// Figure is one picture: dense polylines that contain their extrema, and marks.
+type Figure struct {
+	Key   string // "curve"
+	Title string // "supersaturation, % against wet radius, µm"
+	X, Y  Axis
+	Lines []Line
+	Marks []Mark
+	Notes []string // printed below the picture in figure files
+}
+
+// Axis is one axis of a figure.
+type Axis struct {
+	Says string // "wet radius"
+	Unit string // "µm"
+	Log  bool
+}
+
+// Dash tells lines apart without colour.
+type Dash int
+
+const (
+	Solid  Dash = iota
+	Dashed      // held curves
+	Dotted      // Kelvin-only, Raoult-only
+)
+
+// Line is one polyline; NaN in Y leaves a gap.
+type Line struct {
+	Letter rune   // 'A'..'F' held curves, 0 the current one
+	Says   string // "Kelvin only"
+	Dash   Dash
+	X, Y   []float64
+	Crest  bool // its extrema count when the frame is fitted
+}
+
+// MarkKind says what a mark stands for.
+type MarkKind int
+
+const (
+	CrestMark MarkKind = iota
+	HazeMark
+	PointMark
+)
+
+// Mark is one marked point with an optional label. A mark outside the frame is
+// shown at the edge with its value.
+type Mark struct {
+	Kind   MarkKind
+	Letter rune // as the line it belongs to
+	X, Y   float64
+	Text   string // label: "0.094 %", "haze 0.157 µm at 95.0 %"
+}
+
+// Frame is the part of the plane that is shown. The zero Frame stands for none.
+type Frame struct {
+	XMin, XMax float64
+	YMin, YMax float64 // the lowest and the highest row
+	YStep      float64 // one row
+}
+
+// Style is how a text picture is drawn.
+type Style struct {
+	ASCII bool
+}
+
+// Role says what a cell belongs to; the screen gives each role a colour.
+type Role uint8
+
+const (
+	Blank Role = iota
+	AxisRole
+	TickRole
+	ZeroRole
+	CurrentRole
+	HeldRole
+	OtherRole // Kelvin only, Raoult only
+	CrestRole
+	HazeRole
+	LabelRole
+)
+
+// Cell is one character of a text picture.
+type Cell struct {
+	Rune rune
+	Role Role
+}
