@@ -1,0 +1,2 @@
+// Package command is the command line.
+package command

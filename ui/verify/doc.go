@@ -1,0 +1,2 @@
+// Package verify recomputes published check values.
+package verify
