@@ -1,0 +1,196 @@
+package figure
+
+import "math"
+
+// Shares of the frame's height between which the highest crest may wander
+// before the frame is fitted anew.
+const (
+	lowestCrest  = 0.45
+	highestCrest = 0.90
+)
+
+// Fit returns the frame for f in a picture of h rows: last if it still serves,
+// a new one if not. It reports whether the frame was refitted.
+//
+// A new frame shows all extrema of the lines with Crest set, each of these
+// lines from -0.5 times its crest on, a quarter of the height above the highest
+// crest, and at least one decade of a logarithmic axis. One row is 1, 2, 2.5 or
+// 5 times a power of ten, and zero lies on a row. The height h changes nothing
+// but YStep and the rounding of YMin and YMax to it.
+func Fit(f Figure, last Frame, h int) (Frame, bool) {
+	rows := pictureRows(h)
+	n := needsOf(f)
+	fresh := n.frame(rows)
+	if last == fresh || (last.serves() && last.rows() == rows && n.servedBy(last, fresh)) {
+		return last, false
+	}
+	return fresh, true
+}
+
+// pictureRows is the number of rows left for the lines in a picture of h rows.
+// Two is the least in which a row can have a unit.
+func pictureRows(h int) int { return max(h-2, 2) }
+
+// serves reports whether the frame can be drawn at all.
+func (fr Frame) serves() bool {
+	return fr.XMin < fr.XMax && fr.YMin < fr.YMax && fr.YStep > 0 &&
+		usable(fr.XMin) && usable(fr.XMax) && usable(fr.YMin) && usable(fr.YMax)
+}
+
+// rows is the number of rows the frame was made for.
+func (fr Frame) rows() int {
+	n := math.Round((fr.YMax-fr.YMin)/fr.YStep) + 1
+	if !(n < 1e6) {
+		return 0
+	}
+	return int(n)
+}
+
+// withRows is the frame for another number of rows: a round unit, zero on a
+// row, and nothing of the old frame lost.
+func (fr Frame) withRows(rows int) Frame {
+	if fr.rows() == rows {
+		return fr
+	}
+	fr.YMin, fr.YMax, fr.YStep = roundRows(fr.YMin, fr.YMax, rows)
+	return fr
+}
+
+// needs is what a figure asks of its frame.
+type needs struct {
+	log         bool
+	low, high   float64 // all extrema, each line from -0.5 times its crest
+	deepest     float64 // the lowest that an old frame must still show
+	crest       float64 // the highest crest
+	entry, left float64 // where the first line comes in; where a new frame begins
+	last        float64 // the last extremum
+	end         float64 // the end of the lines
+}
+
+// needsOf collects what the lines with Crest set need; a figure without such
+// lines needs room for everything.
+func needsOf(f Figure) needs {
+	n := needs{log: f.X.Log}
+	found := false
+	for _, l := range f.Lines {
+		if !l.Crest {
+			continue
+		}
+		if s, ok := shapeOf(l, f.X.Log); ok {
+			n.add(s, !found)
+			found = true
+		}
+	}
+	if !found {
+		return needsOfAll(f)
+	}
+	n.left = n.entry
+	if !n.log {
+		n.left -= 0.05 * (n.last - n.entry)
+		return n
+	}
+	n.left /= 1.3
+	for _, m := range f.Marks { // a haze mark near the entry gets its true place
+		if x := m.X / 1.15; m.X > 0 && x > n.entry/2.5 {
+			n.left = math.Min(n.left, x)
+		}
+	}
+	return n
+}
+
+// add widens the needs by one line.
+func (n *needs) add(s shape, first bool) {
+	if first {
+		n.low, n.high, n.deepest, n.crest = s.low, s.crest, s.bottom, s.crest
+		n.entry, n.last, n.end = s.entry, s.last, s.end
+	}
+	n.low = math.Min(n.low, math.Min(s.low, s.bottom))
+	n.high = math.Max(n.high, s.crest)
+	n.crest = n.high
+	n.deepest = math.Min(n.deepest, math.Min(s.bottom, s.low/2))
+	n.entry = math.Min(n.entry, s.entry)
+	n.last = math.Max(n.last, s.last)
+	n.end = math.Max(n.end, s.end)
+}
+
+// needsOfAll is the room for every usable point and mark.
+func needsOfAll(f Figure) needs {
+	n := needs{log: f.X.Log}
+	first := true
+	add := func(x, y float64) {
+		if !usable(y) || !usableX(x, f.X.Log) {
+			return
+		}
+		if first {
+			n.low, n.high, n.left, n.end = y, y, x, x
+			first = false
+		}
+		n.low, n.high = math.Min(n.low, y), math.Max(n.high, y)
+		n.left, n.end = math.Min(n.left, x), math.Max(n.end, x)
+	}
+	for _, l := range f.Lines {
+		for i := range min(len(l.X), len(l.Y)) {
+			add(l.X[i], l.Y[i])
+		}
+	}
+	if first {
+		for _, m := range f.Marks {
+			add(m.X, m.Y)
+		}
+	}
+	if first {
+		n.left, n.end = 0.1, 1
+		n.high = 1
+	}
+	n.crest, n.deepest, n.entry, n.last = n.high, n.low, n.left, n.end
+	return n
+}
+
+// frame is the new frame of rows rows.
+func (n needs) frame(rows int) Frame {
+	low, high := math.Min(n.low, 0), math.Max(n.high, 0)
+	if high-low < 1e-90 {
+		low, high = -0.5, 1
+	}
+	if n.high > 0 {
+		high += 0.25 * (high - low)
+	}
+	var fr Frame
+	fr.YMin, fr.YMax, fr.YStep = roundRows(low, high, rows)
+	fr.XMin, fr.XMax = n.across()
+	return fr
+}
+
+// across is the width of a new frame: from left to some way behind the last
+// extremum, but not beyond the end of the lines.
+func (n needs) across() (lo, hi float64) {
+	lo = n.left
+	if !n.log {
+		hi = math.Min(n.end, n.last+1.5*(n.last-n.entry))
+		if hi-lo <= 1e-9*math.Max(math.Abs(lo), math.Abs(hi)) {
+			room := math.Max(1, math.Abs(lo)) / 2
+			return lo - room, lo + room
+		}
+		return lo, hi
+	}
+	hi = math.Min(n.end, 5*n.last)
+	if short := 10 * lo / hi; short > 1 {
+		lo, hi = lo/math.Sqrt(short), hi*math.Sqrt(short)
+	}
+	return twoDigits(lo, math.Floor), twoDigits(hi, math.Ceil)
+}
+
+// servedBy reports whether an old frame still shows what is needed without
+// being much too wide.
+func (n needs) servedBy(fr, fresh Frame) bool {
+	share := (n.crest - fr.YMin) / (fr.YMax - fr.YMin)
+	if share < lowestCrest || share > highestCrest || n.deepest < fr.YMin {
+		return false
+	}
+	tail := math.Min(fresh.XMax, 2*n.last)
+	if !n.log {
+		return fr.XMin <= n.entry && fr.XMax >= n.last && fr.XMax-fr.XMin <= 2.5*(fresh.XMax-fresh.XMin)
+	}
+	return fr.XMin > 0 && fr.XMin <= n.entry && fr.XMax >= tail &&
+		math.Log(fr.XMax/fr.XMin) <= 1.6*math.Log(fresh.XMax/fresh.XMin)
+}

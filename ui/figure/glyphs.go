@@ -1,0 +1,51 @@
+package figure
+
+import "github.com/guptarohit/asciigraph"
+
+// glyphSet is every character a text picture is made of. Each is one cell wide.
+type glyphSet struct {
+	bar, barLabelled    rune // vertical axis
+	corner, floor, tick rune // horizontal axis
+	zero                rune
+	crest, haze, point  rune
+	up, down            rune // marks beyond the upper and lower edge
+	left, right         rune
+	lines               [3]asciigraph.CharSet // by Dash
+}
+
+var boxGlyphs = glyphSet{
+	bar: '│', barLabelled: '┤', corner: '└', floor: '─', tick: '┬', zero: '╌',
+	crest: '◆', haze: '▼', point: '●', up: '▲', down: '▼', left: '←', right: '→',
+	lines: [3]asciigraph.CharSet{
+		Solid: {
+			Horizontal: "─", VerticalLine: "│", ArcDownRight: "╭", ArcDownLeft: "╮", ArcUpRight: "╰", ArcUpLeft: "╯",
+			EndCap: "─", StartCap: " ", UpRight: "└", DownHorizontal: "┬",
+		},
+		Dashed: {
+			Horizontal: "╌", VerticalLine: "╎", ArcDownRight: "╭", ArcDownLeft: "╮", ArcUpRight: "╰", ArcUpLeft: "╯",
+			EndCap: "╌", StartCap: " ", UpRight: "└", DownHorizontal: "┬",
+		},
+		Dotted: dots("·"),
+	},
+}
+
+var asciiGlyphs = glyphSet{
+	bar: '|', barLabelled: '+', corner: '+', floor: '-', tick: '+', zero: '-',
+	crest: '#', haze: 'v', point: 'o', up: '^', down: 'v', left: '<', right: '>',
+	lines: [3]asciigraph.CharSet{
+		Solid: dots("*"),
+		Dashed: {
+			Horizontal: "-", VerticalLine: "|", ArcDownRight: ".", ArcDownLeft: ".", ArcUpRight: "'", ArcUpLeft: "'",
+			EndCap: "-", StartCap: " ", UpRight: "+", DownHorizontal: "+",
+		},
+		Dotted: dots("."),
+	},
+}
+
+// dots is a character set of one character. The cell before a line's first
+// point stays blank.
+func dots(char string) asciigraph.CharSet {
+	set := asciigraph.CreateCharSet(char)
+	set.StartCap = " "
+	return set
+}

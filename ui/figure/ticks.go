@@ -1,0 +1,170 @@
+package figure
+
+import (
+	"math"
+	"strconv"
+	"strings"
+)
+
+// scaled is m times ten to the power of n, as near as a float64 comes to it:
+// 5/100 is the number that prints as 0.05, 5*0.01 need not be.
+func scaled(m float64, n int) float64 {
+	if n < 0 {
+		return m / math.Pow10(-n)
+	}
+	return m * math.Pow10(n)
+}
+
+// roundUp is the smallest of the given leading digits times a power of ten that
+// is not below v. The digits end with 10.
+func roundUp(v float64, digits ...float64) float64 {
+	n := int(math.Floor(math.Log10(v)))
+	for _, m := range digits {
+		if u := scaled(m, n); u >= v*(1-1e-9) {
+			return u
+		}
+	}
+	return scaled(10, n)
+}
+
+// roundRows lays rows rows over low..high: one row is a round unit and zero
+// lies on a row. Low and high are widened to include zero.
+func roundRows(low, high float64, rows int) (lo, hi, step float64) {
+	low, high = math.Min(low, 0), math.Max(high, 0)
+	if !(high-low > 1e-90) {
+		high = 1
+	}
+	steps := rows - 1
+	step = (high - low) / float64(steps)
+	for range 6 {
+		step = roundUp(step, 1, 2, 2.5, 5, 10)
+		first := int(math.Floor(low/step + 1e-9))
+		if float64(first+steps) >= high/step-1e-9 {
+			return tidy(float64(first)*step, step), tidy(float64(first+steps)*step, step), step
+		}
+		step *= 1.01
+	}
+	// Two rows cannot show both signs: show the greater.
+	step = roundUp(math.Max(high, -low)/float64(steps), 1, 2, 2.5, 5, 10)
+	if high >= -low {
+		return 0, tidy(float64(steps)*step, step), step
+	}
+	return tidy(-float64(steps)*step, step), 0, step
+}
+
+// twoDigits rounds a positive v to two significant digits by floor or ceil.
+func twoDigits(v float64, round func(float64) float64) float64 {
+	n := int(math.Floor(math.Log10(v))) - 1
+	m := scaled(v, -n)
+	if near := math.Round(m); math.Abs(m-near) < 1e-9 {
+		return scaled(near, n)
+	}
+	return scaled(round(m), n)
+}
+
+// Ticks returns round values between lo and hi, at most most of them: 1, 2, 5
+// times powers of ten on a logarithmic axis, whole multiples of such a number
+// on a linear one and on a logarithmic one too short for three of them.
+func Ticks(lo, hi float64, log bool, most int) []float64 {
+	if !(lo < hi) || !usable(lo) || !usable(hi) || most < 1 || (log && lo <= 0) {
+		return nil
+	}
+	if log {
+		if at := decadeTicks(lo, hi, most); len(at) >= 3 || hi/lo >= 10 {
+			return at
+		}
+	}
+	step := roundUp((hi-lo)/float64(most), 1, 2, 5, 10)
+	var at []float64
+	for k := math.Ceil(lo/step - 1e-9); k*step <= hi+1e-9*step && len(at) < most; k++ {
+		at = append(at, tidy(k*step, step))
+	}
+	return at
+}
+
+// decadeTicks takes 1, 2 and 5 of each decade, or the powers of ten alone, or
+// every second, third … power, whatever is the first that does not exceed most.
+func decadeTicks(lo, hi float64, most int) []float64 {
+	first, last := int(math.Floor(math.Log10(lo))), int(math.Ceil(math.Log10(hi)))
+	take := func(every int, digits ...float64) (at []float64) {
+		for n := first; n <= last; n++ {
+			for _, m := range digits {
+				v := scaled(m, n)
+				if n%every == 0 && v >= lo*(1-1e-9) && v <= hi*(1+1e-9) {
+					at = append(at, v)
+				}
+			}
+		}
+		return at
+	}
+	if at := take(1, 1, 2, 5); len(at) <= most {
+		return at
+	}
+	for every := 1; ; every++ {
+		if at := take(every, 1); len(at) <= most {
+			return at
+		}
+	}
+}
+
+// tidy rounds a multiple of step to the digits of step, so that 3*0.1 is 0.3.
+func tidy(v, step float64) float64 {
+	n := int(math.Floor(math.Log10(step)))
+	r := scaled(math.Round(scaled(v, 2-n)), n-2)
+	if r == 0 {
+		return 0 // not -0
+	}
+	return r
+}
+
+// TickLabel writes a round value: plainly where that is short, with a power of
+// ten where it is not.
+func TickLabel(v float64) string {
+	if a := math.Abs(v); v != 0 && (a < 0.00099 || a >= 99999.5) {
+		return short(strconv.FormatFloat(v, 'e', -1, 64))
+	}
+	return strconv.FormatFloat(v, 'f', -1, 64)
+}
+
+// short takes the padding out of an exponent: 2e-09 is 2e-9, 1e+06 is 1e6.
+func short(s string) string {
+	mantissa, power, ok := strings.Cut(s, "e")
+	n, err := strconv.Atoi(power)
+	if !ok || err != nil {
+		return s
+	}
+	return mantissa + "e" + strconv.Itoa(n)
+}
+
+// rowLabels writes the round values beside the rows, "" beside the others, and
+// says how wide the widest is. Row 0 is the lowest.
+func rowLabels(fr Frame, rows int) (labels []string, widest int) {
+	labels = make([]string, rows)
+	first := int(math.Round(fr.YMin / fr.YStep))
+	every := 2
+	// A unit of 2 has no round double: 10 is the next round number, unless so
+	// few rows are there that each can have its label.
+	if n := int(math.Floor(math.Log10(fr.YStep) + 1e-9)); math.Abs(scaled(fr.YStep, -n)-2) < 1e-6 {
+		every = 5
+		if rows < 10 {
+			every = 1
+		}
+	}
+	spacing := float64(every) * fr.YStep
+	places := 0
+	for places < 6 && math.Abs(spacing*math.Pow10(places)-math.Round(spacing*math.Pow10(places))) > 1e-6 {
+		places++
+	}
+	plainly := spacing > 0.99e-4 && math.Max(math.Abs(fr.YMin), fr.YMax) < 99999.5
+	for i := range labels {
+		if (first+i)%every != 0 {
+			continue
+		}
+		v := tidy(float64(first+i)*fr.YStep, fr.YStep)
+		if labels[i] = strconv.FormatFloat(v, 'f', places, 64); !plainly && v != 0 {
+			labels[i] = short(strconv.FormatFloat(v, 'e', -1, 64))
+		}
+		widest = max(widest, len(labels[i]))
+	}
+	return labels, widest
+}
