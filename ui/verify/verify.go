@@ -157,13 +157,19 @@ func (r *reader) row(l line) error {
 		Quantity: l.text("quantity"), Condition: l.text("condition"),
 		Computed: computed, Published: published, Difference: computed - published,
 		Tolerance: tolerance, Unit: l.text("unit"), Source: l.text("source"),
-		Seen: l.text("seen"), Remark: l.text("remark"), Verdict: Fails,
-	}
-	if math.Abs(row.Difference) <= tolerance {
-		row.Verdict = Agrees
+		Seen: l.text("seen"), Remark: l.text("remark"),
+		Verdict: verdict(computed-published, tolerance),
 	}
 	r.rows = append(r.rows, row)
 	return nil
+}
+
+// verdict: what is not within the tolerance fails, NaN too.
+func verdict(difference, tolerance float64) Verdict {
+	if math.Abs(difference) <= tolerance {
+		return Agrees
+	}
+	return Fails
 }
 
 // identity checks what names the row: nothing empty, nothing twice.
@@ -177,7 +183,7 @@ func (r *reader) identity(l line) error {
 		return l.at("seen", fmt.Errorf("%q, should be read or memory", s))
 	}
 	key := [3]string{l.text("check"), l.text("arguments"), l.text("source")}
-	here := fmt.Sprintf("%s:%d", l.file, l.number0())
+	here := fmt.Sprintf("%s:%d", l.file, l.lineNumber())
 	if before, twice := r.seen[key]; twice {
 		return l.at("check", fmt.Errorf("the same check, arguments and source stand at %s", before))
 	}
@@ -227,8 +233,8 @@ func (l line) index(column string) int {
 
 func (l line) text(column string) string { return strings.TrimSpace(l.record[l.index(column)]) }
 
-// number0 is the line number of the record's first field.
-func (l line) number0() int {
+// lineNumber is the line number of the record's first field.
+func (l line) lineNumber() int {
 	n, _ := l.in.FieldPos(0)
 	return n
 }
