@@ -160,6 +160,20 @@ func TestInversionOfNonsense(t *testing.T) {
 	}
 }
 
+// TestSlipFreeIsConvex proves what the inversion rests on: the derivative of
+// d/C(d), which is (1 + slope)/C, rises with d from 0 to 1.
+func TestSlipFreeIsConvex(t *testing.T) {
+	last := 0.0
+	for kn := 1e6; kn > 1e-6; kn /= 1.05 {
+		c, slope := slip(kn)
+		derivative := (1 + slope) / c
+		if !(derivative > last && derivative < 1) {
+			t.Errorf("at Kn %v: derivative %v after %v", kn, derivative, last)
+		}
+		last = derivative
+	}
+}
+
 func TestDragStepsEnough(t *testing.T) {
 	// The bracket closes and the result is a root over 24 decades.
 	for _, lambda := range []float64{1e-9, 6.73e-8, 1e-3} {

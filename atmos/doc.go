@@ -5,5 +5,17 @@
 // whether an argument is inside it, and outside it the formula is evaluated
 // all the same, so that the caller can say "extrapolated".
 //
-// All functions are pure and safe for concurrent use.
+// Liquid water: WaterDensity, WaterMolarVolume, SurfaceTension, VapourPressure,
+// Compressibility, LatentHeat. Air: VapourDiffusivity, AirConductivity,
+// AirViscosity, MeanFreePath. Particles in air: SlipCorrection, Mobility and
+// its inverse DiameterFromMobility, VolumeEquivalent and its inverse
+// MobilityDiameter. Relations lists ranges, qualities and sources, WaterNotes
+// says what a result must say about its temperature, Constants lists the
+// constants.
+//
+// The stated accuracies are deviations from reference equations that share no
+// coefficient with the formula used; the tests of this package recompute them.
+//
+// All functions are pure and safe for concurrent use. The Range variables are
+// not meant to be changed.
 package atmos

@@ -9,7 +9,7 @@ import "fmt"
 // "vapour-pressure-extrapolated", the input is "temperature".
 func WaterNotes(T float64) []Note {
 	var notes []Note
-	for _, r := range waterRelations()[:3] {
+	for _, r := range dropRelations() {
 		if note, outside := r.Note(T); outside {
 			notes = append(notes, note)
 		}

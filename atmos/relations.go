@@ -18,7 +18,10 @@ func Relations() []Relation {
 	return append(waterRelations(), airRelations()...)
 }
 
-func waterRelations() []Relation {
+func waterRelations() []Relation { return append(dropRelations(), otherWaterRelations()...) }
+
+// dropRelations are those that every equilibrium drop uses.
+func dropRelations() []Relation {
 	return []Relation{
 		{"water-density", "density of liquid water", "kg/m3", WaterDensityRange,
 			"within 0.0034 kg/m3 of CIPM at 0 to 40 °C; extrapolated below 0 °C, within 0.011 % of IAPWS G12-15 to -38 °C",
@@ -29,6 +32,11 @@ func waterRelations() []Relation {
 		{"vapour-pressure", "saturation vapour pressure over liquid water", "Pa", VapourPressureRange,
 			"within 0.0086 % of IAPWS-95 at 2 to 50 °C; 0.03 % high at -20 °C, 0.18 % at -40 °C",
 			"Murphy and Koop 2005, eq. 10", withoutPressure(VapourPressure)},
+	}
+}
+
+func otherWaterRelations() []Relation {
+	return []Relation{
 		{"compressibility", "isothermal compressibility of water", "1/Pa", CompressibilityRange,
 			"within 5e-5 (relative) of IAPWS SR6-08 at 0 to 50 °C; 0.14 % low at -20 °C, 0.53 % at -30 °C",
 			"Kell 1975", withoutPressure(Compressibility)},
