@@ -59,6 +59,7 @@ func (fr Frame) withRows(rows int) Frame {
 // needs is what a figure asks of its frame.
 type needs struct {
 	log         bool
+	crested     bool    // there are lines with Crest set
 	low, high   float64 // all extrema, each line from -0.5 times its crest
 	deepest     float64 // the lowest that an old frame must still show
 	crest       float64 // the highest crest
@@ -84,6 +85,7 @@ func needsOf(f Figure) needs {
 	if !found {
 		return needsOfAll(f)
 	}
+	n.crested = true
 	n.left = n.entry
 	if !n.log {
 		n.left -= 0.05 * (n.last - n.entry)
@@ -107,7 +109,7 @@ func (n *needs) add(s shape, first bool) {
 	n.low = math.Min(n.low, math.Min(s.low, s.bottom))
 	n.high = math.Max(n.high, s.crest)
 	n.crest = n.high
-	n.deepest = math.Min(n.deepest, math.Min(s.bottom, s.low/2))
+	n.deepest = math.Min(n.deepest, math.Min(s.bottom, 0.4*s.low))
 	n.entry = math.Min(n.entry, s.entry)
 	n.last = math.Max(n.last, s.last)
 	n.end = math.Max(n.end, s.end)
@@ -152,7 +154,7 @@ func (n needs) frame(rows int) Frame {
 	if high-low < 1e-90 {
 		low, high = -0.5, 1
 	}
-	if n.high > 0 {
+	if n.high > 0 && n.crested {
 		high += 0.25 * (high - low)
 	}
 	var fr Frame
@@ -166,14 +168,18 @@ func (n needs) frame(rows int) Frame {
 func (n needs) across() (lo, hi float64) {
 	lo = n.left
 	if !n.log {
-		hi = math.Min(n.end, n.last+1.5*(n.last-n.entry))
+		if hi = n.end; n.crested {
+			hi = math.Min(n.end, n.last+1.5*(n.last-n.entry))
+		}
 		if hi-lo <= 1e-9*math.Max(math.Abs(lo), math.Abs(hi)) {
 			room := math.Max(1, math.Abs(lo)) / 2
 			return lo - room, lo + room
 		}
 		return lo, hi
 	}
-	hi = math.Min(n.end, 5*n.last)
+	if hi = n.end; n.crested {
+		hi = math.Min(n.end, 5*n.last)
+	}
 	if short := 10 * lo / hi; short > 1 {
 		lo, hi = lo/math.Sqrt(short), hi*math.Sqrt(short)
 	}
@@ -183,6 +189,10 @@ func (n needs) across() (lo, hi float64) {
 // servedBy reports whether an old frame still shows what is needed without
 // being much too wide.
 func (n needs) servedBy(fr, fresh Frame) bool {
+	if !n.crested {
+		return n.low >= fr.YMin && n.high <= fr.YMax && fr.YMax-fr.YMin <= 2.5*(n.high-math.Min(n.low, 0)) &&
+			n.left >= fr.XMin && n.end <= fr.XMax && fr.XMax-fr.XMin <= 2.5*(n.end-n.left)
+	}
 	share := (n.crest - fr.YMin) / (fr.YMax - fr.YMin)
 	if share < lowestCrest || share > highestCrest || n.deepest < fr.YMin {
 		return false

@@ -42,6 +42,9 @@ var asciiGlyphs = glyphSet{
 	},
 }
 
+// lineGlyphs are the characters of the lines in both sets.
+const lineGlyphs = "─│╭╮╰╯╌╎·*-|.'"
+
 // dots is a character set of one character. The cell before a line's first
 // point stays blank.
 func dots(char string) asciigraph.CharSet {

@@ -217,6 +217,7 @@ func (c *canvas) draw(p path, dash Dash, layer []rune) {
 // the line goes on beyond, it does not run along the edge.
 func (c *canvas) openEdges(p path, dash Dash, layer []rune) {
 	vertical, _ := utf8.DecodeRuneInString(c.glyphs.lines[dash].VerticalLine)
+	flat, _ := utf8.DecodeRuneInString(c.glyphs.lines[dash].Horizontal)
 	for i, r := range p {
 		if r == math.Trunc(r) || math.IsNaN(r) {
 			continue
@@ -228,8 +229,11 @@ func (c *canvas) openEdges(p path, dash Dash, layer []rune) {
 			layer[edge*c.cols+i-1] = vertical
 		}
 		layer[edge*c.cols+i] = 0
-		if enters && math.Round(p[i+1]) != float64(edge) {
-			layer[edge*c.cols+i] = vertical
+		switch next := edge*c.cols + i + 1; {
+		case enters && math.Round(p[i+1]) != float64(edge):
+			layer[next-1] = vertical
+		case enters && layer[next] != flat:
+			layer[next] = vertical
 		}
 	}
 }

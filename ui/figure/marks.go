@@ -1,6 +1,9 @@
 package figure
 
-import "math"
+import (
+	"math"
+	"strings"
+)
 
 // sign is a mark on its cell.
 type sign struct {
@@ -81,19 +84,27 @@ func (c *canvas) sign(m Mark, f Figure, paths []path) (sign, bool) {
 		}
 	}
 	cell := c.at(s.col, s.row)
-	if taken(cell) { // another mark is there: keep it, go one to the side
-		for _, d := range []int{1, -1, 2, -2} {
-			if next := c.at(s.col+d, s.row); next != nil && !taken(next) {
-				s.col, cell = s.col+d, next
-				break
-			}
+	if taken(cell) { // a point there already says what this one would
+		if m.Kind == PointMark {
+			return s, false
 		}
-		if taken(cell) {
+		if cell = c.beside(&s); cell == nil {
 			return s, false
 		}
 	}
 	*cell = Cell{glyph, s.role}
 	return s, true
+}
+
+// beside moves a sign whose cell is taken to the nearest free one on its row.
+func (c *canvas) beside(s *sign) *Cell {
+	for _, d := range []int{1, -1, 2, -2} {
+		if cell := c.at(s.col+d, s.row); cell != nil && !taken(cell) {
+			s.col += d
+			return cell
+		}
+	}
+	return nil
 }
 
 func pathOf(letter rune, lines []Line, paths []path) path {
@@ -111,7 +122,7 @@ func taken(cell *Cell) bool {
 	case CrestRole, HazeRole, LabelRole:
 		return true
 	case CurrentRole, HeldRole:
-		return cell.Rune == '●' || cell.Rune == 'o' || 'A' <= cell.Rune && cell.Rune <= 'Z'
+		return !strings.ContainsRune(lineGlyphs, cell.Rune)
 	}
 	return false
 }

@@ -28,7 +28,7 @@ func Words(f Figure) []string {
 			continue
 		}
 		says := edgeText(m, f)
-		if m.Kind != HazeMark || m.Text == "" {
+		if m.Kind != HazeMark {
 			says += " at " + amount(m.X, f.X.Unit)
 		}
 		if m.Letter != 0 {
