@@ -13,8 +13,8 @@
 // says what a result must say about its temperature, Constants lists the
 // constants.
 //
-// The stated accuracies are deviations from reference equations that share no
-// coefficient with the formula used; the tests of this package recompute them.
+// Where an independent reference equation is known, the stated accuracy is the
+// deviation from it, and the tests of this package recompute it.
 //
 // All functions are pure and safe for concurrent use. The Range variables are
 // not meant to be changed.
