@@ -21,7 +21,7 @@ func Fit(f Figure, last Frame, h int) (Frame, bool) {
 	rows := pictureRows(h)
 	n := needsOf(f)
 	fresh := n.frame(rows)
-	if last == fresh || (last.serves() && last.rows() == rows && n.servedBy(last, fresh)) {
+	if last == fresh || (last.Serves() && last.rows() == rows && n.servedBy(last, fresh)) {
 		return last, false
 	}
 	return fresh, true
@@ -31,8 +31,8 @@ func Fit(f Figure, last Frame, h int) (Frame, bool) {
 // Two is the least in which a row can have a unit.
 func pictureRows(h int) int { return max(h-2, 2) }
 
-// serves reports whether the frame can be drawn at all.
-func (fr Frame) serves() bool {
+// Serves reports whether a picture can be drawn through the frame.
+func (fr Frame) Serves() bool {
 	return fr.XMin < fr.XMax && fr.YMin < fr.YMax && fr.YStep > 0 &&
 		usable(fr.XMin) && usable(fr.XMax) && usable(fr.YMin) && usable(fr.YMax)
 }

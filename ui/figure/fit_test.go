@@ -183,7 +183,7 @@ func TestFitOfOddFigures(t *testing.T) {
 	} {
 		for h := range 30 {
 			fr, _ := Fit(f, Frame{}, h)
-			if !fr.serves() || fr.rows() != pictureRows(h) || !isRound(fr.YStep, 1, 2, 2.5, 5) {
+			if !fr.Serves() || fr.rows() != pictureRows(h) || !isRound(fr.YStep, 1, 2, 2.5, 5) {
 				t.Errorf("%s, h %d: %+v", name, h, fr)
 			}
 			if again, refitted := Fit(f, fr, h); refitted || again != fr {

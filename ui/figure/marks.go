@@ -31,7 +31,7 @@ func (c *canvas) marks(f Figure, paths []path) {
 		}
 	}
 	for i, l := range f.Lines {
-		if l.Letter != 0 && !crestMarked(f.Marks, l.Letter) {
+		if l.Letter != 0 && !c.crestMarked(f.Marks, l.Letter) {
 			c.letter(l.Letter, c.top(paths[i]), paths[i])
 		}
 	}
@@ -40,13 +40,20 @@ func (c *canvas) marks(f Figure, paths []path) {
 	}
 }
 
-func crestMarked(marks []Mark, letter rune) bool {
+// crestMarked reports whether a mark writes the letter of a line at its crest.
+func (c *canvas) crestMarked(marks []Mark, letter rune) bool {
 	for _, m := range marks {
-		if m.Kind == CrestMark && m.Letter == letter && usable(m.X) && usable(m.Y) {
+		if m.Kind == CrestMark && m.Letter == letter && usable(m.X) && usable(m.Y) && c.inside(c.col(m.X), c.row(m.Y)) {
 			return true
 		}
 	}
 	return false
+}
+
+// inside reports whether a place lies in the picture.
+func (c *canvas) inside(col, row float64) bool {
+	col, row = math.Round(col), math.Round(row)
+	return col >= 0 && row >= 0 && col < float64(c.cols) && row < float64(c.rows)
 }
 
 // sign puts a mark's glyph on its cell, at the edge for a mark outside.
@@ -73,7 +80,7 @@ func (c *canvas) sign(m Mark, f Figure, paths []path) (sign, bool) {
 	s.col = int(math.Max(0, math.Min(col, float64(c.cols-1))))
 	s.row = int(math.Max(0, math.Min(row, float64(c.rows-1))))
 	if s.must {
-		s.text = c.text(edgeText(m, f))
+		s.text = c.text(f.Says(m))
 	}
 	if m.Letter != 0 {
 		if s.role = HeldRole; m.Kind == CrestMark && !s.must {

@@ -18,7 +18,7 @@ func Text(f Figure, fr Frame, w, h int, st Style) [][]Cell {
 		return nil
 	}
 	rows := pictureRows(h)
-	if !fr.serves() || (f.X.Log && fr.XMin <= 0) {
+	if !fr.Serves() || (f.X.Log && fr.XMin <= 0) {
 		fr, _ = Fit(f, Frame{}, h)
 	}
 	fr = fr.withRows(rows)

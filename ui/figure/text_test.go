@@ -145,7 +145,7 @@ func TestEveryFigureAtEverySize(t *testing.T) {
 		w, h := 10+r.IntN(191), 3+r.IntN(58)
 		st := Style{ASCII: r.IntN(2) == 0}
 		fr, _ := Fit(f, last, h)
-		if !fr.serves() || fr.rows() != pictureRows(h) {
+		if !fr.Serves() || fr.rows() != pictureRows(h) {
 			t.Fatalf("h %d: frame %+v cannot be drawn", h, fr)
 		}
 		cells := Text(f, fr, w, h, st)

@@ -27,7 +27,7 @@ func Words(f Figure) []string {
 		if !usable(m.X) || !usable(m.Y) {
 			continue
 		}
-		says := edgeText(m, f)
+		says := f.Says(m)
 		if m.Kind != HazeMark {
 			says += " at " + amount(m.X, f.X.Unit)
 		}
@@ -39,9 +39,9 @@ func Words(f Figure) []string {
 	return out
 }
 
-// edgeText is a mark's label with what it marks, for places where its glyph
-// does not say it.
-func edgeText(m Mark, f Figure) string {
+// Says is a mark's label with what it marks, for places where its glyph does
+// not say it.
+func (f Figure) Says(m Mark) string {
 	text := m.Text
 	if text == "" {
 		text = amount(m.Y, f.Y.Unit)
