@@ -21,10 +21,17 @@ func Fit(f Figure, last Frame, h int) (Frame, bool) {
 	rows := pictureRows(h)
 	n := needsOf(f)
 	fresh := n.frame(rows)
-	if last == fresh || (last.Serves() && last.rows() == rows && n.servedBy(last, fresh)) {
-		return last, false
+	if !last.Serves() || !n.keepsAcross(last, fresh) {
+		return fresh, last != fresh
 	}
-	return fresh, true
+	if last.rows() != rows { // another height is no reason to shift sideways
+		fresh.XMin, fresh.XMax = last.XMin, last.XMax
+		return fresh, true
+	}
+	if !n.keepsUpright(last, fresh) {
+		return fresh, true
+	}
+	return last, false
 }
 
 // pictureRows is the number of rows left for the lines in a picture of h rows.
@@ -186,21 +193,34 @@ func (n needs) across() (lo, hi float64) {
 	return twoDigits(lo, math.Floor), twoDigits(hi, math.Ceil)
 }
 
-// servedBy reports whether an old frame still shows what is needed without
-// being much too wide.
-func (n needs) servedBy(fr, fresh Frame) bool {
+// keepsUpright reports whether the height of an old frame still serves.
+func (n needs) keepsUpright(fr, fresh Frame) bool {
+	if fr.YMin == fresh.YMin && fr.YMax == fresh.YMax {
+		return true
+	}
 	if !n.crested {
-		return n.low >= fr.YMin && n.high <= fr.YMax && fr.YMax-fr.YMin <= 2.5*(n.high-math.Min(n.low, 0)) &&
-			n.left >= fr.XMin && n.end <= fr.XMax && fr.XMax-fr.XMin <= 2.5*(n.end-n.left)
+		return n.low >= fr.YMin && n.high <= fr.YMax && fr.YMax-fr.YMin <= 2.5*(n.high-math.Min(n.low, 0))
 	}
 	share := (n.crest - fr.YMin) / (fr.YMax - fr.YMin)
-	if share < lowestCrest || share > highestCrest || n.deepest < fr.YMin {
+	return share >= lowestCrest && share <= highestCrest && n.deepest >= fr.YMin
+}
+
+// keepsAcross reports whether the width of an old frame still shows entry and
+// tail without being much too wide.
+func (n needs) keepsAcross(fr, fresh Frame) bool {
+	if fr.XMin == fresh.XMin && fr.XMax == fresh.XMax {
+		return true
+	}
+	from, to := n.entry, n.last
+	if !n.crested {
+		from, to = n.left, n.end
+	}
+	if fr.XMin > from || fr.XMax < to {
 		return false
 	}
-	tail := math.Min(fresh.XMax, 2*n.last)
 	if !n.log {
-		return fr.XMin <= n.entry && fr.XMax >= n.last && fr.XMax-fr.XMin <= 2.5*(fresh.XMax-fresh.XMin)
+		return fr.XMax-fr.XMin <= 2.5*(fresh.XMax-fresh.XMin)
 	}
-	return fr.XMin > 0 && fr.XMin <= n.entry && fr.XMax >= tail &&
+	return fr.XMin > 0 && fr.XMax >= math.Min(fresh.XMax, 2*n.last) &&
 		math.Log(fr.XMax/fr.XMin) <= 1.6*math.Log(fresh.XMax/fresh.XMin)
 }

@@ -85,6 +85,27 @@ func TestFrameHoldsWhatItMust(t *testing.T) {
 	}
 }
 
+// A resized window must not shift the picture sideways, and going back must
+// bring the same picture back.
+func TestHeightDoesNotShiftSideways(t *testing.T) {
+	first := crestFigure(100, 0.61)
+	fr, _ := Fit(first, Frame{}, 24)
+	f := crestFigure(104, 0.61)
+	moved, refitted := Fit(f, fr, 24)
+	if fresh, _ := Fit(f, Frame{}, 24); refitted || moved == fresh {
+		t.Fatalf("the test needs a kept frame that differs from a new one: %+v, %+v", moved, fresh)
+	}
+	for _, h := range []int{11, 40, 24} {
+		moved, refitted = Fit(f, moved, h)
+		if moved.XMin != fr.XMin || moved.XMax != fr.XMax || !refitted || moved.rows() != pictureRows(h) {
+			t.Errorf("h %d: %+v, refitted %t; first %+v", h, moved, refitted, fr)
+		}
+		if again, refitted := Fit(f, moved, h); refitted || again != moved {
+			t.Errorf("h %d: not still: %+v after %+v", h, again, moved)
+		}
+	}
+}
+
 func isRound(v float64, digits ...float64) bool {
 	for _, d := range digits {
 		n := math.Log10(math.Abs(v) / d)
@@ -109,6 +130,7 @@ func TestTicksAreRound(t *testing.T) {
 		{"powers of ten", 0.5, 2e4, true, 6, []float64{1, 10, 100, 1000, 1e4}},
 		{"less than a decade", 0.31, 0.39, true, 5, []float64{0.32, 0.34, 0.36, 0.38}},
 		{"linear", 0, 1, false, 6, []float64{0, 0.2, 0.4, 0.6, 0.8, 1}},
+		{"the end is not dropped", 0, 1, false, 10, []float64{0, 0.2, 0.4, 0.6, 0.8, 1}},
 		{"linear below zero", -30, 20, false, 6, []float64{-30, -20, -10, 0, 10, 20}},
 		{"upside down", 2, 1, false, 6, nil},
 		{"log of zero", 0, 1, true, 6, nil},

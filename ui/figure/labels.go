@@ -76,12 +76,12 @@ func (c *canvas) put(col, row int, text []rune) {
 	}
 }
 
-// names writes the names of the other lines, for which no letter stands, in
-// words near their end: above the line, below it, or on it.
+// names writes the names of the lines for which no letter stands, the current
+// one left out, in words near their end: above the line, below it, or on it.
 func (c *canvas) names(lines []Line, paths []path) {
 	for i, l := range lines {
 		text := c.text(l.Says)
-		if kindOf(l) != Dotted || len(text) == 0 || paths[i] == nil {
+		if kindOf(l) == Solid || l.Letter != 0 || len(text) == 0 || paths[i] == nil {
 			continue
 		}
 		if !c.name(text, paths[i], 1, faint) && !c.name(text, paths[i], -1, faint) {

@@ -139,7 +139,7 @@ func (c *canvas) xAxis(x Axis) {
 	}
 	write(below, c.gutter-2-len(unit), unit, LabelRole)
 	free := c.gutter
-	for _, v := range Ticks(c.fr.XMin, c.fr.XMax, c.log, max(c.cols/8, 1)) {
+	for _, v := range Ticks(c.fr.XMin, c.fr.XMax, c.log, max(c.cols/7, 1)) {
 		at := int(math.Round(c.col(v)))
 		if at < 0 || at >= c.cols {
 			continue

@@ -74,7 +74,7 @@ func Ticks(lo, hi float64, log bool, most int) []float64 {
 			return at
 		}
 	}
-	step := roundUp((hi-lo)/float64(most), 1, 2, 5, 10)
+	step := roundUp((hi-lo)/float64(max(most-1, 1)), 1, 2, 5, 10)
 	var at []float64
 	for k := math.Ceil(lo/step - 1e-9); k*step <= hi+1e-9*step && len(at) < most; k++ {
 		at = append(at, tidy(k*step, step))
