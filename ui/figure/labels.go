@@ -84,26 +84,52 @@ func (c *canvas) names(lines []Line, paths []path) {
 		if kindOf(l) == Solid || l.Letter != 0 || len(text) == 0 || paths[i] == nil {
 			continue
 		}
-		if !c.name(text, paths[i], 1, faint) && !c.name(text, paths[i], -1, faint) {
-			c.name(text, paths[i], 0, lined)
+		if !c.nameBeside(text, paths[i], roleOf(kindOf(l))) {
+			c.nameOn(text, paths[i], roleOf(kindOf(l)))
 		}
 	}
 }
 
-// name writes text along a path as near to its end as there is room, off rows
-// above it.
-func (c *canvas) name(text []rune, p path, off int, least room) bool {
+// nameBeside writes text beside the last piece of a path that is not under
+// another line: right of it, above or below.
+func (c *canvas) nameBeside(text []rune, p path, role Role) bool {
 	n := len(text)
-	for end := len(p) - 1; end >= n-1; end-- {
-		mid := p[end-n/2]
-		if math.IsNaN(mid) || math.IsNaN(p[end]) {
+	for col := len(p) - 1; col >= 0; col-- {
+		if math.IsNaN(p[col]) {
 			continue
 		}
-		col, row := end-n+1, int(math.Round(mid))+off
-		if c.room(col, row, n) >= least {
-			c.put(col, row, text)
-			return true
+		row := int(math.Round(p[col]))
+		if c.at(col, row).Role != role {
+			continue
+		}
+		for _, at := range [][2]int{{col + 2, row}, {col, row + 1}, {col - n/2, row + 1}, {col - n + 1, row + 1}, {col - n + 1, row - 1}} {
+			if c.room(at[0], at[1], n) >= faint {
+				c.put(at[0], at[1], text)
+				return true
+			}
 		}
 	}
 	return false
+}
+
+// nameOn writes text onto the path itself, as near to its end as the text
+// covers nothing but this path.
+func (c *canvas) nameOn(text []rune, p path, role Role) {
+	n := len(text)
+	for end := len(p) - 1; end >= n-1; end-- {
+		mid := p[end-n/2]
+		if math.IsNaN(mid) {
+			continue
+		}
+		col, row := end-n+1, int(math.Round(mid))
+		own := c.room(col, row, n) >= lined
+		for i := range n {
+			cell := c.at(col+i, row)
+			own = own && (cell.Role == role || cell.Role == Blank || cell.Role == ZeroRole)
+		}
+		if own {
+			c.put(col, row, text)
+			return
+		}
+	}
 }
