@@ -31,7 +31,7 @@ func saver(dir string) {
 		fmt.Println("no session:", err)
 		os.Exit(1)
 	}
-	first := int(last.Scenario.DryDiameter*1e9 + 0.5)
+	first := max(100, int(last.Scenario.DryDiameter*1e9+0.5))
 	for n := first + 1; ; n++ {
 		if err := st.Save(numbered(n)); err != nil {
 			fmt.Println("not saved:", err)
@@ -133,7 +133,7 @@ func BenchmarkOpen(b *testing.B) {
 func long() State {
 	state := full()
 	for n := range keptEntries {
-		state.History.Past = append(state.History.Past, numbered(n+2).History.Past...)
+		state.History.Past = append(state.History.Past, numbered(n+100).History.Past...)
 	}
 	return state
 }

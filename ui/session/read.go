@@ -23,7 +23,7 @@ func (s *Store) read() (last State, found bool, err error) {
 	var notes []error
 	around, aroundFound, err := load(s, sessionFile, decode)
 	notes = append(notes, err)
-	question, questionFound, err := load(s, scenarioFile, s.decodeQuestion)
+	question, questionFound, err := load(s, scenarioFile, decodeQuestion)
 	notes = append(notes, err)
 	err = errors.Join(notes...)
 	switch {
@@ -37,7 +37,8 @@ func (s *Store) read() (last State, found bool, err error) {
 	return State{}, false, err
 }
 
-func (s *Store) decodeQuestion(data []byte) (scenario.Scenario, error) {
+// decodeQuestion reads scenario.toml.
+func decodeQuestion(data []byte) (scenario.Scenario, error) {
 	q, err := scenario.Decode(scenarioFile, bytes.NewReader(data))
 	return cleaned(q), err
 }
