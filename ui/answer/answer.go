@@ -39,6 +39,7 @@ type Answer struct {
 	Why     []string // for `i` on the finding: formulas, constants, sources
 	Facts   any      // the JSON object, without scenario, notes, version
 	Figures []figure.Figure
+	Others  []figure.Line // lines of the first figure that are shown on demand
 	Tables  []Table
 	Notes   []atmos.Note
 }

@@ -1,0 +1,172 @@
+package answer
+
+import (
+	"fmt"
+	"math"
+	"slices"
+
+	"dropcrest/koehler"
+	"dropcrest/ui/figure"
+	"dropcrest/ui/scenario"
+)
+
+const (
+	micro     = 1e6 // µm per m
+	frameRows = 24  // any height: the table only takes the frame's width
+)
+
+// Shares of the dense line: the part that a frame of its own shows, and the tail
+// that the frame of a larger held curve may show.
+const (
+	nearPoints = 320
+	farPoints  = 80
+)
+
+// dense is the line of the picture: evenly spaced in the logarithm of u, the
+// water per dry volume, because the curve is steep near the dry size in any
+// other measure. It contains the extrema and the haze points.
+func (c *curve) dense() []koehler.State {
+	top := 1.0
+	bottom := 1e-2
+	if c.noCrest == nil {
+		top = math.Max(top, c.crest.Water)
+		bottom = math.Min(bottom, c.crest.Water/1e3)
+	}
+	for _, e := range c.extrema {
+		top = math.Max(top, e.Water)
+		if e.Water > 0 {
+			bottom = math.Min(bottom, e.Water/10)
+		}
+	}
+	for _, h := range c.haze {
+		bottom = math.Min(bottom, h.Water/2)
+	}
+	bottom = math.Max(bottom, 1e-9)
+	near, far := 1e3*top, 1e7*top // 10 and 200 times the crest's size
+	line := make([]koehler.State, 0, nearPoints+farPoints+len(c.extrema)+3)
+	line = c.between(line, bottom, near, nearPoints)
+	line = c.between(line, near, far, farPoints+1)[:nearPoints+farPoints]
+	for _, e := range c.extrema {
+		line = append(line, e.State)
+	}
+	for _, h := range c.haze {
+		line = append(line, h.State)
+	}
+	slices.SortStableFunc(line, func(a, b koehler.State) int { return compare(a.WetDiameter, b.WetDiameter) })
+	return line
+}
+
+func compare(a, b float64) int {
+	switch {
+	case a < b:
+		return -1
+	case a > b:
+		return 1
+	}
+	return 0
+}
+
+// between appends n states from u = lo to u = hi.
+func (c *curve) between(line []koehler.State, lo, hi float64, n int) []koehler.State {
+	step := math.Pow(hi/lo, 1/float64(n-1))
+	u := lo
+	for range n {
+		line = append(line, c.particle.AtWater(u))
+		u *= step
+	}
+	return line
+}
+
+// sample is the curve at n wet radii from lo to hi (m), evenly spaced in their
+// logarithm. Radii that are not larger than the dry one are left out.
+func (c *curve) sample(lo, hi float64, n int) []koehler.State {
+	lo = math.Max(lo, c.particle.DryDiameter/2*(1+1e-9))
+	if !(hi > lo) || n < 1 {
+		return nil
+	}
+	out := make([]koehler.State, 0, n)
+	for i := range n {
+		r := lo
+		switch {
+		case i == n-1 && n > 1:
+			r = hi // to the last digit
+		case i > 0:
+			r = lo * math.Pow(hi/lo, float64(i)/float64(n-1))
+		}
+		out = append(out, c.particle.At(2*r))
+	}
+	return out
+}
+
+// figure is the picture: the line with its crest and the drop at the humidity.
+func (c *curve) figure() figure.Figure {
+	f := figure.Figure{
+		Key: "curve", Title: "supersaturation, % against wet radius, µm",
+		X: figure.Axis{Says: "wet radius", Unit: "µm", Log: true},
+		Y: figure.Axis{Says: "supersaturation", Unit: "%"},
+	}
+	current := figure.Line{Crest: true}
+	current.X, current.Y = c.points(func(s koehler.State) float64 { return s.Supersaturation })
+	f.Lines = []figure.Line{current}
+	if c.noCrest == nil {
+		f.Marks = append(f.Marks, figure.Mark{Kind: figure.CrestMark, X: c.crest.WetDiameter / 2 * micro,
+			Y: 100 * c.crest.Supersaturation, Text: percent(c.crest.Supersaturation)})
+	}
+	for _, h := range c.haze {
+		m := figure.Mark{Kind: figure.HazeMark, X: h.WetDiameter / 2 * micro, Y: 100 * h.Supersaturation,
+			Text: fmt.Sprintf("haze %s at %s", micrometres(h.WetDiameter/2), humidity(c.asked.RelativeHumidity))}
+		if h.branch == "unstable" {
+			m.Kind, m.Text = figure.PointMark, "unstable "+micrometres(h.WetDiameter/2)
+		}
+		f.Marks = append(f.Marks, m)
+	}
+	return f
+}
+
+// others are the two effects alone, along the line.
+func (c *curve) others() []figure.Line {
+	kelvin := figure.Line{Says: "Kelvin only", Dash: figure.Dotted}
+	kelvin.X, kelvin.Y = c.points(func(s koehler.State) float64 { return s.KelvinFactor - 1 })
+	raoult := figure.Line{Says: "Raoult only", Dash: figure.Dotted, X: kelvin.X}
+	_, raoult.Y = c.points(func(s koehler.State) float64 { return s.WaterActivity - 1 })
+	return []figure.Line{kelvin, raoult}
+}
+
+// points are the coordinates of the dense line in shown units.
+func (c *curve) points(of func(koehler.State) float64) (x, y []float64) {
+	x, y = make([]float64, len(c.line)), make([]float64, len(c.line))
+	for i, s := range c.line {
+		x[i], y[i] = s.WetDiameter/2*micro, 100*of(s)
+	}
+	return x, y
+}
+
+// CurveFrame is the frame for a picture of h rows, with the ends of the wet
+// radius that the scenario asks for; figure.Fit says the rest.
+func CurveFrame(s scenario.Scenario, f figure.Figure, last figure.Frame, h int) (figure.Frame, bool) {
+	fr, refitted := figure.Fit(f, last, h)
+	if s.FromRadius.Word == "" {
+		fr.XMin = s.FromRadius.Number * micro
+	}
+	if s.ToRadius.Word == "" {
+		fr.XMax = s.ToRadius.Number * micro
+	}
+	return fr, refitted
+}
+
+// HeldLine is the line of an answer as a held curve, and the mark of its crest.
+func HeldLine(letter rune, a Answer) (figure.Line, []figure.Mark) {
+	if len(a.Figures) == 0 || len(a.Figures[0].Lines) == 0 {
+		return figure.Line{Letter: letter, Dash: figure.Dashed}, nil
+	}
+	line := a.Figures[0].Lines[0]
+	line.Letter, line.Dash, line.Says = letter, figure.Dashed, "held "+string(letter)
+	var marks []figure.Mark
+	for _, m := range a.Figures[0].Marks {
+		if m.Kind == figure.CrestMark {
+			m.Letter = letter
+			marks = append(marks, m)
+		}
+	}
+	return line, marks
+}

@@ -1,0 +1,74 @@
+package answer
+
+import (
+	"fmt"
+	"slices"
+
+	"dropcrest/atmos"
+	"dropcrest/koehler"
+)
+
+// giantNucleus is the dry diameter (m) above which growth to the crest takes so
+// long in a cloud that equilibrium is not the question. Common practice.
+const giantNucleus = 1e-6
+
+// limits are the notes that say in words what limits the crest and the haze
+// size, the most important first. from is the smallest wet radius shown (m).
+func (c *curve) limits(from float64) []atmos.Note {
+	var notes []atmos.Note
+	add := func(code, input, format string, values ...any) {
+		notes = append(notes, atmos.Note{Code: code, Input: input, Text: fmt.Sprintf(format, values...)})
+	}
+	if c.noCrest == nil && c.crest.Kind == koehler.BoundaryMaximum {
+		add("barrier-at-dry-size", "component", "There is no crest in solution: what must be overcome is the curvature of the dry particle, taken as wettable.")
+	}
+	if c.noCrest == nil && c.crest.Kind != koehler.BoundaryMaximum && c.crest.Extrapolated {
+		add("crest-outside-model", "water-activity", "The crest lies where the water activity model is outside its range: it is extrapolated.")
+	}
+	if d := c.particle.DryDiameter; d > giantNucleus {
+		add("giant-nucleus", "dry-diameter", "This is a giant nucleus: growth to its crest%s takes longer than a cloud gives it, so equilibrium is not the question.", c.crestRadius())
+	}
+	if c.pastCrest() {
+		add("humidity-above-crest", "relative-humidity", "The humidity looked at, %s, is not below the crest at %s: there is no haze size.",
+			humidity(c.asked.RelativeHumidity), percent(c.crest.Supersaturation))
+	}
+	least := c.dissolved.Solution.LeastWater()
+	for _, h := range c.haze {
+		if h.Water < least && h.branch == "stable" {
+			add("haze-outside-model", "water-activity", "The haze size lies where the water activity model is outside its range: it is extrapolated.")
+		}
+	}
+	if drh, name := c.deliquescence(); c.asked.RelativeHumidity < drh {
+		add("below-deliquescence", "relative-humidity", "Dry %s takes up water only from %s humidity on (at 25 °C): the haze size is that of a particle that was wetter before.", name, humidity(drh))
+	}
+	if least > 0 && c.noCrest == nil {
+		if edge := c.particle.AtWater(least).WetDiameter / 2; edge > from*(1+1e-6) {
+			add("curve-outside-model", "water-activity", "Below a wet radius of %s the water activity model is outside its range: the curve is extrapolated there.", micrometres(edge))
+		}
+	}
+	// What was said before the crest was known counts as well: properties of
+	// water beyond their range.
+	for _, n := range c.notes {
+		if n.Input == "temperature" && !slices.Contains(notes, n) {
+			notes = append(notes, n)
+		}
+	}
+	return notes
+}
+
+// deliquescence is the humidity at which the dry particle takes up water, 0 when
+// that is not known or when it is a mixture, which has no single one.
+func (c *curve) deliquescence() (humidity float64, name string) {
+	if len(c.parts) != 1 || !c.parts[0].Substance.Deliquescence.Known() {
+		return 0, ""
+	}
+	s := c.parts[0].Substance
+	return s.Deliquescence.Value, s.Name
+}
+
+func (c *curve) crestRadius() string {
+	if c.noCrest != nil {
+		return ""
+	}
+	return " at " + micrometres(c.crest.WetDiameter/2)
+}
