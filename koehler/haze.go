@@ -1,0 +1,67 @@
+package koehler
+
+import (
+	"fmt"
+	"math"
+)
+
+// Haze returns the drops in equilibrium at saturation ratio S: the stable one
+// below the crest and, for S > 1, the unstable one above it (the zero State for
+// S ≤ 1). Where the curve has several maxima, the stable drop is the first that
+// a growing particle meets.
+//
+// Errors wrap ErrAboveCrest for S at or above the crest, ErrNoHaze where a
+// particle without solute stays dry, ErrInput and ErrNoCrest.
+func (p Particle) Haze(S float64) (stable State, unstable State, err error) {
+	if !(S > 0) || math.IsInf(S, 0) {
+		return stable, unstable, &RangeError{"saturation ratio", S, "above 0"}
+	}
+	crest, err := p.Crest()
+	if err != nil {
+		return stable, unstable, err
+	}
+	if S-1 >= crest.Supersaturation {
+		return stable, unstable, &AboveCrestError{S, crest.SaturationRatio}
+	}
+	c, lnS := p.ready(), math.Log(S)
+	if S > 1 {
+		top := math.Log(math.Max(crest.Water, scanFrom))
+		far := top + 1
+		for c.at(math.Exp(far)).lnS > lnS {
+			far += 2
+		}
+		unstable = c.state(math.Exp(c.waterAt(lnS, top, far)))
+	}
+	if crest.Kind == BoundaryMaximum && crest.Water <= scanFrom {
+		return stable, unstable, fmt.Errorf("%w: its curve falls from the dry size on", ErrNoHaze)
+	}
+	hi, err := p.firstAbove(lnS, crest)
+	if err != nil {
+		return stable, unstable, err
+	}
+	lo := hi - 1
+	for c.at(math.Exp(lo)).lnS >= lnS {
+		if lo -= 2; lo < -90 {
+			return stable, unstable, fmt.Errorf("%w: even its first water needs more than S = %.6g", ErrNoHaze, S)
+		}
+	}
+	stable = c.state(math.Exp(c.waterAt(lnS, lo, hi)))
+	return stable, unstable, nil
+}
+
+// firstAbove is ln u of the first maximum above lnS.
+func (p Particle) firstAbove(lnS float64, crest Crest) (float64, error) {
+	if !p.severalMaxima() {
+		return math.Log(crest.Water), nil
+	}
+	extrema, err := p.Extrema()
+	if err != nil {
+		return 0, err
+	}
+	for _, e := range extrema {
+		if e.Kind == Maximum && math.Log(e.SaturationRatio) > lnS {
+			return math.Log(e.Water), nil
+		}
+	}
+	return math.Log(crest.Water), nil
+}
