@@ -6,4 +6,8 @@
 // of dry particle (dimensionless, u > 0; with additive volumes u = g³ - 1 for
 // the diameter growth factor g). Everything is in SI units. Values of this
 // package are immutable after they are made and safe for concurrent use.
+//
+// Dissolve is the usual way in: it takes a Recipe and gives the models with
+// notes on what stands in for what. NewSalt, NewMixture and Kappa are the models
+// themselves.
 package solutes

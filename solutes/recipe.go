@@ -1,7 +1,5 @@
 package solutes
 
-import "dropcrest/atmos"
-
 // Model names a water-activity model.
 type Model int
 
@@ -10,6 +8,18 @@ const (
 	VantHoff                    // mole fraction with a fixed factor i
 	IonInteraction              // Pitzer & Mayorga 1973, joined to concentrated data
 )
+
+func (m Model) String() string {
+	switch m {
+	case KappaModel:
+		return "kappa"
+	case VantHoff:
+		return "van 't Hoff"
+	case IonInteraction:
+		return "ion interaction"
+	}
+	return "unknown model"
+}
 
 // DensityRule names a rule for the volume of the solution.
 type DensityRule int
@@ -60,7 +70,3 @@ type Dissolved struct {
 
 // Molality returns mol of solute per kg of water at u, NaN if not known.
 func (d Dissolved) Molality(u float64) float64 { return d.MolesPerVolume / (u * d.WaterDensity) }
-
-// Dissolve makes a recipe ready. Notes say which part fell back to which model
-// and which range is left; an error says what is missing and cannot be replaced.
-func Dissolve(r Recipe) (Dissolved, []atmos.Note, error) { panic("not written yet") }

@@ -1,5 +1,7 @@
 package solutes
 
+import "math"
+
 // Evidence says how a catalogued value came to be known.
 type Evidence string
 
@@ -27,7 +29,7 @@ func (d Datum) Known() bool { return d.Evidence != "" }
 type Substance struct {
 	Key     string   `json:"key"`     // "ammonium_sulfate"
 	Name    string   `json:"name"`    // "ammonium sulfate"
-	Formula string   `json:"formula"` // "(NH4)2SO4"
+	Formula string   `json:"formula"` // "(NH4)2SO4", "" for mixtures
 	Aliases []string `json:"aliases,omitempty"`
 
 	MolarMass        Datum `json:"molar_mass"`        // kg/mol
@@ -42,8 +44,51 @@ type Substance struct {
 	TensionIncrement Datum `json:"tension_increment"` // N/m per mol/kg
 	ShapeFactor      Datum `json:"shape_factor"`      // dynamic shape factor of the dry particle
 
-	Ion          *Ion          `json:"ion,omitempty"`          // ion-interaction parameters
-	Concentrated *Concentrated `json:"concentrated,omitempty"` // published polynomial and its join
+	DeliquescenceLaw *DeliquescenceLaw `json:"deliquescence_law,omitempty"` // deliquescence with temperature
+	Adsorption       *Adsorption       `json:"adsorption,omitempty"`        // FHH parameters of insoluble particles
+	Ion              *Ion              `json:"ion,omitempty"`               // ion-interaction parameters
+	Concentrated     *Concentrated     `json:"concentrated,omitempty"`      // published polynomial and its join
 
 	Remarks []string `json:"remarks,omitempty"`
+}
+
+// IdealKappa returns ν (ρ_s/M)(M_w/ρ_w), the κ of the ideal solution of all
+// ions, for the density rhoWater of water (kg/m³); NaN if molar mass, density or
+// number of ions is not known. It is 0 for an insoluble substance, whatever else
+// is known.
+func (s Substance) IdealKappa(rhoWater float64) float64 {
+	if s.Insoluble() {
+		return 0
+	}
+	return s.Ions.Value * s.molality(rhoWater) * waterMolarMass
+}
+
+// Insoluble reports whether the substance is known to give no ions or molecules
+// to the water.
+func (s Substance) Insoluble() bool { return s.Ions.Known() && s.Ions.Value == 0 }
+
+// DeliquescenceLaw is the temperature law of Tang & Munkelwitz 1993, Atmos.
+// Environ. 27A, 467, about 298 K:
+//
+//	ln(DRH/DRH298) = (ΔH/R) [A (1/T - 1/298) - B ln(T/298) - C (T - 298)]
+type DeliquescenceLaw struct {
+	Heat       float64    `json:"heat"`       // ΔH, enthalpy of solution, J/mol
+	Solubility [3]float64 `json:"solubility"` // A, B, C: n = A + B T + C T², mol per mol of water
+	Source     string     `json:"source"`
+	Evidence   Evidence   `json:"evidence"`
+}
+
+// Adsorption holds the parameters of the Frenkel-Halsey-Hill isotherm
+// ln a_w = -A θ^-B, dimensionless.
+type Adsorption struct {
+	A Datum `json:"a"`
+	B Datum `json:"b"`
+}
+
+// molality is mol of formula units per kg of water at u = 1; NaN if not known.
+func (s Substance) molality(rhoWater float64) float64 {
+	if !s.MolarMass.Known() || !s.Density.Known() || !s.Ions.Known() {
+		return math.NaN()
+	}
+	return s.Density.Value / (s.MolarMass.Value * rhoWater)
 }

@@ -1,0 +1,22 @@
+package solutes
+
+// ConstantTension is a surface tension in N/m that the solute does not change.
+type ConstantTension float64
+
+// SurfaceTension returns the constant and 0.
+func (t ConstantTension) SurfaceTension(float64) (sigma, slope float64) { return float64(t), 0 }
+
+// LinearTension is the surface tension σ = Water + PerDry/u of a solution whose
+// solutes each raise it by an increment per molality: PerDry = Σ b_i c_i with c_i
+// the molality at u = 1. The increments are measured up to a few mol/kg; the line
+// is carried on beyond.
+type LinearTension struct {
+	Water  float64 // N/m, pure water
+	PerDry float64 // N/m
+}
+
+// SurfaceTension returns σ in N/m and its derivative by ln u.
+func (t LinearTension) SurfaceTension(u float64) (sigma, slope float64) {
+	rise := t.PerDry / u
+	return t.Water + rise, -rise
+}
