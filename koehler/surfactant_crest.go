@@ -1,0 +1,59 @@
+package koehler
+
+import "math"
+
+const (
+	// greatestSurfaceGrowth bounds the scan: D < 300 Dd.
+	greatestSurfaceGrowth = 300
+	// surfacePoints is the number of points of the scan, equal in ln u: features
+	// of the isotherm are wider than a factor of 1.1 in the drop's volume.
+	surfacePoints = 400
+	// firstSurfaceWater is where the scan begins: below it the curve rises from
+	// the dry size, or the scan goes on towards it.
+	firstSurfaceWater = 1e-4
+)
+
+// Extrema appends all extrema of the curve between the dry size and 300 times
+// the dry size to dst, in the order of their wet size. Where σ has a floor, the
+// drop that leaves it makes a kink: like a dissolution point it is a minimum or
+// nothing, because dσ/d ln u jumps up from 0 there.
+//
+// Without a floor σ may be negative near the dry size. That is outside the
+// equation of Szyszkowski; such turns are listed, as the equation has them.
+func (s *SurfaceActive) Extrema(dst []Turn) []Turn {
+	in := scan{
+		from: firstSurfaceWater, to: math.Pow(greatestSurfaceGrowth, 3) - 1,
+		points: surfacePoints, dryLnS: math.Inf(-1),
+	}
+	if u, found := s.floorWater(); found {
+		in.breaks = []float64{u}
+	}
+	if s.isInert() {
+		in.dryLnS = s.kelvin * s.At(leastWater).SurfaceTension
+	}
+	return in.extrema(dst, s)
+}
+
+// isInert tells whether nothing lowers the water activity.
+func (s *SurfaceActive) isInert() bool {
+	salt := s.salt.Share > 0 && (s.salt.Solution != nil || s.salt.Kappa > 0)
+	return !salt && s.organic == 0
+}
+
+// Crest returns the highest maximum at which σ is positive, and its place among
+// those maxima. Errors: ErrNoCrest.
+func (s *SurfaceActive) Crest() (Turn, Place, error) {
+	var room [8]Turn
+	turns := s.Extrema(room[:0])
+	sound := turns[:0]
+	for _, t := range turns {
+		if s.At(math.Max(t.Water, leastWater)).SurfaceTension > 0 {
+			sound = append(sound, t)
+		}
+	}
+	i, place := Barrier(sound)
+	if place == NoBarrier {
+		return Turn{}, NoBarrier, ErrNoCrest
+	}
+	return sound[i], place, nil
+}
