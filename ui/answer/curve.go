@@ -92,7 +92,7 @@ func newCurve(env Env, s scenario.Scenario) (*curve, error) {
 	}
 	c.dissolved = dissolved
 	c.parts = recipe.Parts
-	c.notes = distinct(slices.Concat(notes, more, atmos.WaterNotes(s.Temperature)))
+	c.notes = distinct(slices.Concat(notes, more, waterNotes(s)))
 	c.particle = koehler.Particle{
 		DryDiameter: dryDiameter(s),
 		Temperature: s.Temperature,
@@ -134,9 +134,6 @@ func (c *curve) solve() {
 	c.textbook, c.noCubic = c.particle.Textbook()
 	stable, unstable, err := c.particle.Haze(c.asked.RelativeHumidity)
 	c.noHaze = err
-	if err != nil {
-		return
-	}
 	if stable.WetDiameter > 0 {
 		c.haze = append(c.haze, hazeState{"stable", stable})
 	}

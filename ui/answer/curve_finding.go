@@ -1,6 +1,7 @@
 package answer
 
 import (
+	"errors"
 	"fmt"
 	"math"
 	"strings"
@@ -37,22 +38,21 @@ func (c *curve) crestSentence() string {
 }
 
 func (c *curve) hazeSentence() string {
-	at := humidity(c.asked.RelativeHumidity)
-	if c.noHaze != nil || len(c.haze) == 0 {
-		if c.pastCrest() {
-			return fmt.Sprintf("At %s humidity it has no equilibrium size: it grows to a cloud droplet.", at)
-		}
-		if c.noHaze != nil {
-			return fmt.Sprintf("At %s humidity no size can be given: %s.", at, strings.TrimSuffix(reason(c.noHaze), "."))
-		}
-		return fmt.Sprintf("At %s humidity it stays dry.", at)
+	says := fmt.Sprintf("At %s humidity ", humidity(c.asked.RelativeHumidity))
+	switch {
+	case c.pastCrest():
+		return says + "it has no equilibrium size: it grows to a cloud droplet."
+	case errors.Is(c.noHaze, koehler.ErrNoHaze):
+		says += "it stays dry"
+	case c.noHaze != nil:
+		return says + "no size can be given: " + strings.TrimSuffix(reason(c.noHaze), ".") + "."
 	}
-	says := fmt.Sprintf("At %s humidity it is haze of %s radius", at, micrometres(c.haze[0].WetDiameter/2))
-	if c.haze[0].branch == "unstable" {
-		says = fmt.Sprintf("At %s humidity a drop of %s radius is in unstable balance", at, micrometres(c.haze[0].WetDiameter/2))
-	}
-	if len(c.haze) > 1 {
-		says += fmt.Sprintf("; a drop of more than %s would grow on", micrometres(c.haze[1].WetDiameter/2))
+	for _, h := range c.haze {
+		if h.branch == "stable" {
+			says += fmt.Sprintf("it is haze of %s radius", micrometres(h.WetDiameter/2))
+			continue
+		}
+		says += fmt.Sprintf("; a drop larger than %s would grow on", micrometres(h.WetDiameter/2))
 	}
 	return says + "."
 }

@@ -3,9 +3,11 @@ package answer
 import (
 	"fmt"
 	"slices"
+	"strings"
 
 	"dropcrest/atmos"
 	"dropcrest/koehler"
+	"dropcrest/ui/scenario"
 )
 
 // giantNucleus is the dry diameter (m) above which growth to the crest takes so
@@ -46,14 +48,26 @@ func (c *curve) limits(from float64) []atmos.Note {
 			add("curve-outside-model", "water-activity", "Below a wet radius of %s the water activity model is outside its range: the curve is extrapolated there.", micrometres(edge))
 		}
 	}
-	// What was said before the crest was known counts as well: properties of
-	// water beyond their range.
 	for _, n := range c.notes {
-		if n.Input == "temperature" && !slices.Contains(notes, n) {
+		if strings.HasSuffix(n.Code, "-extrapolated") {
 			notes = append(notes, n)
 		}
 	}
 	return notes
+}
+
+// waterNotes are what must be said of the properties of water that the question
+// uses at its temperature.
+func waterNotes(s scenario.Scenario) []atmos.Note {
+	return slices.DeleteFunc(atmos.WaterNotes(s.Temperature), func(n atmos.Note) bool {
+		switch n.Code {
+		case "vapour-pressure-extrapolated":
+			return s.Kelvin != "pure-vapour" // S needs no vapour pressure otherwise
+		case "surface-tension-extrapolated":
+			return s.SurfaceTension.Word == "" // given
+		}
+		return false
+	})
 }
 
 // deliquescence is the humidity at which the dry particle takes up water, 0 when

@@ -1,0 +1,371 @@
+package answer
+
+import (
+	"context"
+	"encoding/json"
+	"math"
+	"regexp"
+	"slices"
+	"strings"
+	"testing"
+
+	"dropcrest/solutes"
+	"dropcrest/ui/figure"
+	"dropcrest/ui/scenario"
+)
+
+// scene is the default scenario with values set as a person would set them.
+func scene(t testing.TB, values ...string) scenario.Scenario {
+	t.Helper()
+	s := scenario.Default()
+	fresh := true
+	for _, v := range values {
+		key, text, _ := strings.Cut(v, "=")
+		if key == "component" {
+			if err := scenario.SetRow(&s, key, text, fresh); err != nil {
+				t.Fatalf("%s: %v", v, err)
+			}
+			fresh = false
+			continue
+		}
+		in, ok := scenario.Find(&s, scenario.Path(key))
+		if !ok {
+			t.Fatalf("no input %q", key)
+		}
+		if err := in.Set(text); err != nil {
+			t.Fatalf("%s: %v", v, err)
+		}
+	}
+	return s
+}
+
+func asked(t testing.TB, values ...string) Answer {
+	t.Helper()
+	a, err := curveQuestion().Ask(context.Background(), Env{Substances: solutes.Standard()}, scene(t, values...))
+	if err != nil {
+		t.Fatal(err)
+	}
+	return a
+}
+
+func facts(t testing.TB, a Answer) CurveFacts {
+	t.Helper()
+	f, ok := a.Facts.(CurveFacts)
+	if !ok {
+		t.Fatalf("facts are %T", a.Facts)
+	}
+	return f
+}
+
+// The numbers that scripts were promised.
+func TestPromisedCrests(t *testing.T) {
+	for name, c := range map[string]struct {
+		values    []string
+		want, tol float64 // %
+	}{
+		// κ-Köhler with A = 4 σ M/(R T ρ), 298.15 K and 72 mN/m. Computed independently
+		// by a general-purpose root finder; testdata/computed/koehler_kappa.json has its
+		// neighbours.
+		"kappa 0.61": {[]string{"dry-diameter=100nm", "water-activity=kappa", "kappa=0.61",
+			"temperature=298.15K", "surface-tension=72mN/m"}, 0.14993, 5e-5},
+		// Sodium chloride by ion interaction; testdata/computed/koehler_solutes.json has
+		// the same with slightly other density and A_φ, hence 0.5 %.
+		"sodium chloride": {[]string{"dry-diameter=50nm", "component=sodium chloride", "water-activity=ion-interaction",
+			"temperature=298.15K", "surface-tension=solution"}, 0.29484, 0.005 * 0.29484},
+	} {
+		t.Run(name, func(t *testing.T) {
+			got := float64(facts(t, asked(t, c.values...)).CriticalSupersaturation)
+			if !(math.Abs(got-c.want) <= c.tol) {
+				t.Errorf("crest at %.8g %%, want %.8g ± %.2g", got, c.want, c.tol)
+			}
+		})
+	}
+}
+
+// What limits an answer is said, by a note with a stable code and in the finding.
+func TestLimitsAreSaid(t *testing.T) {
+	kappa := []string{"water-activity=kappa"}
+	for name, c := range map[string]struct {
+		values  []string
+		code    string
+		finding string
+	}{
+		"shares":             {[]string{"component=ammonium sulfate share=1", "component=sodium chloride share=0.25"}, "shares-scaled", ""},
+		"giant nucleus":      {[]string{"dry-diameter=3000nm"}, "giant-nucleus", "takes longer than a cloud gives it"},
+		"above the crest":    {[]string{"relative-humidity=101%"}, "humidity-above-crest", "it grows to a cloud droplet"},
+		"insoluble":          {append(kappa, "kappa=0"), "barrier-at-dry-size", "the Kelvin barrier at its dry radius"},
+		"insoluble is dry":   {append(kappa, "kappa=0"), "barrier-at-dry-size", "it stays dry"},
+		"extrapolated σ":     {[]string{"temperature=-30C"}, "surface-tension-extrapolated", "surface tension of water is extrapolated"},
+		"deliquescence":      {[]string{"relative-humidity=60%"}, "below-deliquescence", "takes up water only from"},
+		"model left by haze": {[]string{"component=calcium nitrate", "relative-humidity=20%"}, "haze-outside-model", "the water activity model is outside its range"},
+	} {
+		t.Run(name, func(t *testing.T) {
+			a := asked(t, c.values...)
+			if !slices.Contains(codes(a), c.code) {
+				t.Errorf("notes %q, want %q among them", codes(a), c.code)
+			}
+			if all := strings.Join(a.Finding, " "); !strings.Contains(all, c.finding) {
+				t.Errorf("finding %q, want %q in it", all, c.finding)
+			}
+			why := strings.Join(a.Why, "\n")
+			for _, n := range a.Notes {
+				if !strings.Contains(why, n.Text) {
+					t.Errorf("note %q is not in the explanation", n.Text)
+				}
+			}
+		})
+	}
+}
+
+func codes(a Answer) []string {
+	var out []string
+	for _, n := range a.Notes {
+		out = append(out, n.Code)
+	}
+	return out
+}
+
+// An ordinary particle has nothing to be warned of.
+func TestNothingToSay(t *testing.T) {
+	a := asked(t)
+	for _, n := range a.Notes {
+		if n.Code != "curve-outside-model" {
+			t.Errorf("the default scenario has the note %s: %s", n.Code, n.Text)
+		}
+	}
+	if len(a.Finding) != 2 {
+		t.Errorf("finding %q, want two sentences", a.Finding)
+	}
+}
+
+// The first sentence carries the answer: with a short window it is all there is.
+func TestFirstSentence(t *testing.T) {
+	for name, values := range map[string][]string{
+		"salt":  nil,
+		"kappa": {"water-activity=kappa", "kappa=0.3"},
+		"soot":  {"water-activity=kappa", "kappa=0"},
+	} {
+		a := asked(t, values...)
+		m := regexp.MustCompile(`at ([0-9.]+ %) supersaturation`).FindStringSubmatch(a.Finding[0])
+		if m == nil {
+			t.Errorf("%s: %q does not say where it crosses", name, a.Finding[0])
+			continue
+		}
+		if want := percent(float64(facts(t, a).CriticalSupersaturation) / 100); m[1] != want {
+			t.Errorf("%s: the sentence says %s, the facts %s", name, m[1], want)
+		}
+	}
+}
+
+// The keys of the JSON object, in their order. Scripts rely on them.
+func TestFactsKeys(t *testing.T) {
+	const want = `critical_supersaturation_percent critical_wet_radius_m critical_wet_diameter_m critical_growth_factor ` +
+		`critical_water_activity critical_molality_mol_per_kg extrema kind wet_radius_m supersaturation_percent ` +
+		`haze branch relative_humidity_percent wet_radius_m growth_factor ` +
+		`textbook critical_supersaturation_percent critical_wet_radius_m ` +
+		`curve wet_radius_m saturation_ratio water_activity kelvin_factor`
+	text, err := json.Marshal(asked(t, "points=1").Facts)
+	if err != nil {
+		t.Fatal(err)
+	}
+	var keys []string
+	for _, m := range regexp.MustCompile(`"([a-z_]+)":`).FindAllStringSubmatch(string(text), -1) {
+		keys = append(keys, m[1])
+	}
+	if got := strings.Join(keys, " "); got != want {
+		t.Errorf("keys\n%s\nwant\n%s", got, want)
+	}
+}
+
+// What is absent is null and not left out.
+func TestAbsentIsNull(t *testing.T) {
+	text, err := json.Marshal(asked(t, "water-activity=kappa", "kappa=0", "relative-humidity=50%").Facts)
+	if err != nil {
+		t.Fatal(err)
+	}
+	for _, want := range []string{`"critical_molality_mol_per_kg":null`, `"haze":[]`, `"textbook":null`} {
+		if !strings.Contains(string(text), want) {
+			t.Errorf("%s is not in %.300s", want, text)
+		}
+	}
+}
+
+// Every slot of the statement is an input or a list of rows.
+func TestStatementSlots(t *testing.T) {
+	for name, values := range map[string][]string{
+		"default":     nil,
+		"mobility":    {"dry-size-is=mobility"},
+		"kappa":       {"water-activity=kappa"},
+		"van 't Hoff": {"water-activity=vant-hoff"},
+		"all":         {"kelvin=compressible", "solution-density=measured"},
+		"kelvin":      {"kelvin=pure-vapour"},
+		"density":     {"solution-density=measured"},
+	} {
+		s := scene(t, values...)
+		for _, line := range curveStatement(s) {
+			Fill(line, func(slot string) string {
+				for _, l := range scenario.Lists(&s) {
+					if l.Key() == slot {
+						return ""
+					}
+				}
+				in, ok := scenario.Find(&s, scenario.Path(slot))
+				switch {
+				case !ok:
+					t.Errorf("%s: no input {%s}", name, slot)
+				case !in.Used():
+					t.Errorf("%s: {%s} stands in the statement but is not used", name, slot)
+				}
+				return ""
+			})
+		}
+	}
+}
+
+// Every input that changes the answer stands in the statement once it is not at
+// its default; otherwise the sentence would hide something.
+func TestStatementHidesNothing(t *testing.T) {
+	s := scene(t, "dry-size-is=mobility", "kelvin=compressible", "solution-density=measured", "shape-factor=1.1")
+	text := strings.Join(curveStatement(s), " ")
+	for _, in := range scenario.Inputs(&s) {
+		if string(in.Path()) == in.Key() && in.Used() && !in.IsDefault() && !strings.Contains(text, "{"+in.Key()+"}") {
+			t.Errorf("%s is not in %q", in.Key(), text)
+		}
+	}
+}
+
+// The picture's line contains crest and haze, and runs upwards in the radius.
+func TestLineContainsItsMarks(t *testing.T) {
+	for name, values := range map[string][]string{
+		"default":   nil,
+		"small":     {"dry-diameter=5nm"},
+		"giant":     {"dry-diameter=9000nm"},
+		"dry air":   {"relative-humidity=30%"},
+		"above 100": {"relative-humidity=100.05%"},
+	} {
+		a := asked(t, values...)
+		line := a.Figures[0].Lines[0]
+		if !slices.IsSorted(line.X) {
+			t.Errorf("%s: the line turns back", name)
+		}
+		for _, m := range a.Figures[0].Marks {
+			i, ok := slices.BinarySearch(line.X, m.X)
+			if !ok || math.Abs(line.Y[i]-m.Y) > 1e-6*math.Max(1e-3, math.Abs(m.Y)) {
+				t.Errorf("%s: mark %q at %g, %g is not on the line", name, m.Text, m.X, m.Y)
+			}
+		}
+		for _, y := range line.Y {
+			if math.IsNaN(y) || math.IsInf(y, 0) {
+				t.Fatalf("%s: the line has the value %g", name, y)
+			}
+		}
+	}
+}
+
+// Kelvin only and Raoult only multiply to the curve.
+func TestOthersMakeTheCurve(t *testing.T) {
+	a := asked(t)
+	line := a.Figures[0].Lines[0]
+	for i := range line.X {
+		product := (1 + a.Others[0].Y[i]/100) * (1 + a.Others[1].Y[i]/100)
+		if want := 1 + line.Y[i]/100; math.Abs(product-want) > 1e-12 {
+			t.Fatalf("at %g µm the product is %.15g, the curve %.15g", line.X[i], product, want)
+		}
+	}
+}
+
+func TestTableRange(t *testing.T) {
+	s := scene(t, "points=7", "from-radius=0.1um", "to-radius=2um")
+	a, err := askCurve(context.Background(), Env{}, s)
+	if err != nil {
+		t.Fatal(err)
+	}
+	rows := facts(t, a).Curve
+	if len(rows) != 7 {
+		t.Fatalf("%d points, want 7", len(rows))
+	}
+	if lo, hi := float64(rows[0].WetRadius), float64(rows[6].WetRadius); math.Abs(lo-1e-7) > 1e-16 || math.Abs(hi-2e-6) > 1e-15 {
+		t.Errorf("from %g to %g m, want 1e-7 to 2e-6", lo, hi)
+	}
+	fr, _ := CurveFrame(s, a.Figures[0], figure.Frame{}, 20)
+	if math.Abs(fr.XMin-0.1) > 1e-12 || math.Abs(fr.XMax-2) > 1e-12 {
+		t.Errorf("the frame runs from %g to %g µm, want 0.1 to 2", fr.XMin, fr.XMax)
+	}
+}
+
+func TestHeldLine(t *testing.T) {
+	line, marks := HeldLine('B', asked(t))
+	if line.Letter != 'B' || line.Dash != figure.Dashed || !line.Crest || len(line.X) == 0 {
+		t.Errorf("held line %q, dash %d, crest %t, %d points", line.Letter, line.Dash, line.Crest, len(line.X))
+	}
+	if len(marks) != 1 || marks[0].Letter != 'B' {
+		t.Errorf("marks %v, want the crest of B", marks)
+	}
+	if line, marks := HeldLine('C', Answer{}); line.Letter != 'C' || len(marks) != 0 {
+		t.Errorf("no answer gives %v %v", line, marks)
+	}
+}
+
+// A mobility diameter with a shape factor above 1 stands for a smaller sphere.
+func TestMobilitySize(t *testing.T) {
+	sphere := facts(t, asked(t, "dry-size-is=mobility", "shape-factor=1"))
+	cube := facts(t, asked(t, "dry-size-is=mobility", "shape-factor=1.08"))
+	plain := facts(t, asked(t))
+	if sphere.CriticalSupersaturation != plain.CriticalSupersaturation {
+		t.Errorf("a sphere's mobility diameter changes the crest from %v to %v", plain.CriticalSupersaturation, sphere.CriticalSupersaturation)
+	}
+	if !(cube.CriticalSupersaturation > sphere.CriticalSupersaturation) {
+		t.Errorf("the cube's crest %v is not above the sphere's %v", cube.CriticalSupersaturation, sphere.CriticalSupersaturation)
+	}
+}
+
+// Shares by mass are turned into shares by volume with the densities.
+func TestSharesByMass(t *testing.T) {
+	s := scene(t, "component=density=1000kg/m3 kappa=0.2 share=0.5", "component=density=3000kg/m3 kappa=0.6 share=0.5",
+		"shares-by=mass", "water-activity=kappa")
+	r, notes, err := newRecipe(Env{}, s)
+	if err != nil || len(notes) > 0 {
+		t.Fatal(notes, err)
+	}
+	if v := r.Parts[0].Volume; math.Abs(v-0.75) > 1e-15 {
+		t.Errorf("volume share %g, want 0.75", v)
+	}
+}
+
+func TestRefusedParticles(t *testing.T) {
+	for name, c := range map[string]struct {
+		change func(*scenario.Scenario)
+		input  string
+		says   string
+	}{
+		"unknown substance": {func(s *scenario.Scenario) { s.Components[0].Substance = "amonium sulfat" }, "component", "did you mean ammonium sulfate"},
+		"nothing at all":    {func(s *scenario.Scenario) { s.Components = nil }, "component", "name a substance"},
+		"mass without density": {func(s *scenario.Scenario) {
+			s.SharesBy = "mass"
+			s.Components = append(s.Components, scenario.Component{Share: 1, Kappa: scenario.Measure{Number: 0.1},
+				Density: scenario.Measure{Word: "catalogue"}, MolarMass: scenario.Measure{Word: "catalogue"}, Ions: scenario.Measure{Word: "catalogue"}})
+		}, "component", "give density="},
+		"no share": {func(s *scenario.Scenario) { s.Components[0].Share = 0 }, "component", "greater than 0"},
+	} {
+		t.Run(name, func(t *testing.T) {
+			s := scenario.Default()
+			c.change(&s)
+			_, err := askCurve(context.Background(), Env{}, s)
+			in, ok := err.(*InputError)
+			if !ok {
+				t.Fatalf("error %v, want an *InputError", err)
+			}
+			if in.Input != c.input || !strings.Contains(in.Text, c.says) {
+				t.Errorf("%s: %q, want %s with %q", in.Input, in.Text, c.input, c.says)
+			}
+		})
+	}
+}
+
+func TestCancelled(t *testing.T) {
+	ctx, cancel := context.WithCancel(context.Background())
+	cancel()
+	if _, err := askCurve(ctx, Env{}, scenario.Default()); err == nil {
+		t.Error("a cancelled question is answered")
+	}
+}

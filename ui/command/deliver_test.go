@@ -1,0 +1,89 @@
+package command
+
+import (
+	"os"
+	"path/filepath"
+	"runtime"
+	"strings"
+	"testing"
+)
+
+func TestWriteWhole(t *testing.T) {
+	dir := t.TempDir()
+	name := filepath.Join(dir, "a.csv")
+	for _, text := range []string{"first", "second, longer", ""} {
+		if err := writeWhole(name, []byte(text)); err != nil {
+			t.Fatal(err)
+		}
+		if got, err := os.ReadFile(name); err != nil || string(got) != text {
+			t.Errorf("file holds %q (%v), want %q", got, err, text)
+		}
+	}
+	only(t, dir, "a.csv")
+}
+
+func TestWriteKeepsModeAndLink(t *testing.T) {
+	if runtime.GOOS == "windows" {
+		t.Skip("no modes and links there")
+	}
+	dir := t.TempDir()
+	target, link := filepath.Join(dir, "target"), filepath.Join(dir, "link")
+	if err := os.WriteFile(target, []byte("old"), 0o640); err != nil {
+		t.Fatal(err)
+	}
+	if err := os.Symlink("target", link); err != nil {
+		t.Fatal(err)
+	}
+	if err := writeWhole(link, []byte("new")); err != nil {
+		t.Fatal(err)
+	}
+	if to, err := os.Readlink(link); err != nil || to != "target" {
+		t.Errorf("the link points to %q (%v)", to, err)
+	}
+	info, err := os.Stat(target)
+	if err != nil || info.Mode().Perm()&^0o640 != 0 {
+		t.Errorf("mode %v (%v), want at most 0640", info.Mode(), err)
+	}
+}
+
+// Nothing half-written, nothing left beside, the old file as it was.
+func TestReadOnlyFolder(t *testing.T) {
+	if os.Geteuid() == 0 || runtime.GOOS == "windows" {
+		t.Skip("this user may write everywhere")
+	}
+	dir := t.TempDir()
+	if err := os.Chmod(dir, 0o500); err != nil {
+		t.Fatal(err)
+	}
+	if err := writeWhole(filepath.Join(dir, "a"), []byte("x")); err == nil {
+		t.Error("written into a read-only folder")
+	}
+	only(t, dir)
+}
+
+func TestNameIsTaken(t *testing.T) {
+	dir := t.TempDir()
+	if err := os.Mkdir(filepath.Join(dir, "folder"), 0o700); err != nil {
+		t.Fatal(err)
+	}
+	err := writeWhole(filepath.Join(dir, "folder"), nil)
+	if err == nil || !strings.Contains(err.Error(), "folder") {
+		t.Errorf("error %v, want one that says folder", err)
+	}
+	only(t, dir, "folder")
+}
+
+func only(t *testing.T, dir string, want ...string) {
+	t.Helper()
+	entries, err := os.ReadDir(dir)
+	if err != nil {
+		t.Fatal(err)
+	}
+	var names []string
+	for _, e := range entries {
+		names = append(names, e.Name())
+	}
+	if strings.Join(names, " ") != strings.Join(want, " ") {
+		t.Errorf("the folder holds %q, want %q", names, want)
+	}
+}

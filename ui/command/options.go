@@ -1,0 +1,250 @@
+package command
+
+import (
+	"bytes"
+	"errors"
+	"fmt"
+	"io"
+	"os"
+	"strings"
+
+	"github.com/spf13/cobra"
+	"github.com/spf13/pflag"
+
+	"dropcrest/atmos"
+	"dropcrest/ui/scenario"
+)
+
+// options are the values of one command line. Options of the scenario are kept
+// as text in their order and applied when the file that they override is read.
+type options struct {
+	given    []setting
+	fromFile string
+	isPlain  bool
+	as, out  string
+
+	set *pflag.FlagSet
+}
+
+// setting is one option as it was given.
+type setting struct{ key, text string }
+
+func newOptions(cmd *cobra.Command) *options {
+	cmd.Flags().SortFlags = false
+	return &options{set: cmd.Flags()}
+}
+
+// Groups of options, kept at each flag for help.
+const groupKey = "group"
+
+func (o *options) group(name, group string) {
+	_ = o.set.SetAnnotation(name, groupKey, []string{group})
+}
+
+const outputGroup = "Input and output"
+
+func (o *options) from(*cobra.Command) {
+	o.set.StringVar(&o.fromFile, "from", "", "`FILE` with a scenario to start from, - for standard input. Options override it.")
+	o.group("from", outputGroup)
+}
+
+func (o *options) plain(*cobra.Command) {
+	o.set.BoolVar(&o.isPlain, "plain", false, "Write text in ASCII. Default: when the locale is not UTF-8.")
+	o.group("plain", outputGroup)
+}
+
+// form adds --as with these formats, the first one being the default, and --out.
+func (o *options) form(cmd *cobra.Command, formats ...string) {
+	o.set.StringVar(&o.as, "as", "", fmt.Sprintf("`FORM` of the answer: %s. Default: by the ending of --out, else %s.",
+		strings.Join(formats, ", "), formats[0]))
+	o.group("as", outputGroup)
+	o.set.StringVar(&o.out, "out", "", "`FILE` to write, whole or not at all; - is standard output.")
+	o.group("out", outputGroup)
+	_ = cmd.RegisterFlagCompletionFunc("as", cobra.FixedCompletions(formats, cobra.ShellCompDirectiveNoFileComp))
+	check := func(*cobra.Command, []string) (err error) {
+		o.as, err = chooseForm(o.as, o.out, formats)
+		return err
+	}
+	cmd.PreRunE = check
+}
+
+// chooseForm checks --as, or takes the form from the ending of the file.
+func chooseForm(as, out string, formats []string) (string, error) {
+	if as == "" {
+		as = formats[0]
+		for _, f := range formats {
+			if strings.HasSuffix(strings.ToLower(out), "."+f) {
+				as = f
+			}
+		}
+		return as, nil
+	}
+	for _, f := range formats {
+		if as == f {
+			return as, nil
+		}
+	}
+	return "", misused("--as %q: want %s", as, strings.Join(formats, ", "))
+}
+
+// inputs adds every input of the scenario as an option.
+func (o *options) inputs(cmd *cobra.Command) {
+	s := scenario.Default()
+	lists := scenario.Lists(&s)
+	for _, group := range inputGroups() {
+		for _, key := range group.keys {
+			if in, ok := scenario.Find(&s, scenario.Path(key)); ok {
+				o.input(cmd, group.title, in)
+			}
+			for _, l := range lists {
+				if l.Key() == key {
+					o.list(cmd, group.title, l)
+				}
+			}
+		}
+	}
+}
+
+func (o *options) input(cmd *cobra.Command, group string, in scenario.Input) {
+	key := in.Key()
+	o.set.Var(&late{o, key, placeholder(in)}, key, inputHelp(in))
+	o.group(key, group)
+	var words []string
+	for _, c := range in.Choices() {
+		words = append(words, c.Word+"\t"+c.Says)
+	}
+	_ = cmd.RegisterFlagCompletionFunc(key, cobra.FixedCompletions(words, cobra.ShellCompDirectiveNoFileComp))
+}
+
+func (o *options) list(cmd *cobra.Command, group string, l scenario.RowList) {
+	key := l.Key()
+	o.set.Var(&late{o, key, "ROW"}, key, l.Help()+" May be given several times. Default: "+l.Show(scenario.Style{})+".")
+	o.group(key, group)
+	var names []string
+	if l.Len() > 0 {
+		for _, in := range l.Row(0) {
+			for _, c := range in.Choices() {
+				if in.Kind() == scenario.Text {
+					names = append(names, c.Word)
+				}
+			}
+		}
+	}
+	_ = cmd.RegisterFlagCompletionFunc(key, cobra.FixedCompletions(names, cobra.ShellCompDirectiveNoFileComp))
+}
+
+// late is an option whose value is read later, with the scenario it changes.
+type late struct {
+	options *options
+	key     string
+	shape   string // placeholder in help
+}
+
+func (l *late) String() string { return "" }
+func (l *late) Type() string   { return l.shape }
+func (l *late) Set(text string) error {
+	l.options.given = append(l.options.given, setting{l.key, text})
+	return nil
+}
+
+// scenario reads the file and applies the options. Notes say which of them the
+// question does not look at.
+func (o *options) scenario(w world) (scenario.Scenario, []atmos.Note, error) {
+	s := scenario.Default()
+	if o.set.Changed("from") {
+		read, err := o.read(w)
+		if err != nil {
+			return s, nil, err
+		}
+		s = read
+	}
+	fresh := map[string]bool{}
+	for _, g := range o.given {
+		if err := apply(&s, g, !fresh[g.key]); err != nil {
+			return s, nil, misused("--%s: %v", g.key, err)
+		}
+		fresh[g.key] = true
+	}
+	return s, o.unused(&s), nil
+}
+
+func apply(s *scenario.Scenario, g setting, first bool) error {
+	if in, ok := scenario.Find(s, scenario.Path(g.key)); ok {
+		return in.Set(g.text)
+	}
+	return scenario.SetRow(s, g.key, g.text, first)
+}
+
+// unused are notes on options that were given and do not count.
+func (o *options) unused(s *scenario.Scenario) []atmos.Note {
+	var notes []atmos.Note
+	said := map[string]bool{}
+	for _, g := range o.given {
+		in, ok := scenario.Find(s, scenario.Path(g.key))
+		if !ok || in.Used() || said[g.key] {
+			continue
+		}
+		said[g.key] = true
+		notes = append(notes, unusedNote(in, "The option --"+g.key))
+	}
+	if o.fromFile == "" {
+		return notes
+	}
+	for _, in := range scenario.Inputs(s) {
+		if !in.Used() && !in.IsDefault() && !said[string(in.Path())] {
+			notes = append(notes, unusedNote(in, "The value of "+string(in.Path())+" in the scenario file"))
+		}
+	}
+	return notes
+}
+
+func unusedNote(in scenario.Input, what string) atmos.Note {
+	return atmos.Note{Code: "input-unused", Input: string(in.Path()),
+		Text: what + " is not used: with the other values as they are, nothing depends on it."}
+}
+
+// largestScenario is far more than any scenario; it keeps a wrong file from
+// filling the memory.
+const largestScenario = 1 << 20
+
+// read reads the scenario file.
+func (o *options) read(w world) (scenario.Scenario, error) {
+	name, in := o.fromFile, w.in
+	if name == "" {
+		return scenario.Scenario{}, misused("--from needs the name of a file, or - for standard input")
+	}
+	if name == "-" {
+		name = "standard input"
+	} else {
+		f, err := os.Open(name)
+		if err != nil {
+			return scenario.Scenario{}, fmt.Errorf("--from: %w", pathError(err))
+		}
+		defer f.Close()
+		if info, err := f.Stat(); err == nil && info.IsDir() {
+			return scenario.Scenario{}, fmt.Errorf("--from: %s is a folder, want a scenario file", name)
+		}
+		in = f
+	}
+	text, err := io.ReadAll(io.LimitReader(in, largestScenario+1))
+	if err != nil {
+		return scenario.Scenario{}, fmt.Errorf("--from: %w", err)
+	}
+	if len(text) > largestScenario {
+		return scenario.Scenario{}, fmt.Errorf("--from: %s is larger than 1 MiB, which no scenario file is", name)
+	}
+	s, err := scenario.Decode(name, bytes.NewReader(text))
+	if err != nil {
+		return s, fmt.Errorf("--from: %w", err)
+	}
+	return s, nil
+}
+
+// pathError says what failed without the name of the system call.
+func pathError(err error) error {
+	var p *os.PathError
+	if errors.As(err, &p) {
+		return fmt.Errorf("%s: %w", p.Path, p.Err)
+	}
+	return err
+}

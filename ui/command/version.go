@@ -1,0 +1,20 @@
+package command
+
+import "runtime/debug"
+
+// version is the version of the module, or else the revision it was built from.
+func version() string {
+	info, ok := debug.ReadBuildInfo()
+	if !ok {
+		return "devel"
+	}
+	if v := info.Main.Version; v != "" && v != "(devel)" {
+		return v
+	}
+	for _, s := range info.Settings {
+		if s.Key == "vcs.revision" && len(s.Value) >= 12 {
+			return "devel-" + s.Value[:12]
+		}
+	}
+	return "devel"
+}
