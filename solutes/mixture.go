@@ -117,7 +117,7 @@ func (x *Mixture) LnActivity(u float64) (lnaw, slope float64) {
 // bisect solves the same equations without derivatives, for parts on which the
 // joint steps do not settle.
 func (x *Mixture) bisect(u float64) (lnaw, slope float64) {
-	low, high := math.Log(1e-300), math.Log(700.0)
+	low, high := math.Log(1e-300), math.Log(1e12)
 	for range 200 {
 		mid := (low + high) / 2
 		if water, _ := x.waterAt(-math.Exp(mid)); water > u {
