@@ -200,22 +200,27 @@ const scanFrom = 1e-9
 const perDecade = 24
 
 // scan finds every extremum: a logarithmic scan for sign changes of the slope
-// and a bracketed refinement of each.
+// and a bracketed refinement of each. Where the curve still rises at the least
+// water of the activity model the scan starts there, as what the extrapolation
+// does below is no finding; nor is a boundary maximum of an extrapolation.
 func (c *curve) scan() ([]Extremum, error) {
 	far := c.farWater()
 	if math.IsNaN(far) {
 		return nil, errors.Join(ErrNoCrest, errors.New("the equilibrium curve is not finite or does not fall for large drops"))
 	}
-	n := int(math.Ceil(perDecade * math.Log10(far/scanFrom)))
-	step := math.Log(far/scanFrom) / float64(n)
-	x := math.Log(scanFrom)
-	f := c.at(scanFrom).slope
+	from, least := scanFrom, c.sol.LeastWater()
+	if least > from && c.at(least).slope > 0 {
+		from = least
+	}
+	n := int(math.Ceil(perDecade * math.Log10(far/from)))
+	start, step := math.Log(from), math.Log(far/from)/float64(n)
+	x, f := start, c.at(from).slope
 	var found []Extremum
-	if f < 0 {
-		found = append(found, Extremum{BoundaryMaximum, c.state(scanFrom)})
+	if f < 0 && least == 0 {
+		found = append(found, Extremum{BoundaryMaximum, c.state(from)})
 	}
 	for i := 1; i <= n; i++ {
-		next := math.Log(scanFrom) + float64(i)*step
+		next := start + float64(i)*step
 		g := c.at(math.Exp(next)).slope
 		if (f > 0) != (g > 0) {
 			at, jump := c.turn(x, next)

@@ -20,7 +20,7 @@ func (p Particle) Haze(S float64) (stable State, unstable State, err error) {
 	if err != nil {
 		return stable, unstable, err
 	}
-	if S-1 >= crest.Supersaturation {
+	if S >= crest.SaturationRatio || S-1 >= crest.Supersaturation {
 		return stable, unstable, &AboveCrestError{S, crest.SaturationRatio}
 	}
 	c, lnS := p.ready(), math.Log(S)
