@@ -123,6 +123,10 @@ func (c *curve) insoluble() State {
 	}
 }
 
+// climbDone is the last step in ln u: secants gain half as many digits again, so
+// what is left after it is below 1e-12 in the size and nothing in s_c.
+const climbDone = 1e-8
+
 // climb finds the one crest of a smooth activity. It starts from the crest of
 // the κ that the solution has there, takes the second derivative of that κ form
 // for the first step and secants from then on.
@@ -136,12 +140,15 @@ func (c *curve) climb() (u float64, ok bool) {
 	if !(kappa > 0) || kappa > maxKappa {
 		return 0, false
 	}
+	if there := c.equivalentKappa(crestWater(c.dry, a, kappa)); there > 0 && there <= maxKappa {
+		kappa = there
+	}
 	x := math.Log(crestWater(c.dry, a, kappa))
 	f, slope := c.kappaSlope(x)
 	lo, hi := math.Inf(-1), math.Inf(1)
 	for range 40 {
 		step := -f / slope
-		if math.Abs(step) <= 1e-10 {
+		if math.Abs(step) <= climbDone {
 			return math.Exp(x + step), slope < 0
 		}
 		if f > 0 {
