@@ -68,10 +68,10 @@ func TestSolveKappaAgainstComputed(t *testing.T) {
 // pitzerSalt is the reference's own salt: Pitzer & Mayorga 1973 at 25 °C with
 // the parameters of the README, section 2.
 type pitzerSalt struct {
-	model            string
-	perWater         float64 // molality x u
-	nu, z, ionic     float64 // ionic: ionic strength per molality
-	bp, b0, b1, cphi float64 // factors of the osmotic coefficient, multiplied out
+	model        string
+	perWater     float64 // molality x u
+	nu, z, ionic float64 // ionic: ionic strength per molality
+	b0, b1, cphi float64 // factors of the osmotic coefficient, multiplied out
 }
 
 func (p pitzerSalt) LnActivity(u float64) (lnaw, slope float64) {
