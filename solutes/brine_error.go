@@ -13,3 +13,13 @@ type UnusableError struct {
 func (e *UnusableError) Error() string {
 	return fmt.Sprintf("%s: %s is %.6g, should be %s", e.Model, e.Quantity, e.Value, e.Want)
 }
+
+// NoModelError says that a model is not for this substance.
+type NoModelError struct {
+	Substance string // its name
+	For       string // what the model is for
+}
+
+func (e *NoModelError) Error() string {
+	return fmt.Sprintf("%s: this water activity model is for %s", e.Substance, e.For)
+}
