@@ -98,6 +98,10 @@ func (w AdsorbedWater) LeastWater() float64 {
 	return t * (3 + t*(3+t))
 }
 
+// SeveralMaxima tells whether the curve may have more than one extremum, or none:
+// for B_F < 1, see AdsorptionCrest.
+func (w AdsorbedWater) SeveralMaxima() bool { return w.p.B < 1 }
+
 // LnActivity returns ln a_w, the adsorption term included, and its derivative by
 // ln u. u > 0.
 func (w AdsorbedWater) LnActivity(u float64) (lnaw, slope float64) {

@@ -178,10 +178,19 @@ func (s *SurfaceActive) SurfaceTension(u float64) (sigma, slope float64) {
 	return state.SurfaceTension, state.tensionSlope
 }
 
-// LeastWater returns the salt's, per volume of dry particle; 0 for a κ form.
+// LeastWater returns the u at which the salt leaves its range, taken with all of
+// the organic in the bulk, which is the safe side; 0 for a salt of κ form.
 func (s *SurfaceActive) LeastWater() float64 {
-	if s.salt.Solution == nil {
+	if s.salt.Solution == nil || s.salt.Share == 0 {
 		return 0
 	}
-	return s.salt.Share * s.salt.Solution.LeastWater()
+	w := s.salt.Solution.LeastWater()
+	if w == 0 {
+		return 0
+	}
+	lnaw, _ := s.salt.Solution.LnActivity(w)
+	return s.salt.Share*w + s.organic/math.Expm1(-lnaw)
 }
+
+// SeveralMaxima is true: a curve of two maxima is common with partitioning.
+func (s *SurfaceActive) SeveralMaxima() bool { return true }

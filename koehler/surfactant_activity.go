@@ -10,9 +10,11 @@ import "math"
 //
 //	u = ε_salt w + κ_org a_w/(1 - a_w),   a_w = a_w,salt(w)
 //
-// w is the salt's water per volume of salt. It is solved by Newton's method in
-// ln w; both terms rise with w, so there is one root. Where the salt is of κ
-// form this is the sum of the κ.
+// w is the salt's water per volume of salt; both terms rise with w, so there is
+// one root. It is found by Newton's method in ln w. Far on the dry side the
+// organic's term vanishes and a step may lead back to where it came from: every
+// fourth step halves the bracket instead. Where the salt is of κ form this is the
+// sum of the κ.
 func (s *SurfaceActive) activity(u, organic, dOrganic float64) (lnaw, slope float64) {
 	if s.salt.Solution == nil || s.salt.Share == 0 {
 		kappa := organic
@@ -23,7 +25,7 @@ func (s *SurfaceActive) activity(u, organic, dOrganic float64) (lnaw, slope floa
 	}
 	lo, hi := math.Inf(-1), math.Log(u/s.salt.Share)
 	y := hi
-	for range mostRootSteps {
+	for step := range mostRootSteps {
 		w := math.Exp(y)
 		l, dl := s.salt.Solution.LnActivity(w)
 		q := 1 / math.Expm1(-l) // a_w/(1 - a_w)
@@ -35,16 +37,17 @@ func (s *SurfaceActive) activity(u, organic, dOrganic float64) (lnaw, slope floa
 			lo = y
 		}
 		next := y - math.Log(water/u)*water/dWater
-		if math.Abs(next-y) <= 1e-14*math.Max(1, math.Abs(y)) || lo == hi {
+		if math.Abs(next-y) <= 1e-14*math.Max(1, math.Abs(y)) {
 			return l + dl*(next-y), dl * (u - dOrganic*q) / dWater
 		}
-		if !(next >= lo && next <= hi) {
+		if !(next > lo && next < hi) || step%4 == 3 {
 			if next = lo + (hi-lo)/2; math.IsInf(lo, -1) {
 				next = hi - 1
 			}
 		}
 		y = next
 	}
-	l, dl := s.salt.Solution.LnActivity(math.Exp(y))
-	return l, dl
+	l, dl := s.salt.Solution.LnActivity(math.Exp(y)) // rounding keeps the last digits moving
+	q := 1 / math.Expm1(-l)
+	return l, dl * (u - dOrganic*q) / (s.salt.Share*math.Exp(y) + organic*q*(1+q)*dl)
 }

@@ -47,7 +47,7 @@ func (s scan) extrema(dst []Turn, c equilibrium) []Turn {
 	}
 	lo, start := from, from
 	for _, at := range s.breaks {
-		if at <= lo || at >= s.to {
+		if at <= lo*(1+2*besideBreak) || at >= s.to { // breaks that differ by rounding are one
 			continue
 		}
 		below, above := at*(1-besideBreak), at*(1+besideBreak)
