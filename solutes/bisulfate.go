@@ -13,9 +13,9 @@ const BisulfateNote = "the dissociation constant of bisulfate and the ion parame
 // bisulfate solves the dissociation of HSO4- in a solution with protons and
 // one other cation, for one mol of sulfate in all its forms.
 type bisulfate struct {
-	ions    *Brine
-	acid    float64 // mol of H+ per mol of sulfate, were all of it dissociated
-	cation  float64 // mol of the other cation
+	ions   *Brine
+	acid   float64 // mol of H+ per mol of sulfate, were all of it dissociated
+	cation float64 // mol of the other cation
 	share  float64 // of HSO4- in the last solution, 0: none yet
 	growth float64 // by which it differs from the one before
 }

@@ -3,7 +3,7 @@ package solutes
 import "math"
 
 // SodiumBisulfateNote says how well the model of sodium bisulfate is known.
-const SodiumBisulfateNote = "sodium bisulfate: from 1 to 7 mol/kg the ion model and the polynomial of Tang & Munkelwitz 1994 differ by up to 0.03 in water activity; the ion model is used, joined from 7 to 10 mol/kg where the two meet"
+const SodiumBisulfateNote = "sodium bisulfate: from 1 to 7 mol/kg the ion model and the polynomial of Tang & Munkelwitz 1994 differ by up to 0.032 in water activity; the ion model is used, joined from 7 to 10 mol/kg where the two meet"
 
 // BorrowedBisulfateNote says which parameters stand in for unknown ones.
 const BorrowedBisulfateNote = "the ion parameters of ammonium and bisulfate are not known; those of sodium and bisulfate stand in"
@@ -66,11 +66,14 @@ func NewBisulfate(s Substance, T float64) (*OsmoticSolution, error) {
 		phi = func(m float64) float64 { return j.osmotic(ions, m) }
 		top = s.Concentrated.MaxMolality(j.mass)
 	}
-	table := newOsmoticTable(sulfateIons, top, phi)
-	return &OsmoticSolution{
-		model: moleculesOf{table, salt.groups}, ions: sulfateIons * salt.groups,
+	o := &OsmoticSolution{
+		model: newOsmoticTable(sulfateIons, top, phi), ions: sulfateIons * salt.groups,
 		molality: one, highest: top / salt.groups,
-	}, nil
+	}
+	if salt.groups != 1 {
+		o.model = moleculesOf{o.model, salt.groups}
+	}
+	return o, nil
 }
 
 // joinedPolynomial is a polynomial of the water activity in mass percent and
