@@ -12,14 +12,17 @@ const (
 )
 
 // NewSulfuricAcid returns the solution of sulfuric acid at T, 180 to 373.15 K:
-// ion interaction with the bisulfate equilibrium (within 0.008 in φ of Robinson
-// and Stokes 1959 from 0.1 to 6 mol/kg at 25 °C), then Tabazadeh et al. 1997.
+// ion interaction with the bisulfate equilibrium, then Tabazadeh et al. 1997.
 // Between water activities of 0.80 and 0.63 the molalities of both at the same
 // water activity are blended,
 //
 //	m = (1-s) m_ions + s m_Tabazadeh,  s = t² (3 - 2t),  t = (0.80 - a_w)/0.17
 //
-// and the range ends at a water activity of 0.05. Errors are of type
+// and the range ends at a water activity of 0.05. At 25 °C φ is within 0.008 of
+// Robinson and Stokes 1959 from 0.1 to 4 mol/kg. Above, where the second model
+// is used beyond its 260 K, the water activity is up to 0.017 low (0.9 wt% of
+// acid at 6 mol/kg); the ion model alone would stay within 0.008 in φ up to 6
+// mol/kg there, but has no data in the cold. Errors are of type
 // *UnusableError or *NoModelError.
 func NewSulfuricAcid(s Substance, T float64) (*OsmoticSolution, error) {
 	if s.Key != "sulfuric_acid" {
