@@ -43,6 +43,14 @@ func TestRandomFilmsAgainstScan(t *testing.T) {
 		if err != nil {
 			t.Fatal(err)
 		}
+		crest, err := AdsorptionCrest(dry, 2.1e-9, p)
+		if i, place := Barrier(turns); place == NoBarrier {
+			if none++; !errors.Is(err, ErrNoCrest) {
+				t.Errorf("%+v at %v m: crest %+v, error %v, but no maximum", p, dry, crest, err)
+			}
+		} else if err != nil || crest != turns[i] {
+			t.Errorf("%+v at %v m: crest %+v, error %v, want %+v", p, dry, crest, err, turns[i])
+		}
 		end := 3 * math.Log(greatestGrowth)
 		const from, points = -12.0, 6000
 		where, sign := gridTurns(adsorptionCurve{p.On(dry), 2.1e-9 / dry}, from, end, points)
@@ -59,9 +67,6 @@ func TestRandomFilmsAgainstScan(t *testing.T) {
 			if turn.Kind == Minimum {
 				minima++
 			}
-		}
-		if _, err := AdsorptionCrest(dry, 2.1e-9, p); errors.Is(err, ErrNoCrest) {
-			none++
 		}
 	}
 	t.Logf("%d minima, %d films without a crest", minima, none)

@@ -14,8 +14,10 @@ const GreatestLimitedKappa = 34.97056274847714
 // particle of limited solubility (Petters and Kreidenweis, Atmos. Chem. Phys. 8,
 // 6273, 2008) in the order of their wet size. dry is the dry diameter and kelvin
 // the Kelvin length A, both in m; S = a_w exp(A/D). It does not allocate when
-// dst has room for twice the dissolution points and two more. κ of every part
-// must lie below GreatestLimitedKappa (no substance has more than about 1.5).
+// dst has room for twice the dissolution points and two more. Both lengths must
+// be positive: otherwise the one turn has NaN in every field. κ of every part
+// must lie below GreatestLimitedKappa (no substance has more than about 1.5); above
+// it a segment may hold further extrema, which are not found.
 //
 // The extrema are exact; nothing is scanned. With x = D/Dd, u = x³ - 1, a = A/Dd
 // a segment between dissolution points has κ(u) = K + G u, K of the dissolved
@@ -42,6 +44,9 @@ const GreatestLimitedKappa = 34.97056274847714
 // with exp(a)/(1+G), and falls: a BoundaryMaximum.
 func LimitedExtrema(dst []Turn, dry, kelvin float64, mix *solutes.Limited) []Turn {
 	a := kelvin / dry
+	if !(dry > 0 && kelvin > 0) {
+		return append(dst, Turn{Maximum, math.NaN(), math.NaN(), math.NaN()})
+	}
 	dissolved, saturated := mix.Segment(0)
 	if dissolved == 0 {
 		dst = append(dst, limitedTurn(BoundaryMaximum, a, 0, 0, dissolved, saturated))

@@ -152,7 +152,7 @@ func checkKinds(t *testing.T, turns []Turn) {
 		case maximum != (i%2 == 0),
 			turn.Kind == Minimum,
 			turn.Kind == BoundaryMaximum && i > 0,
-			i > 0 && turn.Water <= turns[i-1].Water,
+			i > 0 && turn.Water < turns[i-1].Water, // a pair may agree to rounding
 			i == len(turns)-1 && !maximum:
 			t.Fatalf("impossible turns %+v", turns)
 		}
@@ -193,40 +193,57 @@ func TestLongRandomMixturesAgainstScan(t *testing.T) {
 	scanMixtures(t, 10000)
 }
 
-// The dry size at which a maximum and its kink merge is approached from both
-// sides: on one both are there, closer and closer, on the other neither.
+// Towards the dry size at which a maximum and a kink merge, below or above the
+// kink, both are there on one side, closer and closer, and neither on the other.
 func TestNearlyDegeneratePair(t *testing.T) {
+	mix := mustMix(t, solutes.LimitedPart{Volume: 0.98, Kappa: 0.15, Solubility: 0.01},
+		solutes.LimitedPart{Volume: 0.02, Kappa: 1.28, Solubility: math.Inf(1)})
+	cases := []struct {
+		name      string
+		slope     func(Kink) float64 // 0 where the pair merges
+		pair      [2]int             // the turns that do
+		sign      float64            // of the change of dry size that separates them
+		remaining int
+	}{
+		{"falls into the kink at small sizes", func(k Kink) float64 { return k.Below }, [2]int{0, 1}, -1, 1},
+		{"rises out of the kink at large sizes", func(k Kink) float64 { return k.Above }, [2]int{1, 2}, 1, 1},
+	}
 	const (
 		kelvin   = 2.1e-9
-		rounding = 1e-17 // of s where S - 1 is about 1e-3
+		rounding = 1e-17 // of s where |s| is about 1e-3
 	)
-	parts := []solutes.LimitedPart{
-		{Volume: 0.98, Kappa: 0.15, Solubility: 0.01}, {Volume: 0.02, Kappa: 1.28, Solubility: math.Inf(1)},
-	}
-	mix := mustMix(t, parts...)
-	kinkSlope := func(dry float64) float64 { return LimitedKinks(nil, dry, kelvin, mix)[0].Below }
-	lo, hi := 50e-9, 5000e-9 // falls into the kink at lo, rises through it at hi
-	if kinkSlope(lo) >= 0 || kinkSlope(hi) <= 0 {
-		t.Fatal("the merging size is not between the bounds")
-	}
-	for hi-lo > 1e-15*hi {
-		if mid := lo + (hi-lo)/2; kinkSlope(mid) < 0 {
-			lo = mid
-		} else {
-			hi = mid
+	for _, c := range cases {
+		slopeAtKink := func(dry float64) float64 { return c.slope(LimitedKinks(nil, dry, kelvin, mix)[0]) }
+		lo, hi := 5e-9, 5000e-9
+		if slopeAtKink(lo) >= 0 || slopeAtKink(hi) <= 0 {
+			t.Fatal("the merging size is not between the bounds")
 		}
-	}
-	for _, relative := range []float64{1e-2, 1e-4, 1e-6, 1e-8, 1e-10, 1e-12} {
-		turns := LimitedExtrema(nil, lo*(1-relative), kelvin, mix)
-		checkKinds(t, turns)
-		if len(turns) != 3 || turns[1].Kind != KinkMinimum || turns[0].Supersaturation < turns[1].Supersaturation-rounding {
-			t.Errorf("%v below merging: %+v, want maximum, kink, maximum", relative, turns)
-		} else if d := turns[1].Water/turns[0].Water - 1; d > 20*relative || d <= 0 {
-			t.Errorf("%v below merging: the pair is %v apart", relative, d)
+		for hi-lo > 1e-15*hi {
+			if mid := lo + (hi-lo)/2; slopeAtKink(mid) < 0 {
+				lo = mid
+			} else {
+				hi = mid
+			}
 		}
-		turns = LimitedExtrema(nil, hi*(1+relative), kelvin, mix)
-		if checkKinds(t, turns); len(turns) != 1 {
-			t.Errorf("%v above merging: %+v, want one maximum", relative, turns)
+		for _, relative := range []float64{1e-2, 1e-4, 1e-6, 1e-8, 1e-10, 1e-12, 1e-14} {
+			turns := LimitedExtrema(nil, lo*(1+c.sign*relative), kelvin, mix)
+			checkKinds(t, turns)
+			if len(turns) != 3 {
+				t.Errorf("%s, %v apart: %+v, want maximum, kink, maximum", c.name, relative, turns)
+				continue
+			}
+			low, high := turns[c.pair[0]], turns[c.pair[1]]
+			kink, top := low, high
+			if c.pair[0] == 0 {
+				kink, top = high, low
+			}
+			if kink.Kind != KinkMinimum || top.Supersaturation < kink.Supersaturation-rounding || high.Water/low.Water-1 > 20*relative {
+				t.Errorf("%s, %v apart: kink %+v, maximum %+v", c.name, relative, kink, top)
+			}
+			turns = LimitedExtrema(nil, hi*(1-c.sign*relative), kelvin, mix)
+			if checkKinds(t, turns); len(turns) != c.remaining {
+				t.Errorf("%s, %v beyond: %+v, want %d", c.name, relative, turns, c.remaining)
+			}
 		}
 	}
 }

@@ -256,6 +256,11 @@ func TestLimitedSpecialParts(t *testing.T) {
 			t.Errorf("%s: first %+v, want S = %v at the dry size", c.name, turns[0], c.first)
 		}
 	}
+	for _, lengths := range [][2]float64{{0, 1e-9}, {1e-7, 0}, {-1e-7, 1e-9}, {math.NaN(), 1e-9}, {1e-7, math.NaN()}} {
+		if turns := LimitedExtrema(nil, lengths[0], lengths[1], threeParts(t)); len(turns) != 1 || !math.IsNaN(turns[0].Supersaturation) {
+			t.Errorf("lengths %v: %+v, want NaN", lengths, turns)
+		}
+	}
 	bare := mustMix(t, solutes.LimitedPart{Volume: 1, Kappa: 0, Solubility: 0.1})
 	if kinks := LimitedKinks(nil, dry, kelvin, bare); len(kinks) != 0 {
 		t.Errorf("κ 0 makes kinks: %+v", kinks)

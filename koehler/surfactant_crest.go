@@ -18,8 +18,10 @@ const (
 // drop that leaves it makes a kink: like a dissolution point it is a minimum or
 // nothing, because dσ/d ln u jumps up from 0 there.
 //
-// Without a floor σ may be negative near the dry size. That is outside the
-// equation of Szyszkowski; such turns are listed, as the equation has them.
+// Without a floor σ may be negative near the dry size, which is outside the
+// equation of Szyszkowski. No extremum lies there: with σ ≤ 0 the Kelvin term
+// rises, since σ does and D grows, and a_w rises everywhere, since the share f in
+// the bulk grows more slowly than the volume, d ln f/d ln V < 1.
 func (s *SurfaceActive) Extrema(dst []Turn) []Turn {
 	in := scan{
 		from: firstSurfaceWater, to: math.Pow(greatestSurfaceGrowth, 3) - 1,
@@ -40,20 +42,14 @@ func (s *SurfaceActive) isInert() bool {
 	return !salt && s.organic == 0
 }
 
-// Crest returns the highest maximum at which σ is positive, and its place among
-// those maxima. Errors: ErrNoCrest.
+// Crest returns the highest maximum and its place among the maxima. σ is
+// positive there, see Extrema. Errors: ErrNoCrest.
 func (s *SurfaceActive) Crest() (Turn, Place, error) {
 	var room [8]Turn
 	turns := s.Extrema(room[:0])
-	sound := turns[:0]
-	for _, t := range turns {
-		if s.At(math.Max(t.Water, leastWater)).SurfaceTension > 0 {
-			sound = append(sound, t)
-		}
-	}
-	i, place := Barrier(sound)
+	i, place := Barrier(turns)
 	if place == NoBarrier {
 		return Turn{}, NoBarrier, ErrNoCrest
 	}
-	return sound[i], place, nil
+	return turns[i], place, nil
 }

@@ -97,6 +97,9 @@ func scanSurfaces(t *testing.T, n int) {
 			if turn.Kind == KinkMinimum {
 				kinks++
 			}
+			if turn.Water > 0 && s.At(turn.Water).SurfaceTension <= 0 {
+				t.Errorf("%+v %+v at %v m: an extremum at negative σ: %+v", s.p, s.salt, dry, turn)
+			}
 			found := false
 			for i, y := range where {
 				found = found || (turn.Kind == Maximum) == (sign[i] > 0) && math.Abs(math.Log(turn.Water)-y) <= 1.01*step
