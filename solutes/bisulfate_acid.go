@@ -72,7 +72,7 @@ func (s *sulfuric) osmotic(m float64) float64 {
 	default:
 		aw = crossing(0.5*sulfuricLeast, sulfuricFitDown, func(aw float64) float64 { return s.fit(aw) - m })
 	}
-	return -math.Log(aw) / (sulfateIons * waterMass * m)
+	return -math.Log(aw) / (sulfateIons * waterMolarMass * m)
 }
 
 // blended is the molality of the join at the water activity aw, q being that of
@@ -85,7 +85,7 @@ func (s *sulfuric) blended(q, aw float64) float64 {
 
 // ionActivity is a_w of the ion model.
 func (s *sulfuric) ionActivity(m float64) float64 {
-	return math.Exp(-sulfateIons * waterMass * m * s.ions.osmotic(m))
+	return math.Exp(-sulfateIons * waterMolarMass * m * s.ions.osmotic(m))
 }
 
 // fit is the middle region of Tabazadeh et al., at its ends too.

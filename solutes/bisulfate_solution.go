@@ -1,6 +1,9 @@
 package solutes
 
-import "math"
+import (
+	"fmt"
+	"math"
+)
 
 // SodiumBisulfateNote says how well the model of sodium bisulfate is known.
 const SodiumBisulfateNote = "sodium bisulfate: from 1 to 7 mol/kg the ion model and the polynomial of Tang & Munkelwitz 1994 differ by up to 0.032 in water activity; the ion model is used, joined from 7 to 10 mol/kg where the two meet"
@@ -64,7 +67,9 @@ func NewBisulfate(s Substance, T float64) (*OsmoticSolution, error) {
 			j.low, j.high = salt.groups*s.Concentrated.JoinLow, salt.groups*s.Concentrated.JoinHigh
 		}
 		phi = func(m float64) float64 { return j.osmotic(ions, m) }
-		top = s.Concentrated.MaxMolality(j.mass)
+		if top, err = j.end(s.Concentrated); err != nil {
+			return nil, err
+		}
 	}
 	o := &OsmoticSolution{
 		model: newOsmoticTable(sulfateIons, top, phi), ions: sulfateIons * salt.groups,
@@ -83,6 +88,21 @@ type joinedPolynomial struct {
 	c         []float64
 	mass      float64 // kg per mol of sulfate
 	low, high float64
+}
+
+// end returns the largest molality. It refuses a polynomial that ends within
+// the join or has no water left at its end.
+func (j *joinedPolynomial) end(c *Concentrated) (float64, error) {
+	const model = "concentrated bisulfate solution"
+	top := c.MaxMolality(j.mass)
+	if !(c.MaxMassPercent < 100 && j.high > j.low && top > j.high) {
+		return 0, &UnusableError{model, "the largest mass percent", c.MaxMassPercent,
+			fmt.Sprintf("above %.4g, where the join ends, and below 100", 100*j.high*j.mass/(1+j.high*j.mass))}
+	}
+	if beyond := top * math.Exp(4*tableStep); !(j.polynomial(beyond) > 0) || math.IsInf(j.polynomial(beyond), 1) {
+		return 0, &UnusableError{model, "the largest mass percent", c.MaxMassPercent, "in the range where the polynomial stays above a water activity of 0"}
+	}
+	return top, nil
 }
 
 func (j *joinedPolynomial) osmotic(ions *bisulfate, m float64) float64 {
@@ -104,5 +124,5 @@ func (j *joinedPolynomial) polynomial(m float64) float64 {
 	for i := len(j.c) - 1; i >= 0; i-- {
 		less = (less + j.c[i]) * x
 	}
-	return -math.Log1p(less) / (sulfateIons * waterMass * m)
+	return -math.Log1p(less) / (sulfateIons * waterMolarMass * m)
 }

@@ -142,7 +142,7 @@ func TestBisulfatePolynomials(t *testing.T) {
 		off := func(percent int) float64 {
 			w := float64(percent) / 100
 			m := w / (1 - w) / j.mass
-			k := -sulfateIons * waterMass * m
+			k := -sulfateIons * waterMolarMass * m
 			return math.Exp(k*b.osmotic(m)) - math.Exp(k*j.polynomial(m))
 		}
 		for w := c.from; w <= c.to; w++ {
@@ -163,7 +163,7 @@ func TestSodiumBisulfateNote(t *testing.T) {
 	b := newBisulfate(1, true, 0.3915)
 	j := joinedPolynomial{c: s.Concentrated.Activity, mass: s.MolarMass.Value}
 	off := func(m float64) float64 {
-		k := -sulfateIons * waterMass * m
+		k := -sulfateIons * waterMolarMass * m
 		return math.Exp(k*b.osmotic(m)) - math.Exp(k*j.polynomial(m))
 	}
 	worst := 0.0

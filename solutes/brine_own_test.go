@@ -24,7 +24,7 @@ func ownModel(t testing.TB, key string, T float64) *OsmoticSolution {
 // the limit of complete dissociation; ln a_w 0 for much water.
 func TestOwnModelsShareTheseProperties(t *testing.T) {
 	for _, key := range ownKeys {
-		for _, T := range []float64{190, 233, 273.15, 298.15, 320} {
+		for _, T := range []float64{coldest, 233, 273.15, 298.15, hottest} {
 			o := ownModel(t, key, T)
 			var _ Solution = o
 			last := math.Inf(-1)
@@ -183,6 +183,56 @@ func TestOwnModelRefuses(t *testing.T) {
 	} {
 		if _, err := make(salt, 298.15); !errors.As(err, &none) || none.Substance != salt.Name {
 			t.Errorf("%s of sodium chloride: error %v, want a *NoModelError", name, err)
+		}
+	}
+}
+
+// The mixture without a table is the same solution.
+func TestBrineSolution(t *testing.T) {
+	table := ownModel(t, "sea_salt", 298.15)
+	o, err := SeaSaltBrine(298.15).Solution(table.molality, table.highest)
+	if err != nil {
+		t.Fatal(err)
+	}
+	var _ Solution = o
+	for u := 0.3 * table.LeastWater(); u < 1e9; u *= 1.1 {
+		l1, s1 := table.LnActivity(u)
+		l2, s2 := o.LnActivity(u)
+		tol := 1e-8
+		if u < table.LeastWater() {
+			tol = 1e-6 // the continuation hangs on the last slope
+		}
+		if math.Abs(l1/l2-1) > tol || math.Abs(s1/s2-1) > 1e-6 {
+			t.Errorf("u = %v: table %v %v, direct %v %v", u, l1, s1, l2, s2)
+		}
+	}
+	var unusable *UnusableError
+	for _, x := range []float64{0, -1, math.NaN(), math.Inf(1)} {
+		if _, err := SeaSaltBrine(298.15).Solution(1, x); !errors.As(err, &unusable) {
+			t.Errorf("largest %v: error %v", x, err)
+		}
+	}
+}
+
+// A polynomial that a user broke is refused, not computed.
+func TestBisulfateRefusesPolynomials(t *testing.T) {
+	good, _ := Standard().Find("ammonium_bisulfate")
+	for name, change := range map[string]func(*Concentrated){
+		"no range":      func(c *Concentrated) { c.MaxMassPercent = 0 },
+		"all acid":      func(c *Concentrated) { c.MaxMassPercent = 100 },
+		"short range":   func(c *Concentrated) { c.MaxMassPercent = 15 },
+		"below 0":       func(c *Concentrated) { c.Activity = []float64{-0.02} },
+		"NaN":           func(c *Concentrated) { c.Activity = []float64{math.NaN()} },
+		"NaN range":     func(c *Concentrated) { c.MaxMassPercent = math.NaN() },
+		"activity of 1": func(c *Concentrated) { c.Activity = nil },
+	} {
+		c := *good.Concentrated
+		change(&c)
+		s := good
+		s.Concentrated = &c
+		var unusable *UnusableError
+		if _, err := NewBisulfate(s, 298.15); !errors.As(err, &unusable) {
+			t.Errorf("%s: error %v, want an *UnusableError", name, err)
 		}
 	}
 }

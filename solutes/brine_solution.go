@@ -6,14 +6,11 @@ import (
 	"dropcrest/atmos"
 )
 
-// waterMass is the molar mass of water, kg/mol.
-const waterMass = atmos.WaterMolarMass
-
 // OsmoticSolution is the water activity of one solute whose osmotic coefficient
 // φ is known from a model of its own: acids and bisulfates with the bisulfate
-// equilibrium, sea salt, non-electrolytes.
+// equilibrium, sea salt, non-electrolytes, or a Brine.
 //
-//	ln a_w = -ν M_w m φ(m),  m = perVolume/(u ρ_w)
+//	ln a_w = -ν M_w m φ(m),  m = (ρ_dry/M)/(u ρ_w)
 //
 // Immutable, safe for concurrent use; its methods do not allocate.
 type OsmoticSolution struct {
@@ -60,7 +57,7 @@ func (o *OsmoticSolution) LargestMolality() float64 { return o.highest }
 // kg of water; φ → 1 for m → 0 with complete dissociation.
 func (o *OsmoticSolution) Osmotic(m float64) float64 {
 	lnaw, _ := o.model.lnActivity(m)
-	return -lnaw / (o.ions * waterMass * m)
+	return -lnaw / (o.ions * waterMolarMass * m)
 }
 
 // moleculesOf scales a model from one formula unit of several groups, such as

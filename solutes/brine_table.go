@@ -68,18 +68,8 @@ func (t *osmoticTable) at(m float64) (phi, slope float64) {
 
 // lnActivity returns ln a_w and its derivative by ln m.
 func (t *osmoticTable) lnActivity(m float64) (lnaw, slope float64) {
-	if m > t.top {
-		return t.beyond(m)
-	}
-	phi, d := t.at(m)
-	w := -t.ionic * waterMass * m
-	return w * phi, w * (phi + d)
-}
-
-// beyond continues ln a_w above the table with its last value and slope.
-func (t *osmoticTable) beyond(m float64) (lnaw, slope float64) {
-	l, d := t.lnActivity(t.top)
-	power := d / l
-	lnaw = l * math.Pow(m/t.top, power)
-	return lnaw, lnaw * power
+	at := min(m, t.top)
+	phi, d := t.at(at)
+	w := -t.ionic * waterMolarMass * at
+	return powerBeyond(w*phi, w*(phi+d), m/at)
 }

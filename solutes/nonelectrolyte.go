@@ -32,7 +32,7 @@ const (
 // Sucrose ends at saturation, where Norrish's equation gives 0.850 and the
 // quartic 0.849; for the others 0.3 is the end of the data behind k.
 func nonelectrolyteOf(key string) (model nonelectrolyte, least float64, ok bool) {
-	low, high := (1/idealUpper-1)/waterMass, (1/idealLower-1)/waterMass
+	low, high := (1/idealUpper-1)/waterMolarMass, (1/idealLower-1)/waterMolarMass
 	switch key {
 	case "sucrose":
 		return nonelectrolyte{6.47, true, sucroseLow, sucroseHigh}, 0.85, true
@@ -77,16 +77,16 @@ func (n nonelectrolyte) lnActivity(m float64) (lnaw, slope float64) {
 // 1961; from memory), or the ideal solution.
 func (n nonelectrolyte) dilute(m float64) (lnaw, slope float64) {
 	if !n.quartic {
-		return -math.Log1p(waterMass * m), -waterMass * m / (1 + waterMass*m)
+		return -math.Log1p(waterMolarMass * m), -waterMolarMass * m / (1 + waterMolarMass*m)
 	}
 	const c1, c2, c3, c4 = 0.07028, 0.01847, -0.004045, 0.000228
 	phi := 1 + m*(c1+m*(c2+m*(c3+m*c4)))
 	d := m * (c1 + m*(2*c2+m*(3*c3+m*4*c4)))
-	return -waterMass * m * phi, -waterMass * m * (phi + d)
+	return -waterMolarMass * m * phi, -waterMolarMass * m * (phi + d)
 }
 
 func (n nonelectrolyte) concentrated(m float64) (lnaw, slope float64) {
-	w := waterMass * m
+	w := waterMolarMass * m
 	x := w / (1 + w) // mole fraction of the solute; d ln x/d ln m = 1 - x
 	return -math.Log1p(w) - n.norrish*x*x, -x - 2*n.norrish*x*x*(1-x)
 }

@@ -63,7 +63,7 @@ func TestNonelectrolyteWindow(t *testing.T) {
 		if l, _ := n.dilute(n.high); math.Abs(math.Exp(l)-0.95) > 1e-12 {
 			t.Errorf("%s: ideal a_w %v at its end", key, math.Exp(l))
 		}
-		x := 1 / (1 + waterMass*20.) // mole fraction of water at 20 mol/kg
+		x := 1 / (1 + waterMolarMass*20.) // mole fraction of water at 20 mol/kg
 		want := x * math.Exp(-n.norrish*(1-x)*(1-x))
 		if l, _ := n.lnActivity(20); math.Abs(math.Exp(l)-want) > 1e-14 {
 			t.Errorf("%s: a_w %v at 20 mol/kg, Norrish %v", key, math.Exp(l), want)

@@ -84,7 +84,7 @@ func NewSeaSalt(s Substance, T float64) (*OsmoticSolution, error) {
 func (b *Brine) molalityAt(aw, low, high float64) float64 {
 	for range 60 {
 		mid := 0.5 * (low + high)
-		if phi, _ := b.Osmotic(mid); b.total*waterMass*mid*phi < -math.Log(aw) {
+		if phi, _ := b.Osmotic(mid); b.total*waterMolarMass*mid*phi < -math.Log(aw) {
 			low = mid
 		} else {
 			high = mid

@@ -24,7 +24,7 @@ func TestSeaWater(t *testing.T) {
 		t.Errorf("φ = %v, want 0.9015 ± 0.004", phi)
 	}
 	// Robinson 1954 (from memory)
-	if aw := math.Exp(-waterMass * m * phi); math.Abs(aw-0.98123) > 1e-4 {
+	if aw := math.Exp(-waterMolarMass * m * phi); math.Abs(aw-0.98123) > 1e-4 {
 		t.Errorf("a_w = %v, Robinson 1954 0.98123", aw)
 	}
 }

@@ -60,7 +60,7 @@ func TestTabazadehOutside(t *testing.T) {
 // TabazadehNote says), against Robinson & Stokes 1959 (from memory).
 func TestTabazadehNote(t *testing.T) {
 	for _, c := range robinsonStokesAcid {
-		aw := math.Exp(-sulfateIons * waterMass * c.m * c.phi)
+		aw := math.Exp(-sulfateIons * waterMolarMass * c.m * c.phi)
 		if aw > 0.8 {
 			continue
 		}
@@ -110,7 +110,7 @@ func TestSulfuricAcidSolution(t *testing.T) {
 			continue
 		}
 		l, _ := o.model.lnActivity(c.m)
-		low := math.Exp(-sulfateIons*waterMass*c.m*c.phi) - math.Exp(l)
+		low := math.Exp(-sulfateIons*waterMolarMass*c.m*c.phi) - math.Exp(l)
 		if low < 0.010 || low > 0.017 {
 			t.Errorf("a_w at %v mol/kg is %v low, documented are 0.011 to 0.017", c.m, low)
 		}

@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"math"
 
+	"dropcrest/atmos"
 	"dropcrest/solutes"
 )
 
@@ -119,8 +120,7 @@ func seaWater(a Args) (*solutes.OsmoticSolution, float64, error) {
 // a water activity that is given by m (mol/kg) and phi (ν = 3) at 25 °C.
 func strongAcid(a Args) (float64, error) {
 	s, _ := solutes.Standard().Find("sulfuric_acid")
-	const water = 0.01801528 // kg/mol
-	aw := math.Exp(-3 * water * a.Number("m") * a.Number("phi"))
+	aw := math.Exp(-3 * atmos.WaterMolarMass * a.Number("m") * a.Number("phi"))
 	w := solutes.TabazadehMolality(aw, a.NumberOr("T", 298.15)) * s.MolarMass.Value
 	return w / (1 + w), nil
 }
