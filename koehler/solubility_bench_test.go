@@ -39,3 +39,21 @@ func TestLimitedExtremaDoesNotAllocate(t *testing.T) {
 		t.Errorf("%v allocations, want none", n)
 	}
 }
+
+func BenchmarkTurns(b *testing.B) {
+	turns := make([]Turn, 0, 8)
+	for _, bench := range []struct {
+		name string
+		p    Particle
+	}{
+		{"limited", Particle{DryDiameter: 120e-9, Temperature: 293.15, Solution: threeParts(b)}},
+		{"limited, compressible", Particle{DryDiameter: 120e-9, Temperature: 293.15, Solution: threeParts(b), Kelvin: Compressible}},
+	} {
+		b.Run(bench.name, func(b *testing.B) {
+			b.ReportAllocs()
+			for b.Loop() {
+				turns, _ = bench.p.Turns(turns[:0])
+			}
+		})
+	}
+}

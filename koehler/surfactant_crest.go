@@ -27,13 +27,20 @@ func (s *SurfaceActive) Extrema(dst []Turn) []Turn {
 		from: firstSurfaceWater, to: math.Pow(greatestSurfaceGrowth, 3) - 1,
 		points: surfacePoints, dryLnS: math.Inf(-1),
 	}
-	if u, found := s.floorWater(); found {
-		in.breaks = []float64{u}
-	}
+	var room [1]float64
+	in.breaks = s.Kinks(room[:0])
 	if s.isInert() {
 		in.dryLnS = s.kelvin * s.At(leastWater).SurfaceTension
 	}
 	return in.extrema(dst, s)
+}
+
+// Kinks appends the u at which σ leaves its floor, if it does.
+func (s *SurfaceActive) Kinks(dst []float64) []float64 {
+	if u, found := s.floorWater(); found {
+		dst = append(dst, u)
+	}
+	return dst
 }
 
 // isInert tells whether nothing lowers the water activity.
