@@ -4,6 +4,7 @@ import (
 	"math"
 	"slices"
 
+	"dropcrest/atmos"
 	"dropcrest/solutes"
 )
 
@@ -28,10 +29,10 @@ func (p Particle) Turns(dst []Turn) ([]Turn, error) {
 		return dst, err
 	}
 	mix, limited := p.Solution.(*solutes.Limited)
-	c := p.ready()
 	switch {
 	case limited && p.Swelling == nil && p.Tension == nil && p.Kelvin == Standard:
-		return LimitedExtrema(dst, c.dry, 4*c.sigma*c.kelvin.PerPressure, mix), nil
+		kelvin := KelvinLength(atmos.SurfaceTension(p.Temperature), p.Temperature)
+		return LimitedExtrema(dst, p.DryDiameter, kelvin, mix), nil
 	case !limited && !p.severalMaxima():
 		crest, err := p.Crest()
 		if err != nil {
@@ -39,6 +40,12 @@ func (p Particle) Turns(dst []Turn) ([]Turn, error) {
 		}
 		return append(dst, Turn{crest.Kind, crest.Water, crest.GrowthFactor, crest.Supersaturation}), nil
 	}
+	return p.scanTurns(dst, mix), nil
+}
+
+// scanTurns scans the curve; mix is its Solution where that is a *solutes.Limited.
+func (p Particle) scanTurns(dst []Turn, mix *solutes.Limited) []Turn {
+	c := p.ready()
 	in := scan{from: scanFrom, to: turnEnd, points: turnPoints, dryLnS: math.Inf(-1), breaks: p.kinks(mix)}
 	if t := c.at(leastWater); t.slope < 0 {
 		in.dryLnS = t.lnS
@@ -51,7 +58,7 @@ func (p Particle) Turns(dst []Turn) ([]Turn, error) {
 			dst[i].GrowthFactor = math.Cbrt(v)
 		}
 	}
-	return dst, nil
+	return dst
 }
 
 // turnEnd is the u at which a scan ends: 10000 times the dry diameter.
