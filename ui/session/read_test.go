@@ -109,7 +109,7 @@ func TestDamaged(t *testing.T) {
 			save(t, dir, full())
 			write(t, dir, c.file, c.content)
 			st, got, found, err := Open(dir)
-			defer st.Close()
+			t.Cleanup(func() { _ = st.Close() })
 			if err == nil {
 				t.Fatal("no note")
 			}
@@ -159,7 +159,7 @@ func TestOnlyTheOwnerPutsAside(t *testing.T) {
 	owner, _, _ := open(t, dir)
 	write(t, dir, sessionFile, "damaged")
 	second, _, found, err := Open(dir)
-	defer second.Close()
+	t.Cleanup(func() { _ = second.Close() })
 	if found || err == nil || strings.Contains(err.Error(), ".damaged") {
 		t.Errorf("found %t, note %v", found, err)
 	}
@@ -182,7 +182,7 @@ func TestNotAFile(t *testing.T) {
 				t.Fatal(err)
 			}
 			st, _, found, err := Open(dir)
-			defer st.Close()
+			t.Cleanup(func() { _ = st.Close() })
 			if found || err == nil {
 				t.Errorf("found %t, note %v", found, err)
 			}
