@@ -15,10 +15,10 @@ type Place int
 
 const (
 	NoBarrier Place = iota // the curve has no maximum
-	Only
-	First
-	Middle
-	Last
+	Only                   // the one maximum
+	First                  // the one of the smallest wet size, of several
+	Middle                 // neither the first nor the last
+	Last                   // the one of the largest wet size, of several
 )
 
 // String returns the word that scripts see: "only", "first", "middle", "last",
