@@ -92,7 +92,7 @@ func newCurve(env Env, s scenario.Scenario) (*curve, error) {
 	}
 	c.dissolved = dissolved
 	c.parts = recipe.Parts
-	c.notes = distinct(slices.Concat(notes, more, waterNotes(s)))
+	c.notes = distinct(slices.Concat(notes, waterNotes(s), more))
 	c.particle = koehler.Particle{
 		DryDiameter: dryDiameter(s),
 		Temperature: s.Temperature,

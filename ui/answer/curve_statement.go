@@ -14,6 +14,9 @@ func curveStatement(s scenario.Scenario) []string {
 	if s.DrySizeIs == "mobility" {
 		lines = append(lines, "made of {component},")
 	}
+	if len(s.Components) > 1 && s.SharesBy != "volume" {
+		lines = append(lines, "with shares by {shares-by},")
+	}
 	water := "water activity by {water-activity}"
 	switch s.WaterActivity {
 	case "kappa":

@@ -115,12 +115,14 @@ func newRoot(w world) *cobra.Command {
 	root.SetHelpFunc(func(c *cobra.Command, _ []string) { w.help(c) })
 	root.SetHelpCommand(helpCommand())
 	root.CompletionOptions.HiddenDefaultCmd = false
-	root.Flags().SortFlags = false
 	w.addScreen(root)
+	root.InitDefaultHelpFlag()
+	root.InitDefaultVersionFlag()
 	for _, q := range answer.Questions() {
 		root.AddCommand(w.newQuestion(q))
 	}
 	root.AddCommand(w.newSubstances(), w.newVerify())
+	refuseOtherShells(root)
 	return root
 }
 

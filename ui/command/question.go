@@ -5,6 +5,7 @@ import (
 	"context"
 	"errors"
 	"fmt"
+	"slices"
 	"strings"
 
 	"github.com/spf13/cobra"
@@ -145,11 +146,13 @@ func (w world) writeText(b *bytes.Buffer, q answer.Question, s scenario.Scenario
 		b.WriteString(strings.Join(figure.Lines(cells), "\n") + "\n\n")
 	}
 	say(strings.Join(a.Finding, " "))
-	if len(a.Notes) > 0 {
-		b.WriteByte('\n')
-	}
+	gap := "\n"
 	for _, n := range a.Notes {
-		say("note: " + n.Text)
+		if !slices.Contains(a.Finding, n.Text) { // once is enough
+			b.WriteString(gap)
+			say("note: " + n.Text)
+			gap = ""
+		}
 	}
 }
 

@@ -7,6 +7,7 @@ import (
 
 	"github.com/spf13/cobra"
 
+	"dropcrest/atmos"
 	"dropcrest/solutes"
 	"dropcrest/ui/answer"
 	"dropcrest/ui/plain"
@@ -166,12 +167,13 @@ func substancesText(list []solutes.Substance, one bool, width int) string {
 		writeSubstance(&b, list[0], width)
 		return b.String()
 	}
-	const columns = "%-28s %-14s %8s %9s %9s  %s\n"
-	fmt.Fprintf(&b, columns, "substance", "formula", "κ", "density", "molar m.", "model")
-	fmt.Fprintf(&b, columns, "", "", "", "kg/m³", "g/mol", "")
+	const columns = "%-26s %-13s %5s %6s %7s  %s\n"
+	fmt.Fprintf(&b, columns, "substance", "formula", "κ", "kg/m³", "g/mol", "water activity")
 	for _, s := range list {
-		fmt.Fprintf(&b, columns, s.Name, s.Formula, short(s.Kappa, 1), short(s.Density, 1), short(s.MolarMass, 1e3), modelWords(s))
+		fmt.Fprintf(&b, columns, s.Name, s.Formula, short(s.Kappa, 1), short(s.Density, 1), short(s.MolarMass, 1e3), modelWords(s, false))
 	}
+	b.WriteString("\n" + wrap("κ is that at activation, - where a value is not known; kg/m³ is the dry density, g/mol the molar mass. "+
+		"+ joins a published polynomial that reaches into supersaturated solution. A name shows every value with its source.", width, "") + "\n")
 	return b.String()
 }
 
@@ -182,18 +184,29 @@ func short(d solutes.Datum, scale float64) string {
 	return fmt.Sprintf("%.5g", d.Value*scale)
 }
 
-func modelWords(s solutes.Substance) string {
+// modelWords names the best water activity model that a substance has; long
+// names the publications of a model of its own.
+func modelWords(s solutes.Substance, long bool) string {
+	_, says, _, own, err := solutes.OwnModel(s, atmos.ZeroCelsius+25)
 	switch {
-	case s.Ion != nil && s.Concentrated != nil:
-		return "ion interaction, concentrated"
+	case own && err == nil && long:
+		return says
+	case own && err == nil:
+		return "its own model"
+	case s.Ion != nil && s.Concentrated.Joined() && long:
+		return "ion interaction, joined to a published polynomial into supersaturated solution: " + s.Concentrated.Source
+	case s.Ion != nil && s.Concentrated.Joined():
+		return "ion interaction +"
 	case s.Ion != nil:
 		return "ion interaction"
-	case s.Concentrated != nil:
-		return "concentrated"
 	case s.Kappa.Known() && s.Kappa.Value > 0:
 		return "kappa"
+	case s.Ions.Known() && s.Ions.Value == 0:
+		return "insoluble"
+	case s.Ions.Known() && s.MolarMass.Known() && s.Density.Known():
+		return "van 't Hoff"
 	}
-	return "insoluble"
+	return "none known"
 }
 
 // writeSubstance shows one substance, every value with its source.
@@ -217,7 +230,7 @@ func writeSubstance(b *strings.Builder, s solutes.Substance, width int) {
 		}
 		b.WriteString(hang(q.says, text, 29, width))
 	}
-	b.WriteString(hang("water activity models", modelWords(s), 29, width))
+	b.WriteString(hang("water activity", modelWords(s, true), 29, width))
 	for _, r := range s.Remarks {
 		b.WriteString("\n" + wrap(r, width, "") + "\n")
 	}
