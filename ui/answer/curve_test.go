@@ -63,13 +63,13 @@ func TestPromisedCrests(t *testing.T) {
 		values    []string
 		want, tol float64 // %
 	}{
-		// κ-Köhler with A = 4 σ M/(R T ρ), 298.15 K and 72 mN/m. Computed independently
-		// by a general-purpose root finder; testdata/computed/koehler_kappa.json has its
-		// neighbours.
+		// The number promised to scripts. It is in no computed table; a ternary search for
+		// the maximum of the κ form, A = 4 σ M/(R T ρ) with ρ = 997.047 kg/m³ (from
+		// memory), gives 0.149933 as well.
 		"kappa 0.61": {[]string{"dry-diameter=100nm", "water-activity=kappa", "kappa=0.61",
 			"temperature=298.15K", "surface-tension=72mN/m"}, 0.14993, 5e-5},
-		// Sodium chloride by ion interaction; testdata/computed/koehler_solutes.json has
-		// the same with slightly other density and A_φ, hence 0.5 %.
+		// Sodium chloride by ion interaction: testdata/computed/koehler_solutes.json,
+		// cases[72], with slightly other density and A_φ, hence 0.5 %.
 		"sodium chloride": {[]string{"dry-diameter=50nm", "component=sodium chloride", "water-activity=ion-interaction",
 			"temperature=298.15K", "surface-tension=solution"}, 0.29484, 0.005 * 0.29484},
 	} {

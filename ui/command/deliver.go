@@ -18,7 +18,7 @@ func (w world) deliver(out string, data []byte) error {
 		return nil
 	}
 	if err := writeWhole(out, data); err != nil {
-		return fmt.Errorf("--out %s: %w; nothing was written", out, pathReason(err))
+		return fmt.Errorf("--out %s: %w", out, pathReason(err))
 	}
 	return nil
 }
