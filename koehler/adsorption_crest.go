@@ -6,11 +6,8 @@ import (
 	"math"
 )
 
-// ErrNoCrest is the reason where an equilibrium curve has no maximum.
-var ErrNoCrest = errors.New("no crest")
-
 // errEndless wraps ErrNoCrest for adsorption that outlasts the Kelvin term.
-var errEndless = fmt.Errorf("%w: the curve rises towards saturation without a maximum below %g times the dry size", ErrNoCrest, greatestGrowth)
+var errEndless = fmt.Errorf("%w below %g times the dry size, it rises towards saturation", ErrNoCrest, greatestGrowth)
 
 const (
 	// greatestGrowth is the largest growth factor at which a crest is looked for.

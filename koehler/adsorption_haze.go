@@ -6,10 +6,6 @@ import (
 	"math"
 )
 
-// ErrAboveCrest is the reason where no drop is in equilibrium at so high a
-// saturation ratio: each grows.
-var ErrAboveCrest = errors.New("no equilibrium: above the crest")
-
 // AdsorptionHaze returns the water u of the film or haze drop in equilibrium at
 // saturation ratio S below the crest, and for S > 1 that of the unstable drop
 // beyond it (NaN for S ≤ 1). Errors: those of AdsorptionCrest, and those that

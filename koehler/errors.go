@@ -8,6 +8,8 @@ import (
 // The reasons why a question about a droplet has no answer. Errors returned by
 // this package wrap one of them.
 var (
+	ErrNoCrest    = errors.New("the equilibrium curve has no maximum")
+	ErrAboveCrest = errors.New("no equilibrium: above the crest")
 	ErrNoHaze     = errors.New("no haze: the particle stays dry")
 	ErrNoSolution = errors.New("no solution")
 	ErrInput      = errors.New("input out of range")
@@ -20,6 +22,7 @@ type RangeError struct {
 	Right string  // what would be right
 }
 
+// Error says which input, its value and what would be right.
 func (e *RangeError) Error() string {
 	return fmt.Sprintf("%s %.6g: must be %s", e.What, e.Value, e.Right)
 }
@@ -34,6 +37,7 @@ type NoSolutionError struct {
 	Reason          string
 }
 
+// Error says which supersaturation has no answer and why.
 func (e *NoSolutionError) Error() string {
 	return fmt.Sprintf("no solution at s = %.6g %%: %s", 100*e.Supersaturation, e.Reason)
 }
@@ -47,6 +51,7 @@ type AboveCrestError struct {
 	SaturationRatio, Crest float64
 }
 
+// Error says how far the humidity lies above the crest.
 func (e *AboveCrestError) Error() string {
 	return fmt.Sprintf("no equilibrium: above the crest: S = %.8g, crest at %.8g", e.SaturationRatio, e.Crest)
 }

@@ -38,10 +38,10 @@ type State struct {
 type Kind int
 
 const (
-	Maximum Kind = iota
-	Minimum
-	KinkMinimum
-	BoundaryMaximum // the curve falls from the dry size on
+	Maximum         Kind = iota // smooth: the drop is unstable beyond it
+	Minimum                     // smooth, between two maxima
+	KinkMinimum                 // the slope jumps from below to above zero, where a part has just dissolved or the tension left its floor
+	BoundaryMaximum             // the limit at the dry size, where the curve falls from there on
 )
 
 // Extremum is one extremum of the equilibrium curve.
