@@ -21,7 +21,7 @@ func (w world) help(cmd *cobra.Command) {
 		about = sentence(cmd.Short)
 	}
 	for _, paragraph := range strings.Split(about, "\n") {
-		b.WriteString(wrap(paragraph, width, "") + "\n")
+		b.WriteString(plain.Wrap(paragraph, width, "") + "\n")
 	}
 	fmt.Fprintf(&b, "\nUsage: %s\n", usageLine(cmd))
 	if cmd.Example != "" {
@@ -114,7 +114,7 @@ func optionHelp(f *pflag.Flag) string {
 
 // hang writes a name and its explanation beside it, or below a long name.
 func hang(name, text string, column, width int) string {
-	body := wrap(text, width, strings.Repeat(" ", column))
+	body := plain.Wrap(text, width, strings.Repeat(" ", column))
 	if len(name)+4 > column {
 		return "  " + name + "\n" + body + "\n"
 	}

@@ -10,6 +10,7 @@ import (
 	"dropcrest/atmos"
 	"dropcrest/solutes"
 	"dropcrest/ui/answer"
+	"dropcrest/ui/form"
 	"dropcrest/ui/plain"
 	"dropcrest/ui/terminal"
 )
@@ -42,9 +43,9 @@ func (w world) newSubstances() *cobra.Command {
 		var b bytes.Buffer
 		switch o.as {
 		case "csv":
-			writeCSV(&b, substancesTable(list))
+			form.CSV(&b, substancesTable(list))
 		case "json":
-			if err := writeIndented(&b, substancesObject(list, len(args) > 0)); err != nil {
+			if err := form.Indented(&b, substancesObject(list, len(args) > 0)); err != nil {
 				return err
 			}
 		default:
@@ -134,14 +135,14 @@ func bound(x float64) any {
 
 // substancesObject is the catalogue as a list, or one substance alone.
 func substancesObject(list []solutes.Substance, one bool) any {
-	out := make([]object, 0, len(list))
+	out := make([]form.Object, 0, len(list))
 	for _, s := range list {
-		o := object{{"key", s.Key}, {"name", s.Name}, {"formula", s.Formula}, {"aliases", whole(s.Aliases)}}
+		o := form.Object{at("key", s.Key), at("name", s.Name), at("formula", s.Formula), at("aliases", listed(s.Aliases))}
 		for _, q := range quantities(s) {
-			o = append(o, member{q.key, datumObject(q.datum)})
+			o = append(o, at(q.key, datumObject(q.datum)))
 		}
-		o = append(o, member{"has_ion_interaction", s.Ion != nil},
-			member{"has_concentrated_polynomial", s.Concentrated != nil}, member{"remarks", whole(s.Remarks)})
+		o = append(o, at("has_ion_interaction", s.Ion != nil),
+			at("has_concentrated_polynomial", s.Concentrated != nil), at("remarks", listed(s.Remarks)))
 		out = append(out, o)
 	}
 	if one {
@@ -150,15 +151,18 @@ func substancesObject(list []solutes.Substance, one bool) any {
 	return out
 }
 
-// whole is a list that is written as [] when it is empty.
-func whole(list []string) []string { return append([]string{}, list...) }
+// listed is a list that is written as [] when it is empty.
+func listed(list []string) []string { return append([]string{}, list...) }
+
+// at is one key of a JSON object.
+func at(key string, value any) form.Member { return form.Member{Key: key, Value: value} }
 
 func datumObject(d solutes.Datum) any {
 	if !d.Known() {
 		return nil
 	}
-	return object{{"value", answer.Number(d.Value)}, {"low", bound(d.Low)}, {"high", bound(d.High)},
-		{"source", d.Source}, {"seen", string(d.Evidence)}}
+	return form.Object{at("value", answer.Number(d.Value)), at("low", bound(d.Low)), at("high", bound(d.High)),
+		at("source", d.Source), at("seen", string(d.Evidence))}
 }
 
 func substancesText(list []solutes.Substance, one bool, width int) string {
@@ -172,7 +176,7 @@ func substancesText(list []solutes.Substance, one bool, width int) string {
 	for _, s := range list {
 		fmt.Fprintf(&b, columns, s.Name, s.Formula, short(s.Kappa, 1), short(s.Density, 1), short(s.MolarMass, 1e3), modelWords(s, false))
 	}
-	b.WriteString("\n" + wrap("κ is that at activation, - where a value is not known; kg/m³ is the dry density, g/mol the molar mass. "+
+	b.WriteString("\n" + plain.Wrap("κ is that at activation, - where a value is not known; kg/m³ is the dry density, g/mol the molar mass. "+
 		"+ joins a published polynomial that reaches into supersaturated solution. A name shows every value with its source.", width, "") + "\n")
 	return b.String()
 }
@@ -213,7 +217,7 @@ func modelWords(s solutes.Substance, long bool) string {
 func writeSubstance(b *strings.Builder, s solutes.Substance, width int) {
 	fmt.Fprintf(b, "%s, %s\n", s.Name, s.Formula)
 	if len(s.Aliases) > 0 {
-		b.WriteString(wrap("also: "+strings.Join(s.Aliases, ", "), width, "") + "\n")
+		b.WriteString(plain.Wrap("also: "+strings.Join(s.Aliases, ", "), width, "") + "\n")
 	}
 	b.WriteByte('\n')
 	for _, q := range quantities(s) {
@@ -232,7 +236,7 @@ func writeSubstance(b *strings.Builder, s solutes.Substance, width int) {
 	}
 	b.WriteString(hang("water activity", modelWords(s, true), 29, width))
 	for _, r := range s.Remarks {
-		b.WriteString("\n" + wrap(r, width, "") + "\n")
+		b.WriteString("\n" + plain.Wrap(r, width, "") + "\n")
 	}
 }
 

@@ -1,11 +1,6 @@
 package command
 
-import (
-	"strings"
-	"testing"
-
-	"github.com/charmbracelet/x/ansi"
-)
+import "testing"
 
 func TestNearest(t *testing.T) {
 	names := []string{"dry-diameter", "dry-size-is", "kappa", "kelvin", "temperature", "relative-humidity", "as", "out", "from"}
@@ -43,23 +38,5 @@ func TestDistance(t *testing.T) {
 		if got := distance(c.b, c.a); got != c.want {
 			t.Errorf("%q to %q: %d, want %d", c.b, c.a, got, c.want)
 		}
-	}
-}
-
-func TestWrap(t *testing.T) {
-	text := "It crosses at 0.094 % supersaturation, where its wet radius is 0.764 µm (10.9 times the dry radius)."
-	for width := 20; width < 120; width++ {
-		out := wrap(text, width, "  ")
-		if strings.Join(strings.Fields(out), " ") != text {
-			t.Fatalf("width %d changes the text: %q", width, out)
-		}
-		for _, line := range strings.Split(out, "\n") {
-			if ansi.StringWidth(line) > width || !strings.HasPrefix(line, "  ") {
-				t.Fatalf("width %d: line %q", width, line)
-			}
-		}
-	}
-	if got := wrap("", 10, "  "); got != "" {
-		t.Errorf("nothing becomes %q", got)
 	}
 }

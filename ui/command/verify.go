@@ -9,6 +9,7 @@ import (
 	"github.com/spf13/cobra"
 
 	"dropcrest/ui/answer"
+	"dropcrest/ui/form"
 	"dropcrest/ui/plain"
 	"dropcrest/ui/terminal"
 	"dropcrest/ui/verify"
@@ -38,9 +39,9 @@ func (w world) newVerify() *cobra.Command {
 		var b bytes.Buffer
 		switch o.as {
 		case "csv":
-			writeCSV(&b, verifyTable(rows))
+			form.CSV(&b, verifyTable(rows))
 		case "json":
-			if err := writeIndented(&b, tableObjects(verifyTable(rows))); err != nil {
+			if err := form.Indented(&b, tableObjects(verifyTable(rows))); err != nil {
 				return err
 			}
 		default:
@@ -81,16 +82,16 @@ func verifyTable(rows []verify.Row) answer.Table {
 }
 
 // tableObjects is a table as a list of JSON objects.
-func tableObjects(t answer.Table) []object {
-	out := make([]object, 0, len(t.Rows))
+func tableObjects(t answer.Table) []form.Object {
+	out := make([]form.Object, 0, len(t.Rows))
 	for _, row := range t.Rows {
-		var o object
+		var o form.Object
 		for i, c := range t.Columns {
 			v := row[i]
 			if x, ok := v.(float64); ok {
 				v = answer.Number(x)
 			}
-			o = append(o, member{c.Key, v})
+			o = append(o, at(c.Key, v))
 		}
 		out = append(out, o)
 	}
@@ -104,17 +105,17 @@ func verifyText(rows []verify.Row, width int, ascii bool) string {
 	for _, r := range rows {
 		if r.Source != source {
 			source = r.Source
-			b.WriteString("\n" + wrap(source+seenWords(r.Seen), width, "") + "\n")
+			b.WriteString("\n" + plain.Wrap(source+seenWords(r.Seen), width, "") + "\n")
 		}
 		what := r.Quantity
 		if r.Condition != "" {
 			what += ", " + r.Condition
 		}
-		b.WriteString(wrap(fmt.Sprintf("%-7s %s", r.Verdict, what), width, "  ") + "\n")
-		b.WriteString(wrap(fmt.Sprintf("computed %.7g, published %.7g, difference %.2g, tolerance %.2g %s",
+		b.WriteString(plain.Wrap(fmt.Sprintf("%-7s %s", r.Verdict, what), width, "  ") + "\n")
+		b.WriteString(plain.Wrap(fmt.Sprintf("computed %.7g, published %.7g, difference %.2g, tolerance %.2g %s",
 			r.Computed, r.Published, r.Difference, r.Tolerance, r.Unit), width, "          ") + "\n")
 		if r.Remark != "" {
-			b.WriteString(wrap(r.Remark, width, "          ") + "\n")
+			b.WriteString(plain.Wrap(r.Remark, width, "          ") + "\n")
 		}
 	}
 	fmt.Fprintf(&b, "\n%d of %d published values agree within their tolerance.\n", len(rows)-failures(rows), len(rows))

@@ -1,4 +1,4 @@
-package command
+package plain
 
 import (
 	"strings"
@@ -6,9 +6,9 @@ import (
 	"github.com/charmbracelet/x/ansi"
 )
 
-// wrap breaks a text at blanks into lines of at most width cells, each after the
+// Wrap breaks a text at blanks into lines of at most width cells, each after the
 // indent. A word that is longer stays whole: it may be something to copy.
-func wrap(text string, width int, indent string) string {
+func Wrap(text string, width int, indent string) string {
 	var b strings.Builder
 	used := 0
 	for _, word := range strings.Fields(text) {

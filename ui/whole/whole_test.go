@@ -1,4 +1,4 @@
-package command
+package whole
 
 import (
 	"os"
@@ -8,11 +8,11 @@ import (
 	"testing"
 )
 
-func TestWriteWhole(t *testing.T) {
+func TestWrite(t *testing.T) {
 	dir := t.TempDir()
 	name := filepath.Join(dir, "a.csv")
 	for _, text := range []string{"first", "second, longer", ""} {
-		if err := writeWhole(name, []byte(text)); err != nil {
+		if err := Write(name, []byte(text)); err != nil {
 			t.Fatal(err)
 		}
 		if got, err := os.ReadFile(name); err != nil || string(got) != text {
@@ -34,7 +34,7 @@ func TestWriteKeepsModeAndLink(t *testing.T) {
 	if err := os.Symlink("target", link); err != nil {
 		t.Fatal(err)
 	}
-	if err := writeWhole(link, []byte("new")); err != nil {
+	if err := Write(link, []byte("new")); err != nil {
 		t.Fatal(err)
 	}
 	if to, err := os.Readlink(link); err != nil || to != "target" {
@@ -55,7 +55,7 @@ func TestReadOnlyFolder(t *testing.T) {
 	if err := os.Chmod(dir, 0o500); err != nil {
 		t.Fatal(err)
 	}
-	if err := writeWhole(filepath.Join(dir, "a"), []byte("x")); err == nil {
+	if err := Write(filepath.Join(dir, "a"), []byte("x")); err == nil {
 		t.Error("written into a read-only folder")
 	}
 	only(t, dir)
@@ -66,7 +66,7 @@ func TestNameIsTaken(t *testing.T) {
 	if err := os.Mkdir(filepath.Join(dir, "folder"), 0o700); err != nil {
 		t.Fatal(err)
 	}
-	err := writeWhole(filepath.Join(dir, "folder"), nil)
+	err := Write(filepath.Join(dir, "folder"), nil)
 	if err == nil || !strings.Contains(err.Error(), "folder") {
 		t.Errorf("error %v, want one that says folder", err)
 	}

@@ -1,4 +1,4 @@
-package command
+package form
 
 import (
 	"bytes"
@@ -8,9 +8,9 @@ import (
 	"dropcrest/ui/answer"
 )
 
-// writeCSV writes a table by RFC 4180: a line of column names, lines that end
+// CSV writes a table by RFC 4180: a line of column names, lines that end
 // with CR LF, a field that is empty where a value is absent.
-func writeCSV(b *bytes.Buffer, t answer.Table) {
+func CSV(b *bytes.Buffer, t answer.Table) {
 	names := make([]string, len(t.Columns))
 	for i, c := range t.Columns {
 		names[i] = c.Key

@@ -1,4 +1,4 @@
-package command
+package form
 
 import (
 	"bytes"
@@ -11,29 +11,30 @@ import (
 	"dropcrest/ui/scenario"
 )
 
-// object is a JSON object that keeps the order of its keys.
-type object []member
+// Object is a JSON object that keeps the order of its keys.
+type Object []Member
 
-type member struct {
-	key   string
-	value any
+// Member is one key of a JSON object.
+type Member struct {
+	Key   string
+	Value any
 }
 
 // MarshalJSON writes the members in their order.
-func (o object) MarshalJSON() ([]byte, error) {
+func (o Object) MarshalJSON() ([]byte, error) {
 	var b bytes.Buffer
 	b.WriteByte('{')
 	for i, m := range o {
 		if i > 0 {
 			b.WriteByte(',')
 		}
-		key, err := marshal(m.key)
+		key, err := marshal(m.Key)
 		if err != nil {
 			return nil, err
 		}
-		value, err := marshal(m.value)
+		value, err := marshal(m.Value)
 		if err != nil {
-			return nil, fmt.Errorf("%s: %w", m.key, err)
+			return nil, fmt.Errorf("%s: %w", m.Key, err)
 		}
 		b.Write(key)
 		b.WriteByte(':')
@@ -55,16 +56,16 @@ func marshal(v any) ([]byte, error) {
 }
 
 // writeJSON writes facts, scenario, constants, notes and version as one object.
-func writeJSON(w io.Writer, s scenario.Scenario, a answer.Answer) error {
+func writeJSON(w io.Writer, s scenario.Scenario, a answer.Answer, version string) error {
 	facts, err := marshal(a.Facts)
 	if err != nil {
 		return err
 	}
-	rest, err := marshal(object{
+	rest, err := marshal(Object{
 		{"scenario", scenarioObject(&s)},
 		{"constants", constantsObject()},
 		{"notes", notesList(a.Notes)},
-		{"version", version()},
+		{"version", version},
 	})
 	if err != nil {
 		return err
@@ -79,7 +80,8 @@ func writeJSON(w io.Writer, s scenario.Scenario, a answer.Answer) error {
 	return indent(w, append(whole, rest[1:]...))
 }
 
-func writeIndented(w io.Writer, v any) error {
+// Indented writes any value as indented JSON.
+func Indented(w io.Writer, v any) error {
 	text, err := marshal(v)
 	if err != nil {
 		return err
@@ -98,51 +100,51 @@ func indent(w io.Writer, text []byte) error {
 }
 
 // scenarioObject is every input in SI units, rows as lists of objects.
-func scenarioObject(s *scenario.Scenario) object {
-	var out object
+func scenarioObject(s *scenario.Scenario) Object {
+	var out Object
 	for _, in := range scenario.Inputs(s) {
 		if string(in.Path()) == in.Key() {
 			out = append(out, siMember(in))
 		}
 	}
 	for _, l := range scenario.Lists(s) {
-		rows := make([]object, 0, l.Len())
+		rows := make([]Object, 0, l.Len())
 		for i := range l.Len() {
-			var row object
+			var row Object
 			for _, in := range l.Row(i) {
 				row = append(row, siMember(in))
 			}
 			rows = append(rows, row)
 		}
-		out = append(out, member{l.Key(), rows})
+		out = append(out, Member{l.Key(), rows})
 	}
 	return out
 }
 
-func siMember(in scenario.Input) member {
+func siMember(in scenario.Input) Member {
 	key, value := in.SI()
 	if x, ok := value.(float64); ok {
 		value = answer.Number(x)
 	}
-	return member{key, value}
+	return Member{key, value}
 }
 
-func constantsObject() object {
-	var out object
+func constantsObject() Object {
+	var out Object
 	for _, c := range atmos.Constants() {
-		out = append(out, member{c.Key, answer.Number(c.Value)})
+		out = append(out, Member{c.Key, answer.Number(c.Value)})
 	}
 	return out
 }
 
-func notesList(notes []atmos.Note) []object {
-	out := make([]object, 0, len(notes))
+func notesList(notes []atmos.Note) []Object {
+	out := make([]Object, 0, len(notes))
 	for _, n := range notes {
 		var input any
 		if n.Input != "" {
 			input = n.Input
 		}
-		out = append(out, object{{"code", n.Code}, {"text", n.Text}, {"input", input}})
+		out = append(out, Object{{"code", n.Code}, {"text", n.Text}, {"input", input}})
 	}
 	return out
 }
