@@ -7,6 +7,7 @@ import (
 	"io"
 	"io/fs"
 	"math"
+	"slices"
 	"sort"
 	"strconv"
 	"strings"
@@ -21,7 +22,7 @@ type Row struct {
 	Tolerance           float64 // largest |Difference| that agrees
 	Unit                string
 	Source              string
-	Seen                string // "read" in the source, or from "memory"
+	Seen                string // how the published value came here: one of SeenWords
 	Verdict             Verdict
 	Remark              string // why references differ, "" when they do not
 }
@@ -39,6 +40,13 @@ const (
 type Options struct {
 	Checks map[string]Check // nil means Checks()
 }
+
+// SeenWords are the words that say how a published value came into its file:
+// read in the source that is named; from memory of that source; or computed for
+// this project from the equations that the source names, with a general-purpose
+// numerical library, because nobody printed it. A computed value checks the
+// arithmetic, not nature.
+func SeenWords() []string { return []string{"read", "memory", "computed"} }
 
 // Columns are the columns of a file of published values, in their order.
 func Columns() []string {
@@ -179,8 +187,8 @@ func (r *reader) identity(l line) error {
 			return l.at(column, fmt.Errorf("%s is empty", column))
 		}
 	}
-	if s := l.text("seen"); s != "read" && s != "memory" {
-		return l.at("seen", fmt.Errorf("%q, should be read or memory", s))
+	if s := l.text("seen"); !slices.Contains(SeenWords(), s) {
+		return l.at("seen", fmt.Errorf("%q, should be one of %s", s, strings.Join(SeenWords(), ", ")))
 	}
 	key := [3]string{l.text("check"), l.text("arguments"), l.text("source")}
 	here := fmt.Sprintf("%s:%d", l.file, l.lineNumber())

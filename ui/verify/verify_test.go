@@ -106,6 +106,34 @@ func TestWrongPublishedValueFails(t *testing.T) {
 	}
 }
 
+// A value that was computed for this project says so and is not passed off as
+// one that somebody published; the words have their meaning in every file.
+func TestSeen(t *testing.T) {
+	for _, word := range SeenWords() {
+		rows, err := Run(folder(head+"twice,x=2,q,c,4,0,1,s,"+word+",\n"), twice())
+		if err != nil || len(rows) != 1 || rows[0].Seen != word {
+			t.Errorf("%s: rows %v, error %v", word, rows, err)
+		}
+	}
+	rows, err := Run(os.DirFS("../../testdata/published"), Options{})
+	if err != nil {
+		t.Fatal(err)
+	}
+	count := map[string]int{}
+	for _, r := range rows {
+		count[r.Seen]++
+		ours := strings.Contains(r.Source, "computed for this project") || strings.HasSuffix(r.Source, "evaluated")
+		if ours != (r.Seen == "computed") {
+			t.Errorf("%s, %s: the source %q is marked %s", r.Quantity, r.Condition, r.Source, r.Seen)
+		}
+	}
+	for _, word := range SeenWords() {
+		if count[word] == 0 {
+			t.Errorf("no value is marked %s", word)
+		}
+	}
+}
+
 func TestComputedNaNFails(t *testing.T) {
 	rows, err := Run(folder(head+"lost,,q,c,4,1,1,s,read,\n"), twice())
 	if err != nil || len(rows) != 1 || rows[0].Verdict != Fails {
@@ -133,7 +161,7 @@ func TestErrorsNamePlaceAndReason(t *testing.T) {
 		{"tolerance is negative", head + "twice,x=2,q,c,4,-1,1,s,read,\n", 2, 17, "at least 0"},
 		{"tolerance is NaN", head + "twice,x=2,q,c,4,NaN,1,s,read,\n", 2, 17, "at least 0"},
 		{"no source", head + "twice,x=2,q,c,4,0,1, ,read,\n", 2, 21, "source is empty"},
-		{"seen is unknown", head + "twice,x=2,q,c,4,0,1,s,yes,\n", 2, 23, "read or memory"},
+		{"seen is unknown", head + "twice,x=2,q,c,4,0,1,s,yes,\n", 2, 23, "one of read, memory, computed"},
 		{"row twice", head + good + good, 3, 1, "stand at x.csv:2"},
 		{"argument missing", head + "twice,,q,c,4,0,1,s,read,\n", 2, 7, `argument "x" is missing`},
 		{"argument no number", head + "twice,x=y,q,c,4,0,1,s,read,\n", 2, 7, "x=y is not a finite number"},
