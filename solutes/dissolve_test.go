@@ -47,6 +47,12 @@ func TestDissolve(t *testing.T) {
 		{"two charge types", recipe(t, IonInteraction, "NaCl", .4, "Na2SO4", .6), "*solutes.Mixture", "zsr-mixed-charge"},
 		{"one salt twice", recipe(t, IonInteraction, "NaCl", .4, "NaCl", .6), "*solutes.Salt", ""},
 		{"organics by ions", recipe(t, IonInteraction, "SOA", 1.), "solutes.Kappa", "no-ion-interaction"},
+		{"sugar", recipe(t, IonInteraction, "sucrose", 1.), "*solutes.OsmoticSolution", "own-model"},
+		{"sea salt on soot", recipe(t, IonInteraction, "sea salt", .4, "soot", .6), "*solutes.OsmoticSolution", "own-model sea-salt-dry-state"},
+		{"acid", recipe(t, IonInteraction, "H2SO4", 1.), "*solutes.OsmoticSolution", "own-model strong-acid-temperature"},
+		{"acid and its salt", recipe(t, IonInteraction, "H2SO4", .5, "AS", .5), "*solutes.Mixture", "own-model strong-acid-temperature zsr-bisulfate"},
+		{"letovicite and bisulfate", recipe(t, IonInteraction, "letovicite", .5, "NH4HSO4", .5), "*solutes.Mixture",
+			"own-model bisulfate-parameters-borrowed own-model zsr-bisulfate zsr-bisulfate"},
 	} {
 		d, notes, err := Dissolve(c.recipe)
 		if err != nil {
@@ -132,6 +138,10 @@ func TestTemperatureNotes(t *testing.T) {
 	}{
 		{"NaCl has terms of its own", []any{"NaCl", 1.}, 283.15, "concentrated-25c"},
 		{"KCl", []any{"KCl", 1.}, 283.15, "ion-parameters-25c"},
+		{"NaCl supercooled", []any{"NaCl", 1.}, 263.15, "ion-parameters-held concentrated-25c debye-hueckel-extrapolated"},
+		{"citric acid", []any{"citric acid", 1.}, 283.15, "own-model nonelectrolyte-25c acid-undissociated"},
+		{"cold acid", []any{"H2SO4", 1.}, 250, "own-model bisulfate-25c debye-hueckel-extrapolated"},
+		{"bisulfate", []any{"NH4HSO4", 1.}, 283.15, "own-model bisulfate-25c bisulfate-parameters-borrowed"},
 		{"KCl supercooled", []any{"KCl", 1.}, 263.15, "ion-parameters-25c debye-hueckel-extrapolated"},
 	} {
 		r := recipe(t, IonInteraction, c.parts...)

@@ -3,7 +3,10 @@ package solutes
 import "math"
 
 // NonelectrolyteNote says what the models of sugars and citric acid leave out.
-const NonelectrolyteNote = "water activity of sugars and citric acid: values of 25 °C at all temperatures; the dissociation of citric acid is left out"
+const NonelectrolyteNote = "water activity of sugars and citric acid: values of 25 °C at all temperatures"
+
+// CitricAcidNote says what the model of citric acid leaves out besides.
+const CitricAcidNote = "the dissociation of citric acid is left out: with it κ at activation is 0.166 to 0.172 and not 0.157"
 
 // nonelectrolyte is a solute of one molecule: a dilute law, blended over a
 // window of molality with Norrish's equation (R. S. Norrish, J. Food Technol. 1,

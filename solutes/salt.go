@@ -114,6 +114,15 @@ func (s *Salt) LnActivity(u float64) (lnaw, slope float64) {
 // LeastWater returns u at the highest molality of the published range.
 func (s *Salt) LeastWater() float64 { return s.perWater / s.end }
 
+// OfShare returns the solution of a particle of which only that share of the dry
+// volume, above 0 and at most 1, is this salt as it stands; the rest is insoluble
+// and u counts per volume of the whole.
+func (s *Salt) OfShare(share float64) *Salt {
+	part := *s
+	part.perWater *= share
+	return &part
+}
+
 // Molality returns mol of salt per kg of water at u.
 func (s *Salt) Molality(u float64) float64 { return s.perWater / u }
 
