@@ -14,32 +14,61 @@ type SeveralMaxima interface{ SeveralMaxima() bool }
 
 // Crest returns the barrier: the highest maximum of the equilibrium curve.
 //
-// Constant κ with additive volumes, pure water's tension and the standard
-// Kelvin term is solved in closed form. A smooth activity is climbed by Newton
-// in ln u; a Tension of its own, or a part that reports SeveralMaxima, is
+// Constant κ with additive volumes, a constant tension and the standard Kelvin
+// term is solved in closed form. A smooth activity is climbed by Newton in ln u;
+// a Tension that hangs on the solution, or a part that reports SeveralMaxima, is
 // scanned. An error wraps ErrInput or ErrNoCrest.
 func (p Particle) Crest() (Crest, error) {
 	if err := p.Check(); err != nil {
 		return Crest{}, err
 	}
 	c := p.ready()
+	crest, _, err := p.barrier(&c)
+	return crest, err
+}
+
+// Extrema returns all extrema in the order of their wet size.
+func (p Particle) Extrema() ([]Extremum, error) {
+	if err := p.Check(); err != nil {
+		return nil, err
+	}
+	c := p.ready()
+	crest, extrema, err := p.barrier(&c)
+	return p.allExtrema(crest, extrema, err)
+}
+
+// allExtrema are the extrema of what barrier returned. A curve that was scanned
+// and has no maximum has no error either.
+func (p Particle) allExtrema(crest Crest, scanned []Extremum, err error) ([]Extremum, error) {
+	switch {
+	case scanned != nil && p.severalMaxima():
+		return scanned, nil
+	case err != nil:
+		return nil, err
+	}
+	return []Extremum{{crest.Kind, crest.State}}, nil
+}
+
+// barrier is the crest of a particle that was made ready, and all extrema where
+// they had to be found for it.
+func (p Particle) barrier(c *curve) (Crest, []Extremum, error) {
 	kappa, constant := closedKappa(p.Solution)
 	if constant && (!(kappa >= 0) || kappa > maxKappa) {
-		return Crest{}, &RangeError{"kappa", kappa, "0 to 30"}
+		return Crest{}, nil, &RangeError{"kappa", kappa, "0 to 30"}
 	}
 	switch {
 	case constant && kappa == 0:
-		return c.crest(Extremum{BoundaryMaximum, c.insoluble()}), nil
-	case constant && p.Swelling == nil && p.Tension == nil && p.Kelvin == Standard:
-		return c.closed(kappa), nil
+		return c.crest(Extremum{BoundaryMaximum, c.insoluble()}), nil, nil
+	case constant && p.Swelling == nil && p.constantTension() && p.Kelvin == Standard:
+		return c.closed(kappa), nil, nil
 	case !p.severalMaxima():
 		if u, ok := c.climb(); ok {
-			return c.crest(Extremum{Maximum, c.state(u)}), nil
+			return c.crest(Extremum{Maximum, c.state(u)}), nil, nil
 		}
 	}
 	extrema, err := c.scan()
 	if err != nil {
-		return Crest{}, err
+		return Crest{}, nil, err
 	}
 	best := -1
 	for i, e := range extrema {
@@ -49,32 +78,16 @@ func (p Particle) Crest() (Crest, error) {
 		}
 	}
 	if best < 0 {
-		return Crest{}, ErrNoCrest
+		return Crest{}, extrema, ErrNoCrest
 	}
-	return c.crest(extrema[best]), nil
-}
-
-// Extrema returns all extrema in the order of their wet size.
-func (p Particle) Extrema() ([]Extremum, error) {
-	if err := p.Check(); err != nil {
-		return nil, err
-	}
-	if kappa, constant := closedKappa(p.Solution); p.severalMaxima() && !(constant && kappa == 0) {
-		c := p.ready()
-		return c.scan()
-	}
-	crest, err := p.Crest()
-	if err != nil {
-		return nil, err
-	}
-	return []Extremum{{crest.Kind, crest.State}}, nil
+	return c.crest(extrema[best]), extrema, nil
 }
 
 func (p Particle) severalMaxima() bool {
 	if s, ok := p.Solution.(SeveralMaxima); ok && s.SeveralMaxima() {
 		return true
 	}
-	if p.Tension == nil {
+	if p.constantTension() {
 		return false
 	}
 	s, ok := p.Tension.(SeveralMaxima)
@@ -222,7 +235,7 @@ func (c *curve) scan() ([]Extremum, error) {
 	n := int(math.Ceil(perDecade * math.Log10(far/from)))
 	start, step := math.Log(from), math.Log(far/from)/float64(n)
 	x, f := start, c.at(from).slope
-	var found []Extremum
+	found := []Extremum{}
 	if f < 0 && least == 0 {
 		found = append(found, Extremum{BoundaryMaximum, c.state(from)})
 	}

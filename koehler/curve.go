@@ -16,7 +16,7 @@ type curve struct {
 	sol    solutes.Solution
 	swell  solutes.Swelling
 	stress solutes.Tension
-	sigma  float64 // of pure water, used where stress is nil
+	sigma  float64 // used where stress is nil
 }
 
 func (p Particle) ready() curve {
@@ -25,12 +25,22 @@ func (p Particle) ready() curve {
 		kelvin: NewKelvinTerm(p.Kelvin, p.Temperature),
 		sol:    p.Solution,
 		swell:  p.Swelling,
-		stress: p.Tension,
 	}
-	if c.stress == nil {
+	switch t := p.Tension.(type) {
+	case nil:
 		c.sigma = atmos.SurfaceTension(p.Temperature)
+	case solutes.ConstantTension:
+		c.sigma = float64(t)
+	default:
+		c.stress = t
 	}
 	return c
+}
+
+// constantTension reports whether the solute leaves the surface tension alone.
+func (p Particle) constantTension() bool {
+	t, constant := p.Tension.(solutes.ConstantTension)
+	return p.Tension == nil || constant && t > 0
 }
 
 // Check returns an error that says which field of the particle is not usable.

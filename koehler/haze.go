@@ -13,17 +13,33 @@ import (
 // Errors wrap ErrAboveCrest for S at or above the crest, ErrNoHaze where a
 // particle without solute stays dry, ErrInput and ErrNoCrest.
 func (p Particle) Haze(S float64) (stable State, unstable State, err error) {
-	if !(S > 0) || math.IsInf(S, 0) {
-		return stable, unstable, &RangeError{"saturation ratio", S, "above 0"}
+	if err := checkRatio(S); err != nil {
+		return stable, unstable, err
 	}
-	crest, err := p.Crest()
+	if err := p.Check(); err != nil {
+		return stable, unstable, err
+	}
+	c := p.ready()
+	crest, extrema, err := p.barrier(&c)
 	if err != nil {
 		return stable, unstable, err
 	}
+	return p.haze(&c, S, crest, extrema)
+}
+
+func checkRatio(S float64) error {
+	if !(S > 0) || math.IsInf(S, 0) {
+		return &RangeError{"saturation ratio", S, "above 0"}
+	}
+	return nil
+}
+
+// haze is Haze once barrier has found the crest.
+func (p Particle) haze(c *curve, S float64, crest Crest, extrema []Extremum) (stable, unstable State, err error) {
 	if S >= crest.SaturationRatio || S-1 >= crest.Supersaturation {
 		return stable, unstable, &AboveCrestError{S, crest.SaturationRatio}
 	}
-	c, lnS := p.ready(), math.Log(S)
+	lnS := math.Log(S)
 	if S > 1 {
 		top := math.Log(math.Max(crest.Water, scanFrom))
 		far := top + 1
@@ -35,10 +51,7 @@ func (p Particle) Haze(S float64) (stable State, unstable State, err error) {
 	if crest.Kind == BoundaryMaximum && crest.Water <= scanFrom {
 		return stable, unstable, fmt.Errorf("%w: its curve falls from the dry size on", ErrNoHaze)
 	}
-	hi, err := p.firstAbove(lnS, crest)
-	if err != nil {
-		return stable, unstable, err
-	}
+	hi := p.firstAbove(lnS, crest, extrema)
 	lo := hi - 1
 	for c.at(math.Exp(lo)).lnS >= lnS {
 		if lo -= 2; lo < -90 {
@@ -50,18 +63,14 @@ func (p Particle) Haze(S float64) (stable State, unstable State, err error) {
 }
 
 // firstAbove is ln u of the first maximum above lnS.
-func (p Particle) firstAbove(lnS float64, crest Crest) (float64, error) {
+func (p Particle) firstAbove(lnS float64, crest Crest, extrema []Extremum) float64 {
 	if !p.severalMaxima() {
-		return math.Log(crest.Water), nil
-	}
-	extrema, err := p.Extrema()
-	if err != nil {
-		return 0, err
+		return math.Log(crest.Water)
 	}
 	for _, e := range extrema {
 		if e.Kind == Maximum && math.Log(e.SaturationRatio) > lnS {
-			return math.Log(e.Water), nil
+			return math.Log(e.Water)
 		}
 	}
-	return math.Log(crest.Water), nil
+	return math.Log(crest.Water)
 }

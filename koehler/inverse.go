@@ -31,7 +31,7 @@ func (p Particle) ActivatedDryDiameter(s float64) (float64, error) {
 	}
 	c := p.ready()
 	kappa, constant := closedKappa(p.Solution)
-	if constant && p.Swelling == nil && p.Tension == nil && p.Kelvin == Standard {
+	if constant && p.Swelling == nil && p.constantTension() && p.Kelvin == Standard {
 		return DryOf(kappa, 4*c.sigma*c.kelvin.PerPressure, s)
 	}
 	return p.searchDry(s)

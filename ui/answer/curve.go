@@ -129,16 +129,14 @@ func kelvinForm(word string) koehler.Kelvin {
 // solve finds crest, extrema, haze and the textbook crest. What does not exist
 // is no error of the question: it is said in words and is null in the facts.
 func (c *curve) solve() {
-	c.crest, c.noCrest = c.particle.Crest()
-	c.extrema, _ = c.particle.Extrema()
+	s := c.particle.Solve(c.asked.RelativeHumidity)
+	c.crest, c.noCrest, c.extrema, c.noHaze = s.Crest, s.NoCrest, s.Extrema, s.NoHaze
 	c.textbook, c.noCubic = c.particle.Textbook()
-	stable, unstable, err := c.particle.Haze(c.asked.RelativeHumidity)
-	c.noHaze = err
-	if stable.WetDiameter > 0 {
-		c.haze = append(c.haze, hazeState{"stable", stable})
+	if s.Stable.WetDiameter > 0 {
+		c.haze = append(c.haze, hazeState{"stable", s.Stable})
 	}
-	if unstable.WetDiameter > 0 && !math.IsInf(unstable.WetDiameter, 0) {
-		c.haze = append(c.haze, hazeState{"unstable", unstable})
+	if s.Unstable.WetDiameter > 0 && !math.IsInf(s.Unstable.WetDiameter, 0) {
+		c.haze = append(c.haze, hazeState{"unstable", s.Unstable})
 	}
 }
 
