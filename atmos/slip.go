@@ -10,8 +10,8 @@ const (
 )
 
 // SlipKnudsenRange is the range of Knudsen numbers (without unit) in which the
-// constants of SlipCorrection were measured. Towards both ends the formula has
-// the right limits.
+// constants of SlipCorrection were measured (Kim et al. 2005, from memory).
+// Towards both ends the formula has the right limits.
 var SlipKnudsenRange = Range{0.5, 83}
 
 // SlipCorrection returns the Cunningham slip correction (without unit) of a

@@ -39,7 +39,7 @@ func TestDissolve(t *testing.T) {
 		{"soot", recipe(t, KappaModel, "soot", 1.), "solutes.Kappa", ""},
 		{"soot by ions", recipe(t, IonInteraction, "soot", 1.), "solutes.Kappa", ""},
 		{"dust", recipe(t, KappaModel, "quartz", 1.), "solutes.Kappa", "adsorption-left-out"},
-		{"no κ known", recipe(t, KappaModel, "NaHSO4", 1.), "solutes.Kappa", "kappa-ideal"},
+		{"no κ known", recipe(t, KappaModel, "SRFA", 1.), "solutes.Kappa", "kappa-ideal"},
 		{"van 't Hoff", recipe(t, VantHoff, "NaCl", .4, "soot", .6), "solutes.Kappa", ""},
 		{"salt", recipe(t, IonInteraction, "NaCl", 1.), "*solutes.Salt", ""},
 		{"coated soot", recipe(t, IonInteraction, "NaCl", .4, "soot", .6), "*solutes.Salt", ""},
@@ -212,5 +212,35 @@ func TestMeasuredDensityWithoutAPolynomial(t *testing.T) {
 	d, notes, err := Dissolve(r)
 	if err != nil || d.Swelling != nil || codes(notes) != "density-additive" {
 		t.Errorf("%v, %q, %v", d.Swelling, codes(notes), err)
+	}
+}
+
+// NaNO3 and Na2SO4 end at 98 and 40 % by mass, both in activity and density; KCl
+// has no density polynomial, NaCl ends at 48 %.
+func TestRangeNotes(t *testing.T) {
+	for _, c := range []struct {
+		name    string
+		percent float64 // of the solution's mass
+		want    string
+	}{
+		{"Na2SO4", 39.9, ""},
+		{"Na2SO4", 40.1, "activity-outside-range density-outside-range"},
+		{"NaCl", 47.9, ""},
+		{"NaCl", 48.1, "activity-outside-range density-outside-range"},
+		{"KCl", 26, ""},
+		{"KCl", 27, "activity-outside-range"},
+		{"sucrose", 90, "activity-outside-range"},
+		{"SOA", 99.9, ""},
+	} {
+		r := recipe(t, IonInteraction, c.name, 1.)
+		r.DensityRule = Measured
+		d, _, err := Dissolve(r)
+		if err != nil {
+			t.Fatal(err)
+		}
+		u := d.DryDensity * (100 - c.percent) / (c.percent * d.WaterDensity)
+		if got := codes(d.RangeNotes(u)); got != c.want {
+			t.Errorf("%s at %g %%: %q, want %q", c.name, c.percent, got, c.want)
+		}
 	}
 }

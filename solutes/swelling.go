@@ -85,14 +85,21 @@ func (d *MeasuredDensity) Swell(u float64) (v, slope float64) {
 	return d.insoluble + mass*volume, water*volume + mass*byX*xSlope
 }
 
-// LeastWater returns u at the end of the shortest polynomial; 0: no limit.
-func (d *MeasuredDensity) LeastWater() float64 {
+// MostMassPercent returns the end of the shortest polynomial in percent of the
+// solution's mass; +Inf: no limit.
+func (d *MeasuredDensity) MostMassPercent() float64 {
 	end := math.Inf(1)
 	for _, p := range d.parts {
 		if p.known {
 			end = min(end, p.end)
 		}
 	}
+	return end
+}
+
+// LeastWater returns u at the end of the shortest polynomial; 0: no limit.
+func (d *MeasuredDensity) LeastWater() float64 {
+	end := d.MostMassPercent()
 	if math.IsInf(end, 1) {
 		return 0
 	}

@@ -1,0 +1,25 @@
+package solutes
+
+import (
+	"fmt"
+	"math"
+
+	"dropcrest/atmos"
+)
+
+// RangeNotes says which models are used outside their published range in a drop
+// that holds u volumes of water per dry volume; nil: all inside. The density
+// polynomials and the water activity models end at different concentrations.
+func (d Dissolved) RangeNotes(u float64) []atmos.Note {
+	var notes []atmos.Note
+	if least := d.Solution.LeastWater(); u < least {
+		lnaw, _ := d.Solution.LnActivity(least)
+		notes = append(notes, atmos.Note{Code: "activity-outside-range", Input: inputActivity, Text: fmt.Sprintf(
+			"The solution is more concentrated than its water activity model covers: it is extrapolated below a water activity of %.3f.", math.Exp(lnaw))})
+	}
+	if m, ok := d.Swelling.(*MeasuredDensity); ok && u < m.LeastWater() {
+		notes = append(notes, atmos.Note{Code: "density-outside-range", Input: inputDensity, Text: fmt.Sprintf(
+			"The solution is more concentrated than its measured density covers: it is extrapolated above %.3g %% of solute by mass.", m.MostMassPercent())})
+	}
+	return notes
+}
