@@ -7,6 +7,8 @@ import (
 
 	"github.com/spf13/cobra"
 	"github.com/spf13/pflag"
+
+	"dropcrest/ui/near"
 )
 
 // flagError says about an option what is wrong and what would be right.
@@ -21,8 +23,8 @@ func flagError(cmd *cobra.Command, err error) error {
 		if short := unknown.GetSpecifiedShortnames(); short != "" {
 			return misused("unknown option -%s: %s", name, seeHelp)
 		}
-		if near := nearest(name, optionNames(cmd)); near != "" {
-			return misused("unknown option --%s: did you mean --%s?", name, near)
+		if word := near.Word(name, optionNames(cmd)); word != "" {
+			return misused("unknown option --%s: did you mean --%s?", name, word)
 		}
 		return misused("unknown option --%s: %s", name, seeHelp)
 	}
@@ -63,8 +65,8 @@ func unknownCommand(root *cobra.Command, name string) error {
 			names = append(names, c.Name())
 		}
 	}
-	if near := nearest(name, names); near != "" {
-		return misused("unknown command %q: did you mean %q?", name, near)
+	if word := near.Word(name, names); word != "" {
+		return misused("unknown command %q: did you mean %q?", name, word)
 	}
 	return misused("unknown command %q: the commands are %s", name, strings.Join(names, ", "))
 }
@@ -75,41 +77,4 @@ func noArguments(cmd *cobra.Command, args []string) error {
 		return nil
 	}
 	return misused("%s takes no argument %q: values belong to options, as in --option %q", cmd.CommandPath(), args[0], args[0])
-}
-
-// nearest is the name that is meant by a mistyped one, "" when none is close: at
-// most a third of its letters differ, or one is the beginning of the other.
-func nearest(typed string, names []string) string {
-	best, least := "", 1+len(typed)/3
-	for _, name := range names {
-		d := distance(strings.ToLower(typed), name)
-		if len(typed) >= 3 && strings.HasPrefix(name, strings.ToLower(typed)) {
-			d = min(d, 1)
-		}
-		if d <= least && (best == "" || d < least) {
-			best, least = name, d
-		}
-	}
-	return best
-}
-
-// distance is the number of letters to insert, drop or exchange.
-func distance(a, b string) int {
-	row := make([]int, len(b)+1)
-	for j := range row {
-		row[j] = j
-	}
-	for i := range len(a) {
-		diagonal := row[0]
-		row[0] = i + 1
-		for j := range len(b) {
-			cost := diagonal
-			if a[i] != b[j] {
-				cost++
-			}
-			diagonal = row[j+1]
-			row[j+1] = min(cost, row[j]+1, row[j+1]+1)
-		}
-	}
-	return row[len(b)]
 }

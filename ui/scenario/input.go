@@ -38,8 +38,15 @@ type Input interface {
 	Kind() Kind
 	Range() string // "1 to 10000 nm", or the words it accepts
 	Choices() []Option
-	Show(Style) string     // "140 nm"
-	Set(text string) error // *ValueError says what is wrong and what would be right
+	Show(Style) string // "140 nm"
+	// Set reads a value as a person types it on the screen: without a unit it is
+	// in the unit that is shown. *ValueError says what is wrong and what would be
+	// right.
+	Set(text string) error
+	// SetWithUnit reads a value as options and files give it: what has a unit needs it.
+	SetWithUnit(text string) error
+	// Step changes a number by its natural step (dir > 0: upwards) and a word to
+	// the item above (dir > 0) or below; at the end it returns a *ValueError.
 	Step(dir int, big bool) error
 	IsDefault() bool
 	Used() bool                  // false: the scenario as it stands does not look at it

@@ -1,4 +1,14 @@
+// Package scenario is what is asked: every quantity declared once. From that one
+// declaration come the slot on the screen, the option of the command line, the
+// key of the scenario file, the help text and the position of an error.
 package scenario
+
+import (
+	"reflect"
+	"slices"
+
+	"dropcrest/solutes"
+)
 
 // Scenario is one question in full, in SI units. Words are the words of the
 // options. A Measure that is a word has no number.
@@ -19,6 +29,9 @@ type Scenario struct {
 	Points           int
 	FromRadius       Measure // m, or "frame"
 	ToRadius         Measure // m, or "frame"
+
+	substances *solutes.Catalogue // nil: the standard one
+	anyName    bool               // names of substances are not looked up
 }
 
 // Component is one part of the dry particle.
@@ -39,3 +52,110 @@ type Measure struct {
 
 // Is reports whether the measure is that word.
 func (m Measure) Is(word string) bool { return m.Word == word }
+
+// Default returns the scenario a new user meets: 100 nm of ammonium sulfate by
+// ion interaction in air of 25 °C, looked at at 95 % humidity.
+func Default() Scenario {
+	return Scenario{
+		DryDiameter:      100e-9,
+		DrySizeIs:        "volume-equivalent",
+		ShapeFactor:      1,
+		Components:       []Component{defaultComponent("ammonium sulfate")},
+		SharesBy:         "volume",
+		WaterActivity:    "ion-interaction",
+		Kappa:            Measure{Word: "catalogue"},
+		VantHoffFactor:   Measure{Word: "ions"},
+		SurfaceTension:   Measure{Word: "water"},
+		SolutionDensity:  "additive",
+		Kelvin:           "standard",
+		Temperature:      298.15,
+		RelativeHumidity: 0.95,
+		Points:           200,
+		FromRadius:       Measure{Word: "frame"},
+		ToRadius:         Measure{Word: "frame"},
+	}
+}
+
+func defaultComponent(substance string) Component {
+	own := Measure{Word: "catalogue"}
+	return Component{Substance: substance, Share: 1, Kappa: own, Density: own, MolarMass: own, Ions: own}
+}
+
+// Clone returns a copy that shares nothing with s but the catalogue, which does
+// not change.
+func (s Scenario) Clone() Scenario {
+	s.Components = slices.Clone(s.Components)
+	return s
+}
+
+// Equal reports whether both ask the same.
+func (s Scenario) Equal(other Scenario) bool {
+	s.substances, s.anyName = other.substances, other.anyName
+	return reflect.DeepEqual(s, other)
+}
+
+// Use makes names of substances be looked up in that catalogue.
+func (s *Scenario) Use(c *solutes.Catalogue) { s.substances = c }
+
+func (s *Scenario) catalogue() *solutes.Catalogue {
+	if s.substances != nil {
+		return s.substances
+	}
+	return solutes.Standard()
+}
+
+// Inputs returns every input of the scenario, those of its rows included, in
+// the order of the statement.
+func Inputs(s *Scenario) []Input {
+	standard := Default()
+	var out []Input
+	for i := range fields {
+		out = append(out, slot[Scenario]{&fields[i], s, s, Path(fields[i].key), &standard})
+	}
+	for _, l := range Lists(s) {
+		for i := range l.Len() {
+			out = append(out, l.Row(i)...)
+		}
+	}
+	return out
+}
+
+// Find returns the input at a path.
+func Find(s *Scenario, p Path) (Input, bool) {
+	for _, in := range Inputs(s) {
+		if in.Path() == p {
+			return in, true
+		}
+	}
+	return nil, false
+}
+
+// Changes says in words how b differs from a: "kappa 0.65 → 0.61".
+func Changes(a, b Scenario) []string {
+	before := Inputs(&a)
+	after := Inputs(&b)
+	if len(a.Components) != len(b.Components) {
+		before, after = before[:len(fields)], after[:len(fields)]
+	}
+	var out []string
+	for i, in := range before {
+		was, is := in.Show(Style{}), after[i].Show(Style{})
+		if was != is {
+			out = append(out, in.Says()+" "+was+" → "+is)
+		}
+	}
+	if len(a.Components) != len(b.Components) {
+		out = append(out, "composition "+components{&a}.Show(Style{})+" → "+components{&b}.Show(Style{}))
+	}
+	return out
+}
+
+// Check says which values contradict each other.
+func Check(s *Scenario) []*ValueError {
+	if s.FromRadius.Word == "" && s.ToRadius.Word == "" && s.FromRadius.Number >= s.ToRadius.Number {
+		return []*ValueError{{Path: "from-radius", Given: wetRadius.show(s.FromRadius.Number),
+			Problem: "the first wet radius, " + wetRadius.show(s.FromRadius.Number) + ", is not below the last one",
+			Right:   "less than " + wetRadius.show(s.ToRadius.Number)}}
+	}
+	return nil
+}

@@ -1,0 +1,268 @@
+package scenario
+
+import (
+	"fmt"
+	"math"
+	"slices"
+	"strings"
+
+	"dropcrest/ui/plain"
+)
+
+// field declares one quantity of a record R: the scenario itself or one of its
+// rows. Slot, option, file key, help and error text are made of it.
+type field[R any] struct {
+	key, says, help, origin string
+
+	quantity *quantity // of a number
+	words    []Option  // of a choice; of a number: words that may stand for it
+	at       func(*R) any
+	used     func(*Scenario) bool // nil: always
+}
+
+// slot is a field of one record of one scenario; it implements Input.
+type slot[R any] struct {
+	*field[R]
+	s        *Scenario
+	r        *R
+	path     Path
+	standard *R // the record with its defaults
+}
+
+func (i slot[R]) Path() Path     { return i.path }
+func (i slot[R]) Key() string    { return i.key }
+func (i slot[R]) Says() string   { return i.says }
+func (i slot[R]) Help() string   { return i.help }
+func (i slot[R]) Origin() string { return i.origin }
+func (i slot[R]) Used() bool     { return i.used == nil || i.used(i.s) }
+
+func (i slot[R]) Kind() Kind {
+	switch {
+	case i.quantity != nil:
+		return Number
+	case i.words != nil:
+		return Choice
+	}
+	return Text
+}
+
+func (i slot[R]) Choices() []Option {
+	if i.Kind() != Text {
+		return slices.Clone(i.words)
+	}
+	var names []Option
+	for _, x := range i.s.catalogue().All() {
+		says := x.Name
+		if x.Formula != "" {
+			says += ", " + x.Formula
+		}
+		names = append(names, Option{x.Name, says})
+	}
+	return names
+}
+
+func (i slot[R]) Range() string {
+	words := make([]string, 0, len(i.words))
+	for _, w := range i.words {
+		words = append(words, w.Word)
+	}
+	switch {
+	case i.Kind() == Text:
+		return "a name, a formula or an alias of the catalogue"
+	case i.quantity == nil:
+		return strings.Join(words, ", ")
+	}
+	return strings.Join(append([]string{i.quantity.span()}, words...), ", or ")
+}
+
+// value copies what a field holds as a Measure: numbers as they are, words as words.
+func value(at any) Measure {
+	switch p := at.(type) {
+	case *float64:
+		return Measure{Number: *p}
+	case *int:
+		return Measure{Number: float64(*p)}
+	case *string:
+		return Measure{Word: *p}
+	case *Measure:
+		return *p
+	}
+	panic(fmt.Sprintf("scenario: a field cannot be a %T", at))
+}
+
+func (i slot[R]) value() Measure { return value(i.at(i.r)) }
+
+func (i slot[R]) assign(m Measure) {
+	switch p := i.at(i.r).(type) {
+	case *float64:
+		*p = m.Number
+	case *int:
+		*p = int(m.Number)
+	case *string:
+		*p = m.Word
+	case *Measure:
+		*p = m
+	}
+}
+
+func (i slot[R]) IsDefault() bool { return i.value() == value(i.at(i.standard)) }
+
+// isWord reports whether a word stands in the field, which the number 0 is not.
+func (i slot[R]) isWord() bool { return i.quantity == nil || i.value().Word != "" }
+
+func (i slot[R]) Show(st Style) string {
+	m := i.value()
+	text := m.Word
+	switch {
+	case !i.isWord():
+		text = i.quantity.show(m.Number)
+	case i.Kind() == Text && m.Word == "":
+		text = "values of its own"
+	default:
+		if w, ok := i.word(m.Word); ok {
+			text = w.Says
+		}
+	}
+	if st.ASCII {
+		return plain.ASCII(text)
+	}
+	return text
+}
+
+// exact is the value as a file keeps it.
+func (i slot[R]) exact() string {
+	if i.isWord() {
+		return i.value().Word
+	}
+	return i.quantity.exact(i.value().Number)
+}
+
+func (i slot[R]) word(w string) (Option, bool) {
+	for _, o := range i.words {
+		if strings.EqualFold(o.Word, w) || strings.EqualFold(o.Says, w) {
+			return o, true
+		}
+	}
+	return Option{}, false
+}
+
+func (i slot[R]) SI() (key string, si any) {
+	key = strings.ReplaceAll(i.key, "-", "_")
+	if i.quantity != nil && i.quantity.si != "" {
+		key += "_" + i.quantity.si
+	}
+	m := i.value()
+	switch {
+	case i.Kind() == Text && m.Word == "":
+		return key, nil
+	case i.isWord():
+		return key, m.Word
+	case i.quantity.si == "percent":
+		return key, i.quantity.units[0].fromSI(m.Number)
+	}
+	return key, m.Number
+}
+
+func (i slot[R]) Set(text string) error         { return i.set(text, true) }
+func (i slot[R]) SetWithUnit(text string) error { return i.set(text, false) }
+
+func (i slot[R]) set(text string, bare bool) error {
+	m, problem := i.read(text, bare)
+	if problem != nil {
+		problem.Path = i.path
+		return problem
+	}
+	i.assign(m)
+	return nil
+}
+
+func (i slot[R]) read(text string, bare bool) (Measure, *ValueError) {
+	text = strings.TrimSpace(text)
+	if clean := plain.Clean(text); clean != text {
+		return Measure{}, &ValueError{Given: clean, Problem: fmt.Sprintf("%q holds control characters", shortened(clean)), Right: i.Range()}
+	}
+	if i.Kind() == Text {
+		return i.readName(text)
+	}
+	if w, ok := i.word(text); ok && text != "" {
+		return Measure{Word: w.Word}, nil
+	}
+	if i.Kind() == Choice {
+		return Measure{}, &ValueError{Given: text, Problem: fmt.Sprintf("%q is none of its words", shortened(text)), Right: i.Range()}
+	}
+	x, problem := i.quantity.read(text, bare)
+	if problem != nil {
+		for _, w := range i.words {
+			problem.Right += ", or " + w.Word
+		}
+		return Measure{}, problem
+	}
+	return Measure{Number: x}, nil
+}
+
+// readName reads the name of a substance and writes it as the catalogue does.
+func (i slot[R]) readName(text string) (Measure, *ValueError) {
+	fail := func(problem, right string) (Measure, *ValueError) {
+		return Measure{}, &ValueError{Given: text, Problem: problem, Right: right}
+	}
+	if text == "" {
+		return fail("no name", i.Range())
+	}
+	if i.s.anyName {
+		return Measure{Word: text}, nil
+	}
+	if found, ok := i.s.catalogue().Find(text); ok {
+		return Measure{Word: found.Name}, nil
+	}
+	problem := fmt.Sprintf("no substance %q in the catalogue", shortened(text))
+	if near := i.s.catalogue().Near(text, 3); len(near) > 0 {
+		return fail(problem, strings.Join(near, ", ")+"?")
+	}
+	return fail(problem, "a name that dropcrest substances lists")
+}
+
+func (i slot[R]) Step(dir int, big bool) error {
+	if i.isWord() {
+		return i.stepWord(dir)
+	}
+	q := i.quantity
+	u := q.units[0]
+	x := i.value().Number
+	shown := q.step.next(u.fromSI(x), dir > 0, big)
+	for q.whole && shown != math.Trunc(shown) {
+		shown = q.step.next(shown, dir > 0, big)
+	}
+	to, err := u.toSI(fmt.Sprint(shown))
+	if err != nil {
+		return err
+	}
+	if q.open && to <= q.min {
+		to = x
+	}
+	to = min(max(to, q.min), q.max)
+	if to == x {
+		return &ValueError{Path: i.path, Problem: i.says + " ends at " + q.show(x), Right: i.Range()}
+	}
+	i.assign(Measure{Number: to})
+	return nil
+}
+
+// stepWord goes one word up or down its list; below the words that may stand for
+// a number lies the number.
+func (i slot[R]) stepWord(dir int) error {
+	words := i.Choices()
+	at := slices.IndexFunc(words, func(o Option) bool { return o.Word == i.value().Word })
+	to := at + 1
+	if dir > 0 {
+		to = at - 1
+	}
+	switch {
+	case i.quantity != nil && (to >= len(words) || len(words) == 1):
+		i.assign(Measure{Number: i.quantity.start})
+	case to < 0 || to >= len(words):
+		return &ValueError{Path: i.path, Problem: "the list of " + i.says + " ends here", Right: i.Range()}
+	default:
+		i.assign(Measure{Word: words[to].Word})
+	}
+	return nil
+}

@@ -1,0 +1,219 @@
+package scenario
+
+import (
+	"errors"
+	"fmt"
+	"io"
+	"strings"
+
+	"github.com/pelletier/go-toml/v2"
+	"github.com/pelletier/go-toml/v2/unstable"
+
+	"dropcrest/solutes"
+	"dropcrest/ui/near"
+	"dropcrest/ui/plain"
+)
+
+// largest is far more than any scenario; it keeps a wrong file from filling the
+// memory.
+const largest = 1 << 20
+
+// Decode reads a scenario file. Keys that are absent keep their defaults; a file
+// that names components has no others. The error is FileErrors: all that is wrong,
+// with line and column.
+func Decode(name string, r io.Reader) (Scenario, error) { return decode(name, r, Default()) }
+
+// DecodeUsing is Decode with names of substances looked up in that catalogue; with
+// nil they are taken as they are, because what a session has kept must be read even
+// when a substance is not there any more.
+func DecodeUsing(c *solutes.Catalogue, name string, r io.Reader) (Scenario, error) {
+	s := Default()
+	s.substances, s.anyName = c, c == nil
+	s, err := decode(name, r, s)
+	s.anyName = false
+	return s, err
+}
+
+func decode(name string, r io.Reader, s Scenario) (Scenario, error) {
+	text, err := io.ReadAll(io.LimitReader(r, largest+1))
+	if err != nil {
+		return s, err
+	}
+	name = plain.Clean(name)
+	if len(text) > largest {
+		return s, FileErrors{{name, 1, 1, "", errors.New("larger than 1 MiB, which no scenario file is")}}
+	}
+	var any map[string]any
+	if err := toml.Unmarshal(text, &any); err != nil {
+		return s, syntaxError(name, err)
+	}
+	f := file{name: name, s: &s}
+	f.walk(text)
+	if len(f.problems) == 0 {
+		f.check()
+	}
+	if len(f.problems) > 0 {
+		return s, f.problems
+	}
+	return s, nil
+}
+
+func syntaxError(name string, err error) FileErrors {
+	var at *toml.DecodeError
+	if !errors.As(err, &at) {
+		return FileErrors{{name, 1, 1, "", errors.New(plain.Clean(err.Error()))}}
+	}
+	line, column := at.Position()
+	text := strings.TrimPrefix(at.Error(), "toml: ")
+	return FileErrors{{name, line, column, plain.Clean(strings.Join(at.Key(), ".")), errors.New("no TOML: " + plain.Clean(text))}}
+}
+
+// file is a scenario file that is being read. Its syntax was checked before.
+type file struct {
+	name     string
+	s        *Scenario
+	parser   unstable.Parser
+	row      int // of the component that is being read, -1: none
+	skip     bool
+	where    map[Path]unstable.Position
+	problems FileErrors
+}
+
+func (f *file) walk(text []byte) {
+	f.where = map[Path]unstable.Position{}
+	f.row = -1
+	f.parser.Reset(text)
+	for f.parser.NextExpression() {
+		e := f.parser.Expression()
+		switch e.Kind {
+		case unstable.KeyValue:
+			f.keyValue(e)
+		case unstable.ArrayTable:
+			f.table(e, true)
+		case unstable.Table:
+			f.table(e, false)
+		}
+	}
+	if err := f.parser.Error(); err != nil {
+		f.problems = append(f.problems, &FileError{f.name, 1, 1, "", errors.New(plain.Clean(err.Error()))})
+	}
+}
+
+func (f *file) position(n *unstable.Node) unstable.Position {
+	if n.Raw.Length == 0 && len(n.Data) > 0 {
+		return f.parser.Shape(f.parser.Range(n.Data)).Start
+	}
+	return f.parser.Shape(n.Raw).Start
+}
+
+func (f *file) fail(at unstable.Position, key string, err error) {
+	f.problems = append(f.problems, &FileError{f.name, at.Line, at.Column, plain.Clean(key), err})
+}
+
+// name of a key, with the place of its first part.
+func (f *file) key(n *unstable.Node) (string, unstable.Position) {
+	var parts []string
+	var at unstable.Position
+	for it := n.Key(); it.Next(); {
+		if len(parts) == 0 {
+			at = f.position(it.Node())
+		}
+		parts = append(parts, string(it.Node().Data))
+	}
+	return strings.Join(parts, "."), at
+}
+
+func (f *file) table(n *unstable.Node, list bool) {
+	name, at := f.key(n)
+	f.skip = name != (components{}).Key() || !list
+	if f.skip {
+		f.fail(at, name, &ValueError{Given: name, Problem: fmt.Sprintf("no table %q", plain.Clean(name)), Right: "[[component]]"})
+		return
+	}
+	if f.row < 0 {
+		f.s.Components = nil
+	}
+	if len(f.s.Components) >= mostComponents {
+		f.skip = true
+		f.fail(at, name, &ValueError{Problem: "too many components", Right: fmt.Sprintf("at most %d", mostComponents)})
+		return
+	}
+	f.s.Components = append(f.s.Components, defaultComponent(""))
+	f.row = len(f.s.Components) - 1
+}
+
+func (f *file) keyValue(n *unstable.Node) {
+	if f.skip {
+		return
+	}
+	name, at := f.key(n)
+	inputs := Inputs(f.s)[:len(fields)]
+	if f.row >= 0 {
+		inputs = components{f.s}.Row(f.row)
+	}
+	if name == versionKey && f.row < 0 {
+		f.version(n.Value())
+		return
+	}
+	for _, in := range inputs {
+		if in.Key() == name {
+			f.where[in.Path()] = f.position(n.Value())
+			f.set(in, n.Value())
+			return
+		}
+	}
+	f.fail(at, name, unknownKey(name, inputs))
+}
+
+func unknownKey(name string, inputs []Input) error {
+	keys := make([]string, len(inputs))
+	for i, in := range inputs {
+		keys[i] = in.Key()
+	}
+	right := strings.Join(keys, ", ")
+	if word := near.Word(name, keys); word != "" {
+		right = word + "?"
+	}
+	return &ValueError{Given: name, Problem: "no such key", Right: right}
+}
+
+func (f *file) version(n *unstable.Node) {
+	if string(n.Data) != fmt.Sprint(fileVersion) {
+		f.fail(f.position(n), versionKey, &ValueError{Problem: fmt.Sprintf("version %s of the file", shortened(plain.Clean(string(n.Data)))), Right: fmt.Sprint(fileVersion)})
+	}
+}
+
+func (f *file) set(in Input, n *unstable.Node) {
+	switch n.Kind {
+	case unstable.String, unstable.Integer, unstable.Float:
+	default:
+		f.fail(f.position(n), in.Key(), &ValueError{Problem: "neither text nor a number", Right: in.Range()})
+		return
+	}
+	text := string(n.Data)
+	if n.Kind == unstable.Integer && !isDecimal(text) {
+		f.fail(f.position(n), in.Key(), &ValueError{Problem: shortened(text) + " is no decimal number", Right: in.Range()})
+		return
+	}
+	if n.Kind != unstable.String {
+		text = strings.ReplaceAll(text, "_", "")
+	}
+	if err := in.SetWithUnit(text); err != nil {
+		f.fail(f.position(n), in.Key(), err)
+	}
+}
+
+func isDecimal(text string) bool {
+	return len(text) < 2 || text[0] != '0' || isDigit(text[1])
+}
+
+// check looks at the values together.
+func (f *file) check() {
+	for _, p := range Check(f.s) {
+		at, ok := f.where[p.Path]
+		if !ok {
+			at = unstable.Position{Line: 1, Column: 1}
+		}
+		f.fail(at, string(p.Path), p)
+	}
+}

@@ -1,0 +1,67 @@
+package scenario
+
+import "fmt"
+
+// Units, the shown one first. Factors are exact: SI and its prefixes, and the
+// definition of the degree Celsius (273.15 K).
+var (
+	nanometre  = unit{[]string{"nm"}, "1e-9", ""}
+	micrometre = unit{[]string{"µm", "um", "μm", "micron"}, "1e-6", ""}
+	millimetre = unit{[]string{"mm"}, "1e-3", ""}
+	metre      = unit{[]string{"m"}, "1", ""}
+
+	celsius = unit{[]string{"°C", "C", "degC", "celsius"}, "1", "273.15"}
+	kelvin  = unit{[]string{"K", "kelvin"}, "1", ""}
+
+	perCent = unit{[]string{"%", "percent"}, "0.01", ""}
+	bare    = unit{[]string{""}, "1", ""}
+
+	millinewton = unit{[]string{"mN/m", "dyn/cm"}, "1e-3", ""}
+	newton      = unit{[]string{"N/m", "J/m2", "J/m²"}, "1", ""}
+
+	gramPerCubicCentimetre = unit{[]string{"g/cm³", "g/cm3", "kg/L", "g/mL"}, "1000", ""}
+	kilogramPerCubicMetre  = unit{[]string{"kg/m³", "kg/m3", "g/L"}, "1", ""}
+
+	gramPerMole     = unit{[]string{"g/mol"}, "1e-3", ""}
+	kilogramPerMole = unit{[]string{"kg/mol"}, "1", ""}
+)
+
+// Quantities. Ranges are what makes sense to ask for, not where the formulas were
+// measured: answers note that. start is also the example in messages.
+var (
+	drySize = &quantity{says: "length", units: []unit{nanometre, micrometre, millimetre, metre}, si: "m",
+		min: 1e-9, max: 1e-5, start: 1e-7, step: stepper{ladder: true}}
+	wetRadius = &quantity{says: "length", units: []unit{micrometre, nanometre, millimetre, metre}, si: "m",
+		min: 0.5e-9, max: 1e-2, start: 1e-6, step: stepper{ladder: true}}
+	shapeFactor = &quantity{says: "shape factor", units: []unit{bare}, min: 1, max: 3, start: 1,
+		step: stepper{small: 0.01, big: 0.1, decimals: 2}}
+	kappaValue = &quantity{says: "kappa", units: []unit{bare}, min: 0, max: 3, start: 0.3,
+		step: stepper{small: 0.01, big: 0.1}}
+	vantHoffFactor = &quantity{says: "van 't Hoff factor", units: []unit{bare}, min: 0, max: 10, start: 2,
+		step: stepper{small: 0.1, big: 1}}
+	airTemperature = &quantity{says: "temperature", units: []unit{celsius, kelvin}, si: "k",
+		min: 233.15, max: 323.15, start: 298.15, step: stepper{small: 1, big: 10, decimals: 1}}
+	humidity = &quantity{says: "humidity", units: []unit{perCent}, si: "percent",
+		min: 0, open: true, max: 1.1, start: 0.95, step: stepper{small: 1, big: 5, decimals: 1}, doubt: doubtFraction}
+	tension = &quantity{says: "surface tension", units: []unit{millinewton, newton}, si: "n_per_m",
+		min: 1e-3, max: 0.2, start: 0.072, step: stepper{small: 1, big: 10, decimals: 1}}
+	pointCount = &quantity{says: "number", units: []unit{bare}, min: 1, max: 100000, whole: true, start: 200,
+		step: stepper{ladder: true}}
+	share = &quantity{says: "share", units: []unit{bare}, min: 0, open: true, max: 1e6, start: 1,
+		step: stepper{small: 0.05, big: 0.25, decimals: 2}}
+	massDensity = &quantity{says: "density", units: []unit{gramPerCubicCentimetre, kilogramPerCubicMetre}, si: "kg_per_m3",
+		min: 100, max: 20000, start: 1500, step: stepper{small: 0.05, big: 0.5, decimals: 2}}
+	molarMass = &quantity{says: "molar mass", units: []unit{gramPerMole, kilogramPerMole}, si: "kg_per_mol",
+		min: 1e-3, max: 1000, start: 0.1, step: stepper{ladder: true}}
+	ionCount = &quantity{says: "number of ions", units: []unit{bare}, min: 0, max: 10, start: 2,
+		step: stepper{small: 1, big: 1}}
+)
+
+// doubtFraction refuses a bare humidity that may be meant as a fraction.
+func doubtFraction(x float64) (problem, right string) {
+	if x < 0 || x > 1.1 {
+		return "", ""
+	}
+	return fmt.Sprintf("%s may be a fraction or per cent", figures(x)),
+		fmt.Sprintf("%s%% or %s%%", figures(100*x), figures(x))
+}
