@@ -65,6 +65,7 @@ func (p Adsorption) Check() error {
 // volume of water per volume of dry particle, but of the dry size too.
 type AdsorbedWater struct {
 	p         Adsorption
+	dry       float64 // Dd, m
 	gap       float64 // (Dd - Dc)/Dd, the coat
 	layers    float64 // Dd/(2 Layer), layers per Dd
 	osmotic   float64 // ε κ
@@ -80,12 +81,32 @@ func (p Adsorption) On(dry float64) AdsorbedWater {
 	core := math.Cbrt(1 - p.SolubleShare)
 	w := AdsorbedWater{
 		p:       p,
+		dry:     dry,
 		gap:     p.SolubleShare / (1 + core*(1+core)),
 		layers:  dry / (2 * p.Layer),
 		osmotic: p.SolubleShare * p.Kappa,
 	}
 	w.leastThin = math.Max(0, 1/w.layers-w.gap)
 	return w
+}
+
+// Particle returns the particle of that dry diameter (m) and temperature (K) that
+// the parameters describe. Errors: those of both Checks.
+func (p Adsorption) Particle(dry, temperature float64) (Particle, error) {
+	if err := p.Check(); err != nil {
+		return Particle{}, err
+	}
+	particle := Particle{DryDiameter: dry, Temperature: temperature, Solution: p.On(dry)}
+	return particle, particle.Check()
+}
+
+// DryDiameter returns the dry diameter in m that the water belongs to.
+func (w AdsorbedWater) DryDiameter() float64 { return w.dry }
+
+// Sized returns the adsorbed water on particles of another dry diameter in m. It
+// has no tension of its own.
+func (w AdsorbedWater) Sized(dry float64) (solutes.Solution, solutes.Tension) {
+	return w.p.On(dry), nil
 }
 
 // Layers returns θ, the number of layers on the insoluble core at u.
@@ -134,6 +155,10 @@ func (w AdsorbedWater) DryLnActivity() float64 {
 	}
 	return -w.adsorbed(0)
 }
+
+// DiluteKappa returns ε κ, which is what is left of the water activity at infinite
+// dilution as far as it is a matter of solute.
+func (w AdsorbedWater) DiluteKappa() float64 { return w.osmotic }
 
 // adsorbed returns A θ^(-B) at t = x - 1.
 func (w AdsorbedWater) adsorbed(t float64) float64 {

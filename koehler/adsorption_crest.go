@@ -1,7 +1,6 @@
 package koehler
 
 import (
-	"errors"
 	"fmt"
 	"math"
 )
@@ -69,16 +68,18 @@ func AdsorptionExtrema(dst []Turn, dry, kelvin float64, p Adsorption) ([]Turn, e
 	if err := p.Check(); err != nil {
 		return dst, err
 	}
-	c := adsorptionCurve{p.On(dry), kelvin / dry}
-	if p.B >= 1 {
-		crest, err := c.onlyCrest()
-		if errors.Is(err, ErrNoCrest) {
-			return dst, nil
+	return adsorptionCurve{p.On(dry), kelvin / dry}.turns(dst), nil
+}
+
+func (c adsorptionCurve) turns(dst []Turn) []Turn {
+	if c.p.B >= 1 {
+		if crest, err := c.onlyCrest(); err == nil {
+			dst = append(dst, crest)
 		}
-		return append(dst, crest), err
+		return dst
 	}
-	s := scan{from: 1e-6, to: math.Pow(greatestGrowth, 3), points: adsorptionPoints, dryLnS: c.a + c.DryLnActivity()}
-	return s.extrema(dst, c), nil
+	s := scan{from: 1e-6, to: turnEnd, points: adsorptionPoints, dryLnS: c.a + c.DryLnActivity()}
+	return s.extrema(dst, c)
 }
 
 // onlyCrest solves ln f = ln a by Newton's method in ln t, t = x - 1, started

@@ -6,6 +6,7 @@ import (
 	"math/rand/v2"
 	"testing"
 
+	"dropcrest/atmos"
 	"dropcrest/solutes"
 )
 
@@ -77,15 +78,20 @@ func TestRandomFilmsAgainstScan(t *testing.T) {
 
 // Haze sizes solve the curve on both sides of the crest.
 func TestAdsorptionHaze(t *testing.T) {
-	const dry, kelvin = 80e-9, 2.1e-9
+	const dry, T = 80e-9, 293.15
+	kelvin := KelvinLength(atmos.SurfaceTension(T), T)
 	for _, f := range films {
 		crest, err := AdsorptionCrest(dry, kelvin, f.p)
 		if err != nil {
 			t.Fatalf("%s: %v", f.name, err)
 		}
+		particle, err := f.p.Particle(dry, T)
+		if err != nil {
+			t.Fatalf("%s: %v", f.name, err)
+		}
 		curve := adsorptionCurve{f.p.On(dry), kelvin / dry}
 		for _, S := range []float64{0.7, 0.95, 0.999, 1, 1 + crest.Supersaturation/2, 1 + crest.Supersaturation*(1-1e-9)} {
-			stable, unstable, err := AdsorptionHaze(dry, kelvin, f.p, S)
+			stable, unstable, err := particle.Haze(S)
 			if S < math.Exp(curve.a+curve.DryLnActivity()) {
 				if !errors.Is(err, ErrNoHaze) {
 					t.Errorf("%s: S = %v lies below the dry end: %v %v", f.name, S, stable, err)
@@ -96,18 +102,18 @@ func TestAdsorptionHaze(t *testing.T) {
 				t.Errorf("%s: S = %v: %v", f.name, S, err)
 				continue
 			}
-			if got, slope := curve.LnSaturation(stable); math.Abs(got-math.Log(S)) > 1e-13 || slope < 0 || stable > crest.Water {
+			if got, slope := curve.LnSaturation(stable.Water); math.Abs(got-math.Log(S)) > 1e-13 || slope < 0 || stable.Water > crest.Water {
 				t.Errorf("%s: S = %v: stable %v has ln S %v, slope %v", f.name, S, stable, got, slope)
 			}
 			if S <= 1 {
-				if !math.IsNaN(unstable) {
-					t.Errorf("%s: S = %v: unstable %v, want NaN", f.name, S, unstable)
+				if unstable != (State{}) {
+					t.Errorf("%s: S = %v: unstable %v, want none", f.name, S, unstable)
 				}
-			} else if got, slope := curve.LnSaturation(unstable); math.Abs(got-math.Log(S)) > 1e-13 || slope > 0 || unstable < crest.Water {
+			} else if got, slope := curve.LnSaturation(unstable.Water); math.Abs(got-math.Log(S)) > 1e-13 || slope > 0 || unstable.Water < crest.Water {
 				t.Errorf("%s: S = %v: unstable %v has ln S %v, slope %v", f.name, S, unstable, got, slope)
 			}
 		}
-		if _, _, err := AdsorptionHaze(dry, kelvin, f.p, 1.001+crest.Supersaturation); !errors.Is(err, ErrAboveCrest) {
+		if _, _, err := particle.Haze(1.001 + crest.Supersaturation); !errors.Is(err, ErrAboveCrest) {
 			t.Errorf("%s: above the crest: error %v", f.name, err)
 		}
 	}
@@ -115,8 +121,12 @@ func TestAdsorptionHaze(t *testing.T) {
 	if _, err := AdsorptionCrest(500e-9, kelvin, endless); !errors.Is(err, ErrNoCrest) {
 		t.Fatalf("this film should have no crest: %v", err)
 	}
-	stable, _, err := AdsorptionHaze(500e-9, kelvin, endless, 0.99)
-	if got, _ := (adsorptionCurve{endless.On(500e-9), kelvin / 500e-9}).LnSaturation(stable); err != nil || math.Abs(got-math.Log(0.99)) > 1e-13 {
+	particle, err := endless.Particle(500e-9, T)
+	if err != nil {
+		t.Fatal(err)
+	}
+	stable, _, err := particle.Haze(0.99)
+	if got, _ := (adsorptionCurve{endless.On(500e-9), kelvin / 500e-9}).LnSaturation(stable.Water); err != nil || math.Abs(got-math.Log(0.99)) > 1e-13 {
 		t.Errorf("film without a crest: %v %v", stable, err)
 	}
 }
@@ -134,8 +144,8 @@ func TestAdsorptionRefuses(t *testing.T) {
 		if turns, err := AdsorptionExtrema(nil, 80e-9, 2.1e-9, p); err == nil || turns != nil {
 			t.Errorf("%s: extrema %v, error %v", name, turns, err)
 		}
-		if _, _, err := AdsorptionHaze(80e-9, 2.1e-9, p, 0.9); err == nil {
-			t.Errorf("%s: haze without an error", name)
+		if _, err := p.Particle(80e-9, 293.15); !errors.As(err, &unusable) {
+			t.Errorf("%s: particle without an error", name)
 		}
 	}
 }

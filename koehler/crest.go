@@ -1,116 +1,103 @@
 package koehler
 
 import (
-	"errors"
 	"math"
 
 	"dropcrest/solutes"
 )
 
-// SeveralMaxima is what a Solution or Tension implements whose curve may have
-// more than one extremum. Crest then scans the whole curve instead of climbing
-// to the one crest.
+// SeveralMaxima is what a Solution or Tension implements that knows whether its
+// curve may have more than one extremum. The whole curve is scanned then instead
+// of climbed to the one crest. A Solution that says nothing has one crest; a
+// Tension that says nothing may have more.
 type SeveralMaxima interface{ SeveralMaxima() bool }
 
 // Crest returns the barrier: the highest maximum of the equilibrium curve.
 //
 // Constant κ with additive volumes, a constant tension and the standard Kelvin
-// term is solved in closed form. A smooth activity is climbed by Newton in ln u;
-// a Tension that hangs on the solution, or a part that reports SeveralMaxima, is
-// scanned. An error wraps ErrInput or ErrNoCrest.
+// term is solved in closed form. A smooth activity is climbed by Newton's method
+// in ln u. Everything else is the Barrier among the Turns. An error wraps ErrInput
+// or ErrNoCrest.
 func (p Particle) Crest() (Crest, error) {
 	if err := p.Check(); err != nil {
 		return Crest{}, err
 	}
 	c := p.ready()
-	crest, _, err := p.barrier(&c)
+	if kappa, ok := c.closedKappa(); ok {
+		return c.closed(kappa), nil
+	}
+	var room [16]Turn
+	crest, _, err := c.barrier(room[:0])
 	return crest, err
 }
 
-// Extrema returns all extrema in the order of their wet size.
-func (p Particle) Extrema() ([]Extremum, error) {
-	if err := p.Check(); err != nil {
-		return nil, err
-	}
-	c := p.ready()
-	crest, extrema, err := p.barrier(&c)
-	return p.allExtrema(crest, extrema, err)
-}
-
-// allExtrema are the extrema of what barrier returned. A curve that was scanned
-// and has no maximum has no error either.
-func (p Particle) allExtrema(crest Crest, scanned []Extremum, err error) ([]Extremum, error) {
-	switch {
-	case scanned != nil && p.severalMaxima():
-		return scanned, nil
-	case err != nil:
-		return nil, err
-	}
-	return []Extremum{{crest.Kind, crest.State}}, nil
-}
-
-// barrier is the crest of a particle that was made ready, and all extrema where
-// they had to be found for it.
-func (p Particle) barrier(c *curve) (Crest, []Extremum, error) {
-	kappa, constant := closedKappa(p.Solution)
-	if constant && (!(kappa >= 0) || kappa > maxKappa) {
-		return Crest{}, nil, &RangeError{"kappa", kappa, "0 to 30"}
-	}
-	switch {
-	case constant && kappa == 0:
-		return c.crest(Extremum{BoundaryMaximum, c.insoluble()}), nil, nil
-	case constant && p.Swelling == nil && p.constantTension() && p.Kelvin == Standard:
-		return c.closed(kappa), nil, nil
-	case !p.severalMaxima():
-		if u, ok := c.climb(); ok {
-			return c.crest(Extremum{Maximum, c.state(u)}), nil, nil
+// barrier returns the crest and the turns that had to be found for it, in the
+// empty dst.
+func (c *curve) barrier(dst []Turn) (Crest, []Turn, error) {
+	turns, ok := c.exact(dst)
+	if !ok {
+		if u, ok := c.only(); ok {
+			crest := c.crest(c.extremum(Maximum, c.state(u)), Only)
+			return crest, append(dst, crest.turn()), nil
 		}
+		turns = c.scan(dst)
 	}
-	extrema, err := c.scan()
-	if err != nil {
-		return Crest{}, nil, err
+	i, place := Barrier(turns)
+	if place == NoBarrier {
+		return Crest{}, turns, c.endless()
 	}
-	best := -1
-	for i, e := range extrema {
-		isMaximum := e.Kind == Maximum || e.Kind == BoundaryMaximum
-		if isMaximum && (best < 0 || e.SaturationRatio > extrema[best].SaturationRatio) {
-			best = i
-		}
+	if kappa, ok := c.closedKappa(); ok {
+		return c.closed(kappa), turns, nil
 	}
-	if best < 0 {
-		return Crest{}, extrema, ErrNoCrest
-	}
-	return c.crest(extrema[best]), extrema, nil
+	return c.crest(c.atTurn(turns[i]), place), turns, nil
 }
 
-func (p Particle) severalMaxima() bool {
-	if s, ok := p.Solution.(SeveralMaxima); ok && s.SeveralMaxima() {
+func (c Crest) turn() Turn { return Turn{c.Kind, c.Water, c.GrowthFactor, c.Supersaturation} }
+
+// hasSeveralMaxima tells whether the curve may have more than one extremum.
+func (c *curve) hasSeveralMaxima() bool {
+	if s, ok := c.sol.(SeveralMaxima); ok && s.SeveralMaxima() {
 		return true
 	}
-	if p.constantTension() {
+	if c.stress == nil {
 		return false
 	}
-	s, ok := p.Tension.(SeveralMaxima)
+	s, ok := c.stress.(SeveralMaxima)
 	return !ok || s.SeveralMaxima()
 }
 
-// closedKappa is κ of a solution of constant κ.
-func closedKappa(s solutes.Solution) (float64, bool) {
-	k, ok := s.(solutes.Kappa)
-	return float64(k), ok
+// closedKappa is κ where the closed form holds.
+func (c *curve) closedKappa() (float64, bool) {
+	k, ok := c.sol.(solutes.Kappa)
+	return float64(k), ok && c.isPlain()
 }
 
-func (c *curve) crest(e Extremum) Crest {
-	return Crest{e.State, e.WetDiameter / c.dry, e.Kind, e.Kind != BoundaryMaximum && e.Water < c.sol.LeastWater()}
+// endless is the error of a curve without a maximum.
+func (c *curve) endless() error {
+	if t := c.at(turnEnd); t.slope > 0 {
+		return errEndless
+	}
+	return ErrNoCrest
+}
+
+func (c *curve) extremum(kind Kind, s State) Extremum {
+	return Extremum{kind, s, kind != BoundaryMaximum && s.Water < c.sol.LeastWater()}
+}
+
+func (c *curve) crest(e Extremum, place Place) Crest {
+	return Crest{e, e.WetDiameter / c.dry, place}
 }
 
 // closed is the crest of the κ form.
 func (c *curve) closed(kappa float64) Crest {
-	a := 4 * c.sigma * c.kelvin.PerPressure
-	k := SolveKappa(c.dry, a, kappa)
+	k := SolveKappa(c.dry, c.kelvinLength(), kappa)
 	t := k.GrowthFactor - 1
+	kind := Maximum
+	if kappa == 0 {
+		kind = BoundaryMaximum
+	}
 	return Crest{
-		State: State{
+		Extremum: Extremum{Kind: kind, State: State{
 			WetDiameter:     c.dry * k.GrowthFactor,
 			Water:           t * (3 + t*(3+t)),
 			SaturationRatio: 1 + k.Supersaturation,
@@ -118,22 +105,19 @@ func (c *curve) closed(kappa float64) Crest {
 			WaterActivity:   k.WaterActivity,
 			KelvinFactor:    (1 + k.Supersaturation) / k.WaterActivity,
 			SurfaceTension:  c.sigma,
-		},
+		}},
 		GrowthFactor: k.GrowthFactor,
+		Place:        Only,
 	}
 }
 
-// insoluble is the state of a wettable particle without solute at its dry size.
-func (c *curve) insoluble() State {
-	sigma := c.sigma
-	if c.stress != nil {
-		sigma, _ = c.stress.SurfaceTension(scanFrom)
+// only is the u of the one crest of a smooth activity, if the curve has one
+// crest and it is found.
+func (c *curve) only() (u float64, ok bool) {
+	if c.hasSeveralMaxima() {
+		return 0, false
 	}
-	lnS, _, _ := c.kelvin.LnSaturation(LaplacePressure(sigma, c.dry), 0)
-	return State{
-		WetDiameter: c.dry, SaturationRatio: math.Exp(lnS), Supersaturation: math.Expm1(lnS),
-		WaterActivity: 1, KelvinFactor: math.Exp(lnS), SurfaceTension: sigma,
-	}
+	return c.climb()
 }
 
 // climbDone is the last step in ln u: secants gain half as many digits again, so
@@ -212,62 +196,3 @@ func crestWater(dry, kelvin, kappa float64) float64 {
 func (p Particle) Giant() bool { return p.DryDiameter > giantDry }
 
 const giantDry = 1e-6
-
-// scanFrom is the least u of the scan.
-const scanFrom = 1e-9
-
-// perDecade is the number of scan points per decade of u.
-const perDecade = 24
-
-// scan finds every extremum: a logarithmic scan for sign changes of the slope
-// and a bracketed refinement of each. Where the curve still rises at the least
-// water of the activity model the scan starts there, as what the extrapolation
-// does below is no finding; nor is a boundary maximum of an extrapolation.
-func (c *curve) scan() ([]Extremum, error) {
-	far := c.farWater()
-	if math.IsNaN(far) {
-		return nil, errors.Join(ErrNoCrest, errors.New("the equilibrium curve is not finite or does not fall for large drops"))
-	}
-	from, least := scanFrom, c.sol.LeastWater()
-	if least > from && c.at(least).slope > 0 {
-		from = least
-	}
-	n := int(math.Ceil(perDecade * math.Log10(far/from)))
-	start, step := math.Log(from), math.Log(far/from)/float64(n)
-	x, f := start, c.at(from).slope
-	found := []Extremum{}
-	if f < 0 && least == 0 {
-		found = append(found, Extremum{BoundaryMaximum, c.state(from)})
-	}
-	for i := 1; i <= n; i++ {
-		next := start + float64(i)*step
-		g := c.at(math.Exp(next)).slope
-		if (f > 0) != (g > 0) {
-			at, jump := c.turn(x, next)
-			found = append(found, Extremum{kindOf(f > 0, jump), c.state(math.Exp(at))})
-		}
-		x, f = next, g
-	}
-	return found, nil
-}
-
-func kindOf(rising, jump bool) Kind {
-	switch {
-	case rising:
-		return Maximum
-	case jump:
-		return KinkMinimum
-	}
-	return Minimum
-}
-
-// farWater is a u beyond all extrema: the curve falls there and a hundred
-// times further out.
-func (c *curve) farWater() float64 {
-	for u := 1e6; u < 1e18; u *= 10 {
-		if c.at(u).slope < 0 && c.at(10*u).slope < 0 && c.at(100*u).slope < 0 {
-			return 10 * u
-		}
-	}
-	return math.NaN()
-}

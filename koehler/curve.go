@@ -1,7 +1,6 @@
 package koehler
 
 import (
-	"errors"
 	"math"
 
 	"dropcrest/atmos"
@@ -15,8 +14,9 @@ type curve struct {
 	kelvin KelvinTerm
 	sol    solutes.Solution
 	swell  solutes.Swelling
-	stress solutes.Tension
-	sigma  float64 // used where stress is nil
+	stress solutes.Tension // nil: constant
+	sigma  float64         // N/m, that constant
+	tolman float64         // m
 }
 
 func (p Particle) ready() curve {
@@ -25,6 +25,7 @@ func (p Particle) ready() curve {
 		kelvin: NewKelvinTerm(p.Kelvin, p.Temperature),
 		sol:    p.Solution,
 		swell:  p.Swelling,
+		tolman: p.TolmanLength,
 	}
 	switch t := p.Tension.(type) {
 	case nil:
@@ -37,24 +38,14 @@ func (p Particle) ready() curve {
 	return c
 }
 
-// constantTension reports whether the solute leaves the surface tension alone.
-func (p Particle) constantTension() bool {
-	t, constant := p.Tension.(solutes.ConstantTension)
-	return p.Tension == nil || constant && t > 0
+// isPlain tells whether all but the water activity is of the simplest form:
+// additive volumes, a constant tension, the standard Kelvin term.
+func (c *curve) isPlain() bool {
+	return c.swell == nil && c.stress == nil && c.tolman == 0 && c.kelvin.Form == Standard
 }
 
-// Check returns an error that says which field of the particle is not usable.
-func (p Particle) Check() error {
-	switch {
-	case !(p.DryDiameter > 0) || math.IsInf(p.DryDiameter, 0):
-		return &RangeError{"dry diameter", p.DryDiameter, "a positive length in m"}
-	case !(p.Temperature > 0) || p.Temperature >= atmos.CriticalTemperature:
-		return &RangeError{"temperature", p.Temperature, "above 0 K and below the critical point of water"}
-	case p.Solution == nil:
-		return errors.Join(ErrInput, errors.New("particle has no solution"))
-	}
-	return nil
-}
+// kelvinLength is A in m for the constant tension.
+func (c *curve) kelvinLength() float64 { return 4 * c.sigma * c.kelvin.PerPressure }
 
 // terms are the parts of the equilibrium at one u.
 type terms struct {
@@ -73,6 +64,11 @@ func (c *curve) at(u float64) (t terms) {
 	t.sigma = c.sigma
 	if c.stress != nil {
 		t.sigma, dsigma = c.stress.SurfaceTension(u)
+	}
+	if c.tolman != 0 {
+		factor, slope := TolmanTension(1, c.tolman, t.wet)
+		dsigma = dsigma*factor + t.sigma*slope*t.wetSlope
+		t.sigma *= factor
 	}
 	var dlnaw float64
 	t.lnaw, dlnaw = c.sol.LnActivity(u)
@@ -94,6 +90,12 @@ func (c *curve) state(u float64) State {
 		KelvinFactor:    math.Exp(t.lnS - t.lnaw),
 		SurfaceTension:  t.sigma,
 	}
+}
+
+// LnSaturation makes a curve an equilibrium, for the scan and the roots.
+func (c *curve) LnSaturation(u float64) (lnS, slope float64) {
+	t := c.at(u)
+	return t.lnS, t.slope
 }
 
 // LnSaturation returns ln S over the drop that holds u volumes of water per dry

@@ -16,13 +16,13 @@ const dryDone = 1e-13
 
 // ActivatedDryDiameter returns the dry diameter in m of this composition whose
 // crest lies at supersaturation s (a fraction); the particle's own DryDiameter
-// does not matter.
+// does not matter, and SizeDependent matter is taken along.
 //
 // Constant κ is DryOf. Otherwise the crest falls with the dry size, and ln s_c
 // against ln Dd is nearly straight, so secants inside a bracket end in a few
 // steps. A NoSolutionError says that no size from 0.1 nm to 1 mm activates at s.
 func (p Particle) ActivatedDryDiameter(s float64) (float64, error) {
-	p.DryDiameter = 1e-7
+	p = p.Sized(1e-7)
 	if err := p.Check(); err != nil {
 		return math.NaN(), err
 	}
@@ -30,9 +30,8 @@ func (p Particle) ActivatedDryDiameter(s float64) (float64, error) {
 		return math.NaN(), &RangeError{"supersaturation", s, "above 0: at or below saturation no particle has its crest"}
 	}
 	c := p.ready()
-	kappa, constant := closedKappa(p.Solution)
-	if constant && p.Swelling == nil && p.constantTension() && p.Kelvin == Standard {
-		return DryOf(kappa, 4*c.sigma*c.kelvin.PerPressure, s)
+	if kappa, ok := c.closedKappa(); ok {
+		return DryOf(kappa, c.kelvinLength(), s)
 	}
 	return p.searchDry(s)
 }
@@ -43,8 +42,7 @@ func (p Particle) searchDry(s float64) (float64, error) {
 	x, slope := math.Log(1e-7), -1.5
 	before, f := math.NaN(), math.NaN()
 	for range 200 {
-		p.DryDiameter = math.Exp(x)
-		crest, err := p.Crest()
+		crest, err := p.Sized(math.Exp(x)).Crest()
 		if err != nil {
 			return math.NaN(), err
 		}

@@ -2,60 +2,53 @@ package koehler
 
 import "math"
 
-// rootDone is the step in ln u at which a root counts as found. A Newton step
-// that small leaves an error below rounding.
-const rootDone = 1e-11
-
-// waterAt returns ln u with ln S = lnS inside a bracket whose ends lie on
-// different sides of it: Newton, halved where a step leaves the bracket.
-func (c *curve) waterAt(lnS, lo, hi float64) float64 {
-	rising := c.at(math.Exp(lo)).lnS < lnS
-	x := (lo + hi) / 2
-	for range 200 {
-		t := c.at(math.Exp(x))
-		f := t.lnS - lnS
-		if (f < 0) == rising {
-			lo = x
-		} else {
-			hi = x
+// before returns the u below high at which c, rising there, has ln S = lnS. It is
+// 0 where c does not come down to lnS towards the dry size.
+func before(c equilibrium, lnS, high float64) float64 {
+	lo := high
+	for f := lnS; f >= lnS; f, _ = c.LnSaturation(lo) {
+		if lo <= leastWater {
+			return 0
 		}
-		step := f / t.slope
-		if math.Abs(step) <= rootDone {
-			return x - step
-		}
-		x -= step
-		if !(x > lo && x < hi) {
-			x = (lo + hi) / 2
-		}
-		if hi-lo <= rootDone {
-			return x
-		}
+		lo *= 0.1
 	}
-	return x
+	return waterBetween(c, lnS, lo, high)
 }
 
-// turn returns the ln u in the bracket where the slope changes its sign, and
-// whether the slope jumps there.
-func (c *curve) turn(lo, hi float64) (x float64, jump bool) {
-	flo, fhi := c.at(math.Exp(lo)).slope, c.at(math.Exp(hi)).slope
-	first := math.Max(math.Abs(flo), math.Abs(fhi))
-	width := hi - lo
-	for n := 0; n < 200 && hi-lo > rootDone; n++ {
-		x = lo - flo*(hi-lo)/(fhi-flo)
-		// every third step halves, so that the bracket shrinks from both sides
-		if n%3 == 2 || !(x > lo && x < hi) {
-			x = (lo + hi) / 2
-		}
-		f := c.at(math.Exp(x)).slope
-		if f == 0 {
-			return x, false
-		}
-		if (f < 0) == (flo < 0) {
-			lo, flo = x, f
-		} else {
-			hi, fhi = x, f
-		}
+// beyond returns the u above crest at which c, falling to ln S = 0 there, has
+// ln S > 0.
+func beyond(c equilibrium, lnS, crest float64) float64 {
+	hi := math.Max(crest, 1e-12)
+	for f := lnS; f >= lnS && !math.IsInf(hi, 1); f, _ = c.LnSaturation(hi) {
+		hi *= 10
 	}
-	// a smooth slope shrinks with the bracket, a jump stays
-	return (lo + hi) / 2, math.Abs(fhi-flo) > 1e-3*first*math.Min(1, width)
+	return waterBetween(c, lnS, hi, crest)
+}
+
+// waterBetween solves ln S(u) = lnS by Newton's method in ln u inside a bracket;
+// the curve is below lnS at low and above it at high, whichever is the larger u.
+func waterBetween(c equilibrium, lnS, low, high float64) float64 {
+	below, above := math.Log(math.Max(low, leastWater)), math.Log(math.Max(high, leastWater))
+	y := below + (above-below)/2
+	for range mostRootSteps {
+		f, slope := c.LnSaturation(math.Exp(y))
+		f -= lnS
+		if f < 0 {
+			below = y
+		} else {
+			above = y
+		}
+		next := y - f/slope
+		if math.Abs(next-y) <= rootPrecision*math.Max(1, math.Abs(y)) {
+			return math.Exp(next)
+		}
+		if !(next > math.Min(below, above) && next < math.Max(below, above)) {
+			next = below + (above-below)/2
+			if next == below || next == above {
+				break
+			}
+		}
+		y = next
+	}
+	return math.Exp(y)
 }

@@ -1,12 +1,13 @@
 package koehler
 
-// Solved is what Crest, Extrema and Haze say of one particle. What does not
-// exist has its error beside it.
+// Solved is what Crest, Extrema, Equilibria and Haze say of one particle. What
+// does not exist has its error beside it.
 type Solved struct {
 	Crest            Crest
 	NoCrest          error
 	Extrema          []Extremum
-	Stable, Unstable State // the zero State where there is none
+	Drops            []Equilibrium // all of them, in the order of their wet size
+	Stable, Unstable State         // those of Haze; the zero State where there is none
 	NoHaze           error
 }
 
@@ -18,16 +19,12 @@ func (p Particle) Solve(S float64) (s Solved) {
 		return s
 	}
 	c := p.ready()
-	crest, scanned, err := p.barrier(&c)
+	var room [16]Turn
+	crest, turns, err := c.barrier(room[:0])
 	s.Crest, s.NoCrest = crest, err
-	s.Extrema, _ = p.allExtrema(crest, scanned, err)
-	switch ratio := checkRatio(S); {
-	case ratio != nil:
-		s.NoHaze = ratio
-	case err != nil:
-		s.NoHaze = err
-	default:
-		s.Stable, s.Unstable, s.NoHaze = p.haze(&c, S, crest, scanned)
+	s.Extrema = c.extrema(turns)
+	if s.Drops, s.NoHaze = c.equilibria(nil, turns, S); s.NoHaze == nil {
+		s.Stable, s.Unstable, s.NoHaze = haze(s.Drops, S)
 	}
 	return s
 }

@@ -112,6 +112,29 @@ func NewSurfaceActive(dry, temperature, pureTension float64, p Surfactant, salt 
 	return s, nil
 }
 
+// Particle returns the particle of that dry diameter (m) and temperature (K) with
+// the tension of pure water where the organic leaves it alone. Errors: those of
+// NewSurfaceActive and of Particle.Check.
+func (p Surfactant) Particle(dry, temperature float64, salt Salt) (Particle, error) {
+	s, err := NewSurfaceActive(dry, temperature, atmos.SurfaceTension(temperature), p, salt)
+	if err != nil {
+		return Particle{}, err
+	}
+	particle := Particle{DryDiameter: dry, Temperature: temperature, Solution: s, Tension: s}
+	return particle, particle.Check()
+}
+
+// DryDiameter returns the dry diameter in m that the drop belongs to.
+func (s *SurfaceActive) DryDiameter() float64 { return s.dry }
+
+// Sized returns the same matter of another dry diameter in m.
+func (s *SurfaceActive) Sized(dry float64) (solutes.Solution, solutes.Tension) {
+	sized := *s
+	sized.dry = dry
+	sized.kelvin *= s.dry / dry
+	return &sized, &sized
+}
+
 // SurfaceState is a surface-active drop at one wet size.
 type SurfaceState struct {
 	Water          float64 // u

@@ -5,6 +5,7 @@ import (
 	"math"
 
 	"dropcrest/atmos"
+	"dropcrest/solutes"
 )
 
 // diluteWater is the u at which the dilute limit of a solution is read. The
@@ -12,10 +13,14 @@ import (
 const diluteWater = 1e9
 
 // DiluteKappa returns κ of the solution at infinite dilution, read from the
-// slope of ln a_w at u = 1e9: κ = u d ln a_w/d ln u. For constant κ that is κ.
+// slope of ln a_w at u = 1e9: κ = u d ln a_w/d ln u. For constant κ that is κ, for
+// adsorbed water that of the soluble share.
 func (p Particle) DiluteKappa() float64 {
-	if kappa, ok := closedKappa(p.Solution); ok {
-		return kappa
+	switch s := p.Solution.(type) {
+	case solutes.Kappa:
+		return float64(s)
+	case AdsorbedWater:
+		return s.DiluteKappa()
 	}
 	_, slope := p.Solution.LnActivity(diluteWater)
 	return diluteWater * slope
@@ -41,10 +46,10 @@ func (p Particle) Textbook() (Crest, error) {
 	s := math.Sqrt(4 * a * a * a / (27 * kappa))
 	g := math.Sqrt(3 * kappa / a)
 	return Crest{
-		State: State{
+		Extremum: Extremum{State: State{
 			WetDiameter: g * p.DryDiameter, Water: g*g*g - 1, SaturationRatio: 1 + s, Supersaturation: s,
 			WaterActivity: 1 - kappa/(g*g*g), KelvinFactor: 1 + a/g, SurfaceTension: sigma,
-		},
-		GrowthFactor: g,
+		}},
+		GrowthFactor: g, Place: Only,
 	}, nil
 }

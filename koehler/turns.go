@@ -4,7 +4,6 @@ import (
 	"math"
 	"slices"
 
-	"dropcrest/atmos"
 	"dropcrest/solutes"
 )
 
@@ -13,45 +12,115 @@ type Kinked interface {
 	Kinks(dst []float64) []float64 // appended in ascending order
 }
 
-// turnPoints is the number of points of a particle's scan over 27 to 50 e-folds of u.
-const turnPoints = 800
+const (
+	// scanFrom is the least u of a particle's scan.
+	scanFrom = 1e-9
+	// turnEnd is the u at which a scan ends: 10000 times the dry diameter.
+	turnEnd = greatestGrowth * greatestGrowth * greatestGrowth
+	// turnPoints is the number of points of a particle's scan over 27 to 50 e-folds of u.
+	turnPoints = 800
+)
 
 // Turns appends all extrema of the particle's curve to dst in the order of their
-// wet size, each curve by the solver that fits it: the exact one for limited
-// solubility with additive volumes, the tension of pure water and the standard
-// Kelvin term; the crest alone where a model has no more; otherwise a scan that
-// looks at both sides of each kink and follows each near miss.
+// wet size, each curve by the solver that fits it: the exact ones for constant κ,
+// limited solubility and adsorption with additive volumes, a constant tension
+// and the standard Kelvin term; the climb to the one crest where a model has no
+// more; otherwise a scan that looks at both sides of each kink and follows each
+// near miss.
 //
-// An error wraps ErrInput or ErrNoCrest. A curve that never turns has no turns
-// and no error if its model says that it SeveralMaxima.
+// A curve that never turns has no turns. An error wraps ErrInput.
 func (p Particle) Turns(dst []Turn) ([]Turn, error) {
 	if err := p.Check(); err != nil {
 		return dst, err
 	}
-	mix, limited := p.Solution.(*solutes.Limited)
-	switch {
-	case limited && p.Swelling == nil && p.Tension == nil && p.Kelvin == Standard:
-		kelvin := KelvinLength(atmos.SurfaceTension(p.Temperature), p.Temperature)
-		return LimitedExtrema(dst, p.DryDiameter, kelvin, mix), nil
-	case !limited && !p.severalMaxima():
-		crest, err := p.Crest()
-		if err != nil {
-			return dst, err
-		}
-		return append(dst, Turn{crest.Kind, crest.Water, crest.GrowthFactor, crest.Supersaturation}), nil
-	}
-	return p.scanTurns(dst, mix), nil
+	c := p.ready()
+	return c.turns(dst), nil
 }
 
-// scanTurns scans the curve; mix is its Solution where that is a *solutes.Limited.
-func (p Particle) scanTurns(dst []Turn, mix *solutes.Limited) []Turn {
+// Extrema returns the Turns with the rest of their states. Which of them is the
+// barrier, Crest tells, or Barrier of the Turns. An error wraps ErrInput.
+func (p Particle) Extrema() ([]Extremum, error) {
+	var room [16]Turn
+	turns, err := p.Turns(room[:0])
+	if err != nil {
+		return nil, err
+	}
 	c := p.ready()
-	in := scan{from: scanFrom, to: turnEnd, points: turnPoints, dryLnS: math.Inf(-1), breaks: p.kinks(mix)}
-	if t := c.at(leastWater); t.slope < 0 {
+	return c.extrema(turns), nil
+}
+
+func (c *curve) extrema(turns []Turn) []Extremum {
+	all := make([]Extremum, len(turns))
+	for i, t := range turns {
+		all[i] = c.atTurn(t)
+	}
+	return all
+}
+
+// AtTurn returns the extremum with the rest of its state. At a BoundaryMaximum it
+// is the limit at the dry size.
+func (p Particle) AtTurn(t Turn) Extremum {
+	c := p.ready()
+	return c.atTurn(t)
+}
+
+func (c *curve) atTurn(t Turn) Extremum {
+	state := c.state(math.Max(t.Water, leastWater))
+	state.Water = t.Water
+	state.WetDiameter = c.dry * t.GrowthFactor
+	state.Supersaturation, state.SaturationRatio = t.Supersaturation, 1+t.Supersaturation
+	return c.extremum(t.Kind, state)
+}
+
+func (c *curve) turns(dst []Turn) []Turn {
+	if turns, ok := c.exact(dst); ok {
+		return turns
+	}
+	if u, ok := c.only(); ok {
+		t := c.at(u)
+		return append(dst, Turn{Maximum, u, t.wet / c.dry, math.Expm1(t.lnS)})
+	}
+	return c.scan(dst)
+}
+
+// exact finds the turns of the models that have a solver of their own.
+func (c *curve) exact(dst []Turn) (turns []Turn, ok bool) {
+	if s, ok := c.sol.(*SurfaceActive); ok && c.isOf(s) {
+		return s.Extrema(dst), true
+	}
+	if !c.isPlain() {
+		return dst, false
+	}
+	switch s := c.sol.(type) {
+	case solutes.Kappa:
+		return append(dst, c.closed(float64(s)).turn()), true
+	case *solutes.Limited:
+		return LimitedExtrema(dst, c.dry, c.kelvinLength(), s), true
+	case AdsorbedWater:
+		return adsorptionCurve{s, c.kelvinLength() / c.dry}.turns(dst), true
+	}
+	return dst, false
+}
+
+// isOf tells whether the curve is that of a surface-active drop and nothing else.
+func (c *curve) isOf(s *SurfaceActive) bool {
+	tension, ok := c.stress.(*SurfaceActive)
+	return ok && tension == s && c.swell == nil && c.tolman == 0 && c.kelvin.Form == Standard &&
+		math.Abs(s.kelvin*c.dry/(4*c.kelvin.PerPressure)-1) < 1e-12 // of the same temperature
+}
+
+// scan looks for the turns of any curve. Where the curve still rises at the least
+// water of the activity model it starts there, as what the extrapolation does
+// below is no finding; nor is a boundary maximum of an extrapolation.
+func (c *curve) scan(dst []Turn) []Turn {
+	in := scan{from: scanFrom, to: turnEnd, points: turnPoints, dryLnS: math.Inf(-1), breaks: c.kinks()}
+	if least := c.sol.LeastWater(); least > scanFrom && c.at(least).slope > 0 {
+		in.from = least
+	} else if t := c.at(leastWater); t.slope < 0 && least == 0 {
 		in.dryLnS = t.lnS
 	}
 	first := len(dst)
-	dst = in.extrema(dst, scanned{&c})
+	dst = in.extrema(dst, c)
 	for i := first; i < len(dst); i++ {
 		if c.swell != nil && dst[i].Water > 0 {
 			v, _ := c.swell.Swell(dst[i].Water)
@@ -61,44 +130,22 @@ func (p Particle) scanTurns(dst []Turn, mix *solutes.Limited) []Turn {
 	return dst
 }
 
-// turnEnd is the u at which a scan ends: 10000 times the dry diameter.
-const turnEnd = greatestGrowth * greatestGrowth * greatestGrowth
-
 // kinks collects the u at which some part of the particle's model has a kink.
 // Those of one thing that is both solution and tension come twice, which does a
 // scan no harm.
-func (p Particle) kinks(mix *solutes.Limited) []float64 {
+func (c *curve) kinks() []float64 {
 	var all []float64
-	if mix != nil {
+	if mix, ok := c.sol.(*solutes.Limited); ok {
 		for i := range mix.Points() {
 			all = append(all, mix.Point(i))
 		}
 	}
-	if k, ok := p.Solution.(Kinked); ok {
+	if k, ok := c.sol.(Kinked); ok {
 		all = k.Kinks(all)
 	}
-	if k, ok := p.Tension.(Kinked); ok {
+	if k, ok := c.stress.(Kinked); ok {
 		all = k.Kinks(all)
 	}
 	slices.Sort(all)
 	return all
-}
-
-// scanned is a particle's curve made ready for a scan.
-type scanned struct{ c *curve }
-
-func (s scanned) LnSaturation(u float64) (lnS, slope float64) {
-	t := s.c.at(u)
-	return t.lnS, t.slope
-}
-
-// AtTurn returns the extremum with the rest of its state. At a BoundaryMaximum it
-// is the limit at the dry size.
-func (p Particle) AtTurn(t Turn) Extremum {
-	c := p.ready()
-	state := c.state(math.Max(t.Water, leastWater))
-	state.Water = t.Water
-	state.WetDiameter = p.DryDiameter * t.GrowthFactor
-	state.Supersaturation, state.SaturationRatio = t.Supersaturation, 1+t.Supersaturation
-	return Extremum{t.Kind, state}
 }

@@ -124,6 +124,9 @@ func (l *Limited) LnActivity(u float64) (lnaw, slope float64) {
 	return -math.Log1p(k + g), k / (1 + k + g)
 }
 
+// SeveralMaxima is true: each dissolution point may divide two maxima.
+func (l *Limited) SeveralMaxima() bool { return true }
+
 // LeastWater is 0: the κ form has no stated lower limit.
 func (l *Limited) LeastWater() float64 { return 0 }
 

@@ -6,6 +6,9 @@ type ConstantTension float64
 // SurfaceTension returns the constant and 0.
 func (t ConstantTension) SurfaceTension(float64) (sigma, slope float64) { return float64(t), 0 }
 
+// SeveralMaxima is false: a constant tension leaves the curve its one crest.
+func (t ConstantTension) SeveralMaxima() bool { return false }
+
 // LinearTension is the surface tension σ = Water + PerDry/u of a solution whose
 // solutes each raise it by an increment per molality: PerDry = Σ b_i c_i with c_i
 // the molality at u = 1. The increments are measured up to a few mol/kg; the line
@@ -20,3 +23,6 @@ func (t LinearTension) SurfaceTension(u float64) (sigma, slope float64) {
 	rise := t.PerDry / u
 	return t.Water + rise, -rise
 }
+
+// SeveralMaxima is false: a rise by a line leaves the curve its one crest.
+func (t LinearTension) SeveralMaxima() bool { return false }
