@@ -33,6 +33,7 @@ type Mixture struct {
 	parts  [MaxMixtureParts]MixturePart
 	guess  [MaxMixtureParts]float64 // ln of u_i per u at infinite dilution
 	leastU float64
+	table  []mixtureStart // where the joint steps start
 }
 
 // NewMixture makes a mixture of parts whose solutions increase strictly in u. It
@@ -64,6 +65,7 @@ func NewMixture(parts []MixturePart) (*Mixture, error) {
 	for i := range parts {
 		x.guess[i] = math.Log(x.guess[i] / strength)
 	}
+	x.table = x.startTable()
 	x.leastU = x.waterAtLimit()
 	return x, nil
 }
@@ -74,44 +76,53 @@ func (x *Mixture) LeastWater() float64 { return x.leastU }
 
 // Iteration of LnActivity: the largest number of joint steps before bisection
 // takes over, the largest step in ln u_i, and the residual that ends it: the step
-// just taken squares it, so that ln a_w is exact and its slope good to 1e-10.
+// just taken squares it, so that ln a_w is exact and its slope good to 1e-8.
 const (
 	jointSteps    = 40
 	longestStep   = 3
-	jointResidual = 1e-10
+	jointResidual = 1e-8
 )
 
 // LnActivity returns ln a_w and its derivative by ln u.
 func (x *Mixture) LnActivity(u float64) (lnaw, slope float64) {
-	var w, y, q [MaxMixtureParts]float64 // ln u_i, ln(-ln a_w) and d y/d w of each part
-	lnU := math.Log(u)
-	for i := range x.count {
-		w[i] = x.guess[i] + lnU
+	var j joint
+	x.start(&j.w, math.Log(u))
+	if lnaw, slope, settled := x.settle(&j, u); settled {
+		return lnaw, slope
 	}
+	return x.bisect(u)
+}
+
+// joint is the state of the joint steps: of each part ln u_i, ln(-ln a_w) and
+// the derivative of this by that.
+type joint struct{ w, y, q [MaxMixtureParts]float64 }
+
+// settle takes joint steps until all parts have one activity.
+func (x *Mixture) settle(j *joint, u float64) (lnaw, slope float64, settled bool) {
 	for range jointSteps {
 		water, gain, pull := 0.0, 0.0, 0.0
 		for i := range x.count {
-			ui := math.Exp(w[i])
+			ui := math.Exp(j.w[i])
 			l, s := x.parts[i].Solution.LnActivity(ui)
-			y[i], q[i] = math.Log(-l), s/l
+			j.y[i], j.q[i] = math.Log(-l), s/l
 			held := x.parts[i].Volume * ui
 			water += held
-			gain += held / q[i]
-			pull += held * y[i] / q[i]
+			gain += held / j.q[i]
+			pull += held * j.y[i] / j.q[i]
 		}
 		common := (u - water + pull) / gain
 		worst := math.Abs(u-water) / u
 		for i := range x.count {
-			step := (common - y[i]) / q[i]
+			step := (common - j.y[i]) / j.q[i]
 			worst = max(worst, math.Abs(step))
-			w[i] += min(max(step, -longestStep), longestStep)
+			j.w[i] += min(max(step, -longestStep), longestStep)
 		}
 		if worst <= jointResidual {
 			lnaw = -math.Exp(common)
-			return lnaw, lnaw * u / gain
+			return lnaw, lnaw * u / gain, true
 		}
 	}
-	return x.bisect(u)
+	return 0, 0, false
 }
 
 // bisect solves the same equations without derivatives, for parts on which the
@@ -157,8 +168,18 @@ func (x *Mixture) waterAtLimit() float64 {
 	return water
 }
 
-// inverse returns u at which a solution has that ln a_w < 0, by bisection in ln u.
+// inverse returns u at which a solution has that ln a_w < 0: Newton's method in
+// ln(-ln a_w) against ln u, and bisection where that does not settle.
 func inverse(s Solution, lnaw float64) float64 {
+	x, y := 0.0, math.Log(-lnaw)
+	for range 20 {
+		l, slope := s.LnActivity(math.Exp(x))
+		step := (y - math.Log(-l)) * l / slope
+		x += min(max(step, -longestStep), longestStep)
+		if math.Abs(step) <= 1e-13 {
+			return math.Exp(x)
+		}
+	}
 	low, high := -700.0, 700.0
 	for range 120 {
 		mid := (low + high) / 2
