@@ -1,35 +1,24 @@
+// Command dropcrest is a terminal workbench for people who work with the
+// activation of cloud droplets.
 package main
 
 import (
-	_ "github.com/charmbracelet/bubbles/help"
-	_ "github.com/charmbracelet/bubbles/key"
-	_ "github.com/charmbracelet/bubbles/textinput"
-	_ "github.com/charmbracelet/bubbles/viewport"
-	_ "github.com/charmbracelet/bubbletea"
-	_ "github.com/charmbracelet/lipgloss"
-	_ "github.com/charmbracelet/x/ansi"
-	_ "github.com/charmbracelet/x/exp/golden"
-	_ "github.com/charmbracelet/x/vt"
-	_ "github.com/charmbracelet/x/term"
-	_ "github.com/creack/pty"
-	_ "github.com/guptarohit/asciigraph"
-	_ "github.com/muesli/termenv"
-	_ "github.com/mattn/go-isatty"
-	_ "github.com/pelletier/go-toml/v2"
-	_ "github.com/pelletier/go-toml/v2/unstable"
-	_ "github.com/rogpeppe/go-internal/testscript"
-	_ "github.com/spf13/cobra"
-	_ "github.com/spf13/pflag"
-	_ "golang.org/x/sys/unix"
-	_ "gonum.org/v1/gonum/floats/scalar"
-	_ "gonum.org/v1/gonum/optimize"
-	_ "gonum.org/v1/gonum/stat/distuv"
-	_ "gonum.org/v1/gonum/integrate/quad"
-	_ "gonum.org/v1/plot/plotter"
-	_ "gonum.org/v1/plot/vg/draw"
-	_ "gonum.org/v1/plot/vg/vgimg"
-	_ "gonum.org/v1/plot/vg/vgpdf"
-	_ "gonum.org/v1/plot/vg/vgsvg"
+	"embed"
+	"io/fs"
+	"os"
+
+	"dropcrest/ui/command"
 )
 
-func main() {}
+// go:embed reaches no parent folder, so the files are embedded here.
+//
+//go:embed testdata/published
+var testdata embed.FS
+
+func main() {
+	published, err := fs.Sub(testdata, "testdata/published")
+	if err != nil {
+		panic(err) // the folder is part of this program
+	}
+	os.Exit(command.Main(os.Args[1:], published))
+}

@@ -8,10 +8,12 @@ import (
 	"io/fs"
 	"os"
 
+	tea "github.com/charmbracelet/bubbletea"
 	"github.com/charmbracelet/x/term"
 	"github.com/spf13/cobra"
 
 	"dropcrest/ui/answer"
+	_ "dropcrest/ui/dark" // nobody asks the terminal for its background
 	"dropcrest/ui/plain"
 	"dropcrest/ui/terminal"
 )
@@ -38,6 +40,7 @@ type world struct {
 	out, err  io.Writer
 	env       func(string) string
 	published fs.FS
+	model     func(tea.Model) tea.Model // nil: the screen as it is; for tests
 }
 
 func run(ctx context.Context, args []string, w world) int {

@@ -21,7 +21,7 @@ func TestMain(m *testing.M) {
 			os.Exit(command.Main(os.Args[1:], os.DirFS(folder)))
 		}
 		os.Exit(command.Main(os.Args[1:], nil))
-	}})
+	}, "dropcrest-panics": func() { os.Exit(command.MainPanicking(os.Args[1:])) }})
 }
 
 func TestScripts(t *testing.T) {

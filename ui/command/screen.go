@@ -1,12 +1,17 @@
 package command
 
 import (
+	"context"
 	"errors"
+	"os"
 
 	"github.com/spf13/cobra"
 
+	"dropcrest/solutes"
 	"dropcrest/ui/answer"
 	"dropcrest/ui/scenario"
+	"dropcrest/ui/screen"
+	"dropcrest/ui/session"
 	"dropcrest/ui/terminal"
 )
 
@@ -23,12 +28,28 @@ func (w world) addScreen(root *cobra.Command) {
 		if !isTerminal(w.in) || !isTerminal(w.out) || terminal.Dumb(w.env) {
 			return w.ask(cmd.Context(), answer.Questions()[0], s, notes, o)
 		}
-		return openScreen(cmd, w, o, s)
+		return w.openScreen(cmd.Context(), o, s)
 	}
 }
 
-// openScreen starts the screen on a scenario; without --from it goes on with the
-// session.
-func openScreen(_ *cobra.Command, _ world, _ *options, _ scenario.Scenario) error {
-	return errors.New("the screen is not part of this build: dropcrest curve prints the answer")
+// openScreen shows the screen on a scenario; without --from it offers the session
+// that was kept. The program's exit code is that of the signal that has ended it.
+func (w world) openScreen(ctx context.Context, o *options, s scenario.Scenario) error {
+	options := screen.Options{
+		Scenario: s, Given: o.fromFile != "", Plain: o.isPlain, Getenv: w.env,
+		Env: answer.Env{Substances: solutes.Standard(), Version: version()},
+		In:  w.in.(*os.File), Out: w.out, Wrap: w.model,
+	}
+	dir, err := session.Dir(w.env)
+	options.Note = err
+	if err == nil {
+		options.Store, options.Last, options.Found, options.Note = session.Open(dir)
+		defer options.Store.Close()
+	}
+	err = screen.Run(ctx, options)
+	var signal terminal.Signal
+	if errors.As(err, &signal) {
+		return exitError{code: terminal.ExitCode(signal)}
+	}
+	return err
 }

@@ -39,7 +39,7 @@ func (s *Store) read() (last State, found bool, err error) {
 
 // decodeQuestion reads scenario.toml.
 func decodeQuestion(data []byte) (scenario.Scenario, error) {
-	q, err := scenario.Decode(scenarioFile, bytes.NewReader(data))
+	q, err := scenario.DecodeUsing(nil, scenarioFile, bytes.NewReader(data))
 	return cleaned(q), err
 }
 

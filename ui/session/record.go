@@ -127,7 +127,7 @@ func decode(data []byte) (State, error) {
 func (rec record) state() (State, error) {
 	l := library{}
 	for i, text := range rec.Scenarios {
-		s, err := scenario.Decode(fmt.Sprintf("scenario %d of %s", i, sessionFile), strings.NewReader(text))
+		s, err := scenario.DecodeUsing(nil, fmt.Sprintf("scenario %d of %s", i, sessionFile), strings.NewReader(text))
 		if err != nil {
 			return State{}, err
 		}
