@@ -55,9 +55,7 @@ func (r referenceRow) number(column string) (float64, bool) {
 // differs lists where the catalogue does not follow the table, and why.
 var differs = map[string]string{
 	"sulfuric_acid kappa_ccn_mean":        "0.90 is wrong at activation: the model's value is shipped",
-	"sulfuric_acid DRH_25C_pct":           "liquid at every humidity: kept as a remark",
 	"sodium_nitrate ERH_pct":              "not sharp: kept as a remark",
-	"msa DRH_25C_pct":                     "liquid at every humidity: kept as a remark",
 	"sodium_methanesulfonate DRH_25C_pct": "low confidence: kept as a remark",
 	"sea_salt dsigma_mN_m_per_mol_kg":     "the table counts 58 g of salt as a mole, the catalogue 31.4 g of ions",
 	"sucrose dsigma_mN_m_per_mol_kg":      "0.5 to 1 of low confidence: a gap",

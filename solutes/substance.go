@@ -39,8 +39,8 @@ type Substance struct {
 	KappaGrowth      Datum `json:"kappa_growth"`      // from growth factors below saturation
 	Solubility       Datum `json:"solubility"`        // kg per kg of water, 25 °C
 	VolumeSolubility Datum `json:"volume_solubility"` // C, m³ of solute per m³ of water
-	Deliquescence    Datum `json:"deliquescence"`     // relative humidity 0..1, 25 °C
-	Efflorescence    Datum `json:"efflorescence"`     // relative humidity 0..1
+	Deliquescence    Datum `json:"deliquescence"`     // relative humidity 0..1, 25 °C; 0: liquid at every humidity
+	Efflorescence    Datum `json:"efflorescence"`     // relative humidity 0..1; 0: none seen
 	TensionIncrement Datum `json:"tension_increment"` // N/m per mol/kg
 	ShapeFactor      Datum `json:"shape_factor"`      // dynamic shape factor of the dry particle
 
@@ -66,17 +66,6 @@ func (s Substance) IdealKappa(rhoWater float64) float64 {
 // Insoluble reports whether the substance is known to give no ions or molecules
 // to the water.
 func (s Substance) Insoluble() bool { return s.Ions.Known() && s.Ions.Value == 0 }
-
-// DeliquescenceLaw is the temperature law of Tang & Munkelwitz 1993, Atmos.
-// Environ. 27A, 467, about 298 K:
-//
-//	ln(DRH/DRH298) = (ΔH/R) [A (1/T - 1/298) - B ln(T/298) - C (T - 298)]
-type DeliquescenceLaw struct {
-	Heat       float64    `json:"heat"`       // ΔH, enthalpy of solution, J/mol
-	Solubility [3]float64 `json:"solubility"` // A, B, C: n = A + B T + C T², mol per mol of water
-	Source     string     `json:"source"`
-	Evidence   Evidence   `json:"evidence"`
-}
 
 // Adsorption holds the parameters of the Frenkel-Halsey-Hill isotherm
 // ln a_w = -A θ^-B, dimensionless.

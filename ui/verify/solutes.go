@@ -29,7 +29,8 @@ func solutesChecks() map[string]Check {
 			lnaw, _ := salt.LnActivity(salt.Water(a.Number("m")))
 			return math.Exp(lnaw), nil
 		},
-		"solution-density": solutionDensity,
+		"solution-density":       solutionDensity,
+		"deliquescence-humidity": deliquescence,
 	}
 }
 
@@ -99,4 +100,17 @@ func diluteOsmotic(a Args) (float64, error) {
 		return 0, fmt.Errorf("%g mol/kg is beyond the range of the parameters, which ends at %g", m, salt.MaxMolality())
 	}
 	return salt.Osmotic(a.Number("m")), nil
+}
+
+// deliquescence is the humidity from which the dry substance takes up water.
+func deliquescence(a Args) (float64, error) {
+	s, ok := solutes.Standard().Find(a.Text("substance"))
+	if !ok {
+		return 0, fmt.Errorf("no substance %q", a.Text("substance"))
+	}
+	drh, ok := s.DeliquescenceHumidity(a.NumberOr("T", 298.15))
+	if !ok {
+		return 0, fmt.Errorf("no deliquescence humidity of %s is known", s.Name)
+	}
+	return drh, nil
 }
