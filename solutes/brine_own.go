@@ -6,15 +6,26 @@ import (
 	"dropcrest/atmos"
 )
 
-// hasOwnModel reports whether OwnModel is for the substance.
-func hasOwnModel(s Substance) bool {
+// OwnModelWords names the water activity model that OwnModel returns for the
+// substance, "" for those that have none.
+func OwnModelWords(s Substance) string {
 	switch s.Key {
-	case "sulfuric_acid", "sea_salt", "sucrose", "glucose", "citric_acid":
-		return true
+	case "sulfuric_acid":
+		return "ion interaction with bisulfate dissociation (Pitzer, Roy & Silvester 1977), then Tabazadeh et al. 1997"
+	case "sea_salt":
+		return "ion mixture of the reference composition (Harvie, Moller & Weare 1984; Millero et al. 2008)"
+	case "sucrose":
+		return "osmotic coefficients of Robinson & Stokes 1961, then Norrish 1966"
+	case "glucose", "citric_acid":
+		return "ideal solution, then Norrish 1966 (Chirife et al. 1980)"
 	}
-	_, bisulfate := bisulfateSaltOf(s.Key)
-	return bisulfate
+	if _, ok := bisulfateSaltOf(s.Key); ok {
+		return "ion interaction with bisulfate dissociation (Pitzer, Roy & Silvester 1977), then Tang & Munkelwitz 1994"
+	}
+	return ""
 }
+
+func hasOwnModel(s Substance) bool { return OwnModelWords(s) != "" }
 
 // isBisulfate reports whether the model of the substance solves the dissociation
 // of bisulfate.
@@ -32,31 +43,27 @@ func isBisulfate(s Substance) bool {
 // It tabulates the model, which takes about a millisecond for acids, bisulfates
 // and sea salt.
 func OwnModel(s Substance, T float64) (o *OsmoticSolution, says string, notes []atmos.Note, ok bool, err error) {
-	if !hasOwnModel(s) {
+	says = OwnModelWords(s)
+	if says == "" {
 		return nil, "", nil, false, nil
 	}
 	switch s.Key {
 	case "sulfuric_acid":
-		says = "ion interaction with bisulfate dissociation (Pitzer, Roy & Silvester 1977), then Tabazadeh et al. 1997"
 		notes = append(bisulfateNotes(T), tabazadehNotes(T)...)
 		o, err = NewSulfuricAcid(s, T)
 	case "sea_salt":
-		says = "ion mixture of the reference composition (Harvie, Moller & Weare 1984; Millero et al. 2008)"
 		notes = append([]atmos.Note{{Code: "sea-salt-dry-state", Input: inputComponent, Text: sentence(SeaSaltNote)}}, debyeHueckelNotes(T)...)
 		o, err = NewSeaSalt(s, T)
 	case "sucrose":
-		says = "osmotic coefficients of Robinson & Stokes 1961, then Norrish 1966"
 		notes = nonelectrolyteNotes(T)
 		o, err = NewNonelectrolyte(s, T)
 	case "glucose", "citric_acid":
-		says = "ideal solution, then Norrish 1966 (Chirife et al. 1980)"
 		notes = nonelectrolyteNotes(T)
 		if s.Key == "citric_acid" {
 			notes = append(notes, atmos.Note{Code: "acid-undissociated", Input: inputActivity, Text: sentence(CitricAcidNote)})
 		}
 		o, err = NewNonelectrolyte(s, T)
 	default:
-		says = "ion interaction with bisulfate dissociation (Pitzer, Roy & Silvester 1977), then Tang & Munkelwitz 1994"
 		notes = append(bisulfateNotes(T), bisulfateSaltNote(s.Key))
 		o, err = NewBisulfate(s, T)
 	}

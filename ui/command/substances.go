@@ -7,7 +7,6 @@ import (
 
 	"github.com/spf13/cobra"
 
-	"dropcrest/atmos"
 	"dropcrest/solutes"
 	"dropcrest/ui/answer"
 	"dropcrest/ui/form"
@@ -191,11 +190,11 @@ func short(d solutes.Datum, scale float64) string {
 // modelWords names the best water activity model that a substance has; long
 // names the publications of a model of its own.
 func modelWords(s solutes.Substance, long bool) string {
-	_, says, _, own, err := solutes.OwnModel(s, atmos.ZeroCelsius+25)
+	own := solutes.OwnModelWords(s)
 	switch {
-	case own && err == nil && long:
-		return says
-	case own && err == nil:
+	case own != "" && long:
+		return own
+	case own != "":
 		return "its own model"
 	case s.Ion != nil && s.Concentrated.Joined() && long:
 		return "ion interaction, joined to a published polynomial into supersaturated solution: " + s.Concentrated.Source

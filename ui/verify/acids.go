@@ -12,16 +12,17 @@ import (
 // with the models of their own. Arguments: substance (name), m (mol/kg), salinity
 // (kg of salt per kg of sea water), T (K, 298.15 when it is not given).
 func acidsChecks() map[string]Check {
+	models := ownModels{}
 	return map[string]Check{
 		"own-model-osmotic-coefficient": func(a Args) (float64, error) {
-			o, m, err := ownModelAt(a)
+			o, m, err := models.at(a)
 			if err != nil {
 				return 0, err
 			}
 			return o.Osmotic(m), nil
 		},
-		"own-model-saturated-humidity": saturatedHumidity,
-		"own-model-growth-kappa":       growthKappa,
+		"own-model-saturated-humidity": models.saturatedHumidity,
+		"own-model-growth-kappa":       models.growthKappa,
 		"sea-water-osmotic-coefficient": func(a Args) (float64, error) {
 			o, m, err := seaWater(a)
 			if err != nil {
@@ -41,24 +42,35 @@ func acidsChecks() map[string]Check {
 	}
 }
 
-// ownModel returns the substance and its model.
-func ownModel(a Args) (solutes.Substance, *solutes.OsmoticSolution, error) {
-	name := a.Text("substance")
+// ownModels keeps the models that were made, by substance and temperature: a
+// model is a table that takes a millisecond, and many rows ask the same one.
+type ownModels map[string]*solutes.OsmoticSolution
+
+// of returns the substance and its model.
+func (models ownModels) of(a Args) (solutes.Substance, *solutes.OsmoticSolution, error) {
+	name, T := a.Text("substance"), a.NumberOr("T", 298.15)
 	s, known := solutes.Standard().Find(name)
 	if !known {
 		return s, nil, fmt.Errorf("no substance %q", name)
 	}
-	o, _, _, ok, err := solutes.OwnModel(s, a.NumberOr("T", 298.15))
+	key := fmt.Sprint(s.Key, " ", T)
+	if o, made := models[key]; made {
+		return s, o, nil
+	}
+	o, _, _, ok, err := solutes.OwnModel(s, T)
 	if err == nil && !ok {
 		err = fmt.Errorf("%s has no water activity model of its own", s.Name)
+	}
+	if err == nil {
+		models[key] = o
 	}
 	return s, o, err
 }
 
-// ownModelAt is ownModel with the molality m, which must lie in its range.
-func ownModelAt(a Args) (*solutes.OsmoticSolution, float64, error) {
+// at is of with the molality m, which must lie in the model's range.
+func (models ownModels) at(a Args) (*solutes.OsmoticSolution, float64, error) {
 	m := a.Number("m")
-	_, o, err := ownModel(a)
+	_, o, err := models.of(a)
 	if err != nil {
 		return nil, 0, err
 	}
@@ -69,8 +81,8 @@ func ownModelAt(a Args) (*solutes.OsmoticSolution, float64, error) {
 }
 
 // saturatedHumidity is the water activity of the saturated solution at 25 °C.
-func saturatedHumidity(a Args) (float64, error) {
-	s, o, err := ownModel(a)
+func (models ownModels) saturatedHumidity(a Args) (float64, error) {
+	s, o, err := models.of(a)
 	if err != nil {
 		return 0, err
 	}
@@ -84,9 +96,9 @@ func saturatedHumidity(a Args) (float64, error) {
 
 // growthKappa is κ from the water taken up at the water activity aw, volumes
 // being additive.
-func growthKappa(a Args) (float64, error) {
+func (models ownModels) growthKappa(a Args) (float64, error) {
 	aw := a.Number("aw")
-	_, o, err := ownModel(a)
+	_, o, err := models.of(a)
 	if err != nil {
 		return 0, err
 	}
