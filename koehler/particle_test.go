@@ -35,6 +35,7 @@ func particles() map[string]Particle {
 		"kappa": of(solutes.Kappa(0.61)), "ion interaction": of(salt), "ideal": of(solutes.IdealOsmotic(0.73)),
 		"salt tension": of(salt), "pure vapour": of(salt), "compressible": of(salt),
 		"kappa pure vapour": of(solutes.Kappa(0.3)), "scanned tension": of(salt), "swelling": of(salt),
+		"constant tension": of(salt), "Tolman": of(salt), "Tolman, salt tension": of(salt), "Tolman, kappa": of(solutes.Kappa(0.61)),
 	}
 	with := func(name string, change func(*Particle)) {
 		p := all[name]
@@ -47,6 +48,12 @@ func particles() map[string]Particle {
 	with("kappa pure vapour", func(p *Particle) { p.Kelvin = PureVapour })
 	with("compressible", func(p *Particle) { p.Kelvin = Compressible })
 	with("swelling", func(p *Particle) { p.Swelling = shrinking{} })
+	with("constant tension", func(p *Particle) { p.Tension = solutes.ConstantTension(0.06) })
+	with("Tolman", func(p *Particle) { p.TolmanLength = 0.1e-9 })
+	with("Tolman, salt tension", func(p *Particle) {
+		p.Tension, p.TolmanLength = saltTension{0.072, salt.perWater, 2.17e-3}, -0.056e-9
+	})
+	with("Tolman, kappa", func(p *Particle) { p.TolmanLength, p.Swelling = -0.1e-9, shrinking{} })
 	return all
 }
 
@@ -209,6 +216,10 @@ func TestBadInput(t *testing.T) {
 		"cold":        func(p *Particle) { p.Temperature = 0 },
 		"no solution": func(p *Particle) { p.Solution = nil },
 		"kappa":       func(p *Particle) { p.Solution = solutes.Kappa(-1) },
+		"tension":     func(p *Particle) { p.Tension = solutes.ConstantTension(0) },
+		"Tolman":      func(p *Particle) { p.TolmanLength = -p.DryDiameter / 4 },
+		"Tolman NaN":  func(p *Particle) { p.TolmanLength = math.NaN() },
+		"Tolman Inf":  func(p *Particle) { p.TolmanLength = math.Inf(1) },
 	} {
 		p := good
 		change(&p)

@@ -92,7 +92,7 @@ func TestConstantTensionIsClimbed(t *testing.T) {
 			}
 		}
 	}
-	// what is no tension of water is left to the scan, which says that nothing is there
+	// what is no tension of water is refused
 	p := Particle{DryDiameter: 60e-9, Temperature: 298.15, Solution: solutes.Kappa(0.6), Tension: solutes.ConstantTension(-0.07)}
 	if crest, err := p.Crest(); err == nil {
 		t.Errorf("a negative tension has a crest: %+v", crest)
