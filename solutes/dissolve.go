@@ -15,11 +15,13 @@ const (
 	inputTension     = "surface-tension"
 	inputDensity     = "solution-density"
 	inputTemperature = "temperature"
+	inputSolubility  = "solubility"
 )
 
 // Dissolve makes a recipe ready. Notes say which part fell back to which model
 // and which range is left; an error says what is missing and cannot be replaced:
-// a *MissingError for a value that the catalogue does not have.
+// a *MissingError for a value that the catalogue does not have, a *RefusedError
+// for choices that do not go together.
 //
 // Notes about the water itself at the temperature are atmos.WaterNotes.
 func Dissolve(r Recipe) (Dissolved, []atmos.Note, error) {
@@ -27,6 +29,7 @@ func Dissolve(r Recipe) (Dissolved, []atmos.Note, error) {
 		return Dissolved{}, nil, err
 	}
 	d := &dissolving{Recipe: r, waterDensity: atmos.WaterDensity(r.Temperature)}
+	d.limits()
 	steps := []func() error{d.activity, d.density, d.tension}
 	for _, step := range steps {
 		if err := step(); err != nil {
@@ -88,8 +91,12 @@ func (d *dissolving) mixedKappa() float64 {
 	if d.Model == KappaModel && !math.IsNaN(d.Recipe.Kappa) {
 		return d.Recipe.Kappa
 	}
-	if k, ok := d.out.Solution.(Kappa); ok {
+	switch k := d.out.Solution.(type) {
+	case Kappa:
 		return float64(k)
+	case *Limited:
+		dissolved, _ := k.Segment(k.Points())
+		return dissolved
 	}
 	sum := 0.0
 	for _, p := range d.Parts {

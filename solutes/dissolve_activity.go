@@ -7,6 +7,9 @@ import (
 
 // activity chooses the water-activity model of every part and mixes them.
 func (d *dissolving) activity() error {
+	if d.Solubility != Complete && d.Solubility != LimitedSolubility {
+		return fmt.Errorf("solubility rule %d does not exist: use complete or limited", int(d.Solubility))
+	}
 	switch d.Model {
 	case KappaModel:
 		return d.kappaModel()
@@ -24,20 +27,18 @@ func (d *dissolving) says(format string, args ...any) {
 
 func (d *dissolving) kappaModel() error {
 	if !math.IsNaN(d.Recipe.Kappa) {
-		d.out.Solution = Kappa(d.Recipe.Kappa)
 		d.says("the whole particle: κ %.4g as given", d.Recipe.Kappa)
-		return nil
+		return d.oneKappa()
 	}
-	sum := 0.0
+	var parts []kappaPart
 	for _, p := range d.Parts {
 		k, err := d.partKappa(p.Substance)
 		if err != nil {
 			return err
 		}
-		sum += p.Volume * k
+		parts = append(parts, kappaPart{p, k})
 	}
-	d.out.Solution = Kappa(sum)
-	return nil
+	return d.kappaParts(parts)
 }
 
 // partKappa returns the κ by which a substance counts and says which it is.
@@ -67,11 +68,12 @@ func (d *dissolving) partKappa(s Substance) (float64, error) {
 }
 
 func (d *dissolving) vantHoff() error {
-	sum := 0.0
+	var parts []kappaPart
 	for _, p := range d.Parts {
 		s := p.Substance
 		if s.Insoluble() {
 			d.says("%s: insoluble, counts as volume", s.called())
+			parts = append(parts, kappaPart{p, 0})
 			continue
 		}
 		factor, origin := d.VantHoffFactor, "as given"
@@ -85,8 +87,7 @@ func (d *dissolving) vantHoff() error {
 		}
 		k := VantHoffKappa(factor, s.MolarMass.Value, s.Density.Value, d.waterDensity)
 		d.says("%s: van 't Hoff factor %.4g (%s)", s.called(), factor, origin)
-		sum += p.Volume * float64(k)
+		parts = append(parts, kappaPart{p, float64(k)})
 	}
-	d.out.Solution = Kappa(sum)
-	return nil
+	return d.kappaParts(parts)
 }

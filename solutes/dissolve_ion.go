@@ -10,6 +10,9 @@ import (
 // ionInteraction gives every part the most detailed model that is published for
 // it: ion interaction, a model of its own, or else its κ.
 func (d *dissolving) ionInteraction() error {
+	if d.Solubility == LimitedSolubility {
+		return &RefusedError{inputSolubility, "limited solubility is a model for κ components: choose water activity by kappa or van 't Hoff, or complete solubility (salts have their deliquescence instead)"}
+	}
 	var detailed []MixturePart
 	var salts, own []Substance
 	kappa, kappaShare := 0.0, 0.0

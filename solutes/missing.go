@@ -13,6 +13,14 @@ func (e *MissingError) Error() string {
 	return fmt.Sprintf("no %s for %s in the catalogue: give %s=…", e.Quantity, e.Substance, e.Key)
 }
 
+// RefusedError says why two choices do not go together and what would.
+type RefusedError struct {
+	Input string // option or slot: "solubility"
+	Why   string
+}
+
+func (e *RefusedError) Error() string { return e.Why }
+
 // missing returns the first of the values that molality needs and s lacks.
 func missing(s Substance) error {
 	for _, q := range []struct {

@@ -21,6 +21,24 @@ func (m Model) String() string {
 	return "unknown model"
 }
 
+// SolubilityRule names how much of a particle dissolves.
+type SolubilityRule int
+
+const (
+	Complete          SolubilityRule = iota // all that is soluble, at once
+	LimitedSolubility                       // Petters & Kreidenweis 2008; of κ models only
+)
+
+func (r SolubilityRule) String() string {
+	switch r {
+	case Complete:
+		return "complete"
+	case LimitedSolubility:
+		return "limited"
+	}
+	return "unknown solubility rule"
+}
+
 // DensityRule names a rule for the volume of the solution.
 type DensityRule int
 
@@ -48,8 +66,9 @@ type Part struct {
 type Recipe struct {
 	Parts          []Part
 	Model          Model
-	Kappa          float64 // KappaModel: one κ for the whole particle; NaN: mixed from the substances
-	VantHoffFactor float64 // VantHoff: NaN: each substance's number of ions
+	Kappa          float64        // KappaModel: one κ for the whole particle; NaN: mixed from the substances
+	VantHoffFactor float64        // VantHoff: NaN: each substance's number of ions
+	Solubility     SolubilityRule // C is each substance's VolumeSolubility; one of evidence User counts always
 	DensityRule    DensityRule
 	TensionRule    TensionRule
 	Tension        float64 // N/m, FixedTension only
@@ -66,7 +85,17 @@ type Dissolved struct {
 	WaterDensity   float64  // kg/m³
 	DryDensity     float64  // kg/m³; NaN: not known
 	Models         []string // the model in use, part by part, in words
+	Limits         []Limit  // of sparingly soluble parts, in the order of the parts
 }
 
-// Molality returns mol of solute per kg of water at u, NaN if not known.
+// Limit is the solubility of one part of a particle.
+type Limit struct {
+	Substance  string
+	Solubility float64 // C, m³ of compound per m³ of water
+	Water      float64 // u = ε/C from which on all of the part is dissolved; +Inf: never
+	Kept       bool    // the solution follows it; otherwise all is taken as dissolved
+}
+
+// Molality returns mol of solute per kg of water at u, all of it taken as
+// dissolved; NaN if not known.
 func (d Dissolved) Molality(u float64) float64 { return d.MolesPerVolume / (u * d.WaterDensity) }
