@@ -13,7 +13,12 @@ type ValueError struct {
 	Right   string // "1 to 10000 nm, such as 100 nm"
 }
 
-func (e *ValueError) Error() string { return e.Problem + ": want " + e.Right }
+func (e *ValueError) Error() string {
+	if strings.HasSuffix(e.Right, "?") {
+		return e.Problem + ": did you mean " + e.Right
+	}
+	return e.Problem + ": want " + e.Right
+}
 
 // FileError says where in a scenario file something is wrong.
 type FileError struct {

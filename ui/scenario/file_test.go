@@ -66,7 +66,7 @@ func TestFileDefaults(t *testing.T) {
 // Everything that is wrong is said, with its place.
 func TestFileProblems(t *testing.T) {
 	for name, c := range map[string]struct{ text, want string }{
-		"unknown key":      {"temperature = '20 C'\ndry-diamter = '50 nm'", `f.toml:2:1: dry-diamter: no such key: want dry-diameter?`},
+		"unknown key":      {"temperature = '20 C'\ndry-diamter = '50 nm'", `f.toml:2:1: dry-diamter: no such key: did you mean dry-diameter?`},
 		"no TOML":          {"this is prose", `f.toml:1:6: no TOML`},
 		"range":            {"relative-humidity = '120 %'", `f.toml:1:21: relative-humidity: 120 % is too large`},
 		"no unit":          {"dry-diameter = 100", `f.toml:1:16: dry-diameter: 100 has no unit`},

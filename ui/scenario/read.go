@@ -73,15 +73,15 @@ type file struct {
 	name     string
 	s        *Scenario
 	parser   unstable.Parser
-	row      int // of the component that is being read, -1: none
-	skip     bool
+	row      []Input // the row that is being read, nil: none yet
+	skip     bool    // the rest of a table that is not known
+	named    map[string]bool
 	where    map[Path]unstable.Position
 	problems FileErrors
 }
 
 func (f *file) walk(text []byte) {
-	f.where = map[Path]unstable.Position{}
-	f.row = -1
+	f.where, f.named = map[Path]unstable.Position{}, map[string]bool{}
 	f.parser.Reset(text)
 	for f.parser.NextExpression() {
 		e := f.parser.Expression()
@@ -123,23 +123,35 @@ func (f *file) key(n *unstable.Node) (string, unstable.Position) {
 	return strings.Join(parts, "."), at
 }
 
-func (f *file) table(n *unstable.Node, list bool) {
+func (f *file) table(n *unstable.Node, repeated bool) {
 	name, at := f.key(n)
-	f.skip = name != (components{}).Key() || !list
-	if f.skip {
-		f.fail(at, name, &ValueError{Given: name, Problem: fmt.Sprintf("no table %q", plain.Clean(name)), Right: "[[component]]"})
+	f.skip, f.row = true, nil
+	t, err := f.tableOf(name, repeated)
+	if err == nil {
+		err = t.begin()
+	}
+	if err != nil {
+		f.fail(at, name, err)
 		return
 	}
-	if f.row < 0 {
-		f.s.Components = nil
+	f.skip, f.row = false, t.Row(t.Len()-1)
+}
+
+// tableOf is the list of that name, without its default rows when it is named for
+// the first time. A list of one row at most may be written as a plain table.
+func (f *file) tableOf(name string, repeated bool) (table, error) {
+	var right []string
+	for _, t := range tables(f.s) {
+		if t.Key() == name && (repeated || t.single()) {
+			if !f.named[name] {
+				f.named[name] = true
+				t.clear()
+			}
+			return t, nil
+		}
+		right = append(right, "[["+t.Key()+"]]")
 	}
-	if len(f.s.Components) >= mostComponents {
-		f.skip = true
-		f.fail(at, name, &ValueError{Problem: "too many components", Right: fmt.Sprintf("at most %d", mostComponents)})
-		return
-	}
-	f.s.Components = append(f.s.Components, defaultComponent(""))
-	f.row = len(f.s.Components) - 1
+	return nil, &ValueError{Given: name, Problem: fmt.Sprintf("no table %q", plain.Clean(name)), Right: strings.Join(right, ", ")}
 }
 
 func (f *file) keyValue(n *unstable.Node) {
@@ -147,13 +159,13 @@ func (f *file) keyValue(n *unstable.Node) {
 		return
 	}
 	name, at := f.key(n)
-	inputs := Inputs(f.s)[:len(fields)]
-	if f.row >= 0 {
-		inputs = components{f.s}.Row(f.row)
-	}
-	if name == versionKey && f.row < 0 {
-		f.version(n.Value())
-		return
+	inputs := f.row
+	if inputs == nil {
+		inputs = ownInputs(f.s)
+		if name == versionKey {
+			f.version(n.Value())
+			return
+		}
 	}
 	for _, in := range inputs {
 		if in.Key() == name {

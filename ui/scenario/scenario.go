@@ -107,15 +107,21 @@ func (s *Scenario) catalogue() *solutes.Catalogue {
 // Inputs returns every input of the scenario, those of its rows included, in
 // the order of the statement.
 func Inputs(s *Scenario) []Input {
-	standard := Default()
-	var out []Input
-	for i := range fields {
-		out = append(out, slot[Scenario]{&fields[i], s, s, Path(fields[i].key), &standard})
-	}
+	out := ownInputs(s)
 	for _, l := range Lists(s) {
 		for i := range l.Len() {
 			out = append(out, l.Row(i)...)
 		}
+	}
+	return out
+}
+
+// ownInputs are the inputs that are no rows.
+func ownInputs(s *Scenario) []Input {
+	standard := Default()
+	out := make([]Input, 0, len(fields))
+	for i := range fields {
+		out = append(out, slot[Scenario]{&fields[i], s, s, Path(fields[i].key), &standard})
 	}
 	return out
 }
@@ -132,20 +138,25 @@ func Find(s *Scenario, p Path) (Input, bool) {
 
 // Changes says in words how b differs from a: "kappa 0.65 → 0.61".
 func Changes(a, b Scenario) []string {
-	before := Inputs(&a)
-	after := Inputs(&b)
-	if len(a.Components) != len(b.Components) {
-		before, after = before[:len(fields)], after[:len(fields)]
-	}
 	var out []string
-	for i, in := range before {
-		was, is := in.Show(Style{}), after[i].Show(Style{})
-		if was != is {
-			out = append(out, in.Says()+" "+was+" → "+is)
+	compare := func(before, after []Input) {
+		for i, in := range before {
+			was, is := in.Show(Style{}), after[i].Show(Style{})
+			if was != is {
+				out = append(out, in.Says()+" "+was+" → "+is)
+			}
 		}
 	}
-	if len(a.Components) != len(b.Components) {
-		out = append(out, "composition "+components{&a}.Show(Style{})+" → "+components{&b}.Show(Style{}))
+	compare(ownInputs(&a), ownInputs(&b))
+	after := Lists(&b)
+	for i, l := range Lists(&a) {
+		if l.Len() != after[i].Len() {
+			out = append(out, l.Says()+" "+l.Show(Style{})+" → "+after[i].Show(Style{}))
+			continue
+		}
+		for row := range l.Len() {
+			compare(l.Row(row), after[i].Row(row))
+		}
 	}
 	return out
 }

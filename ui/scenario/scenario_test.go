@@ -106,7 +106,7 @@ func TestRowList(t *testing.T) {
 	}
 	for l.Add() == nil {
 	}
-	if l.Len() != mostComponents || l.Show(Style{}) != "20 components" {
+	if l.Len() != componentList.most || l.Show(Style{}) != "20 components" {
 		t.Errorf("%d rows, shown as %q", l.Len(), l.Show(Style{}))
 	}
 	if err := l.Drop(0); err != nil || s.Components[0].Substance != "sodium chloride" {

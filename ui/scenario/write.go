@@ -14,8 +14,8 @@ const fileVersion = 1
 
 const versionKey = "dropcrest-scenario"
 
-// Encode writes a scenario file that Decode reads back without loss. Values of a
-// component that the catalogue gives are left out.
+// Encode writes a scenario file that Decode reads back without loss. Values that
+// the catalogue gives are left out.
 func Encode(w io.Writer, s Scenario) error {
 	var b bytes.Buffer
 	fmt.Fprintf(&b, "# A question for dropcrest. dropcrest curve --help explains the keys.\n%s = %d\n", versionKey, fileVersion)
@@ -24,15 +24,13 @@ func Encode(w io.Writer, s Scenario) error {
 			return err
 		}
 	}
-	for row := range s.Components {
-		fmt.Fprintf(&b, "\n[[%s]]\n", components{}.Key())
-		for i := range componentFields {
-			in := slot[Component]{field: &componentFields[i], r: &s.Components[row]}
-			if in.value().Is("catalogue") || in.Kind() == Text && in.value().Word == "" {
-				continue
-			}
-			if err := writeKey(&b, in.entry()); err != nil {
-				return err
+	for _, t := range tables(&s) {
+		for row := range t.Len() {
+			fmt.Fprintf(&b, "\n[[%s]]\n", t.Key())
+			for _, e := range t.entries(row) {
+				if err := writeKey(&b, e); err != nil {
+					return err
+				}
 			}
 		}
 	}
