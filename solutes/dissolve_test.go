@@ -95,7 +95,7 @@ func TestDissolveEverySubstanceByEveryModel(t *testing.T) {
 
 func TestMissingDensityNamesSubstanceAndRemedy(t *testing.T) {
 	_, _, err := Dissolve(recipe(t, IonInteraction, "ammonium methanesulfonate", 1.))
-	want := "no density for ammonium methanesulfonate in the catalogue: give density=…"
+	want := "no density is known for ammonium methanesulfonate: give density= a value"
 	if err == nil || err.Error() != want {
 		t.Errorf("got %v, want %s", err, want)
 	}

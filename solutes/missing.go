@@ -10,7 +10,7 @@ type MissingError struct {
 }
 
 func (e *MissingError) Error() string {
-	return fmt.Sprintf("no %s for %s in the catalogue: give %s=…", e.Quantity, e.Substance, e.Key)
+	return fmt.Sprintf("no %s is known for %s: give %s= a value", e.Quantity, e.Substance, e.Key)
 }
 
 // RefusedError says why two choices do not go together and what would.

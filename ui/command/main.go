@@ -15,6 +15,7 @@ import (
 	"dropcrest/ui/answer"
 	_ "dropcrest/ui/dark" // nobody asks the terminal for its background
 	"dropcrest/ui/plain"
+	"dropcrest/ui/scenario"
 	"dropcrest/ui/terminal"
 )
 
@@ -57,7 +58,7 @@ func run(ctx context.Context, args []string, w world) int {
 	if errors.As(err, &exit) && exit.err == nil {
 		return exit.code
 	}
-	w.complain("error", err.Error())
+	w.complainAll(err)
 	var usage *usageError
 	switch {
 	case errors.As(err, &exit):
@@ -76,6 +77,18 @@ func (w world) complain(kind, text string) {
 		text = plain.ASCII(text)
 	}
 	fmt.Fprintf(w.err, "dropcrest: %s: %s\n", kind, text)
+}
+
+// complainAll says what went wrong; of a scenario file all of it, one line each.
+func (w world) complainAll(err error) {
+	var file scenario.FileErrors
+	if !errors.As(err, &file) {
+		w.complain("error", err.Error())
+		return
+	}
+	for _, e := range file {
+		w.complain("error", "--from: "+e.Error())
+	}
 }
 
 // usageError is a wrong command line: exit code 2.

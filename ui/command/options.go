@@ -6,6 +6,8 @@ import (
 	"fmt"
 	"io"
 	"os"
+	"path/filepath"
+	"slices"
 	"strings"
 
 	"github.com/spf13/cobra"
@@ -62,29 +64,33 @@ func (o *options) form(cmd *cobra.Command, formats ...string) {
 	o.group("out", outputGroup)
 	_ = cmd.RegisterFlagCompletionFunc("as", cobra.FixedCompletions(formats, cobra.ShellCompDirectiveNoFileComp))
 	check := func(*cobra.Command, []string) (err error) {
+		if o.set.Changed("out") && o.out == "" {
+			return misused("--out needs the name of a file, or - for standard output")
+		}
 		o.as, err = chooseForm(o.as, o.out, formats)
 		return err
 	}
 	cmd.PreRunE = check
 }
 
-// chooseForm checks --as, or takes the form from the ending of the file.
+// chooseForm checks --as, or takes the form from the ending of the file. An
+// ending that names no form is refused, so that no text goes into a plot.jpg.
 func chooseForm(as, out string, formats []string) (string, error) {
-	if as == "" {
-		as = formats[0]
-		for _, f := range formats {
-			if strings.HasSuffix(strings.ToLower(out), "."+f) {
-				as = f
-			}
+	if as != "" {
+		if !slices.Contains(formats, as) {
+			return "", misused("--as %q: want %s", as, strings.Join(formats, ", "))
 		}
 		return as, nil
 	}
-	for _, f := range formats {
-		if as == f {
-			return as, nil
-		}
+	ending := strings.TrimPrefix(strings.ToLower(filepath.Ext(out)), ".")
+	switch {
+	case ending == "" || ending == "txt":
+		return formats[0], nil
+	case slices.Contains(formats, ending):
+		return ending, nil
 	}
-	return "", misused("--as %q: want %s", as, strings.Join(formats, ", "))
+	return "", misused("--out %s: the ending .%s names no form: want one of .txt, .%s, or say which form by --as",
+		out, ending, strings.Join(formats[1:], ", ."))
 }
 
 // inputs adds every input of the scenario as an option.
@@ -164,6 +170,9 @@ func (o *options) scenario(w world) (scenario.Scenario, []atmos.Note, error) {
 			return s, nil, misused("--%s: %v", g.key, err)
 		}
 		fresh[g.key] = true
+	}
+	if wrong := scenario.Check(&s); len(wrong) > 0 {
+		return s, nil, misused("--%s: %v", wrong[0].Path, wrong[0])
 	}
 	return s, o.unused(&s), nil
 }

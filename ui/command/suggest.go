@@ -3,6 +3,7 @@ package command
 import (
 	"errors"
 	"fmt"
+	"slices"
 	"strings"
 
 	"github.com/spf13/cobra"
@@ -26,6 +27,12 @@ func flagError(cmd *cobra.Command, err error) error {
 		if word := near.Word(name, optionNames(cmd)); word != "" {
 			return misused("unknown option --%s: did you mean --%s?", name, word)
 		}
+		if like := optionsLike(cmd, name); len(like) > 0 {
+			return misused("unknown option --%s: did you mean --%s?", name, strings.Join(like, " or --"))
+		}
+		if owner := commandWith(cmd, name); owner != nil {
+			return misused("unknown option --%s: it belongs to a command, as in %s --%s", name, owner.CommandPath(), name)
+		}
 		return misused("unknown option --%s: %s", name, seeHelp)
 	}
 	var empty *pflag.ValueRequiredError
@@ -33,6 +40,9 @@ func flagError(cmd *cobra.Command, err error) error {
 		return misused("--%s needs a value: %s", empty.GetSpecifiedName(), seeHelp)
 	}
 	var invalid *pflag.InvalidValueError
+	if errors.As(err, &invalid) && invalid.GetFlag().Value.Type() == "bool" {
+		return misused("--%s is a switch: give it without a value", invalid.GetFlag().Name)
+	}
 	if errors.As(err, &invalid) {
 		return misused("--%s: %v", invalid.GetFlag().Name, invalid.Unwrap())
 	}
@@ -47,6 +57,23 @@ func optionNames(cmd *cobra.Command) []string {
 		}
 	})
 	return names
+}
+
+// optionsLike are the options that have the word as a part of their name.
+func optionsLike(cmd *cobra.Command, word string) []string {
+	return slices.DeleteFunc(optionNames(cmd), func(name string) bool {
+		return len(word) < 3 || !slices.Contains(strings.Split(name, "-"), strings.ToLower(word))
+	})
+}
+
+// commandWith is the command below cmd that has the option, nil if none has.
+func commandWith(cmd *cobra.Command, name string) *cobra.Command {
+	for _, c := range cmd.Commands() {
+		if c.IsAvailableCommand() && c.Flags().Lookup(name) != nil {
+			return c
+		}
+	}
+	return nil
 }
 
 // noCommand is the argument check of the root: an argument there is a command
@@ -76,5 +103,5 @@ func noArguments(cmd *cobra.Command, args []string) error {
 	if len(args) == 0 {
 		return nil
 	}
-	return misused("%s takes no argument %q: values belong to options, as in --option %q", cmd.CommandPath(), args[0], args[0])
+	return misused("%s takes no argument %q: a value stands after its option, in quotes if it has blanks", cmd.CommandPath(), args[0])
 }

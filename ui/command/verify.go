@@ -21,7 +21,11 @@ func (w world) newVerify() *cobra.Command {
 		Use:   "verify",
 		Short: "Recompute published check values on this machine",
 		Long: "Recomputes published check values on this machine and sets each beside its source. " +
-			"Ends with exit code 1 if any value lies outside its tolerance.",
+			"Ends with exit code 1 if any value lies outside its tolerance.\n\n" +
+			"The column seen says how a value came here: read in the source; memory, which means that it was " +
+			"written down without reading the source again; or computed, which means that nobody printed it: it " +
+			"was evaluated for this project with a general-purpose numerical library from the equations that the " +
+			"source names, and checks the arithmetic, not nature.",
 		Example: examples()["verify"],
 		Args:    noArguments,
 	}
@@ -127,8 +131,11 @@ func verifyText(rows []verify.Row, width int, ascii bool) string {
 }
 
 func seenWords(seen string) string {
-	if seen == "memory" {
+	switch seen {
+	case "memory":
 		return " (from memory)"
+	case "computed":
+		return " (computed, not printed anywhere)"
 	}
 	return ""
 }
