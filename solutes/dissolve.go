@@ -16,6 +16,7 @@ const (
 	inputDensity     = "solution-density"
 	inputTemperature = "temperature"
 	inputSolubility  = "solubility"
+	inputAdsorption  = "adsorption"
 )
 
 // Dissolve makes a recipe ready. Notes say which part fell back to which model
@@ -29,8 +30,7 @@ func Dissolve(r Recipe) (Dissolved, []atmos.Note, error) {
 		return Dissolved{}, nil, err
 	}
 	d := &dissolving{Recipe: r, waterDensity: atmos.WaterDensity(r.Temperature)}
-	d.limits()
-	steps := []func() error{d.activity, d.density, d.tension}
+	steps := []func() error{d.film, d.activity, d.density, d.tension, d.core}
 	for _, step := range steps {
 		if err := step(); err != nil {
 			return Dissolved{}, nil, err

@@ -10,6 +10,7 @@ func (d *dissolving) activity() error {
 	if d.Solubility != Complete && d.Solubility != LimitedSolubility {
 		return fmt.Errorf("solubility rule %d does not exist: use complete or limited", int(d.Solubility))
 	}
+	d.limits()
 	switch d.Model {
 	case KappaModel:
 		return d.kappaModel()
@@ -49,7 +50,7 @@ func (d *dissolving) partKappa(s Substance) (float64, error) {
 		d.says("%s: κ %.4g (%s)", s.called(), k, s.Kappa.Source)
 	case math.IsNaN(k):
 		return 0, &MissingError{s.called(), "kappa", "kappa"}
-	case k == 0 && s.Adsorption != nil:
+	case k == 0 && s.Adsorption != nil && d.Recipe.Adsorption == NoAdsorption:
 		d.says("%s: insoluble, counts as volume", s.called())
 		d.note("adsorption-left-out", inputActivity,
 			"%s counts as insoluble: water adsorbed on its surface is not in this model.", s.called())

@@ -59,7 +59,7 @@ func (d *dissolving) density() error {
 func (d *dissolving) tension() error {
 	water := atmos.SurfaceTension(d.Temperature)
 	switch d.TensionRule {
-	case PureWater:
+	case PureWater, Szyszkowski:
 		d.out.Tension = ConstantTension(water)
 	case FixedTension:
 		d.out.Tension = ConstantTension(d.Tension)

@@ -54,6 +54,16 @@ const (
 	PureWater    TensionRule = iota // IAPWS R1-76 at the temperature
 	SolutionRule                    // pure water and a linear increment per molality
 	FixedTension                    // Recipe.Tension
+	Szyszkowski                     // lowered by surface-active organics: see Dissolved.Film
+)
+
+// AdsorptionRule names what water adsorbed on insoluble particles does.
+type AdsorptionRule int
+
+const (
+	NoAdsorption    AdsorptionRule = iota // insoluble parts are volume only
+	KnownAdsorption                       // by the parameters of the insoluble substance
+	GivenAdsorption                       // by Recipe.AdsorptionA and AdsorptionB
 )
 
 // Part is one component of a dry particle.
@@ -71,7 +81,11 @@ type Recipe struct {
 	Solubility     SolubilityRule // C is each substance's VolumeSolubility; one of evidence User counts always
 	DensityRule    DensityRule
 	TensionRule    TensionRule
-	Tension        float64 // N/m, FixedTension only
+	Tension        float64          // N/m, FixedTension only
+	Surface        *SurfaceActivity // Szyszkowski only: of organics that have none of their own; nil: none
+	Adsorption     AdsorptionRule
+	AdsorptionA    float64 // GivenAdsorption only
+	AdsorptionB    float64
 	Temperature    float64 // K
 }
 
@@ -86,6 +100,8 @@ type Dissolved struct {
 	DryDensity     float64  // kg/m³; NaN: not known
 	Models         []string // the model in use, part by part, in words
 	Limits         []Limit  // of sparingly soluble parts, in the order of the parts
+	Film           *Film    // Szyszkowski only
+	Core           *Core    // with an AdsorptionRule only
 }
 
 // Limit is the solubility of one part of a particle.

@@ -46,6 +46,7 @@ type Substance struct {
 
 	DeliquescenceLaw *DeliquescenceLaw `json:"deliquescence_law,omitempty"` // deliquescence with temperature
 	Adsorption       *Adsorption       `json:"adsorption,omitempty"`        // FHH parameters of insoluble particles
+	SurfaceActivity  *SurfaceActivity  `json:"surface_activity,omitempty"`  // Szyszkowski parameters of organics
 	Ion              *Ion              `json:"ion,omitempty"`               // ion-interaction parameters
 	Concentrated     *Concentrated     `json:"concentrated,omitempty"`      // published polynomial and its join
 
@@ -72,6 +73,15 @@ func (s Substance) Insoluble() bool { return s.Ions.Known() && s.Ions.Value == 0
 type Adsorption struct {
 	A Datum `json:"a"`
 	B Datum `json:"b"`
+}
+
+// SurfaceActivity holds the parameters of the Szyszkowski equation, σ falling by
+// Γ_max R T ln(1 + K c) with the concentration c. No constants of single organics
+// are in the catalogue: published ones are few, and none was at hand.
+type SurfaceActivity struct {
+	GammaMax Datum `json:"gamma_max"` // greatest surface excess, mol/m²
+	K        Datum `json:"k"`         // adsorption constant, m³/mol
+	Floor    Datum `json:"floor"`     // σ falls no lower, N/m; a gap: no floor
 }
 
 // molality is mol of formula units per kg of water at u = 1; NaN if not known.
