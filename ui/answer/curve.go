@@ -63,7 +63,7 @@ func askCurve(ctx context.Context, env Env, s scenario.Scenario) (Answer, error)
 	picture := c.figure()
 	frame, _ := CurveFrame(s, picture, figure.Frame{}, frameRows)
 	c.table = c.sample(frame.XMin/micro, frame.XMax/micro, s.Points)
-	limits := c.limits(frame.XMin / micro)
+	limits := c.limits(frame.XMin/micro, frame.XMax/micro)
 	c.notes = distinct(append(c.notes, limits...))
 	for _, n := range c.notes {
 		picture.Notes = append(picture.Notes, n.Text)

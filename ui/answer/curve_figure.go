@@ -41,11 +41,17 @@ func (c *curve) dense() []koehler.State {
 	for _, h := range c.haze {
 		bottom = math.Min(bottom, h.Water/2)
 	}
-	bottom = math.Max(bottom, 1e-9)
-	near, far := 1e3*top, 1e7*top // 10 and 200 times the crest's size
+	near, far := 1e3*top, 1e7*top                    // 10 and 200 times the crest's size
+	if from := c.asked.FromRadius; from.Word == "" { // the frame may reach a decade beyond
+		bottom, far = math.Min(bottom, c.waterAt(from.Number)), math.Max(far, c.waterAt(10*from.Number))
+	}
+	if to := c.asked.ToRadius; to.Word == "" {
+		far = math.Max(far, c.waterAt(to.Number))
+	}
+	bottom = math.Max(bottom, leastShown)
 	line := make([]koehler.State, 0, nearPoints+farPoints+len(c.extrema)+3)
 	line = c.between(line, bottom, near, nearPoints)
-	line = c.between(line, near, far, farPoints+1)[:nearPoints+farPoints]
+	line = c.between(line[:nearPoints-1], near, far, farPoints+1)
 	for _, e := range c.extrema {
 		line = append(line, e.State)
 	}
@@ -54,6 +60,19 @@ func (c *curve) dense() []koehler.State {
 	}
 	slices.SortStableFunc(line, func(a, b koehler.State) int { return compare(a.WetDiameter, b.WetDiameter) })
 	return line
+}
+
+// leastShown is the least u of the line: the drop is the dry particle there.
+const leastShown = 1e-9
+
+// waterAt is u at a wet radius (m); radii below the dry one have the least that
+// is shown.
+func (c *curve) waterAt(radius float64) float64 {
+	u := c.particle.At(math.Max(2*radius, c.particle.DryDiameter*(1+leastShown))).Water
+	if math.IsNaN(u) { // a measured density that shrinks the drop
+		return leastShown
+	}
+	return u
 }
 
 func compare(a, b float64) int {
@@ -142,7 +161,8 @@ func (c *curve) points(of func(koehler.State) float64) (x, y []float64) {
 }
 
 // CurveFrame is the frame for a picture of h rows, with the ends of the wet
-// radius that the scenario asks for; figure.Fit says the rest.
+// radius that the scenario asks for; figure.Fit says the rest. Where the one end
+// that is asked for lies beyond the other, a decade is shown.
 func CurveFrame(s scenario.Scenario, f figure.Figure, last figure.Frame, h int) (figure.Frame, bool) {
 	fr, refitted := figure.Fit(f, last, h)
 	if s.FromRadius.Word == "" {
@@ -150,6 +170,13 @@ func CurveFrame(s scenario.Scenario, f figure.Figure, last figure.Frame, h int) 
 	}
 	if s.ToRadius.Word == "" {
 		fr.XMax = s.ToRadius.Number * micro
+	}
+	switch {
+	case fr.XMin < fr.XMax:
+	case s.ToRadius.Word == "":
+		fr.XMin = fr.XMax / 10
+	default:
+		fr.XMax = 10 * fr.XMin
 	}
 	return fr, refitted
 }

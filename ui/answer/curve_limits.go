@@ -15,11 +15,16 @@ import (
 const giantNucleus = 1e-6
 
 // limits are the notes that say in words what limits the crest and the haze
-// size, the most important first. from is the smallest wet radius shown (m).
-func (c *curve) limits(from float64) []atmos.Note {
+// size, the most important first. from and to are the ends of the wet radius
+// shown (m).
+func (c *curve) limits(from, to float64) []atmos.Note {
 	var notes []atmos.Note
 	add := func(code, input, format string, values ...any) {
 		notes = append(notes, atmos.Note{Code: code, Input: input, Text: fmt.Sprintf(format, values...)})
+	}
+	if dry := c.particle.DryDiameter / 2; to <= dry {
+		add("frame-below-particle", "to-radius", "No drop is as small as the wet radii asked for, up to %s: the dry particle has %s.",
+			micrometres(to), micrometres(dry))
 	}
 	if c.noCrest == nil && c.crest.Kind == koehler.BoundaryMaximum {
 		add("barrier-at-dry-size", "component", "There is no crest in solution: what must be overcome is the curvature of the dry particle, taken as wettable.")
