@@ -13,9 +13,13 @@ func (c *curve) curveTable() Table {
 		{"kelvin_factor", "Kelvin factor"},
 		{"supersaturation_percent", "supersaturation, %"},
 	}}
-	for _, s := range c.table {
-		t.Rows = append(t.Rows, []any{cell(s.WetDiameter / 2), cell(s.SaturationRatio),
-			cell(s.WaterActivity), cell(s.KelvinFactor), cell(100 * s.Supersaturation)})
+	t.Rows = make([][]any, len(c.table))
+	cells := make([]any, 0, len(c.table)*len(t.Columns)) // of all rows
+	for i, s := range c.table {
+		first := len(cells)
+		cells = append(cells, cell(s.WetDiameter/2), cell(s.SaturationRatio),
+			cell(s.WaterActivity), cell(s.KelvinFactor), cell(100*s.Supersaturation))
+		t.Rows[i] = cells[first:len(cells):len(cells)]
 	}
 	return t
 }
