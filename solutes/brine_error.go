@@ -10,6 +10,7 @@ type UnusableError struct {
 	Want     string  // what would be right
 }
 
+// Error says what was given and what would be right.
 func (e *UnusableError) Error() string {
 	return fmt.Sprintf("%s: %s is %.6g, should be %s", e.Model, e.Quantity, e.Value, e.Want)
 }
@@ -20,6 +21,7 @@ type NoModelError struct {
 	For       string // what the model is for
 }
 
+// Error says what the model is for.
 func (e *NoModelError) Error() string {
 	return fmt.Sprintf("%s: this water activity model is for %s", e.Substance, e.For)
 }

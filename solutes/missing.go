@@ -9,6 +9,7 @@ type MissingError struct {
 	Key       string // key of a component that gives it: "density"
 }
 
+// Error says what is missing and how to give it.
 func (e *MissingError) Error() string {
 	return fmt.Sprintf("no %s is known for %s: give %s= a value", e.Quantity, e.Substance, e.Key)
 }
@@ -19,6 +20,7 @@ type RefusedError struct {
 	Why   string
 }
 
+// Error says why, and what would go.
 func (e *RefusedError) Error() string { return e.Why }
 
 // missing returns the first of the values that molality needs and s lacks.

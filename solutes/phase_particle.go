@@ -19,12 +19,13 @@ const (
 type Branch int
 
 const (
-	BranchUnknown   Branch = iota
-	CrystalBranch          // dry; of a mixture: nothing has dissolved yet
-	PartlyDissolved        // of a mixture: some of it is dissolved, how much is not known
-	SolutionBranch         // all that is soluble is dissolved
+	BranchUnknown   Branch = iota // what it depends on is not known
+	CrystalBranch                 // dry; of a mixture: nothing has dissolved yet
+	PartlyDissolved               // of a mixture: some of it is dissolved, how much is not known
+	SolutionBranch                // all that is soluble is dissolved
 )
 
+// String returns the state in words.
 func (b Branch) String() string {
 	switch b {
 	case CrystalBranch:

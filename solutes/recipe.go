@@ -9,6 +9,7 @@ const (
 	IonInteraction              // Pitzer & Mayorga 1973, joined to concentrated data
 )
 
+// String returns the name of the model in words.
 func (m Model) String() string {
 	switch m {
 	case KappaModel:
@@ -29,6 +30,7 @@ const (
 	LimitedSolubility                       // Petters & Kreidenweis 2008; of κ models only
 )
 
+// String returns the word for the rule.
 func (r SolubilityRule) String() string {
 	switch r {
 	case Complete:
