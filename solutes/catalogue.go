@@ -31,18 +31,22 @@ var standard = sync.OnceValue(func() *Catalogue {
 // Standard returns the embedded catalogue. It is read once and shared.
 func Standard() *Catalogue { return standard() }
 
-// NewCatalogue makes a catalogue of substances. It is an error if two of them
+// NewCatalogue makes a catalogue of substances. It is a *RecordError if two of them
 // share a key, name, formula or alias, or if one has no key.
 func NewCatalogue(substances []Substance) (*Catalogue, error) {
 	c := &Catalogue{substances: slices.Clone(substances), byName: map[string]int{}}
 	for i, s := range c.substances {
 		if fold(s.Key) == "" {
-			return nil, fmt.Errorf("substance %d (%q) has no key", i+1, s.Name)
+			return nil, &RecordError{s.called(), "key", fmt.Sprintf("%q", s.Key), "a word of letters or digits"}
 		}
-		for _, name := range s.names() {
+		for n, name := range s.names() {
 			f := fold(name)
+			if f == "" {
+				continue // a substance may have no name
+			}
 			if j, taken := c.byName[f]; taken && j != i {
-				return nil, fmt.Errorf("%q stands for both %s and %s", name, c.substances[j].Key, s.Key)
+				return nil, &RecordError{s.called(), s.nameField(n), fmt.Sprintf("%q", name),
+					"a name that does not stand for " + c.substances[j].called() + " already"}
 			}
 			c.byName[f] = i
 		}
@@ -110,6 +114,19 @@ func (s Substance) names() []string {
 		names = append(names, s.Formula)
 	}
 	return append(names, s.Aliases...)
+}
+
+// nameField is the field that the name number n of names comes from.
+func (s Substance) nameField(n int) string {
+	switch {
+	case n == 0:
+		return "key"
+	case n == 1:
+		return "name"
+	case n == 2 && s.Formula != "":
+		return "formula"
+	}
+	return fmt.Sprintf("aliases[%d]", n-(len(s.names())-len(s.Aliases)))
 }
 
 // fold brings names that mean the same to one spelling.
