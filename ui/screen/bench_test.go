@@ -1,0 +1,36 @@
+package screen
+
+import (
+	"fmt"
+	"testing"
+)
+
+// A key that changes the answer, from the key to the finished screen.
+func BenchmarkStep(b *testing.B) {
+	for _, size := range [][2]int{{80, 24}, {200, 50}} {
+		b.Run(fmt.Sprintf("%dx%d", size[0], size[1]), func(b *testing.B) {
+			m := opened(onTerminal("colour"), size[0], size[1])
+			keys := []string{"up", "down"}
+			n := 0
+			b.ReportAllocs()
+			for b.Loop() {
+				m.Update(keyOf(keys[n%2]))
+				m.View()
+				n++
+			}
+		})
+	}
+}
+
+// A key that moves the choice: the picture is kept.
+func BenchmarkMove(b *testing.B) {
+	m := opened(onTerminal("colour"), 80, 24)
+	keys := []string{"right", "left"}
+	n := 0
+	b.ReportAllocs()
+	for b.Loop() {
+		m.Update(keyOf(keys[n%2]))
+		m.View()
+		n++
+	}
+}

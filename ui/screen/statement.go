@@ -1,0 +1,70 @@
+package screen
+
+import (
+	"strings"
+
+	"github.com/charmbracelet/x/ansi"
+
+	"dropcrest/ui/answer"
+	"dropcrest/ui/scenario"
+)
+
+// slotMark stands around the name of a slot while a clause is cut into words. No
+// statement contains it.
+const slotMark = "\x00"
+
+// statement is the question in prose in lines of at most w columns. A clause
+// begins a new line; the chosen slot is <value>, the others are [value].
+func (m *model) statement(w int) []string {
+	w = min(w, textWidth)
+	var lines []string
+	for _, clause := range m.question.Statement(m.scenario) {
+		lines = append(lines, flow(m.tokens(clause, w-2), w-2)...)
+	}
+	return indented(lines)
+}
+
+// tokens are the words of a clause; a slot and what stands close to it are one.
+func (m *model) tokens(clause string, w int) []token {
+	var out []token
+	marked := answer.Fill(clause, func(slot string) string { return slotMark + slot + slotMark })
+	for word := range strings.FieldsSeq(marked) {
+		parts := strings.Split(word, slotMark)
+		if len(parts) != 3 {
+			out = append(out, wordToken(m.text(word)))
+			continue
+		}
+		before, after := m.text(parts[0]), m.text(parts[2])
+		value := cut(m.slotValue(scenario.Path(parts[1])), max(w-2-len(before)-len(after), 1))
+		t := token{width: len(before) + len(after) + 2 + ansi.StringWidth(value)}
+		if scenario.Path(parts[1]) == m.cursor {
+			t.text = before + m.marked("<"+value+">") + after
+		} else {
+			t.text = before + "[" + m.value(value) + "]" + after
+		}
+		out = append(out, t)
+	}
+	return out
+}
+
+// slotValue is the value of an input, or a list in words.
+func (m *model) slotValue(p scenario.Path) string {
+	if in, ok := scenario.Find(&m.scenario, p); ok {
+		return m.text(in.Show(m.style()))
+	}
+	if l, ok := m.listOf(string(p)); ok {
+		return m.text(l.Show(m.style()))
+	}
+	return "?"
+}
+
+// rangeWords say what the chosen slot takes.
+func (m *model) rangeWords() string {
+	if in, ok := m.input(); ok {
+		return m.text(in.Says() + ": " + in.Range())
+	}
+	if l, ok := m.list(); ok {
+		return m.text(l.Says() + ": Enter opens its rows")
+	}
+	return m.text("the finding: i says what stands behind it")
+}

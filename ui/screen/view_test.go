@@ -1,0 +1,224 @@
+package screen
+
+import (
+	"fmt"
+	"os"
+	"strings"
+	"testing"
+
+	tea "github.com/charmbracelet/bubbletea"
+	"github.com/charmbracelet/x/ansi"
+	"github.com/charmbracelet/x/exp/golden"
+
+	"dropcrest/ui/scenario"
+)
+
+// The page as a person sees it: on the usual window, a large one, the least one,
+// without UTF-8, and once with its colours.
+func TestScreens(t *testing.T) {
+	for name, c := range map[string]struct {
+		terminal string
+		w, h     int
+		keys     string
+	}{
+		"start_80x24":        {"plain", 80, 24, ""},
+		"start_80x24_ascii":  {"ascii", 80, 24, ""},
+		"start_80x24_colour": {"colour", 80, 24, ""},
+		"start_160x48":       {"plain", 160, 48, ""},
+		"start_60x18":        {"plain", 60, 18, ""},
+		"held_80x24":         {"plain", 80, 24, "space pgup"},
+		"held_80x24_ascii":   {"ascii", 80, 24, "space pgup o"},
+		"finding_80x24":      {"plain", 80, 24, "end"},
+		"entry_80x24":        {"plain", 80, 24, "5 0"},
+		"undone_80x24":       {"plain", 80, 24, "up up right right u"},
+		"long_80x24":         {"plain", 80, 24, "right down home right right right down"},
+		"small_40x10":        {"plain", 40, 10, ""},
+	} {
+		t.Run(name, func(t *testing.T) {
+			m := opened(onTerminal(c.terminal), c.w, c.h)
+			press(m, c.keys)
+			view := m.View()
+			golden.RequireEqual(t, []byte(view+"\n"))
+			if c.terminal != "colour" && strings.Contains(view, "\x1b") {
+				t.Error("NO_COLOR is set and the screen has an escape sequence")
+			}
+			if c.terminal == "ascii" && strings.ContainsFunc(view, func(r rune) bool { return r > '~' }) {
+				t.Error("the locale is ASCII and the screen is not")
+			}
+		})
+	}
+}
+
+// states are keys that lead to every state of the page, and the scenario they
+// start from.
+func states() map[string]struct {
+	keys string
+	from func(*scenario.Scenario)
+} {
+	type state = struct {
+		keys string
+		from func(*scenario.Scenario)
+	}
+	long := func(s *scenario.Scenario) {
+		s.DrySizeIs, s.ShapeFactor = "mobility", 1.08
+		s.WaterActivity, s.Kelvin, s.SolutionDensity = "kappa", "compressible", "measured"
+		s.SharesBy = "mass"
+		s.Components = append(s.Components, scenario.Component{Substance: "sodium chloride", Share: 0.25, Kappa: scenario.Measure{Word: "catalogue"},
+			Density: scenario.Measure{Word: "catalogue"}, MolarMass: scenario.Measure{Word: "catalogue"}, Ions: scenario.Measure{Word: "catalogue"}})
+	}
+	giant := func(s *scenario.Scenario) { s.DryDiameter, s.Temperature, s.RelativeHumidity = 9e-6, 240, 0.3 }
+	return map[string]state{
+		"start":      {"", nil},
+		"stepped":    {"up up pgdown", nil},
+		"held":       {"space up space up space up space up space up space o", nil},
+		"finding":    {"end", nil},
+		"entry":      {"5 0", nil},
+		"refused":    {"5 k enter", nil},
+		"list":       {"right enter", nil},
+		"narrowed":   {"right right right enter k", nil},
+		"rows":       {"right right enter", nil},
+		"more rows":  {"right right enter a a", nil},
+		"substances": {"right right enter enter", nil},
+		"about":      {"i", nil},
+		"why":        {"end i", nil},
+		"table":      {"t", nil},
+		"write":      {"w n o t h i n g", nil},
+		"help":       {"?", nil},
+		"long":       {"", long},
+		"long held":  {"space end", long},
+		"giant":      {"", giant},
+	}
+}
+
+// No line is wider and no view higher than the window, in every state, from the
+// least window on.
+func TestEveryWindowFits(t *testing.T) {
+	everyWindow(t, []int{60, 61, 79, 80, 99, 100, 101, 102, 200}, []int{18, 19, 20, 21, 22, 23, 24, 29, 30, 60})
+}
+
+// The same for every single size.
+func TestEveryWindowFitsLong(t *testing.T) {
+	if os.Getenv("DROPCREST_LONG") == "" {
+		t.Skip("DROPCREST_LONG is not set")
+	}
+	everyWindow(t, through(60, 200), through(18, 60))
+}
+
+func everyWindow(t *testing.T, widths, heights []int) {
+	for name, s := range states() {
+		t.Run(name, func(t *testing.T) {
+			for _, terminal := range []string{"colour", "ascii"} {
+				o := onTerminal(terminal)
+				if s.from != nil {
+					s.from(&o.Scenario)
+				}
+				m := opened(o, 80, 24)
+				if m.unsolved != "" {
+					t.Fatalf("no answer: %s", m.unsolved)
+				}
+				press(m, s.keys)
+				for _, w := range widths {
+					for _, h := range heights {
+						m.Update(tea.WindowSizeMsg{Width: w, Height: h})
+						fits(t, m, w, h)
+					}
+				}
+			}
+		})
+	}
+}
+
+func through(lo, hi int) (out []int) {
+	for n := lo; n <= hi; n++ {
+		out = append(out, n)
+	}
+	return out
+}
+
+// fits checks that the view fills the window and goes nowhere beyond it.
+func fits(t *testing.T, m *model, w, h int) {
+	t.Helper()
+	lines := strings.Split(m.View(), "\n")
+	if len(lines) != h && !m.tooSmall() || len(lines) > h {
+		t.Errorf("%dx%d: %d lines", w, h, len(lines))
+	}
+	for i, line := range lines {
+		if n := ansi.StringWidth(line); n > w {
+			t.Errorf("%dx%d: line %d has %d columns: %q", w, h, i+1, n, line)
+		}
+	}
+}
+
+// The chosen slot stands in <>, all others in [], and nothing else moves when the
+// choice moves.
+func TestTheChoiceMovesNothing(t *testing.T) {
+	m := opened(onTerminal("plain"), 80, 24)
+	still := strings.NewReplacer("<", "[", ">", "]")
+	clean := func() string { return still.Replace(strings.Join(m.statement(80), "\n")) }
+	begin := clean()
+	for range len(m.slots()) - 1 {
+		shown := strings.Join(m.statement(80), "\n")
+		if strings.Count(shown, "<") != 1 || strings.Count(shown, ">") != 1 {
+			t.Errorf("cursor on %s: not one slot in <>:\n%s", m.cursor, shown)
+		}
+		if clean() != begin {
+			t.Errorf("cursor on %s: the statement has moved:\n%s", m.cursor, shown)
+		}
+		press(m, "right")
+	}
+	if !m.onFinding() {
+		t.Errorf("the last place is %s, want the finding", m.cursor)
+	}
+}
+
+// A picture that has no room becomes words, and words come back as a picture.
+func TestNoRoomForAPicture(t *testing.T) {
+	m := opened(onTerminal("plain"), 80, 24)
+	if lines := m.draw(80, leastRows); !strings.Contains(strings.Join(lines, "\n"), "crest 0.147 %") {
+		t.Errorf("words say %q", lines)
+	}
+	if lines := m.draw(80, leastRows+1); !strings.Contains(strings.Join(lines, "\n"), "◆") {
+		t.Errorf("the picture is %q", lines)
+	}
+}
+
+// The view is the same whether it was just drawn or kept from before.
+func TestViewIsStill(t *testing.T) {
+	m := opened(onTerminal("colour"), 80, 24)
+	press(m, "space pgup o")
+	kept := m.View()
+	m.redraw()
+	if m.View() != kept {
+		t.Error("drawn anew it differs")
+	}
+}
+
+// What a file or a session says cannot drive the terminal.
+func TestTextFromFilesIsCleaned(t *testing.T) {
+	o := onTerminal("plain")
+	o.Note = fmt.Errorf("evil \x1b[31mred\u202e name")
+	o.Scenario.Components[0].Substance = "no\x1b]0;such\x07"
+	m := opened(o, 80, 24)
+	if view := m.View(); strings.ContainsAny(view, "\x1b\x07\u202e") {
+		t.Errorf("the view is %q", view)
+	}
+	if m.unsolved == "" {
+		t.Error("an unknown substance has an answer")
+	}
+}
+
+// A scenario without an answer is shown with the reason, and can be put right.
+func TestUnsolvedStart(t *testing.T) {
+	o := onTerminal("plain")
+	o.Scenario.Components[0].Substance = "amonium sulfat"
+	m := opened(o, 80, 24)
+	if view := m.View(); !strings.Contains(view, "There is no answer") || !strings.Contains(view, "ammonium bisulfate") {
+		t.Errorf("the view does not say why there is no answer:\n%s", view)
+	}
+	if err := m.set("component[0].substance", "sodium chloride"); err != nil {
+		t.Fatal(err)
+	}
+	if view := m.View(); strings.Contains(view, "no answer") || !strings.Contains(view, "crosses at") {
+		t.Errorf("the view after the repair:\n%s", view)
+	}
+}
