@@ -1,0 +1,35 @@
+package screen
+
+import "strings"
+
+// newHelp is the list of keys, made from the bindings themselves.
+func newHelp(m *model) panel {
+	text := keyTable(helpItems(m.keys.page()))
+	for _, p := range []struct {
+		title string
+		panel panel
+	}{
+		{"while typing", &entry{}},
+		{"in a list of words", &list{}},
+		{"in rows", &rows{}},
+		{"in a text", &reader{}},
+		{"in a table", &table{}},
+	} {
+		text = append(text, "", p.title)
+		text = append(text, keyTable(helpItems(p.panel.keys(m.keys)))...)
+	}
+	return &reader{title: "Keys", text: text, opener: m.keys.Help}
+}
+
+// keyTable is one line a key, aligned.
+func keyTable(names, does []string) []string {
+	wide := 0
+	for _, n := range names {
+		wide = max(wide, len([]rune(n)))
+	}
+	out := make([]string, len(names))
+	for i, n := range names {
+		out[i] = strings.TrimRight("  "+padded(n, wide)+"  "+does[i], " ")
+	}
+	return out
+}

@@ -1,0 +1,241 @@
+package screen
+
+import (
+	"slices"
+	"strings"
+
+	"github.com/charmbracelet/bubbles/key"
+	tea "github.com/charmbracelet/bubbletea"
+
+	"dropcrest/ui/scenario"
+)
+
+// rows is a list of rows, such as the components of a particle, edited with the
+// keys of the page: each value is a slot, the chosen one in <>.
+type rows struct {
+	list   string // key of the list
+	row    int    // the chosen row; 0 is the line above the rows
+	slot   int    // the chosen slot in it
+	scroll scroll
+	entry  *entry // a value being typed in its slot
+	wrong  error  // why the last key was refused
+}
+
+// newRows opens a list of rows at the first share, or at the substance where
+// that is all there is to say.
+func newRows(l scenario.RowList) panel {
+	r := &rows{list: l.Key(), row: 1}
+	if l.Len() == 1 {
+		r.slot = 1
+	}
+	return r
+}
+
+// rowForm is how a list of rows reads. Slots that its row does not name stand
+// below the chosen row.
+type rowForm struct {
+	head   string   // the line above; {key} is an input of the scenario
+	above  []string // the inputs in head
+	row    string   // {key} is an input of the row
+	first  []string // the inputs in row
+	shares bool     // the rows are parts of a particle, with their kappa and sums
+}
+
+// formOf is the form of a list. One that has no sentence of its own names its
+// first inputs.
+func formOf(l scenario.RowList) rowForm {
+	if l.Key() != "component" {
+		f := rowForm{head: "Rows of " + l.Says() + ":"}
+		if l.Len() > 0 {
+			for _, in := range l.Row(0)[:min(len(l.Row(0)), 2)] {
+				f.first = append(f.first, in.Key())
+			}
+			f.row = "{" + strings.Join(f.first, "}, {") + "}"
+		}
+		return f
+	}
+	f := rowForm{head: "The particle is made of:", row: "{share} of {substance}", first: []string{"share", "substance"}, shares: true}
+	if l.Len() > 1 { // of one component the share means nothing
+		f.head, f.above = "The particle is made of, by {shares-by}:", []string{"shares-by"}
+	}
+	return f
+}
+
+// grid is every slot of the panel in the order of the keys: the line above, then
+// the rows.
+func (r *rows) grid(m *model) (scenario.RowList, [][]scenario.Input) {
+	l, ok := m.listOf(r.list)
+	if !ok {
+		return nil, nil
+	}
+	f := formOf(l)
+	var above []scenario.Input
+	for _, k := range f.above {
+		if in, ok := scenario.Find(&m.scenario, scenario.Path(k)); ok {
+			above = append(above, in)
+		}
+	}
+	grid := [][]scenario.Input{above}
+	for i := range l.Len() {
+		grid = append(grid, ordered(l.Row(i), f.first))
+	}
+	return l, grid
+}
+
+// ordered puts the inputs of those keys first.
+func ordered(row []scenario.Input, first []string) []scenario.Input {
+	place := func(in scenario.Input) int {
+		if i := slices.Index(first, in.Key()); i >= 0 {
+			return i
+		}
+		return len(first)
+	}
+	slices.SortStableFunc(row, func(a, b scenario.Input) int { return place(a) - place(b) })
+	return row
+}
+
+// settle brings the choice back to a slot that exists: undo may have taken its
+// row away.
+func (r *rows) settle(grid [][]scenario.Input) {
+	r.row = max(min(r.row, len(grid)-1), 0)
+	if r.row == 0 && (len(grid) > 1 && len(grid[0]) == 0) {
+		r.row = 1
+	}
+	r.slot = max(min(r.slot, len(grid[r.row])-1), 0)
+}
+
+// chosen is the input under the choice; false when there is none.
+func (r *rows) chosen(grid [][]scenario.Input) (scenario.Input, bool) {
+	if r.slot >= len(grid[r.row]) {
+		return nil, false
+	}
+	return grid[r.row][r.slot], true
+}
+
+// press takes a key: the entry's, then those that choose, then those that change.
+func (r *rows) press(k tea.KeyMsg, m *model) (panel, tea.Cmd) {
+	l, grid := r.grid(m)
+	if l == nil {
+		return nil, nil
+	}
+	r.settle(grid)
+	if r.entry != nil {
+		if back, _ := r.entry.press(k, m); back == r {
+			r.entry = nil
+		}
+		return r, nil
+	}
+	r.wrong = nil
+	if hits(k, m.keys.Leave) {
+		return nil, nil
+	}
+	if r.choose(k, grid, m) {
+		return r, nil
+	}
+	if in, ok := r.chosen(grid); ok {
+		if next, took := r.change(k, in, m); took {
+			return next, nil
+		}
+	}
+	r.whole(k, l, m)
+	return r, nil
+}
+
+// choose takes a key that moves the choice.
+func (r *rows) choose(k tea.KeyMsg, grid [][]scenario.Input, m *model) bool {
+	switch {
+	case hits(k, m.keys.Left):
+		r.move(-1, grid)
+	case hits(k, m.keys.Right):
+		r.move(1, grid)
+	case hits(k, m.keys.First):
+		r.slot = 0
+	case hits(k, m.keys.Last):
+		r.slot = len(grid[r.row]) - 1
+	case hits(k, m.keys.NextField):
+		r.row++
+	case hits(k, m.keys.FieldBefore):
+		r.row--
+	default:
+		return false
+	}
+	r.settle(grid)
+	return true
+}
+
+// move goes to the slot before or after, from row to row, to the ends.
+func (r *rows) move(by int, grid [][]scenario.Input) {
+	switch to := r.slot + by; {
+	case to >= 0 && to < len(grid[r.row]):
+		r.slot = to
+	case to < 0 && r.row > 0 && len(grid[r.row-1]) > 0:
+		r.row--
+		r.slot = len(grid[r.row]) - 1
+	case to > 0 && r.row+1 < len(grid):
+		r.row, r.slot = r.row+1, 0
+	}
+}
+
+// change takes a key that changes the chosen slot or opens it.
+func (r *rows) change(k tea.KeyMsg, in scenario.Input, m *model) (panel, bool) {
+	number := in.Kind() == scenario.Number
+	kept := m.left[in.Path()]
+	switch {
+	case hits(k, m.keys.Up):
+		r.wrong = m.step(in.Path(), 1, false)
+	case hits(k, m.keys.Down):
+		r.wrong = m.step(in.Path(), -1, false)
+	case hits(k, m.keys.BigUp):
+		r.wrong = m.step(in.Path(), 1, true)
+	case hits(k, m.keys.BigDown):
+		r.wrong = m.step(in.Path(), -1, true)
+	case hits(k, m.keys.Type) && number:
+		r.entry = openEntry(in, k.Runes[0], "", r)
+	case hits(k, m.keys.Open) && (kept != "" || len(in.Choices()) == 0):
+		r.entry = openEntry(in, 0, kept, r)
+	case hits(k, m.keys.Open):
+		return openList(in, r), true
+	case hits(k, m.keys.About):
+		return aboutInput(in, r, m), true
+	default:
+		return r, false
+	}
+	return r, true
+}
+
+// whole takes a key that concerns the rows as a whole.
+func (r *rows) whole(k tea.KeyMsg, l scenario.RowList, m *model) {
+	switch {
+	case hits(k, m.keys.AddRow):
+		r.wrong = r.edit(m, scenario.RowList.Add)
+		if r.wrong == nil {
+			r.row, r.slot = l.Len()+1, 1
+		}
+	case hits(k, m.keys.DropRow) && r.row > 0:
+		r.wrong = r.edit(m, func(l scenario.RowList) error { return l.Drop(r.row - 1) })
+	case hits(k, m.keys.Undo):
+		m.undo()
+	case hits(k, m.keys.Redo):
+		m.redo()
+	}
+}
+
+// edit changes the rows of the next scenario.
+func (r *rows) edit(m *model, f func(scenario.RowList) error) error {
+	return m.edit(scenario.Path(r.list), func(s *scenario.Scenario) error {
+		for _, l := range scenario.Lists(s) {
+			if l.Key() == r.list {
+				return f(l)
+			}
+		}
+		return nil
+	})
+}
+
+func (r *rows) keys(k keyMap) []key.Binding {
+	if r.entry != nil {
+		return r.entry.keys(k)
+	}
+	return []key.Binding{k.Left, k.Right, k.Up, k.Down, k.NextField, k.FieldBefore, k.AddRow, k.DropRow, k.Type, k.Open,
+		k.BigUp, k.BigDown, k.First, k.Last, k.About, k.Undo, k.Redo, k.Leave}
+}

@@ -1,0 +1,171 @@
+package screen
+
+import (
+	"fmt"
+	"math"
+	"slices"
+	"strings"
+
+	"github.com/charmbracelet/x/ansi"
+
+	"dropcrest/ui/answer"
+	"dropcrest/ui/scenario"
+)
+
+// How the rows of a list are drawn.
+
+// lines are the line above, the rows with what belongs to them, and the sums; an
+// error or what an entry takes stands below.
+func (r *rows) lines(w, h int, m *model) []string {
+	l, grid := r.grid(m)
+	if l == nil || h < 1 {
+		return nil
+	}
+	r.settle(grid)
+	form := formOf(l)
+	head := " " + r.fill(form.head, 0, grid[0], m)
+	var foot []string
+	switch {
+	case r.entry != nil:
+		foot = r.entry.hint(w, m)
+	case r.wrong != nil:
+		foot = m.refused(r.wrong, w)
+	}
+	body, at := r.body(l, grid, form, w, m)
+	room := max(h-1-len(foot), 1)
+	r.scroll.reveal(at, room)
+	first, end := r.scroll.part(len(body), room)
+	return fit(slices.Concat([]string{head}, body[first:end], foot), w, h)
+}
+
+// body is every row and, of several, the sums, and the line that the choice is on.
+func (r *rows) body(l scenario.RowList, grid [][]scenario.Input, form rowForm, w int, m *model) (body []string, at int) {
+	var each []float64
+	mixed := math.NaN()
+	if form.shares {
+		each, mixed = answer.Hygroscopicity(m.env, m.scenario)
+	}
+	for i, row := range grid[1:] {
+		i++
+		if i == r.row {
+			at = len(body)
+		}
+		line := fmt.Sprintf("  %2d  %s", i, r.fill(form.row, i, row, m))
+		if i <= len(each) && !math.IsNaN(each[i-1]) {
+			line = beside(line, fmt.Sprintf("kappa %.3f", each[i-1]), w)
+		}
+		body = append(body, line)
+		n := min(len(form.first), len(row))
+		if more := r.more(i, n, row, w, m); len(more) > 0 {
+			if i == r.row && r.slot >= n {
+				at = len(body) + lineOf(more, "<")
+			}
+			body = append(body, more...)
+		}
+	}
+	if form.shares && l.Len() > 1 {
+		body = append(body, m.dim("      "+m.text(sums(l, mixed))))
+	}
+	return body, at
+}
+
+// lineOf is the first line that holds a text.
+func lineOf(lines []string, text string) int {
+	return max(slices.IndexFunc(lines, func(l string) bool { return strings.Contains(l, text) }), 0)
+}
+
+// fill puts the slots of a row into its sentence.
+func (r *rows) fill(sentence string, row int, inputs []scenario.Input, m *model) string {
+	return answer.Fill(sentence, func(key string) string {
+		for i, in := range inputs {
+			if in.Key() == key {
+				return r.slotText(row, i, in, m)
+			}
+		}
+		return ""
+	})
+}
+
+// slotText is a value as a slot, or the text being typed in its place.
+func (r *rows) slotText(row, slot int, in scenario.Input, m *model) string {
+	text := in.Show(m.style())
+	if row != r.row || slot != r.slot {
+		return m.value("[" + text + "]")
+	}
+	if r.entry != nil {
+		text = m.text(r.entry.field.show(shownTyped))
+	}
+	return m.marked("<" + text + ">")
+}
+
+// shownTyped is how much of a text being typed is seen in its slot.
+const shownTyped = 30
+
+// more is what else belongs to a row, its slots from that one on: all of it below the chosen row, below the
+// others only what is not the default, so that nothing is hidden.
+func (r *rows) more(row, from int, inputs []scenario.Input, w int, m *model) []string {
+	var parts []string
+	for i := from; i < len(inputs); i++ {
+		if in := inputs[i]; row == r.row || !in.IsDefault() {
+			parts = append(parts, m.text(in.Says())+" "+r.slotText(row, i, in, m))
+		}
+	}
+	const indent = "        "
+	var out []string
+	line := ""
+	for i, p := range parts {
+		if i < len(parts)-1 {
+			p += ","
+		}
+		switch {
+		case line == "":
+			line = indent + p
+		case ansi.StringWidth(line)+1+ansi.StringWidth(p) > min(w, textWidth):
+			out = append(out, line)
+			line = indent + p
+		default:
+			line += " " + p
+		}
+	}
+	if line != "" {
+		out = append(out, line)
+	}
+	return out
+}
+
+// beside sets a remark at the right of a line if there is room.
+func beside(line, remark string, w int) string {
+	const column = 62
+	at := min(w-ansi.StringWidth(remark)-1, column)
+	if ansi.StringWidth(line)+2 > at {
+		at = ansi.StringWidth(line) + 2
+	}
+	if at+ansi.StringWidth(remark) > w {
+		return line
+	}
+	return padded(line, at) + remark
+}
+
+// sums says what the shares add up to and what the mixture is.
+func sums(l scenario.RowList, mixed float64) string {
+	total := 0.0
+	for i := range l.Len() {
+		for _, in := range l.Row(i) {
+			if in.Key() != "share" {
+				continue
+			}
+			if _, v := in.SI(); v != nil {
+				x, _ := v.(float64)
+				total += x
+			}
+		}
+	}
+	says := fmt.Sprintf("%.4g in all", total)
+	if math.Abs(total-1) > 1e-9 {
+		says += ", scaled to 1"
+	}
+	if !math.IsNaN(mixed) {
+		says += fmt.Sprintf("; mixture kappa %.3f", mixed)
+	}
+	return says
+}
