@@ -1,8 +1,6 @@
 package koehler
 
 import (
-	"math"
-
 	"dropcrest/solutes"
 )
 
@@ -26,6 +24,9 @@ func (p Particle) Crest() (Crest, error) {
 	if kappa, ok := c.closedKappa(); ok {
 		return c.closed(kappa), nil
 	}
+	if s, ok := c.only(); ok {
+		return c.crest(c.extremum(Maximum, s), Only), nil
+	}
 	var room [16]Turn
 	crest, _, err := c.barrier(room[:0])
 	return crest, err
@@ -36,8 +37,8 @@ func (p Particle) Crest() (Crest, error) {
 func (c *curve) barrier(dst []Turn) (Crest, []Turn, error) {
 	turns, ok := c.exact(dst)
 	if !ok {
-		if u, ok := c.only(); ok {
-			crest := c.crest(c.extremum(Maximum, c.state(u)), Only)
+		if s, ok := c.only(); ok {
+			crest := c.crest(c.extremum(Maximum, s), Only)
 			return crest, append(dst, crest.turn()), nil
 		}
 		turns = c.scan(dst)
@@ -111,80 +112,19 @@ func (c *curve) closed(kappa float64) Crest {
 	}
 }
 
-// only is the u of the one crest of a smooth activity, if the curve has one
-// crest and it is found.
-func (c *curve) only() (u float64, ok bool) {
-	if c.hasSeveralMaxima() {
-		return 0, false
+// only is the drop at the one crest of a smooth activity, if the curve has one
+// crest that is to be climbed to and it is found.
+func (c *curve) only() (s State, ok bool) {
+	if _, film := c.sol.(AdsorbedWater); c.hasSeveralMaxima() || film && c.isPlain() {
+		return s, false
 	}
-	return c.climb()
-}
-
-// climbDone is the last step in ln u: secants gain half as many digits again, so
-// what is left after it is below 1e-12 in the size and nothing in s_c.
-const climbDone = 1e-8
-
-// climb finds the one crest of a smooth activity. It starts from the crest of
-// the κ that the solution has there, takes the second derivative of that κ form
-// for the first step and secants from then on.
-func (c *curve) climb() (u float64, ok bool) {
-	a := 4 * c.sigma * c.kelvin.PerPressure
-	if c.stress != nil {
-		sigma, _ := c.stress.SurfaceTension(1e6)
-		a = 4 * sigma * c.kelvin.PerPressure
+	t, ok := c.climb()
+	if !ok {
+		return s, false
 	}
-	kappa := c.equivalentKappa(1000)
-	if !(kappa > 0) || kappa > maxKappa {
-		return 0, false
-	}
-	if there := c.equivalentKappa(crestWater(c.dry, a, kappa)); there > 0 && there <= maxKappa {
-		kappa = there
-	}
-	x := math.Log(crestWater(c.dry, a, kappa))
-	f, slope := c.kappaSlope(x)
-	lo, hi := math.Inf(-1), math.Inf(1)
-	for range 40 {
-		step := -f / slope
-		if math.Abs(step) <= climbDone {
-			return math.Exp(x + step), slope < 0
-		}
-		if f > 0 {
-			lo = x
-		} else {
-			hi = x
-		}
-		next := x + math.Max(-2, math.Min(2, step))
-		if !(slope < 0) { // no maximum near: go uphill
-			next = x + math.Copysign(1, f)
-		}
-		if !(next > lo && next < hi) {
-			next = (lo + hi) / 2
-		}
-		g := c.at(math.Exp(next)).slope
-		slope = (g - f) / (next - x)
-		x, f = next, g
-	}
-	return 0, false
-}
-
-// kappaSlope is d ln S/d ln u and the derivative of it that the κ form with
-// the same slope of ln a_w has.
-func (c *curve) kappaSlope(x float64) (f, slope float64) {
-	t := c.at(math.Exp(x))
-	k := t.lnS - t.lnaw
-	r := 3 * t.wetSlope
-	w := t.slope + k*r/3
-	return t.slope, -w*(1-w) + k*r*r/9 - k*r*(1-r)/3
-}
-
-func (c *curve) equivalentKappa(u float64) float64 {
-	lnaw, _ := c.sol.LnActivity(u)
-	return u * math.Expm1(-lnaw)
-}
-
-func crestWater(dry, kelvin, kappa float64) float64 {
-	t := SolveKappa(dry, kelvin, kappa).GrowthFactor - 1
-	return t * (3 + t*(3+t))
+	var here terms
+	c.thick(t, &here)
+	return here.state(t * (3 + t*(3+t))), true
 }
 
 // Giant reports whether the particle is a giant nucleus: one whose crest lies

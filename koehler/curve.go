@@ -51,15 +51,24 @@ func (c *curve) kelvinLength() float64 { return 4 * c.sigma * c.kelvin.PerPressu
 type terms struct {
 	wet, sigma, lnaw, lnS, slope float64 // slope: d ln S/d ln u
 	wetSlope                     float64 // d ln D/d ln u
+	activitySlope                float64 // d ln a_w/d ln u
+	fall                         float64 // what the growing size alone takes from the slope
 }
 
 func (c *curve) at(u float64) (t terms) {
-	v, dv := 1+u, u
-	if c.swell != nil {
-		v, dv = c.swell.Swell(u)
+	if c.swell == nil {
+		c.sized(&t, u, math.Cbrt(1+u), u/(3*(1+u)))
+		return t
 	}
-	t.wet = c.dry * math.Cbrt(v)
-	t.wetSlope = dv / (3 * v)
+	v, dv := c.swell.Swell(u)
+	c.sized(&t, u, math.Cbrt(v), dv/(3*v))
+	return t
+}
+
+// sized is at for a known growth factor and its logarithmic slope by ln u.
+func (c *curve) sized(t *terms, u, growth, wetSlope float64) {
+	t.wet = c.dry * growth
+	t.wetSlope = wetSlope
 	var dsigma float64
 	t.sigma = c.sigma
 	if c.stress != nil {
@@ -70,26 +79,36 @@ func (c *curve) at(u float64) (t terms) {
 		dsigma = dsigma*factor + t.sigma*slope*t.wetSlope
 		t.sigma *= factor
 	}
-	var dlnaw float64
-	t.lnaw, dlnaw = c.sol.LnActivity(u)
+	t.lnaw, t.activitySlope = c.sol.LnActivity(u)
 	pressure := LaplacePressure(t.sigma, t.wet)
 	lnS, byPressure, byActivity := c.kelvin.LnSaturation(pressure, t.lnaw)
 	t.lnS = lnS
-	t.slope = byActivity*dlnaw + byPressure*(4*dsigma/t.wet-pressure*t.wetSlope)
-	return t
+	t.fall = byPressure * pressure * t.wetSlope
+	t.slope = byActivity*t.activitySlope + byPressure*4*dsigma/t.wet - t.fall
 }
 
 func (c *curve) state(u float64) State {
 	t := c.at(u)
-	return State{
+	return t.state(u)
+}
+
+func (t *terms) state(u float64) State {
+	s := State{
 		WetDiameter:     t.wet,
 		Water:           u,
-		SaturationRatio: math.Exp(t.lnS),
 		Supersaturation: math.Expm1(t.lnS),
 		WaterActivity:   math.Exp(t.lnaw),
-		KelvinFactor:    math.Exp(t.lnS - t.lnaw),
 		SurfaceTension:  t.sigma,
 	}
+	s.SaturationRatio = 1 + s.Supersaturation
+	if t.lnS < -0.5 { // digits would be lost
+		s.SaturationRatio = math.Exp(t.lnS)
+	}
+	s.KelvinFactor = s.SaturationRatio / s.WaterActivity
+	if !(s.WaterActivity > 0) {
+		s.KelvinFactor = math.Exp(t.lnS - t.lnaw)
+	}
+	return s
 }
 
 // LnSaturation makes a curve an equilibrium, for the scan and the roots.

@@ -47,11 +47,12 @@ func (c *curve) equilibria(dst []Equilibrium, turns []Turn, S float64) ([]Equili
 			dst = append(dst, Equilibrium{c.state(u), stable, u < c.sol.LeastWater()})
 		}
 	}
+	held := *c                   // c itself stays off the heap
 	last, rising := Turn{}, true // the end of the segment below, and whether the next one rises
 	isBelow := true              // whether S lies above the curve at that end
 	for i, t := range turns {
 		if i == 0 && t.Kind != BoundaryMaximum && t.Supersaturation > S-1 {
-			add(before(c, lnS, t.Water), true)
+			add(before(&held, lnS, t.Water), true)
 		}
 		now := t.Supersaturation <= S-1
 		if i > 0 && now != isBelow {
@@ -59,22 +60,22 @@ func (c *curve) equilibria(dst []Equilibrium, turns []Turn, S float64) ([]Equili
 			if now {
 				low, high = high, low
 			}
-			add(waterBetween(c, lnS, low, high), rising)
+			add(waterBetween(&held, lnS, low, high), rising)
 		}
 		last, isBelow = t, now
 		rising = t.Kind == Minimum || t.Kind == KinkMinimum
 	}
 	switch {
 	case !rising && !isBelow && lnS > 0:
-		add(beyond(c, lnS, last.Water), false)
+		add(beyond(&held, lnS, last.Water), false)
 	case rising && isBelow: // an endless curve
 		if c.at(turnEnd).lnS < lnS {
 			return dst, c.endless()
 		}
 		if last.Water > 0 {
-			add(waterBetween(c, lnS, last.Water, turnEnd), true)
+			add(waterBetween(&held, lnS, last.Water, turnEnd), true)
 		} else {
-			add(before(c, lnS, turnEnd), true)
+			add(before(&held, lnS, turnEnd), true)
 		}
 	}
 	return dst, nil

@@ -37,7 +37,7 @@ type Hysteresis struct {
 //
 // Phases belong to the water activity of the solution, not to the humidity. So a
 // crystal dissolves where the drop that it would become has the activity of the
-// saturated solution, which over a drop of D is at S = a_w exp(A/D): 1.2 % of
+// saturated solution, which over a drop of D is at S = a_w exp(A/D): 1.1 % of
 // humidity above the flat value for 100 nm of ammonium sulfate. The crystal's own
 // surface, which lowers that again by some percent below 10 nm, is left out. For
 // a mixture, whose first solution is of another composition, the humidity of

@@ -76,9 +76,8 @@ func (c *curve) turns(dst []Turn) []Turn {
 	if turns, ok := c.exact(dst); ok {
 		return turns
 	}
-	if u, ok := c.only(); ok {
-		t := c.at(u)
-		return append(dst, Turn{Maximum, u, t.wet / c.dry, math.Expm1(t.lnS)})
+	if s, ok := c.only(); ok {
+		return append(dst, c.crest(c.extremum(Maximum, s), Only).turn())
 	}
 	return c.scan(dst)
 }
@@ -120,7 +119,8 @@ func (c *curve) scan(dst []Turn) []Turn {
 		in.dryLnS = t.lnS
 	}
 	first := len(dst)
-	dst = in.extrema(dst, c)
+	held := *c // c itself stays off the heap
+	dst = in.extrema(dst, &held)
 	for i := first; i < len(dst); i++ {
 		if c.swell != nil && dst[i].Water > 0 {
 			v, _ := c.swell.Swell(dst[i].Water)
