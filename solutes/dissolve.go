@@ -114,7 +114,11 @@ func (d *dissolving) amounts() (moles, density float64) {
 	for _, p := range d.Parts {
 		s := p.Substance
 		if !s.Insoluble() {
-			moles += p.Volume * s.molality(d.waterDensity) * d.waterDensity
+			mol := p.Volume * s.molality(d.waterDensity) * d.waterDensity
+			moles += mol
+			if s.Hydration.Value > 0 {
+				d.out.CrystalWater += mol * s.Hydration.Value * waterMolarMass / d.waterDensity
+			}
 		}
 		if s.Density.Known() {
 			density += p.Volume * s.Density.Value

@@ -138,7 +138,7 @@ func (d *dissolving) salt(s Substance) (*Salt, error) {
 	}
 	salt, err := NewSalt(SaltInput{
 		Ion: s.Ion, Concentrated: s.Concentrated,
-		MolarMass: s.MolarMass.Value, Density: s.Density.Value,
+		MolarMass: s.MolarMass.Value, Density: s.Density.Value, Hydration: s.Hydration.Value,
 		WaterDensity: d.waterDensity, Temperature: d.Temperature,
 	})
 	if err != nil {

@@ -75,19 +75,22 @@ func NewMixture(parts []MixturePart) (*Mixture, error) {
 func (x *Mixture) LeastWater() float64 { return x.leastU }
 
 // Iteration of LnActivity: the largest number of joint steps before bisection
-// takes over, the largest step in ln u_i, and the residual that ends it: the step
+// takes over, the largest step in ln u_i, where a hydrate is left with its crystal
+// water (then it takes no part), and the residual that ends it: the step
 // just taken squares it, so that ln a_w is exact and its slope good to 1e-8.
 const (
 	jointSteps    = 40
 	longestStep   = 3
+	noWater       = 32 // ln of u per u_i where a part holds none: below rounding
 	jointResidual = 1e-8
 )
 
 // LnActivity returns ln a_w and its derivative by ln u.
 func (x *Mixture) LnActivity(u float64) (lnaw, slope float64) {
 	var j joint
-	x.start(&j.w, math.Log(u))
-	if lnaw, slope, settled := x.settle(&j, u); settled {
+	lnU := math.Log(u)
+	x.start(&j.w, lnU)
+	if lnaw, slope, settled := x.settle(&j, u, lnU); settled {
 		return lnaw, slope
 	}
 	return x.bisect(u)
@@ -95,16 +98,22 @@ func (x *Mixture) LnActivity(u float64) (lnaw, slope float64) {
 
 // joint is the state of the joint steps: of each part ln u_i, ln(-ln a_w) and
 // the derivative of this by that.
-type joint struct{ w, y, q [MaxMixtureParts]float64 }
+type joint struct {
+	w, y, q [MaxMixtureParts]float64
+	empty   [MaxMixtureParts]bool // a hydrate that holds its crystal water only
+}
 
 // settle takes joint steps until all parts have one activity.
-func (x *Mixture) settle(j *joint, u float64) (lnaw, slope float64, settled bool) {
+func (x *Mixture) settle(j *joint, u, lnU float64) (lnaw, slope float64, settled bool) {
 	for range jointSteps {
 		water, gain, pull := 0.0, 0.0, 0.0
 		for i := range x.count {
 			ui := math.Exp(j.w[i])
 			l, s := x.parts[i].Solution.LnActivity(ui)
 			j.y[i], j.q[i] = math.Log(-l), s/l
+			if j.empty[i] {
+				continue
+			}
 			held := x.parts[i].Volume * ui
 			water += held
 			gain += held / j.q[i]
@@ -113,9 +122,14 @@ func (x *Mixture) settle(j *joint, u float64) (lnaw, slope float64, settled bool
 		common := (u - water + pull) / gain
 		worst := math.Abs(u-water) / u
 		for i := range x.count {
+			if j.empty[i] && j.y[i] <= common {
+				continue
+			}
 			step := (common - j.y[i]) / j.q[i]
 			worst = max(worst, math.Abs(step))
 			j.w[i] += min(max(step, -longestStep), longestStep)
+			j.empty[i] = j.w[i] < lnU-noWater
+			j.w[i] = max(j.w[i], lnU-noWater)
 		}
 		if worst <= jointResidual {
 			lnaw = -math.Exp(common)
@@ -142,10 +156,16 @@ func (x *Mixture) bisect(u float64) (lnaw, slope float64) {
 	return lnaw, u / gain
 }
 
+// emptied is the u below which bisection has found no water but a hydrate's own.
+const emptied = 1e-290
+
 // waterAt returns Σ ε_i u_i at an activity and its derivative by ln a_w.
 func (x *Mixture) waterAt(lnaw float64) (water, gain float64) {
 	for i := range x.count {
 		u := inverse(x.parts[i].Solution, lnaw)
+		if u < emptied {
+			continue
+		}
 		_, s := x.parts[i].Solution.LnActivity(u)
 		water += x.parts[i].Volume * u
 		gain += x.parts[i].Volume * u / s

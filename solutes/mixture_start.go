@@ -26,10 +26,13 @@ func (x *Mixture) startTable() []mixtureStart {
 		for i := range x.count {
 			j.w[i] = lnU + next.w[i] - next.rise[i]
 		}
-		if lnaw, slope, settled := x.settle(&j, math.Exp(lnU)); settled {
+		if lnaw, slope, settled := x.settle(&j, math.Exp(lnU), lnU); settled {
 			for i := range x.count {
 				next.w[i] = j.w[i] - lnU
 				next.rise[i] = (slope/lnaw/j.q[i] - 1) * startStep
+				if j.empty[i] {
+					next.rise[i] = 0
+				}
 			}
 		} else {
 			clear(next.rise[:])

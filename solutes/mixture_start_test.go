@@ -25,7 +25,7 @@ func TestStartDoesNotMatter(t *testing.T) {
 			for i := range x.count {
 				j.w[i] = x.guess[i] + math.Log(u)
 			}
-			want, wantSlope, settled := x.settle(&j, u)
+			want, wantSlope, settled := x.settle(&j, u, math.Log(u))
 			tol := 1e-13
 			if !settled { // that guess is too far off there
 				want, wantSlope = x.bisect(u)
@@ -49,7 +49,7 @@ func TestStartIsNear(t *testing.T) {
 		var j joint
 		x.start(&j.w, math.Log(u))
 		begun := j.w
-		x.settle(&j, u)
+		x.settle(&j, u, math.Log(u))
 		for k := range x.count {
 			if d := math.Abs(j.w[k] - begun[k]); d > 0.02 {
 				t.Errorf("u %v: the water of part %d starts %v off", u, k, d)

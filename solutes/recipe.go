@@ -98,6 +98,7 @@ type Dissolved struct {
 	Tension        Tension
 	Kappa          float64  // volume-mixed κ of the parts or the given one; NaN: not known
 	MolesPerVolume float64  // mol of solute formula units per m³ of dry particle; NaN: not known
+	CrystalWater   float64  // volume of crystal water per dry volume, which counts as water of the solution
 	WaterDensity   float64  // kg/m³
 	DryDensity     float64  // kg/m³; NaN: not known
 	Models         []string // the model in use, part by part, in words
@@ -114,6 +115,8 @@ type Limit struct {
 	Kept       bool    // the solution follows it; otherwise all is taken as dissolved
 }
 
-// Molality returns mol of solute per kg of water at u, all of it taken as
-// dissolved; NaN if not known.
-func (d Dissolved) Molality(u float64) float64 { return d.MolesPerVolume / (u * d.WaterDensity) }
+// Molality returns mol of solute per kg of water at u, crystal water included and
+// all taken as dissolved; NaN if not known.
+func (d Dissolved) Molality(u float64) float64 {
+	return d.MolesPerVolume / ((u + d.CrystalWater) * d.WaterDensity)
+}

@@ -44,6 +44,7 @@ func RecordFields() []RecordField {
 		{"molar_mass", "molar mass", "kg/mol", 1e-3, 10, func(s *Substance) *Datum { return &s.MolarMass }},
 		{"density", "dry density", "kg/m³", 100, 25000, func(s *Substance) *Datum { return &s.Density }},
 		{"ions", "number of ions of a formula unit, 0: insoluble", "", 0, 20, func(s *Substance) *Datum { return &s.Ions }},
+		{"hydration", "mol of crystal water a formula unit", "", 0, 20, func(s *Substance) *Datum { return &s.Hydration }},
 		{"kappa", "κ at activation", "", 0, 10, func(s *Substance) *Datum { return &s.Kappa }},
 		{"kappa_growth", "κ from growth factors", "", 0, 10, func(s *Substance) *Datum { return &s.KappaGrowth }},
 		{"solubility", "solubility at 25 °C", "kg per kg of water", 0, 100, func(s *Substance) *Datum { return &s.Solubility }},

@@ -95,12 +95,12 @@ func (s *Substance) physical(in *recordReader) {
 	}
 	const rhoWater = 997.05
 	salt, err := NewSalt(SaltInput{Ion: s.Ion, Concentrated: s.Concentrated, MolarMass: s.MolarMass.Value,
-		Density: s.Density.Value, WaterDensity: rhoWater, Temperature: referenceTemperature})
+		Density: s.Density.Value, Hydration: s.Hydration.Value, WaterDensity: rhoWater, Temperature: referenceTemperature})
 	if err != nil {
 		in.fail("ion", "not usable", err.Error())
 		return
 	}
-	for m := 1e-6; m < 2*salt.MaxMolality(); m *= 1.02 {
+	for m := 1e-6; m < 2*salt.MaxMolality() && salt.Water(m) > 0; m *= 1.02 {
 		lnaw, slope := salt.LnActivity(salt.Water(m))
 		if !(lnaw < 0 && slope > 0) || math.IsInf(lnaw, 0) {
 			field := "ion"

@@ -54,6 +54,8 @@ func (r referenceRow) number(column string) (float64, bool) {
 
 // differs lists where the catalogue does not follow the table, and why.
 var differs = map[string]string{
+	"calcium_chloride kappa_ccn_mean":     "measured on particles that held water: the dihydrate has it",
+	"calcium_nitrate kappa_ccn_mean":      "measured on particles that held water: the tetrahydrate has it",
 	"sulfuric_acid kappa_ccn_mean":        "0.90 is wrong at activation: the model's value is shipped",
 	"sodium_nitrate ERH_pct":              "not sharp: kept as a remark",
 	"sodium_methanesulfonate DRH_25C_pct": "low confidence: kept as a remark",
@@ -63,8 +65,14 @@ var differs = map[string]string{
 
 func TestCatalogueFollowsItsReference(t *testing.T) {
 	rows := referenceRows(t)
-	if len(rows) != len(Standard().All()) {
-		t.Errorf("%d substances in the reference, %d in the catalogue", len(rows), len(Standard().All()))
+	hydrates := 0 // are not in the table
+	for _, s := range Standard().All() {
+		if s.Hydration.Known() {
+			hydrates++
+		}
+	}
+	if len(rows)+hydrates != len(Standard().All()) {
+		t.Errorf("%d substances in the reference, %d in the catalogue and %d hydrates", len(rows), len(Standard().All()), hydrates)
 	}
 	compared := 0
 	for _, row := range rows {

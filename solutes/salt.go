@@ -17,6 +17,7 @@ type SaltInput struct {
 	Concentrated *Concentrated // nil or without a join: not used
 	MolarMass    float64       // kg/mol
 	Density      float64       // kg/m³, dry
+	Hydration    float64       // mol of crystal water a formula unit; 0: anhydrous
 	WaterDensity float64       // kg/m³
 	Temperature  float64       // K
 	DebyeHueckel float64       // A_φ, (kg/mol)^½
@@ -29,6 +30,8 @@ type SaltInput struct {
 //	ln a_w = -ν M_w m φ(m),  m = c/u
 //	φ = (1-s) φ_dilute + s φ_concentrated,  s = t² (3 - 2t),  t = (m - m1)/(m2 - m1)
 //
+// A hydrate brings crystal water, h volumes per volume of dry particle: m = c/(u+h).
+//
 // Below m1 the concentrated data are not evaluated. Above the end of the range
 // the tangent of m φ against m is held, so that the activity stays finite, smooth
 // and increasing in u; LeastWater tells where that begins. A Salt is immutable;
@@ -37,7 +40,8 @@ type SaltInput struct {
 // Sources: Pitzer & Mayorga, J. Phys. Chem. 77, 2300, 1973; those of Concentrated
 // and ExtendedFit.
 type Salt struct {
-	perWater float64 // molality times u, mol/kg
+	perWater float64 // molality times u + crystal, mol/kg
+	crystal  float64 // volume of crystal water per volume of dry particle
 	nuMw     float64
 	dilute   pitzer
 
@@ -54,6 +58,9 @@ type Salt struct {
 func NewSalt(in SaltInput) (*Salt, error) {
 	if in.Ion == nil {
 		return nil, errors.New("no ion-interaction parameters")
+	}
+	if !(in.Hydration >= 0) || math.IsInf(in.Hydration, 1) {
+		return nil, fmt.Errorf("crystal water of a salt is %g mol: it must be 0 or more and finite", in.Hydration)
 	}
 	if in.DebyeHueckel == 0 {
 		in.DebyeHueckel = DebyeHueckel(in.Temperature)
@@ -79,6 +86,7 @@ func NewSalt(in SaltInput) (*Salt, error) {
 		low:      math.Inf(1), high: math.Inf(1),
 		end: in.Ion.MaxMolality,
 	}
+	s.crystal = s.perWater * in.Hydration * waterMolarMass
 	s.join(in)
 	phi, slope := s.inRange(s.end)
 	s.endValue, s.endSlope = s.end*phi, phi+slope
@@ -102,17 +110,19 @@ func (s *Salt) join(in SaltInput) {
 
 // LnActivity returns ln a_w and its derivative by ln u.
 func (s *Salt) LnActivity(u float64) (lnaw, slope float64) {
-	m := s.perWater / u
+	water := u + s.crystal
+	m := s.perWater / water
 	if m > s.end {
 		lnaw = -s.nuMw * (s.endValue + s.endSlope*(m-s.end))
-		return lnaw, s.nuMw * s.endSlope * m
+		return lnaw, s.nuMw * s.endSlope * m * (u / water)
 	}
 	phi, dphi := s.inRange(m)
-	return -s.nuMw * m * phi, s.nuMw * m * (phi + dphi)
+	return -s.nuMw * m * phi, s.nuMw * m * (phi + dphi) * (u / water)
 }
 
-// LeastWater returns u at the highest molality of the published range.
-func (s *Salt) LeastWater() float64 { return s.perWater / s.end }
+// LeastWater returns u at the highest molality of the published range; 0 where the
+// crystal water alone keeps the solution inside.
+func (s *Salt) LeastWater() float64 { return max(0, s.Water(s.end)) }
 
 // OfShare returns the solution of a particle of which only that share of the dry
 // volume, above 0 and at most 1, is this salt as it stands; the rest is insoluble
@@ -120,14 +130,16 @@ func (s *Salt) LeastWater() float64 { return s.perWater / s.end }
 func (s *Salt) OfShare(share float64) *Salt {
 	part := *s
 	part.perWater *= share
+	part.crystal *= share
 	return &part
 }
 
 // Molality returns mol of salt per kg of water at u.
-func (s *Salt) Molality(u float64) float64 { return s.perWater / u }
+func (s *Salt) Molality(u float64) float64 { return s.perWater / (u + s.crystal) }
 
-// Water returns u at the molality m (mol/kg).
-func (s *Salt) Water(m float64) float64 { return s.perWater / m }
+// Water returns u at the molality m (mol/kg), below 0 where that is more
+// concentrated than the melted hydrate.
+func (s *Salt) Water(m float64) float64 { return s.perWater/m - s.crystal }
 
 // MaxMolality returns the end of the published range in mol/kg.
 func (s *Salt) MaxMolality() float64 { return s.end }

@@ -32,17 +32,18 @@ type Substance struct {
 	Formula string   `json:"formula"` // "(NH4)2SO4", "" for mixtures
 	Aliases []string `json:"aliases,omitempty"`
 
-	MolarMass        Datum `json:"molar_mass"`        // kg/mol
-	Density          Datum `json:"density"`           // kg/m³, dry
-	Ions             Datum `json:"ions"`              // formal number of ions ν; 0: insoluble
-	Kappa            Datum `json:"kappa"`             // at activation
-	KappaGrowth      Datum `json:"kappa_growth"`      // from growth factors below saturation
-	Solubility       Datum `json:"solubility"`        // kg per kg of water, 25 °C
-	VolumeSolubility Datum `json:"volume_solubility"` // C, m³ of solute per m³ of water
-	Deliquescence    Datum `json:"deliquescence"`     // relative humidity 0..1, 25 °C; 0: liquid at every humidity
-	Efflorescence    Datum `json:"efflorescence"`     // relative humidity 0..1; 0: none seen
-	TensionIncrement Datum `json:"tension_increment"` // N/m per mol/kg
-	ShapeFactor      Datum `json:"shape_factor"`      // dynamic shape factor of the dry particle
+	MolarMass        Datum `json:"molar_mass"`         // kg/mol
+	Density          Datum `json:"density"`            // kg/m³, dry
+	Ions             Datum `json:"ions"`               // formal number of ions ν; 0: insoluble
+	Hydration        Datum `json:"hydration,omitzero"` // mol of crystal water a formula unit; counts as water of the solution
+	Kappa            Datum `json:"kappa"`              // at activation
+	KappaGrowth      Datum `json:"kappa_growth"`       // from growth factors below saturation
+	Solubility       Datum `json:"solubility"`         // kg per kg of water, 25 °C
+	VolumeSolubility Datum `json:"volume_solubility"`  // C, m³ of solute per m³ of water
+	Deliquescence    Datum `json:"deliquescence"`      // relative humidity 0..1, 25 °C; 0: liquid at every humidity
+	Efflorescence    Datum `json:"efflorescence"`      // relative humidity 0..1; 0: none seen
+	TensionIncrement Datum `json:"tension_increment"`  // N/m per mol/kg
+	ShapeFactor      Datum `json:"shape_factor"`       // dynamic shape factor of the dry particle
 
 	DeliquescenceLaw *DeliquescenceLaw `json:"deliquescence_law,omitempty"` // deliquescence with temperature
 	Adsorption       *Adsorption       `json:"adsorption,omitempty"`        // FHH parameters of insoluble particles
