@@ -59,8 +59,8 @@ func TestAdsorptionAgainstComputed(t *testing.T) {
 			if err != nil || bare.Kind != BoundaryMaximum || apart(bare.Supersaturation, c.Output.Pure) > 1e-15 {
 				t.Errorf("adsorbing nothing: %+v %v, want %v", bare, err, c.Output.Pure)
 			}
-			// The same film as the solution of a particle, by its general solver.
-			particle := Particle{DryDiameter: c.Input.Dd, Temperature: c.Input.T, Solution: p.On(c.Input.Dd)}
+			// The same film as the solution of a particle, by the solver for any particle.
+			particle := Particle{DryDiameter: c.Input.Dd, Temperature: c.Input.T, Solution: p.On(c.Input.Dd), Swelling: additive{}}
 			crest, err := particle.Crest()
 			if err != nil || apart(crest.Supersaturation, c.Output.Small) > 1e-10 || apart(crest.WetDiameter, c.Output.Dc) > 1e-9 {
 				t.Errorf("as a particle: %+v %v, want %+v", crest, err, c.Output)

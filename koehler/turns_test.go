@@ -4,6 +4,7 @@ import (
 	"errors"
 	"math"
 	"math/rand/v2"
+	"slices"
 	"testing"
 
 	"dropcrest/atmos"
@@ -66,9 +67,13 @@ func TestTurnsOfSurfaceActive(t *testing.T) {
 		s = mustSurface(t, dry, T, s.p, s.salt)
 		p := Particle{DryDiameter: dry, Temperature: T, Solution: s, Tension: s}
 		want := s.Extrema(nil)
-		got, err := p.Turns(nil)
-		if err != nil || len(got) != len(want) {
-			t.Fatalf("%+v: particle %+v %v, by itself %+v", s.p, got, err, want)
+		c := p.ready()
+		got := c.scan(nil)
+		if len(got) != len(want) {
+			t.Fatalf("%+v: scan of the particle %+v, by itself %+v", s.p, got, want)
+		}
+		if turns, err := p.Turns(nil); err != nil || !slices.Equal(turns, want) {
+			t.Errorf("%+v: turns of the particle %+v %v, by itself %+v", s.p, turns, err, want)
 		}
 		for i, w := range want {
 			if w.Kind == KinkMinimum {
@@ -92,10 +97,15 @@ func TestTurnsOfOtherParticles(t *testing.T) {
 		if err != nil {
 			t.Fatal(err)
 		}
-		got, err := Particle{DryDiameter: dry, Temperature: T, Solution: f.p.On(dry)}.Turns(nil)
-		if err != nil || len(got) != len(want) {
-			t.Errorf("%s: particle %+v %v, by itself %+v", f.name, got, err, want)
+		p := Particle{DryDiameter: dry, Temperature: T, Solution: f.p.On(dry)}
+		c := p.ready()
+		got := c.scan(nil)
+		if len(got) != len(want) {
+			t.Errorf("%s: scan of the particle %+v, by itself %+v", f.name, got, want)
 			continue
+		}
+		if turns, err := p.Turns(nil); err != nil || len(turns) != len(want) || math.Abs(turns[0].Supersaturation-want[0].Supersaturation) > 1e-15 {
+			t.Errorf("%s: turns of the particle %+v %v, by itself %+v", f.name, turns, err, want)
 		}
 		for i := range want {
 			if got[i].Kind != want[i].Kind || math.Abs(got[i].Supersaturation-want[i].Supersaturation) > 1e-13 {
@@ -109,5 +119,59 @@ func TestTurnsOfOtherParticles(t *testing.T) {
 	}
 	if _, err := (Particle{DryDiameter: -1, Temperature: T, Solution: solutes.Kappa(0.61)}).Turns(nil); !errors.Is(err, ErrInput) {
 		t.Errorf("negative size: %v, want ErrInput", err)
+	}
+}
+
+// Every computed case as the particle that a user asks about, and not by the
+// solver of its model: made from the tension and the temperature, with our R.
+func TestParticlesAgainstComputed(t *testing.T) {
+	const tol = 3e-10 // that R has ten digits
+	check := func(id string, p Particle, err error, s, wet float64, maxima int) {
+		t.Helper()
+		if err != nil {
+			t.Errorf("%s: %v", id, err)
+			return
+		}
+		got := p.Solve(0.95)
+		if got.NoCrest != nil || apart(got.Crest.Supersaturation, s) > tol || apart(got.Crest.WetDiameter, wet) > tol {
+			t.Errorf("%s: crest %+v %v, want s %v at %v m", id, got.Crest, got.NoCrest, s, wet)
+		}
+		n := 0
+		for _, e := range got.Extrema {
+			if e.Kind == Maximum || e.Kind == BoundaryMaximum {
+				n++
+			}
+		}
+		if n != maxima || (got.Crest.Place == Only) != (n == 1) {
+			t.Errorf("%s: %d maxima, want %d; the barrier is the %s one", id, n, maxima, got.Crest.Place)
+		}
+	}
+	tension := func(T, factor float64) solutes.Tension {
+		return solutes.ConstantTension(factor * atmos.SurfaceTension(T))
+	}
+	for _, c := range computedCases[limitedCase](t, "limited_solubility.json") {
+		p := Particle{DryDiameter: c.Input.Dd, Temperature: c.Input.T, Solution: c.mix(t), Tension: tension(c.Input.T, c.Input.SigmaFactor)}
+		check(c.ID, p, nil, c.Output.Barrier.Small, c.Output.Barrier.D, c.Output.NMaxima)
+		if crest, err := p.Crest(); err != nil || crest.Place.String() != c.Output.BarrierIs {
+			t.Errorf("%s: the barrier is the %s maximum (%v), want %s", c.ID, crest.Place, err, c.Output.BarrierIs)
+		}
+	}
+	for _, c := range computedCases[adsorptionCase](t, "adsorption.json") {
+		p, err := c.film().Particle(c.Input.Dd, c.Input.T)
+		p.Tension = tension(c.Input.T, c.Input.SigmaFactor)
+		check(c.ID, p, err, c.Output.Small, c.Output.Dc, c.Output.N)
+	}
+	for _, c := range computedCases[surfaceCase](t, "surface_active.json") {
+		for _, mode := range []struct {
+			partitioning bool
+			want         surfaceCrest
+		}{{false, c.Output.None}, {true, c.Output.Full}} {
+			if c.Input.D > 0 { // a state, no crest
+				continue
+			}
+			s := c.particle(t, mode.partitioning)
+			p, err := s.p.Particle(c.Input.Dd, c.Input.T, s.salt)
+			check(c.ID, p, err, mode.want.Small, mode.want.Dc, mode.want.N)
+		}
 	}
 }
