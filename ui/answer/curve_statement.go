@@ -4,7 +4,7 @@ import "dropcrest/ui/scenario"
 
 // curveStatement is the question in prose. Kelvin form and density rule stand in
 // it only when they are not the usual ones, so that the sentence stays short and
-// still hides nothing.
+// still hides nothing; all else lies behind its last slot.
 func curveStatement(s scenario.Scenario) []string {
 	size := "A dry particle of {dry-diameter} {dry-size-is} made of {component},"
 	if s.DrySizeIs == "mobility" {
@@ -33,5 +33,5 @@ func curveStatement(s scenario.Scenario) []string {
 	case !additive:
 		lines = append(lines, "solution density {solution-density},")
 	}
-	return append(lines, "in air of {temperature}, seen at {relative-humidity} humidity.")
+	return append(lines, "in air of {temperature}, seen at {relative-humidity} humidity, all else {further}.")
 }

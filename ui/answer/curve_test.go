@@ -209,6 +209,9 @@ func TestStatementSlots(t *testing.T) {
 						return ""
 					}
 				}
+				if scenario.Path(slot) == Further {
+					return ""
+				}
 				in, ok := scenario.Find(&s, scenario.Path(slot))
 				switch {
 				case !ok:
@@ -218,6 +221,32 @@ func TestStatementSlots(t *testing.T) {
 				}
 				return ""
 			})
+		}
+	}
+}
+
+// What has no slot of its own lies behind the last one.
+func TestFurtherInputs(t *testing.T) {
+	for name, c := range map[string]struct {
+		values []string
+		keys   string
+		words  string
+	}{
+		"default":  {nil, "solution-density kelvin points from-radius to-radius", "as usual"},
+		"kappa":    {[]string{"water-activity=kappa"}, "kelvin points from-radius to-radius", "as usual"},
+		"one word": {[]string{"kelvin=compressible"}, "solution-density points from-radius to-radius", "as usual"},
+		"points":   {[]string{"points=50"}, "solution-density kelvin points from-radius to-radius", "as set"},
+	} {
+		s := scene(t, c.values...)
+		var keys []string
+		for _, in := range FurtherInputs(curveQuestion(), &s) {
+			keys = append(keys, in.Key())
+		}
+		if got := strings.Join(keys, " "); got != c.keys {
+			t.Errorf("%s: %q lie behind the slot, want %q", name, got, c.keys)
+		}
+		if got := FurtherWords(curveQuestion(), s); got != c.words {
+			t.Errorf("%s: the slot says %q, want %q", name, got, c.words)
 		}
 	}
 }

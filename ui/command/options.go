@@ -171,6 +171,9 @@ func (o *options) scenario(w world) (scenario.Scenario, []atmos.Note, error) {
 		}
 		fresh[g.key] = true
 	}
+	if s.WaterActivity == "kappa" && fresh["kappa"] && s.Kappa.Word == "" && !fresh["component"] && o.fromFile == "" {
+		s.Components = nil // kappa alone says what the particle is made of
+	}
 	if wrong := scenario.Check(&s); len(wrong) > 0 {
 		return s, nil, misused("--%s: %v", wrong[0].Path, wrong[0])
 	}
@@ -179,7 +182,7 @@ func (o *options) scenario(w world) (scenario.Scenario, []atmos.Note, error) {
 
 func apply(s *scenario.Scenario, g setting, first bool) error {
 	if in, ok := scenario.Find(s, scenario.Path(g.key)); ok {
-		return in.Set(g.text)
+		return in.SetWithUnit(g.text)
 	}
 	return scenario.SetRow(s, g.key, g.text, first)
 }

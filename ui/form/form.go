@@ -106,6 +106,9 @@ func (s Sheet) statement() string {
 		if in, ok := scenario.Find(&s.Scenario, scenario.Path(slot)); ok {
 			return in.Show(st)
 		}
+		if scenario.Path(slot) == answer.Further {
+			return answer.FurtherWords(s.Question, s.Scenario)
+		}
 		return slot
 	}
 	lines := s.Question.Statement(s.Scenario)

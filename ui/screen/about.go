@@ -3,6 +3,7 @@ package screen
 import (
 	"strings"
 
+	"dropcrest/ui/answer"
 	"dropcrest/ui/scenario"
 )
 
@@ -14,6 +15,14 @@ func newAbout(m *model) panel {
 	}
 	if l, ok := m.list(); ok {
 		return aboutReader(l.Says(), []string{l.Help(), "", "Now: " + l.Show(m.style()) + "."}, nil, m)
+	}
+	if m.cursor == answer.Further {
+		text := []string{"What the sentence does not name: choices that are at their usual value, and what only concerns table and picture. " +
+			"A choice that is not the usual one gets a slot of its own.", ""}
+		for _, in := range answer.FurtherInputs(m.question, &m.scenario) {
+			text = append(text, in.Says()+": "+in.Show(m.style()))
+		}
+		return aboutReader("all else", text, nil, m)
 	}
 	text := []string{m.question.Says}
 	for _, part := range [][]string{m.answer.Finding, m.answer.Why} {

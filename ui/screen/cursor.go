@@ -47,4 +47,7 @@ func (m *model) jump(p scenario.Path) {
 			return
 		}
 	}
+	if slices.Contains(m.slots(), answer.Further) {
+		m.cursor = answer.Further
+	}
 }

@@ -4,14 +4,14 @@ import "strings"
 
 // newHelp is the list of keys, made from the bindings themselves.
 func newHelp(m *model) panel {
-	text := keyTable(helpItems(m.keys.page()))
+	text := keyLines(m.keys.page())
 	for _, p := range []struct {
 		title string
 		panel panel
 	}{
 		{"while typing", &entry{}},
 		{"in a list of words", &list{}},
-		{"in rows", &rows{}},
+		{"in rows", &rows{list: "component"}},
 		{"in a text", &reader{}},
 		{"in a table", &table{}},
 	} {

@@ -20,3 +20,9 @@ type panel interface {
 	// keys are those of the bindings that act in it, for the help line.
 	keys(k keyMap) []key.Binding
 }
+
+// sharingPanel is a panel in which the answer changes; the picture stays in sight.
+type sharingPanel interface {
+	panel
+	sharesPicture()
+}

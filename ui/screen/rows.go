@@ -7,15 +7,17 @@ import (
 	"github.com/charmbracelet/bubbles/key"
 	tea "github.com/charmbracelet/bubbletea"
 
+	"dropcrest/ui/answer"
 	"dropcrest/ui/scenario"
 )
 
 // rows is a list of rows, such as the components of a particle, edited with the
 // keys of the page: each value is a slot, the chosen one in <>.
 type rows struct {
-	list   string // key of the list
-	row    int    // the chosen row; 0 is the line above the rows
-	slot   int    // the chosen slot in it
+	list   string          // key of the list; "" when these are settings
+	given  []scenario.Path // the settings, one a row
+	row    int             // the chosen row; 0 is the line above the rows
+	slot   int             // the chosen slot in it
 	scroll scroll
 	entry  *entry // a value being typed in its slot
 	wrong  error  // why the last key was refused
@@ -31,6 +33,21 @@ func newRows(l scenario.RowList) panel {
 	return r
 }
 
+// newSettings opens the inputs that have no slot in the statement, one a row. They
+// stay while the panel is open, though one that is changed gets a slot there.
+func newSettings(m *model) panel {
+	r := &rows{row: 1}
+	for _, in := range answer.FurtherInputs(m.question, &m.scenario) {
+		r.given = append(r.given, in.Path())
+	}
+	return r
+}
+
+func (r *rows) sharesPicture() {}
+
+// settings reports whether the rows are settings and no list.
+func (r *rows) settings() bool { return r.list == "" }
+
 // rowForm is how a list of rows reads. Slots that its row does not name stand
 // below the chosen row.
 type rowForm struct {
@@ -44,6 +61,9 @@ type rowForm struct {
 // formOf is the form of a list. One that has no sentence of its own names its
 // first inputs.
 func formOf(l scenario.RowList) rowForm {
+	if l == nil {
+		return rowForm{head: "All else in this question:"}
+	}
 	if l.Key() != "component" {
 		f := rowForm{head: "Rows of " + l.Says() + ":"}
 		if l.Len() > 0 {
@@ -64,6 +84,9 @@ func formOf(l scenario.RowList) rowForm {
 // grid is every slot of the panel in the order of the keys: the line above, then
 // the rows.
 func (r *rows) grid(m *model) (scenario.RowList, [][]scenario.Input) {
+	if r.settings() {
+		return nil, r.settingsGrid(m)
+	}
 	l, ok := m.listOf(r.list)
 	if !ok {
 		return nil, nil
@@ -80,6 +103,16 @@ func (r *rows) grid(m *model) (scenario.RowList, [][]scenario.Input) {
 		grid = append(grid, ordered(l.Row(i), f.first))
 	}
 	return l, grid
+}
+
+func (r *rows) settingsGrid(m *model) [][]scenario.Input {
+	grid := [][]scenario.Input{nil}
+	for _, p := range r.given {
+		if in, ok := scenario.Find(&m.scenario, p); ok {
+			grid = append(grid, []scenario.Input{in})
+		}
+	}
+	return grid
 }
 
 // ordered puts the inputs of those keys first.
@@ -115,7 +148,7 @@ func (r *rows) chosen(grid [][]scenario.Input) (scenario.Input, bool) {
 // press takes a key: the entry's, then those that choose, then those that change.
 func (r *rows) press(k tea.KeyMsg, m *model) (panel, tea.Cmd) {
 	l, grid := r.grid(m)
-	if l == nil {
+	if grid == nil {
 		return nil, nil
 	}
 	r.settle(grid)
@@ -206,6 +239,7 @@ func (r *rows) change(k tea.KeyMsg, in scenario.Input, m *model) (panel, bool) {
 // whole takes a key that concerns the rows as a whole.
 func (r *rows) whole(k tea.KeyMsg, l scenario.RowList, m *model) {
 	switch {
+	case r.settings() && (hits(k, m.keys.AddRow) || hits(k, m.keys.DropRow)):
 	case hits(k, m.keys.AddRow):
 		r.wrong = r.edit(m, scenario.RowList.Add)
 		if r.wrong == nil {
@@ -235,6 +269,10 @@ func (r *rows) edit(m *model, f func(scenario.RowList) error) error {
 func (r *rows) keys(k keyMap) []key.Binding {
 	if r.entry != nil {
 		return r.entry.keys(k)
+	}
+	if r.settings() {
+		return []key.Binding{k.NextField, k.FieldBefore, k.Left, k.Right, k.Up, k.Down, k.Type, k.Open,
+			k.BigUp, k.BigDown, k.About, k.Undo, k.Redo, k.Leave}
 	}
 	return []key.Binding{k.Left, k.Right, k.Up, k.Down, k.NextField, k.FieldBefore, k.AddRow, k.DropRow, k.Type, k.Open,
 		k.BigUp, k.BigDown, k.First, k.Last, k.About, k.Undo, k.Redo, k.Leave}

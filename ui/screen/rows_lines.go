@@ -18,7 +18,7 @@ import (
 // error or what an entry takes stands below.
 func (r *rows) lines(w, h int, m *model) []string {
 	l, grid := r.grid(m)
-	if l == nil || h < 1 {
+	if grid == nil || h < 1 {
 		return nil
 	}
 	r.settle(grid)
@@ -49,6 +49,11 @@ func (r *rows) body(l scenario.RowList, grid [][]scenario.Input, form rowForm, w
 		i++
 		if i == r.row {
 			at = len(body)
+		}
+		if r.settings() {
+			const names = 24
+			body = append(body, "   "+padded(m.text(row[0].Says()), names)+r.slotText(i, 0, row[0], m))
+			continue
 		}
 		line := fmt.Sprintf("  %2d  %s", i, r.fill(form.row, i, row, m))
 		if i <= len(each) && !math.IsNaN(each[i-1]) {

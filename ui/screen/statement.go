@@ -55,6 +55,9 @@ func (m *model) slotValue(p scenario.Path) string {
 	if l, ok := m.listOf(string(p)); ok {
 		return m.text(l.Show(m.style()))
 	}
+	if p == answer.Further {
+		return answer.FurtherWords(m.question, m.scenario)
+	}
 	return "?"
 }
 
@@ -65,6 +68,9 @@ func (m *model) rangeWords() string {
 	}
 	if l, ok := m.list(); ok {
 		return m.text(l.Says() + ": Enter opens its rows")
+	}
+	if m.cursor == answer.Further {
+		return "all else: Enter opens it"
 	}
 	return m.text("the finding: i says what stands behind it")
 }

@@ -214,6 +214,10 @@ func (m *model) open() {
 		m.panel = newRows(l)
 		return
 	}
+	if m.cursor == answer.Further {
+		m.panel = newSettings(m)
+		return
+	}
 	in, ok := m.input()
 	switch {
 	case !ok:

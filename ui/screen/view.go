@@ -69,25 +69,32 @@ func (m *model) header() string {
 
 // body is all between statement and help line in exactly h lines: picture, finding
 // and held curves, then range and message. A panel lies over them; one of few
-// lines, such as an entry, leaves most of them in sight.
+// lines, such as an entry, leaves most of them in sight, and one in which the
+// answer changes leaves the picture what room there is.
 func (m *model) body(h int) []string {
-	lines := append(m.under(h-1), m.rangeLine())
 	if m.panel == nil {
-		return lines
+		return append(m.under(h-1), m.rangeLine())
 	}
 	free := h // the last line stays for a message
 	if m.message != "" || m.work.shown {
 		free--
 	}
 	over := fit(slices.Clone(m.panel.lines(m.width, free, m)), m.width, free)
-	if len(over) > smallPanel {
-		return append(padTo(over, free), lines[free:]...)
+	above := free - len(over)
+	var lines []string
+	switch _, sharing := m.panel.(sharingPanel); {
+	case len(over) <= smallPanel:
+		lines = append(padTo(m.under(h-1), above), over...)
+	case sharing && above > leastRows+1:
+		lines = append(padTo(slices.Clone(m.picture(m.width, above)), above), over...)
+	default:
+		lines = padTo(over, free)
 	}
-	copy(lines[free-len(over):], over)
-	return lines
+	return append(lines, m.rangeLine())[:h]
 }
 
-// smallPanel is the number of lines up to which a panel lies at the bottom.
+// smallPanel is the number of lines up to which a panel leaves the picture as it
+// is and lies over its foot.
 const smallPanel = 4
 
 // under is picture, finding and held curves in h lines.

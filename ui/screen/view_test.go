@@ -33,6 +33,9 @@ func TestScreens(t *testing.T) {
 		"undone_80x24":       {"plain", 80, 24, "up up right right u"},
 		"long_80x24":         {"plain", 80, 24, "right down home right right right down"},
 		"small_40x10":        {"plain", 40, 10, ""},
+		"rows_80x24":         {"plain", 80, 24, "right right enter a"},
+		"further_80x24":      {"plain", 80, 24, "end left enter tab down"},
+		"readme":             {"plain", 80, 24, "space pgup"},
 	} {
 		t.Run(name, func(t *testing.T) {
 			m := opened(onTerminal(c.terminal), c.w, c.h)

@@ -10,7 +10,8 @@ import (
 
 // koehlerChecks recomputes what is published about droplets. Arguments: S
 // (saturation ratio), s (supersaturation, a fraction), T (K), dry and wet
-// diameters d and D (m), mass of salt (kg), kappa, and A (Kelvin length, m).
+// diameters d and D (m), mass of salt (kg), kappa, A (Kelvin length, m), and of
+// adsorbed films a, b and the share of a soluble coat.
 func koehlerChecks() map[string]Check {
 	return map[string]Check{
 		"kelvin-length": func(a Args) (float64, error) {
@@ -42,6 +43,8 @@ func koehlerChecks() map[string]Check {
 			return crest.Supersaturation, err
 		},
 		"ammonium-sulfate-growth": growth,
+		"film-slope":              filmSlope,
+		"crystal-dissolves":       crystalDissolves,
 	}
 }
 
@@ -94,14 +97,53 @@ func nucleus(a Args) (koehler.Crest, error) {
 func growth(a Args) (float64, error) {
 	T := a.Number("T")
 	salt, _ := solutes.Standard().Find("ammonium sulfate")
+	p, err := saltParticle(salt, a.Number("d"), T)
+	if err != nil {
+		return math.NaN(), err
+	}
+	haze, _, err := p.Haze(a.Number("S"))
+	return haze.WetDiameter / p.DryDiameter, err
+}
+
+// saltParticle is a particle of one salt by ion interaction joined to its
+// concentrated data.
+func saltParticle(salt solutes.Substance, dry, T float64) (koehler.Particle, error) {
 	solution, err := solutes.NewSalt(solutes.SaltInput{
 		Ion: salt.Ion, Concentrated: salt.Concentrated, MolarMass: salt.MolarMass.Value,
 		Density: salt.Density.Value, WaterDensity: atmos.WaterDensity(T), Temperature: T,
 	})
+	return koehler.Particle{DryDiameter: dry, Temperature: T, Solution: solution}, err
+}
+
+// filmSlope is the slope of ln s_c against ln of the dry size from 100 to 500 nm.
+func filmSlope(a Args) (float64, error) {
+	film := koehler.Adsorption{A: a.Number("a"), B: a.Number("b"), SolubleShare: a.Number("share"), Kappa: a.Number("kappa")}
+	const small, large = 100e-9, 500e-9
+	var s [2]float64
+	for i, dry := range [2]float64{small, large} {
+		p, err := film.Particle(dry, a.Number("T"))
+		if err != nil {
+			return math.NaN(), err
+		}
+		crest, err := p.Crest()
+		if err != nil {
+			return math.NaN(), err
+		}
+		s[i] = crest.Supersaturation
+	}
+	return math.Log(s[1]/s[0]) / math.Log(large/small), nil
+}
+
+// crystalDissolves is the humidity over a small crystal of sodium chloride at
+// which it dissolves.
+func crystalDissolves(a Args) (float64, error) {
+	salt, _ := solutes.Standard().Find("sodium chloride")
+	T := a.Number("T")
+	p, err := saltParticle(salt, a.Number("d"), T)
 	if err != nil {
 		return math.NaN(), err
 	}
-	d := a.Number("d")
-	haze, _, err := koehler.Particle{DryDiameter: d, Temperature: T, Solution: solution}.Haze(a.Number("S"))
-	return haze.WetDiameter / d, err
+	flat, _ := solutes.PhasesOf([]solutes.Part{{Substance: salt, Volume: 1}}, T)
+	h, err := p.Hysteresis(0.5, flat, solutes.Rising)
+	return h.Over.Dissolved, err
 }

@@ -1,0 +1,93 @@
+package command
+
+import (
+	"fmt"
+	"os"
+	"strings"
+	"testing"
+
+	"dropcrest/ui/answer"
+	"dropcrest/ui/scenario"
+	"dropcrest/ui/screen"
+)
+
+// The README's lists are made of the tables of the program. To write them anew:
+// UPDATE_README=1 go test -run TestReadme ./ui/command
+func TestReadme(t *testing.T) {
+	const name = "../../README.md"
+	text, err := os.ReadFile(name)
+	if err != nil {
+		t.Fatal(err)
+	}
+	picture, err := os.ReadFile("../screen/testdata/TestScreens/readme.golden")
+	if err != nil {
+		t.Fatal(err)
+	}
+	want := string(text)
+	for mark, lines := range map[string][]string{
+		"screen":    append(append([]string{"```"}, strings.Split(strings.TrimRight(string(picture), "\n"), "\n")...), "```"),
+		"keys":      keyRows(),
+		"questions": questionRows(),
+		"options":   optionRows(),
+	} {
+		want = between(t, want, mark, strings.Join(lines, "\n"))
+	}
+	if os.Getenv("UPDATE_README") != "" {
+		if err := os.WriteFile(name, []byte(want), 0o644); err != nil {
+			t.Fatal(err)
+		}
+		return
+	}
+	got := strings.Split(string(text), "\n")
+	for i, line := range strings.Split(want, "\n") {
+		if i >= len(got) || got[i] != line {
+			t.Fatalf("README.md:%d is not what the program says: want %q", i+1, line)
+		}
+	}
+}
+
+// between puts a text between the marks of a part of the README.
+func between(t *testing.T, text, mark, part string) string {
+	t.Helper()
+	first, last := "<!-- "+mark+" -->\n", "\n<!-- end of "+mark+" -->"
+	before, rest, found := strings.Cut(text, first)
+	_, after, ended := strings.Cut(rest, last)
+	if !found || !ended {
+		t.Fatalf("README.md has no part between %q and %q", strings.TrimSpace(first), strings.TrimSpace(last))
+	}
+	return before + first + part + last + after
+}
+
+func keyRows() []string {
+	rows := []string{"| key | what it does |", "|---|---|"}
+	for _, k := range screen.Keys() {
+		rows = append(rows, fmt.Sprintf("| %s | %s |", k.Name, k.Does))
+	}
+	return rows
+}
+
+func questionRows() []string {
+	rows := []string{"| page | command | the question it answers |", "|---|---|---|"}
+	for _, q := range answer.Questions() {
+		rows = append(rows, fmt.Sprintf("| %s | `dropcrest %s` | %s |", q.Title, q.Key, q.Says))
+	}
+	return rows
+}
+
+func optionRows() []string {
+	rows := []string{"| option | what it is | default |", "|---|---|---|"}
+	s := scenario.Default()
+	for _, g := range inputGroups() {
+		for _, key := range g.keys {
+			if in, ok := scenario.Find(&s, scenario.Path(key)); ok {
+				rows = append(rows, fmt.Sprintf("| `--%s` | %s: %s | %s |", key, in.Says(), in.Range(), in.Show(scenario.Style{})))
+			}
+			for _, l := range scenario.Lists(&s) {
+				if l.Key() == key {
+					rows = append(rows, fmt.Sprintf("| `--%s` | %s, may be given several times | %s |", key, l.Says(), l.Show(scenario.Style{})))
+				}
+			}
+		}
+	}
+	return rows
+}
