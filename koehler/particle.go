@@ -53,6 +53,10 @@ func (p Particle) Check() error {
 	if sigma, ok := p.Tension.(solutes.ConstantTension); ok && (!(sigma > 0) || math.IsInf(float64(sigma), 1)) {
 		return &RangeError{"surface tension", float64(sigma), "above 0 N/m"}
 	}
+	_, limited := p.Solution.(*solutes.Limited)
+	if _, linear := p.Tension.(solutes.LinearTension); limited && linear {
+		return errors.Join(ErrInput, errors.New("a tension that rises with all of the solute does not go with limited solubility: take that of water, or a fixed one"))
+	}
 	return p.checkSize()
 }
 

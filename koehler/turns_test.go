@@ -117,6 +117,11 @@ func TestTurnsOfOtherParticles(t *testing.T) {
 	if kappa := SolveKappa(dry, kelvin, 0.61); err != nil || len(turns) != 1 || apart(turns[0].Supersaturation, kappa.Supersaturation) > 1e-14 {
 		t.Errorf("κ: %+v %v, want %+v", turns, err, kappa)
 	}
+	adipic := mustMix(t, solutes.LimitedPart{Volume: 1, Kappa: 0.096, Solubility: 0.0183})
+	raised := Particle{DryDiameter: dry, Temperature: T, Solution: adipic, Tension: solutes.LinearTension{Water: 0.0727, PerDry: 0.01}}
+	if _, err := raised.Turns(nil); !errors.Is(err, ErrInput) {
+		t.Errorf("a tension of all of the solute with limited solubility: %v, want ErrInput", err)
+	}
 	if _, err := (Particle{DryDiameter: -1, Temperature: T, Solution: solutes.Kappa(0.61)}).Turns(nil); !errors.Is(err, ErrInput) {
 		t.Errorf("negative size: %v, want ErrInput", err)
 	}
