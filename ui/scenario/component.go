@@ -9,7 +9,7 @@ import (
 var componentList = list[Component]{
 	key: "component", says: "composition",
 	help: "What the dry particle is made of: a substance of the catalogue with share=, or one's own matter with kappa=, density=, " +
-		"molar-mass=, ions=. Shares are scaled so that they add up to 1.",
+		"molar-mass=, ions=, solubility=. Shares are scaled so that they add up to 1.",
 	rows:     func(s *Scenario) *[]Component { return &s.Components },
 	fields:   componentFields,
 	standard: func() Component { return defaultComponent("ammonium sulfate") },
@@ -22,7 +22,9 @@ var componentList = list[Component]{
 }
 
 // tables are the row lists of a scenario.
-func tables(s *Scenario) []table { return []table{rowsOf[Component]{&componentList, s}} }
+func tables(s *Scenario) []table {
+	return []table{rowsOf[Component]{&componentList, s}, rowsOf[Film]{&filmList, s}, rowsOf[Isotherm]{&isothermList, s}}
+}
 
 // anotherComponent is a substance that is not there yet, the most common ones
 // first.

@@ -38,12 +38,29 @@ var fields = []field[Scenario]{
 		origin: "complete dissociation, an ideal solution",
 		at:     func(s *Scenario) any { return &s.VantHoffFactor },
 		used:   func(s *Scenario) bool { return s.WaterActivity == "vant-hoff" }},
+	{key: "solubility", says: "solubility",
+		words: []Option{{"limited", "limited"}, {"complete", "complete"}},
+		help: "Whether sparingly soluble components dissolve only as far as their solubility allows (Petters and Kreidenweis 2008), or all at once. " +
+			"Salts keep their deliquescence data instead.",
+		origin: "what is known of the components counts",
+		at:     func(s *Scenario) any { return &s.Solubility }},
 	{key: "surface-tension", says: "surface tension", quantity: tension,
 		words: []Option{{"water", "pure water"}, {"solution", "the solution"}},
 		help: "The surface tension of the droplet: that of pure water at this temperature, that of the solution (a linear increment with " +
 			"molality where it is known), or a fixed value.",
 		origin: "common practice; at activation most droplets are dilute",
 		at:     func(s *Scenario) any { return &s.SurfaceTension }},
+	{key: "partitioning", says: "partitioning", words: []Option{{"on", "on"}, {"off", "off"}},
+		help: "Whether the surface-active organic that covers the surface is missing in the bulk (on), or the bulk holds all of it (off). " +
+			"In droplets the surface takes up much of what there is.",
+		origin: "mass is conserved; off overstates the effect in small droplets",
+		at:     func(s *Scenario) any { return &s.Partitioning },
+		used:   func(s *Scenario) bool { return len(s.Szyszkowski) > 0 }},
+	{key: "tolman", says: "Tolman length", quantity: tolmanLength,
+		help: "The length by which the surface tension of a small droplet differs from that of a flat surface (Tolman 1949): positive lowers it. " +
+			"Its value for water is disputed, in sign as well; it is an \"if\".",
+		origin: "no correction (common practice)",
+		at:     func(s *Scenario) any { return &s.TolmanLength }},
 	{key: "solution-density", says: "solution density",
 		words: []Option{{"additive", "volume-additive"}, {"measured", "measured"}},
 		help: "How the volume of the droplet follows from water and solute: volumes add up, or the density of the solution follows a " +
@@ -66,6 +83,11 @@ var fields = []field[Scenario]{
 			"the droplet below its crest is looked at.",
 		origin: "a humid day below cloud, chosen as an example",
 		at:     func(s *Scenario) any { return &s.RelativeHumidity }},
+	{key: "humidity-history", says: "humidity history", words: []Option{{"rising", "rising"}, {"falling", "falling"}},
+		help: "How the particle came to the humidity looked at: dry, in rising humidity, so that a salt is a crystal up to its deliquescence; or from higher " +
+			"humidity, so that it stays a solution down to its efflorescence.",
+		origin: "a dry particle that is humidified (common practice)",
+		at:     func(s *Scenario) any { return &s.HumidityHistory }},
 	{key: "points", says: "points of the table", quantity: pointCount,
 		help:   "How many points the table of the curve has, evenly spaced in the logarithm of the wet radius.",
 		origin: "common practice",
@@ -109,6 +131,11 @@ var componentFields = []field[Component]{
 		origin: "the catalogue, with its source",
 		at:     func(c *Component) any { return &c.Ions },
 		used:   func(s *Scenario) bool { return s.WaterActivity != "kappa" }},
+	{key: "solubility", says: "solubility", quantity: volumeSolubility, words: fromCatalogue,
+		help:   "The volume of this component that dissolves in a volume of water. Where the catalogue has none, there is no limit.",
+		origin: "the catalogue, with its source",
+		at:     func(c *Component) any { return &c.Solubility },
+		used:   func(s *Scenario) bool { return s.Solubility == "limited" }},
 }
 
 var fromCatalogue = []Option{{"catalogue", "of the catalogue"}}

@@ -17,8 +17,9 @@ type list[R any] struct {
 	rows        func(*Scenario) *[]R
 	fields      []field[R]
 	standard    func() R               // a row with its defaults
-	blank       func() R               // a row before option or file fill it
-	another     func(*Scenario) R      // the row that Add appends
+	blank       func() R               // a row before option or file fill it; nil: standard
+	another     func(*Scenario) R      // the row that Add appends; nil: standard
+	required    []string               // fields that a file or an option must give
 	least, most int                    // rows
 	first       string                 // field of the words before the first key of a row
 	show        func(*Scenario) string // all rows in a few words
@@ -51,7 +52,11 @@ func (l rowsOf[R]) Add() error {
 		return err
 	}
 	rows := l.rows(l.s)
-	*rows = append(slices.Clone(*rows), l.another(l.s))
+	row := l.standard()
+	if l.another != nil {
+		row = l.another(l.s)
+	}
+	*rows = append(slices.Clone(*rows), row)
 	return nil
 }
 
@@ -99,6 +104,7 @@ type table interface {
 	read(text string) error
 	room() error
 	entries(i int) []entry
+	missing(given func(key string) bool) *ValueError
 	single() bool // at most one row
 }
 
@@ -110,7 +116,11 @@ func (l rowsOf[R]) begin() error {
 		return err
 	}
 	rows := l.rows(l.s)
-	*rows = append(slices.Clone(*rows), l.blank())
+	row := l.standard()
+	if l.blank != nil {
+		row = l.blank()
+	}
+	*rows = append(slices.Clone(*rows), row)
 	return nil
 }
 
@@ -119,6 +129,10 @@ func (l rowsOf[R]) read(text string) error {
 	pairs, err := l.pairs(text)
 	if err != nil {
 		return err
+	}
+	given := func(key string) bool { return slices.ContainsFunc(pairs, func(p pair) bool { return p.key == key }) }
+	if v := l.missing(given); v != nil {
+		return v
 	}
 	if err := l.begin(); err != nil {
 		return err
@@ -130,6 +144,21 @@ func (l rowsOf[R]) read(text string) error {
 			}
 			if err := in.SetWithUnit(p.value); err != nil {
 				return l.inRow(err, p.key)
+			}
+		}
+	}
+	return nil
+}
+
+// missing says which value is missing in a row, nil if none is.
+func (l rowsOf[R]) missing(given func(key string) bool) *ValueError {
+	for _, key := range l.required {
+		if given(key) {
+			continue
+		}
+		for _, f := range l.fields {
+			if f.key == key {
+				return &ValueError{Path: Path(l.key), Problem: l.says + " has no " + key, Right: key + "= " + f.quantity.right()}
 			}
 		}
 	}

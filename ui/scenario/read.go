@@ -76,6 +76,7 @@ type file struct {
 	row      []Input // the row that is being read, nil: none yet
 	skip     bool    // the rest of a table that is not known
 	named    map[string]bool
+	begun    []begun
 	where    map[Path]unstable.Position
 	problems FileErrors
 }
@@ -135,6 +136,14 @@ func (f *file) table(n *unstable.Node, repeated bool) {
 		return
 	}
 	f.skip, f.row = false, t.Row(t.Len()-1)
+	f.begun = append(f.begun, begun{t, t.Len() - 1, at})
+}
+
+// begun is a row of the file.
+type begun struct {
+	table table
+	row   int
+	at    unstable.Position
 }
 
 // tableOf is the list of that name, without its default rows when it is named for
@@ -221,6 +230,15 @@ func isDecimal(text string) bool {
 
 // check looks at the values together.
 func (f *file) check() {
+	for _, b := range f.begun {
+		given := func(key string) bool {
+			_, ok := f.where[Path(fmt.Sprintf("%s[%d].%s", b.table.Key(), b.row, key))]
+			return ok
+		}
+		if v := b.table.missing(given); v != nil {
+			f.fail(b.at, b.table.Key(), v)
+		}
+	}
 	for _, p := range Check(f.s) {
 		at, ok := f.where[p.Path]
 		if !ok {

@@ -16,16 +16,22 @@ type Scenario struct {
 	DryDiameter      float64 // m
 	DrySizeIs        string  // volume-equivalent | mobility
 	ShapeFactor      float64
+	Adsorption       []Isotherm  // of insoluble matter; none: of the catalogue
 	Components       []Component // may be empty when Kappa is a number
 	SharesBy         string      // volume | mass
 	WaterActivity    string      // kappa | vant-hoff | ion-interaction
 	Kappa            Measure     // number, or "catalogue"
 	VantHoffFactor   Measure     // number, or "ions"
+	Solubility       string      // limited | complete
 	SurfaceTension   Measure     // N/m, or "water" | "solution"
+	Szyszkowski      []Film      // of the surface-active organics, one at most
+	Partitioning     string      // on | off
+	TolmanLength     float64     // m, 0: a flat surface's tension
 	SolutionDensity  string      // additive | measured
 	Kelvin           string      // standard | pure-vapour | compressible
 	Temperature      float64     // K
 	RelativeHumidity float64     // fraction
+	HumidityHistory  string      // rising | falling
 	Points           int
 	FromRadius       Measure // m, or "frame"
 	ToRadius         Measure // m, or "frame"
@@ -42,7 +48,19 @@ type Component struct {
 	Density   Measure // kg/m³, or "catalogue"
 	MolarMass Measure // kg/mol, or "catalogue"
 	Ions      Measure // number, or "catalogue"
+
+	Solubility Measure // m³ of compound per m³ of water, or "catalogue"
 }
+
+// Film is the surface activity of organics by Szyszkowski and Langmuir.
+type Film struct {
+	GammaMax float64 // mol/m²
+	K        float64 // m³/mol
+	Floor    float64 // N/m, 0: none
+}
+
+// Isotherm is the adsorption of water by Frenkel, Halsey and Hill. A = 0 is none.
+type Isotherm struct{ A, B float64 }
 
 // Measure is a number or a word that stands for one.
 type Measure struct {
@@ -65,6 +83,9 @@ func Default() Scenario {
 		WaterActivity:    "ion-interaction",
 		Kappa:            Measure{Word: "catalogue"},
 		VantHoffFactor:   Measure{Word: "ions"},
+		Solubility:       "limited",
+		Partitioning:     "on",
+		HumidityHistory:  "rising",
 		SurfaceTension:   Measure{Word: "water"},
 		SolutionDensity:  "additive",
 		Kelvin:           "standard",
@@ -78,20 +99,28 @@ func Default() Scenario {
 
 func defaultComponent(substance string) Component {
 	own := Measure{Word: "catalogue"}
-	return Component{Substance: substance, Share: 1, Kappa: own, Density: own, MolarMass: own, Ions: own}
+	return Component{Substance: substance, Share: 1, Kappa: own, Density: own, MolarMass: own, Ions: own, Solubility: own}
 }
 
 // Clone returns a copy that shares nothing with s but the catalogue, which does
 // not change.
 func (s Scenario) Clone() Scenario {
 	s.Components = slices.Clone(s.Components)
+	s.Szyszkowski = slices.Clone(s.Szyszkowski)
+	s.Adsorption = slices.Clone(s.Adsorption)
 	return s
 }
 
 // Equal reports whether both ask the same.
 func (s Scenario) Equal(other Scenario) bool {
-	s.substances, s.anyName = other.substances, other.anyName
-	return reflect.DeepEqual(s, other)
+	return slices.Equal(s.Components, other.Components) && slices.Equal(s.Szyszkowski, other.Szyszkowski) &&
+		slices.Equal(s.Adsorption, other.Adsorption) && reflect.DeepEqual(s.plain(), other.plain())
+}
+
+// plain is the scenario without its rows and without where names are looked up.
+func (s Scenario) plain() Scenario {
+	s.Components, s.Szyszkowski, s.Adsorption, s.substances, s.anyName = nil, nil, nil, nil, false
+	return s
 }
 
 // Use makes names of substances be looked up in that catalogue.
@@ -167,6 +196,11 @@ func Check(s *Scenario) []*ValueError {
 		return []*ValueError{{Path: "from-radius", Given: wetRadius.show(s.FromRadius.Number),
 			Problem: "the first wet radius, " + wetRadius.show(s.FromRadius.Number) + ", is not below the last one",
 			Right:   "less than " + wetRadius.show(s.ToRadius.Number)}}
+	}
+	if len(s.Szyszkowski) > 0 && !s.SurfaceTension.Is("water") {
+		return []*ValueError{{Path: "szyszkowski", Given: filmList.show(s),
+			Problem: "a surface-active film lowers the tension of pure water, and the surface tension is another one",
+			Right:   "surface-tension water"}}
 	}
 	return nil
 }

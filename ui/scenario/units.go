@@ -22,6 +22,11 @@ var (
 	gramPerCubicCentimetre = unit{[]string{"g/cm³", "g/cm3", "kg/L", "g/mL"}, "1000", ""}
 	kilogramPerCubicMetre  = unit{[]string{"kg/m³", "kg/m3", "g/L"}, "1", ""}
 
+	micromolePerSquareMetre = unit{[]string{"µmol/m²", "µmol/m2", "umol/m2"}, "1e-6", ""}
+	molePerSquareMetre      = unit{[]string{"mol/m²", "mol/m2"}, "1", ""}
+	cubicMetrePerMole       = unit{[]string{"m³/mol", "m3/mol"}, "1", ""}
+	litrePerMole            = unit{[]string{"L/mol", "l/mol"}, "1e-3", ""}
+
 	gramPerMole     = unit{[]string{"g/mol"}, "1e-3", ""}
 	kilogramPerMole = unit{[]string{"kg/mol"}, "1", ""}
 )
@@ -53,7 +58,18 @@ var (
 		min: 100, max: 20000, start: 1500, step: stepper{small: 0.05, big: 0.5, decimals: 2}}
 	molarMass = &quantity{says: "molar mass", units: []unit{gramPerMole, kilogramPerMole}, si: "kg_per_mol",
 		min: 1e-3, max: 1000, start: 0.1, step: stepper{ladder: true}}
-	ionCount = &quantity{says: "number of ions", units: []unit{bare}, min: 0, max: 10, start: 2,
+	volumeSolubility = &quantity{says: "solubility", units: []unit{bare}, min: 0, max: 100, start: 0.01, step: stepper{ladder: true}}
+	tolmanLength     = &quantity{says: "length", units: []unit{nanometre, metre}, si: "m",
+		min: -1e-9, max: 1e-9, start: 0.1e-9, step: stepper{small: 0.01, big: 0.1}}
+	filmExcess = &quantity{says: "amount a surface", units: []unit{micromolePerSquareMetre, molePerSquareMetre}, si: "mol_per_m2",
+		min: 0, open: true, max: 1e-4, start: 3e-6, step: stepper{ladder: true}}
+	filmAffinity = &quantity{says: "volume an amount", units: []unit{cubicMetrePerMole, litrePerMole}, si: "m3_per_mol",
+		min: 0, open: true, max: 1e6, start: 20, step: stepper{ladder: true}}
+	filmFloor = &quantity{says: "surface tension", units: []unit{millinewton, newton}, si: "n_per_m",
+		min: 0, max: 0.072, start: 0.03, step: stepper{small: 1, big: 10, decimals: 1}}
+	isothermA = &quantity{says: "number", units: []unit{bare}, min: 0, max: 20, start: 2.25, step: stepper{small: 0.05, big: 0.5, decimals: 2}}
+	isothermB = &quantity{says: "number", units: []unit{bare}, min: 0.1, max: 5, start: 1.2, step: stepper{small: 0.05, big: 0.5, decimals: 2}}
+	ionCount  = &quantity{says: "number of ions", units: []unit{bare}, min: 0, max: 10, start: 2,
 		step: stepper{small: 1, big: 1}}
 )
 
