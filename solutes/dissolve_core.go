@@ -21,18 +21,12 @@ func (d *dissolving) core() error {
 	if d.Recipe.Adsorption == NoAdsorption {
 		return nil
 	}
-	switch {
-	case d.Recipe.Adsorption != KnownAdsorption && d.Recipe.Adsorption != GivenAdsorption:
-		return fmt.Errorf("adsorption rule %d does not exist: use none, known or given", int(d.Recipe.Adsorption))
-	case d.out.Film != nil:
-		return &RefusedError{inputAdsorption, "no published rule joins adsorption and a surface-active organic: leave one of them out"}
-	case d.Solubility == LimitedSolubility:
-		return &RefusedError{inputSolubility, "no published rule joins adsorption and limited solubility: choose complete solubility"}
+	if err := d.checkCore(); err != nil {
+		return err
 	}
 	c := &Core{A: d.AdsorptionA, B: d.AdsorptionB, Source: "as given"}
 	insoluble, kappa := 0.0, 0.0
 	var names []string
-	var first *Adsorption
 	for _, p := range d.Parts {
 		s := p.Substance
 		if !s.Insoluble() {
@@ -40,20 +34,13 @@ func (d *dissolving) core() error {
 			kappa += p.Volume * k
 			continue
 		}
+		if d.Recipe.Adsorption == KnownAdsorption {
+			if err := c.add(s, len(names) == 0); err != nil {
+				return err
+			}
+		}
 		insoluble += p.Volume
 		names = append(names, s.called())
-		if d.Recipe.Adsorption == GivenAdsorption {
-			continue
-		}
-		switch {
-		case s.Adsorption == nil:
-			return &RefusedError{inputAdsorption, fmt.Sprintf("no adsorption parameters are known for %s: give A and B, or leave adsorption out", s.called())}
-		case first == nil:
-			first = s.Adsorption
-			c.A, c.B, c.Source = first.A.Value, first.B.Value, first.A.Source
-		case first.A.Value != s.Adsorption.A.Value || first.B.Value != s.Adsorption.B.Value:
-			return &RefusedError{inputAdsorption, "no published rule mixes the adsorption of different minerals: keep one of them, or give A and B"}
-		}
 	}
 	if insoluble == 0 {
 		return &RefusedError{inputAdsorption, "no component is insoluble, so nothing adsorbs: leave adsorption out"}
@@ -68,6 +55,34 @@ func (d *dissolving) core() error {
 	d.says("%s: water adsorbed on the surface by the Frenkel-Halsey-Hill isotherm, A %.4g, B %.4g (%s)",
 		strings.Join(names, ", "), c.A, c.B, c.Source)
 	d.out.Core = c
+	return nil
+}
+
+// checkCore refuses what adsorption does not go with.
+func (d *dissolving) checkCore() error {
+	switch {
+	case d.Recipe.Adsorption != KnownAdsorption && d.Recipe.Adsorption != GivenAdsorption:
+		return fmt.Errorf("adsorption rule %d does not exist: use none, known or given", int(d.Recipe.Adsorption))
+	case d.out.Film != nil:
+		return &RefusedError{inputAdsorption, "no published rule joins adsorption and a surface-active organic: leave one of them out"}
+	case d.Solubility == LimitedSolubility:
+		return &RefusedError{inputSolubility, "no published rule joins adsorption and limited solubility: choose complete solubility"}
+	}
+	return nil
+}
+
+// add takes the parameters of an insoluble substance, or compares them with those
+// of the first.
+func (c *Core) add(s Substance, first bool) error {
+	a := s.Adsorption
+	switch {
+	case a == nil:
+		return &RefusedError{inputAdsorption, fmt.Sprintf("no adsorption parameters are known for %s: give A and B, or leave adsorption out", s.called())}
+	case first:
+		c.A, c.B, c.Source = a.A.Value, a.B.Value, a.A.Source
+	case c.A != a.A.Value || c.B != a.B.Value:
+		return &RefusedError{inputAdsorption, "no published rule mixes the adsorption of different minerals: keep one of them, or give A and B"}
+	}
 	return nil
 }
 

@@ -15,6 +15,11 @@ func (d *dissolving) density() error {
 	if d.DensityRule != Measured {
 		return fmt.Errorf("density rule %d does not exist: use additive or measured", int(d.DensityRule))
 	}
+	if d.out.Film != nil || d.Recipe.Adsorption != NoAdsorption {
+		d.note("density-additive", inputDensity,
+			"The models of films and of adsorption know additive volumes only: measured solution densities are not used.")
+		return nil
+	}
 	m := &MeasuredDensity{waterDensity: d.waterDensity}
 	polynomials := 0
 	for _, p := range d.Parts {

@@ -2,6 +2,7 @@ package solutes
 
 import (
 	"math"
+	"slices"
 	"strings"
 )
 
@@ -44,25 +45,20 @@ func (d *dissolving) film() error {
 	mass, moles := 0.0, 0.0
 	var names []string
 	var rest []Part
-	whole := make([]Part, len(d.Parts))
-	copy(whole, d.Parts)
+	whole := slices.Clone(d.Parts)
 	for i, p := range d.Parts {
 		if !organic[i] {
 			rest = append(rest, p)
 			continue
 		}
-		s := &whole[i].Substance
-		if !s.Ions.Known() {
-			s.Ions = Datum{Value: 1, Evidence: Computed} // a molecule
-		}
-		if err := missing(*s); err != nil {
+		s, err := p.Substance.molecule(d.waterDensity)
+		if err != nil {
 			return err
 		}
+		whole[i].Substance = s
 		m := p.Volume * s.Density.Value
 		mass, moles, f.Share = mass+m, moles+m/s.MolarMass.Value, f.Share+p.Volume
 		names = append(names, s.called())
-		k := float64(VantHoffKappa(1, s.MolarMass.Value, s.Density.Value, d.waterDensity))
-		s.Kappa = Datum{Value: k, Source: "ideal solution of a surface-active molecule", Evidence: Computed}
 	}
 	f.Density, f.MolarMass = mass/f.Share, mass/moles
 	if err := d.restOf(f, rest); err != nil {
@@ -75,6 +71,19 @@ func (d *dissolving) film() error {
 			"No floor is given for the surface tension: the Szyszkowski equation has none, and falls below that of any organic in a concentrated drop.")
 	}
 	return nil
+}
+
+// molecule returns a substance with the κ of its ideal solution as molecules.
+func (s Substance) molecule(waterDensity float64) (Substance, error) {
+	if !s.Ions.Known() {
+		s.Ions = Datum{Value: 1, Evidence: Computed}
+	}
+	if err := missing(s); err != nil {
+		return s, err
+	}
+	k := float64(VantHoffKappa(1, s.MolarMass.Value, s.Density.Value, waterDensity))
+	s.Kappa = Datum{Value: k, Source: "ideal solution of a surface-active molecule", Evidence: Computed}
+	return s, nil
 }
 
 // organics tells which parts are surface-active, and their common constants.

@@ -77,6 +77,19 @@ func TestFilmOfTwoOrganics(t *testing.T) {
 	near(t, "κ of the rest", d.Film.RestKappa, 1.28, 1e-14)
 }
 
+// Films and adsorption take volumes as additive, and say so.
+func TestFilmsAreAdditive(t *testing.T) {
+	film := filmRecipe(t, KappaModel, soap(3e-6), .5, "AS", .5)
+	core := coreRecipe(t, KnownAdsorption, KappaModel, "dust", .5, "AS", .5)
+	for _, r := range []Recipe{film, core} {
+		r.DensityRule = Measured
+		d, notes, err := Dissolve(r)
+		if err != nil || d.Swelling != nil || codes(notes) != "density-additive" {
+			t.Errorf("%v, %q, %v", d.Swelling, codes(notes), err)
+		}
+	}
+}
+
 func TestFilmRefuses(t *testing.T) {
 	one := filmRecipe(t, KappaModel, soap(3e-6), .5, "AS", .5)
 	for name, change := range map[string]func(*Recipe){

@@ -8,6 +8,10 @@
 // package are immutable after they are made and safe for concurrent use.
 //
 // Dissolve is the usual way in: it takes a Recipe and gives the models with
-// notes on what stands in for what. NewSalt, NewMixture and Kappa are the models
-// themselves.
+// notes on what stands in for what. NewSalt, NewMixture, NewLimited, OwnModel and
+// Kappa are the models themselves. PhasesOf says where a dry particle dissolves and
+// a drop crystallises; RangeNotes says what a drop is too concentrated for.
+//
+// Substances are records of the embedded catalogue, or of a user: NewSubstance
+// checks one, Extend puts it beside the others.
 package solutes

@@ -4,6 +4,7 @@ import (
 	"errors"
 	"fmt"
 	"math"
+	"slices"
 	"strings"
 )
 
@@ -54,6 +55,30 @@ func RecordFields() []RecordField {
 		{"tension_increment", "rise of surface tension", "N/m per mol/kg", -0.1, 0.1, func(s *Substance) *Datum { return &s.TensionIncrement }},
 		{"shape_factor", "dynamic shape factor", "", 1, 10, func(s *Substance) *Datum { return &s.ShapeFactor }},
 	}
+}
+
+// Gaps lists in words what is not known of a substance and may matter to a drop:
+// single values first, then models.
+func (s Substance) Gaps() []string {
+	var gaps []string
+	for _, f := range RecordFields() {
+		switch {
+		case f.of(&s).Known(), f.Key == "hydration", f.Key == "shape_factor":
+		case s.Insoluble() && !slices.Contains([]string{"molar_mass", "density"}, f.Key): // has no solution
+		default:
+			gaps = append(gaps, f.Says)
+		}
+	}
+	if s.Insoluble() && s.Adsorption == nil {
+		gaps = append(gaps, "parameters of adsorption")
+	}
+	if !s.Insoluble() && s.Ion == nil && !hasOwnModel(s) {
+		gaps = append(gaps, "water activity beyond a constant κ")
+	}
+	if s.organic() && s.SurfaceActivity == nil {
+		gaps = append(gaps, "constants of surface activity")
+	}
+	return gaps
 }
 
 // userSource is what a value of a user's record has as source if none is given.

@@ -170,6 +170,24 @@ func TestRecordErrorsAreJoined(t *testing.T) {
 	}
 }
 
+func TestGaps(t *testing.T) {
+	for _, c := range []struct {
+		name string
+		want []string
+	}{
+		{"NaCl", nil},
+		{"soot", []string{"parameters of adsorption"}},
+		{"quartz", []string{"molar mass"}},
+		{"pinic acid", []string{"dry density", "κ from growth factors", "solubility at 25 °C", "solubility C at 25 °C",
+			"deliquescence humidity at 25 °C", "efflorescence humidity", "rise of surface tension",
+			"water activity beyond a constant κ", "constants of surface activity"}},
+	} {
+		if got := find(t, c.name).Gaps(); !slices.Equal(got, c.want) {
+			t.Errorf("%s: %q, want %q", c.name, got, c.want)
+		}
+	}
+}
+
 func TestExtend(t *testing.T) {
 	mine, err := NewSubstance("1", map[string]any{"name": "my salt", "kappa": 0.7})
 	if err != nil {
