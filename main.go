@@ -10,7 +10,7 @@ import (
 	"dropcrest/ui/command"
 )
 
-// go:embed reaches no parent folder, so the files are embedded here.
+// The files are embedded here because no folder can embed what is in another one.
 //
 //go:embed testdata/published
 var testdata embed.FS
