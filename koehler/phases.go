@@ -90,6 +90,9 @@ func (c *curve) over(flat solutes.Phases) (over solutes.Phases, err error) {
 			return 0
 		}
 		u := c.waterOf(activity)
+		if math.IsNaN(u) {
+			return u
+		}
 		return math.Exp(c.at(u).lnS)
 	}
 	return solutes.Phases{Uptake: ratio(flat.Uptake), Dissolved: ratio(flat.Dissolved), Efflorescence: ratio(flat.Efflorescence)}, nil

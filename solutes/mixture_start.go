@@ -49,6 +49,10 @@ func (x *Mixture) start(w *[MaxMixtureParts]float64, lnU float64) {
 	at := (lnU - startFrom) / startStep
 	k := int(at)
 	switch {
+	case math.IsNaN(at):
+		for i := range x.count {
+			w[i] = at
+		}
 	case at <= 0:
 		for i := range x.count {
 			w[i] = lnU + x.table[0].w[i] + max(at, -4)*x.table[0].rise[i]

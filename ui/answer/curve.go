@@ -2,7 +2,6 @@ package answer
 
 import (
 	"context"
-	"math"
 	"slices"
 
 	"dropcrest/atmos"
@@ -39,6 +38,14 @@ type curve struct {
 	textbook koehler.Crest
 	noCubic  error
 
+	twin      koehler.Particle // all that can dissolve is dissolved already
+	twinCrest koehler.Crest
+	hasTwin   bool
+
+	flat     solutes.Phases // humidities over a flat surface; NaN: not known
+	phase    koehler.Hysteresis
+	hasPhase bool
+
 	line  []koehler.State // dense, with the extrema, far to both sides
 	table []koehler.State // what is printed: Points states over the frame
 	notes []atmos.Note
@@ -46,7 +53,7 @@ type curve struct {
 
 // hazeState is the drop at the humidity looked at.
 type hazeState struct {
-	branch string // "stable" | "unstable"
+	branch string // stable | unstable | metastable | dry | partly_dissolved | dissolved
 	koehler.State
 }
 
@@ -77,67 +84,6 @@ func askCurve(ctx context.Context, env Env, s scenario.Scenario) (Answer, error)
 		Tables:  c.tables(),
 		Notes:   c.notes,
 	}, nil
-}
-
-// newCurve makes the particle of a scenario.
-func newCurve(env Env, s scenario.Scenario) (*curve, error) {
-	c := &curve{asked: s}
-	recipe, notes, err := newRecipe(env, s)
-	if err != nil {
-		return nil, err
-	}
-	dissolved, more, err := solutes.Dissolve(recipe)
-	if err != nil {
-		return nil, &InputError{Input: "component", Text: err.Error()}
-	}
-	c.dissolved = dissolved
-	c.parts = recipe.Parts
-	c.notes = distinct(slices.Concat(notes, waterNotes(s), more))
-	c.particle = koehler.Particle{
-		DryDiameter: dryDiameter(s),
-		Temperature: s.Temperature,
-		Solution:    dissolved.Solution,
-		Swelling:    dissolved.Swelling,
-		Tension:     dissolved.Tension,
-		Kelvin:      kelvinForm(s.Kelvin),
-	}
-	if !(c.particle.DryDiameter > 0) {
-		return nil, &InputError{Input: "dry-diameter", Text: "no volume-equivalent diameter belongs to this mobility diameter and shape factor"}
-	}
-	return c, nil
-}
-
-// dryDiameter is the volume-equivalent dry diameter. A classifier measures at
-// laboratory pressure: one standard atmosphere.
-func dryDiameter(s scenario.Scenario) float64 {
-	if s.DrySizeIs == "mobility" {
-		return atmos.VolumeEquivalent(s.DryDiameter, s.ShapeFactor, s.Temperature, atmos.StandardPressure)
-	}
-	return s.DryDiameter
-}
-
-func kelvinForm(word string) koehler.Kelvin {
-	switch word {
-	case "pure-vapour":
-		return koehler.PureVapour
-	case "compressible":
-		return koehler.Compressible
-	}
-	return koehler.Standard
-}
-
-// solve finds crest, extrema, haze and the textbook crest. What does not exist
-// is no error of the question: it is said in words and is null in the facts.
-func (c *curve) solve() {
-	s := c.particle.Solve(c.asked.RelativeHumidity)
-	c.crest, c.noCrest, c.extrema, c.noHaze = s.Crest, s.NoCrest, s.Extrema, s.NoHaze
-	c.textbook, c.noCubic = c.particle.Textbook()
-	if s.Stable.WetDiameter > 0 {
-		c.haze = append(c.haze, hazeState{"stable", s.Stable})
-	}
-	if s.Unstable.WetDiameter > 0 && !math.IsInf(s.Unstable.WetDiameter, 0) {
-		c.haze = append(c.haze, hazeState{"unstable", s.Unstable})
-	}
 }
 
 // growth is the diameter growth factor of a state.

@@ -14,6 +14,13 @@ type CurveFacts struct {
 	CriticalGrowthFactor    Number        `json:"critical_growth_factor"`
 	CriticalWaterActivity   Number        `json:"critical_water_activity"`
 	CriticalMolality        Number        `json:"critical_molality_mol_per_kg"`
+	CrestTension            Number        `json:"surface_tension_at_crest_n_per_m"`
+	BarrierKind             *string       `json:"barrier_kind"`                   // of the highest extremum; null without one
+	BarrierPosition         *string       `json:"barrier_position"`               // only | first | middle | last
+	AlreadyDissolved        *DissolvedRow `json:"already_dissolved"`              // null where solubility limits nothing
+	Deliquescence           Number        `json:"deliquescence_humidity_percent"` // over a flat surface
+	Efflorescence           Number        `json:"efflorescence_humidity_percent"`
+	DeliquescenceOver       Number        `json:"deliquescence_humidity_over_particle_percent"`
 	Extrema                 []ExtremumRow `json:"extrema"`
 	Haze                    []HazeRow     `json:"haze"`
 	Textbook                *TextbookRow  `json:"textbook"` // null when the cubic form does not exist
@@ -29,10 +36,16 @@ type ExtremumRow struct {
 
 // HazeRow is the drop at the humidity looked at.
 type HazeRow struct {
-	Branch           string `json:"branch"` // stable | unstable
+	Branch           string `json:"branch"` // stable | unstable | metastable | dry | partly_dissolved | dissolved
 	RelativeHumidity Number `json:"relative_humidity_percent"`
 	WetRadius        Number `json:"wet_radius_m"`
 	GrowthFactor     Number `json:"growth_factor"`
+}
+
+// DissolvedRow is the crest of the particle once all of it has been dissolved.
+type DissolvedRow struct {
+	CriticalSupersaturation Number `json:"critical_supersaturation_percent"`
+	CriticalWetRadius       Number `json:"critical_wet_radius_m"`
 }
 
 // TextbookRow is the crest of the cubic form s = A/D - B/D³.
@@ -51,8 +64,18 @@ type CurveRow struct {
 
 func (c *curve) facts() CurveFacts {
 	gap := Number(math.NaN())
-	f := CurveFacts{gap, gap, gap, gap, gap, gap,
-		make([]ExtremumRow, 0, len(c.extrema)), make([]HazeRow, 0, len(c.haze)), nil, make([]CurveRow, 0, len(c.table))}
+	f := CurveFacts{
+		CriticalSupersaturation: gap, CriticalWetRadius: gap, CriticalWetDiameter: gap, CriticalGrowthFactor: gap,
+		CriticalWaterActivity: gap, CriticalMolality: gap, CrestTension: gap,
+		Deliquescence: percentNumber(c.flat.Dissolved), Efflorescence: percentNumber(c.flat.Efflorescence), DeliquescenceOver: gap,
+		Extrema: make([]ExtremumRow, 0, len(c.extrema)), Haze: make([]HazeRow, 0, len(c.haze)), Curve: make([]CurveRow, 0, len(c.table)),
+	}
+	if c.hasPhase {
+		f.DeliquescenceOver = percentNumber(c.phase.Over.Dissolved)
+	}
+	if c.hasTwin {
+		f.AlreadyDissolved = &DissolvedRow{percentNumber(c.twinCrest.Supersaturation), Number(c.twinCrest.WetDiameter / 2)}
+	}
 	if c.noCrest == nil {
 		f.CriticalSupersaturation = Number(100 * c.crest.Supersaturation)
 		f.CriticalWetRadius = Number(c.crest.WetDiameter / 2)
@@ -60,6 +83,9 @@ func (c *curve) facts() CurveFacts {
 		f.CriticalGrowthFactor = Number(c.crest.GrowthFactor)
 		f.CriticalWaterActivity = Number(c.crest.WaterActivity)
 		f.CriticalMolality = Number(c.molality())
+		f.CrestTension = Number(c.crest.SurfaceTension)
+		kind, place := kindWord(c.crest.Kind), c.crest.Place.String()
+		f.BarrierKind, f.BarrierPosition = &kind, &place
 	}
 	for _, e := range c.extrema {
 		f.Extrema = append(f.Extrema, ExtremumRow{kindWord(e.Kind), Number(e.WetDiameter / 2), Number(100 * e.Supersaturation)})
@@ -85,6 +111,9 @@ func (c *curve) molality() float64 {
 }
 
 // kindWord is the kind of an extremum as scripts see it.
+// percentNumber writes a fraction in per cent.
+func percentNumber(fraction float64) Number { return Number(100 * fraction) }
+
 func kindWord(k koehler.Kind) string {
 	switch k {
 	case koehler.Minimum:

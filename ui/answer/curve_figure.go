@@ -132,10 +132,26 @@ func (c *curve) figure() figure.Figure {
 			Y: 100 * c.crest.Supersaturation, Text: percent(c.crest.Supersaturation)})
 	}
 	for _, h := range c.haze {
+		if math.IsNaN(h.WetDiameter) {
+			continue // partly dissolved
+		}
 		m := figure.Mark{Kind: figure.HazeMark, X: h.WetDiameter / 2 * micro, Y: 100 * h.Supersaturation,
 			Text: fmt.Sprintf("haze %s at %s", micrometres(h.WetDiameter/2), humidity(c.asked.RelativeHumidity))}
-		if h.branch == "unstable" {
+		switch h.branch {
+		case "unstable":
 			m.Kind, m.Text = figure.PointMark, "unstable "+micrometres(h.WetDiameter/2)
+		case "dissolved":
+			continue // on another line
+		case "metastable":
+			m.Kind, m.Text = figure.PointMark, "supersaturated drop "+micrometres(h.WetDiameter/2)
+			if len(c.haze) == 1 || c.haze[0].branch == "metastable" {
+				m.Kind = figure.HazeMark
+			}
+		case "dry":
+			if c.haze[0].branch != "dry" {
+				continue
+			}
+			m.Text = "dry at " + humidity(c.asked.RelativeHumidity)
 		}
 		f.Marks = append(f.Marks, m)
 	}

@@ -8,12 +8,16 @@ import (
 
 	"dropcrest/atmos"
 	"dropcrest/koehler"
+	"dropcrest/solutes"
 )
 
 // finding is the answer in sentences: the crest, the drop at the humidity looked
 // at, and whatever limits both.
 func (c *curve) finding(limits []atmos.Note) []string {
 	out := []string{c.crestSentence(), c.hazeSentence()}
+	if c.hasTwin {
+		out = []string{c.crestSentence(), c.twinSentence(), c.hazeSentence()}
+	}
 	if len(limits) > 0 {
 		out = append(out, limits[0].Text)
 	}
@@ -25,6 +29,10 @@ func (c *curve) crestSentence() string {
 		return fmt.Sprintf("It has no crest: %s.", strings.TrimSuffix(reason(c.noCrest), "."))
 	}
 	at := percent(c.crest.Supersaturation)
+	if _, limited := c.dissolved.Solution.(*solutes.Limited); limited && c.crest.Kind == koehler.BoundaryMaximum {
+		return fmt.Sprintf("Started dry it must first dissolve: the barrier is %s supersaturation at its dry surface, of %s radius%s.",
+			at, micrometres(c.particle.DryDiameter/2), c.placeWords())
+	}
 	if c.crest.Kind == koehler.BoundaryMaximum {
 		return fmt.Sprintf("It must be wetted at %s supersaturation, the Kelvin barrier at its dry radius of %s; from there it grows without another crest.",
 			at, micrometres(c.particle.DryDiameter/2))
@@ -33,8 +41,28 @@ func (c *curve) crestSentence() string {
 	if m := c.molality(); !math.IsNaN(m) {
 		inside += ", " + digits(m, 3) + " mol/kg"
 	}
-	return fmt.Sprintf("It crosses at %s supersaturation, where its wet radius is %s (%s times the dry radius; %s).",
-		at, micrometres(c.crest.WetDiameter/2), digits(c.crest.GrowthFactor, 3), inside)
+	return fmt.Sprintf("It crosses at %s supersaturation, where its wet radius is %s (%s times the dry radius; %s)%s.",
+		at, micrometres(c.crest.WetDiameter/2), digits(c.crest.GrowthFactor, 3), inside, c.placeWords())
+}
+
+// placeWords say which of several maxima the barrier is.
+func (c *curve) placeWords() string {
+	maxima := 0
+	for _, e := range c.extrema {
+		if e.Kind == koehler.Maximum || e.Kind == koehler.BoundaryMaximum {
+			maxima++
+		}
+	}
+	if maxima < 2 {
+		return ""
+	}
+	return fmt.Sprintf(", the %s of %d maxima", c.crest.Place, maxima)
+}
+
+// twinSentence is what the particle does once it has been dissolved.
+func (c *curve) twinSentence() string {
+	return fmt.Sprintf("Already dissolved it crosses at %s, where its wet radius is %s.",
+		percent(c.twinCrest.Supersaturation), micrometres(c.twinCrest.WetDiameter/2))
 }
 
 func (c *curve) hazeSentence() string {
@@ -47,14 +75,42 @@ func (c *curve) hazeSentence() string {
 	case c.noHaze != nil:
 		return says + "no size can be given: " + strings.TrimSuffix(reason(c.noHaze), ".") + "."
 	}
-	for _, h := range c.haze {
-		if h.branch == "stable" {
-			says += fmt.Sprintf("it is haze of %s radius", micrometres(h.WetDiameter/2))
-			continue
+	for i, h := range c.haze {
+		if i > 0 && h.branch != "unstable" && h.branch != "dissolved" {
+			says += "; after " + c.otherHistory() + " humidity "
 		}
-		says += fmt.Sprintf("; a drop larger than %s would grow on", micrometres(h.WetDiameter/2))
+		says += c.hazeWords(h)
 	}
 	return says + "."
+}
+
+// hazeWords say what the particle is in one of its states.
+func (c *curve) hazeWords(h hazeState) string {
+	radius := micrometres(h.WetDiameter / 2)
+	switch h.branch {
+	case "unstable":
+		return fmt.Sprintf("; a drop larger than %s would grow on", radius)
+	case "dissolved":
+		return fmt.Sprintf("; already dissolved it is haze of %s", radius)
+	case "dry":
+		if over := c.phase.Over.Uptake; c.asked.RelativeHumidity < over {
+			return fmt.Sprintf("it is dry and takes up water from %s on", humidity(roundTo(over, 3)))
+		}
+		return "it is dry"
+	case "partly_dissolved":
+		return "it is partly dissolved, of a size that is not known"
+	case "metastable":
+		return fmt.Sprintf("it is a supersaturated drop of %s radius, down to %s", radius, humidity(roundTo(c.phase.Over.Efflorescence, 3)))
+	}
+	return fmt.Sprintf("it is haze of %s radius", radius)
+}
+
+// otherHistory is the history that was not asked for.
+func (c *curve) otherHistory() string {
+	if c.asked.HumidityHistory == "falling" {
+		return "rising"
+	}
+	return "falling"
 }
 
 // pastCrest reports whether the humidity looked at is at or above the crest.

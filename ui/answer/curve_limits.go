@@ -10,10 +10,6 @@ import (
 	"dropcrest/ui/scenario"
 )
 
-// giantNucleus is the dry diameter (m) above which growth to the crest takes so
-// long in a cloud that equilibrium is not the question. Common practice.
-const giantNucleus = 1e-6
-
 // limits are the notes that say in words what limits the crest and the haze
 // size, the most important first. from and to are the ends of the wet radius
 // shown (m).
@@ -32,7 +28,7 @@ func (c *curve) limits(from, to float64) []atmos.Note {
 	if c.noCrest == nil && c.crest.Kind != koehler.BoundaryMaximum && c.crest.Extrapolated {
 		add("crest-outside-model", "water-activity", "The crest lies where the water activity model is outside its range: it is extrapolated.")
 	}
-	if d := c.particle.DryDiameter; d > giantNucleus {
+	if c.particle.Giant() {
 		add("giant-nucleus", "dry-diameter", "This is a giant nucleus: growth to its crest%s takes longer than a cloud gives it, so equilibrium is not the question.", c.crestRadius())
 	}
 	if c.pastCrest() {
@@ -41,13 +37,11 @@ func (c *curve) limits(from, to float64) []atmos.Note {
 	}
 	least := c.dissolved.Solution.LeastWater()
 	for _, h := range c.haze {
-		if h.Water < least && h.branch == "stable" {
+		if h.Water < least && (h.branch == "stable" || h.branch == "metastable") {
 			add("haze-outside-model", "water-activity", "The haze size lies where the water activity model is outside its range: it is extrapolated.")
 		}
 	}
-	if drh, name := c.deliquescence(); c.asked.RelativeHumidity < drh {
-		add("below-deliquescence", "relative-humidity", "Dry %s takes up water only from %s humidity on (at 25 °C): the haze size is that of a particle that was wetter before.", name, humidity(drh))
-	}
+	notes = append(notes, c.ranges()...)
 	if least > 0 && c.noCrest == nil {
 		if edge := c.particle.AtWater(least).WetDiameter / 2; edge > from*(1+1e-6) {
 			add("curve-outside-model", "water-activity", "Below a wet radius of %s the water activity model is outside its range: the curve is extrapolated there.", micrometres(edge))
@@ -75,14 +69,27 @@ func waterNotes(s scenario.Scenario) []atmos.Note {
 	})
 }
 
-// deliquescence is the humidity at which the dry particle takes up water, 0 when
-// that is not known or when it is a mixture, which has no single one.
-func (c *curve) deliquescence() (humidity float64, name string) {
-	if len(c.parts) != 1 || !c.parts[0].Substance.Deliquescence.Known() {
-		return 0, ""
+// ranges are what the models of the solution have to say at the crest and at the
+// humidity looked at. That the water activity is extrapolated is said already.
+func (c *curve) ranges() []atmos.Note {
+	var notes []atmos.Note
+	at := func(s koehler.State) {
+		if !(s.Water > 0) {
+			return
+		}
+		for _, n := range c.dissolved.RangeNotes(s.Water) {
+			if n.Code != "activity-outside-range" {
+				notes = append(notes, n)
+			}
+		}
 	}
-	s := c.parts[0].Substance
-	return s.Deliquescence.Value, s.Name
+	if c.noCrest == nil {
+		at(c.crest.State)
+	}
+	for _, h := range c.haze {
+		at(h.State)
+	}
+	return distinct(notes)
 }
 
 func (c *curve) crestRadius() string {

@@ -24,6 +24,8 @@ func newRecipe(env Env, s scenario.Scenario) (solutes.Recipe, []atmos.Note, erro
 	switch {
 	case s.SurfaceTension.Is("solution"):
 		r.TensionRule = solutes.SolutionRule
+	case len(s.Szyszkowski) > 0:
+		r.TensionRule, r.Surface = solutes.Szyszkowski, surfaceActivity(s.Szyszkowski[0])
 	case !s.SurfaceTension.Is("water"):
 		r.TensionRule, r.Tension = solutes.FixedTension, s.SurfaceTension.Number
 	}
@@ -36,8 +38,42 @@ func newRecipe(env Env, s scenario.Scenario) (solutes.Recipe, []atmos.Note, erro
 		return r, nil, &InputError{"component", "a particle without components needs one number for its hygroscopicity: " +
 			"name a substance, or choose water activity by kappa and give kappa"}
 	}
+	r.Adsorption, r.AdsorptionA, r.AdsorptionB = adsorption(s, r.Parts)
 	note, err := volumeShares(r.Parts, s)
 	return r, note, err
+}
+
+func surfaceActivity(f scenario.Film) *solutes.SurfaceActivity {
+	a := &solutes.SurfaceActivity{GammaMax: userDatum(f.GammaMax), K: userDatum(f.K)}
+	if f.Floor > 0 {
+		a.Floor = userDatum(f.Floor)
+	}
+	return a
+}
+
+// adsorption is the given isotherm, or that of the catalogue where the particle
+// has one and no other published model takes its place.
+func adsorption(s scenario.Scenario, parts []solutes.Part) (rule solutes.AdsorptionRule, a, b float64) {
+	if len(s.Adsorption) > 0 {
+		if i := s.Adsorption[0]; i.A > 0 {
+			return solutes.GivenAdsorption, i.A, i.B
+		}
+		return solutes.NoAdsorption, 0, 0
+	}
+	known := false
+	for _, p := range parts {
+		if !p.Substance.Insoluble() {
+			continue
+		}
+		if p.Substance.Adsorption == nil {
+			return solutes.NoAdsorption, 0, 0 // part of the surface is not known
+		}
+		known = true
+	}
+	if !known || len(s.Szyszkowski) > 0 {
+		return solutes.NoAdsorption, 0, 0
+	}
+	return solutes.KnownAdsorption, 0, 0
 }
 
 func waterModel(word string) solutes.Model {
@@ -75,6 +111,7 @@ func parts(env Env, s scenario.Scenario) ([]solutes.Part, error) {
 		override(&substance.Density, c.Density)
 		override(&substance.MolarMass, c.MolarMass)
 		override(&substance.Ions, c.Ions)
+		override(&substance.VolumeSolubility, c.Solubility)
 		if !(c.Share > 0) {
 			return nil, &InputError{"component", fmt.Sprintf("the share of %s is %g, should be greater than 0", substance.Name, c.Share)}
 		}
@@ -102,8 +139,12 @@ func unknownSubstance(c *solutes.Catalogue, name string) error {
 
 func override(d *solutes.Datum, m scenario.Measure) {
 	if m.Word == "" {
-		*d = solutes.Datum{Value: m.Number, Source: "given in the scenario", Evidence: solutes.User}
+		*d = userDatum(m.Number)
 	}
+}
+
+func userDatum(x float64) solutes.Datum {
+	return solutes.Datum{Value: x, Source: "given in the scenario", Evidence: solutes.User}
 }
 
 // volumeShares turns the shares as given into volume shares that add up to 1.

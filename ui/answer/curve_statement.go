@@ -1,6 +1,10 @@
 package answer
 
-import "dropcrest/ui/scenario"
+import (
+	"slices"
+
+	"dropcrest/ui/scenario"
+)
 
 // curveStatement is the question in prose. Kelvin form and density rule stand in
 // it only when they are not the usual ones, so that the sentence stays short and
@@ -24,7 +28,12 @@ func curveStatement(s scenario.Scenario) []string {
 	case "vant-hoff":
 		water += " factor {vant-hoff-factor}"
 	}
-	lines = append(lines, water+", surface tension of {surface-tension},")
+	if len(s.Szyszkowski) > 0 {
+		lines = append(lines, water+",", "with a film of {szyszkowski}, partitioning {partitioning},")
+	} else {
+		lines = append(lines, water+", surface tension of {surface-tension},")
+	}
+	lines = append(lines, matterClauses(s)...)
 	switch plain, additive := s.Kelvin == "standard", s.SolutionDensity == "additive"; {
 	case !plain && !additive:
 		lines = append(lines, "Kelvin term {kelvin}, solution density {solution-density},")
@@ -33,5 +42,22 @@ func curveStatement(s scenario.Scenario) []string {
 	case !additive:
 		lines = append(lines, "solution density {solution-density},")
 	}
-	return append(lines, "in air of {temperature}, seen at {relative-humidity} humidity, all else {further}.")
+	return append(lines, "in air of {temperature}, at {relative-humidity} {humidity-history} humidity, all else {further}.")
+}
+
+// matterClauses name what concerns particles that are no plain salt, where it is
+// not the usual.
+func matterClauses(s scenario.Scenario) []string {
+	var clauses []string
+	limited := slices.ContainsFunc(s.Components, func(c scenario.Component) bool { return c.Solubility.Word == "" })
+	if limited || s.Solubility != "limited" {
+		clauses = append(clauses, "solubility {solubility},")
+	}
+	if len(s.Adsorption) > 0 {
+		clauses = append(clauses, "adsorption {adsorption},")
+	}
+	if s.TolmanLength != 0 {
+		clauses = append(clauses, "Tolman length {tolman},")
+	}
+	return clauses
 }

@@ -14,13 +14,7 @@ const Further scenario.Path = "further"
 // FurtherInputs are the inputs that a question looks at and that have no slot of
 // their own in its statement; those of rows stand with their rows.
 func FurtherInputs(q Question, s *scenario.Scenario) []scenario.Input {
-	var named []string
-	for _, clause := range q.Statement(*s) {
-		Fill(clause, func(slot string) string {
-			named = append(named, slot)
-			return ""
-		})
-	}
+	named := slots(q, *s)
 	var out []scenario.Input
 	for _, in := range scenario.Inputs(s) {
 		own := string(in.Path()) == in.Key()
@@ -29,6 +23,24 @@ func FurtherInputs(q Question, s *scenario.Scenario) []scenario.Input {
 		}
 	}
 	return out
+}
+
+// FurtherLists are the lists of rows without a slot of their own.
+func FurtherLists(q Question, s *scenario.Scenario) []scenario.RowList {
+	named := slots(q, *s)
+	return slices.DeleteFunc(scenario.Lists(s), func(l scenario.RowList) bool { return slices.Contains(named, l.Key()) })
+}
+
+// slots are the names of the slots of a statement in their order.
+func slots(q Question, s scenario.Scenario) []string {
+	var named []string
+	for _, clause := range q.Statement(s) {
+		Fill(clause, func(slot string) string {
+			named = append(named, slot)
+			return ""
+		})
+	}
+	return named
 }
 
 // FurtherWords stand in the slot Further.

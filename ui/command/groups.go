@@ -15,9 +15,9 @@ type inputGroup struct {
 // inputGroups is the order of the options. A test holds that no input is left out.
 func inputGroups() []inputGroup {
 	return []inputGroup{
-		{"The dry particle", []string{"dry-diameter", "dry-size-is", "shape-factor", "component", "shares-by"}},
-		{"The solution", []string{"water-activity", "kappa", "vant-hoff-factor", "surface-tension", "solution-density", "kelvin"}},
-		{"The air", []string{"temperature", "relative-humidity"}},
+		{"The dry particle", []string{"dry-diameter", "dry-size-is", "shape-factor", "component", "shares-by", "adsorption"}},
+		{"The solution", []string{"water-activity", "kappa", "vant-hoff-factor", "solubility", "surface-tension", "szyszkowski", "partitioning", "tolman", "solution-density", "kelvin"}},
+		{"The air", []string{"temperature", "relative-humidity", "humidity-history"}},
 		{"Table and picture", []string{"points", "from-radius", "to-radius"}},
 	}
 }

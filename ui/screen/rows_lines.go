@@ -68,6 +68,9 @@ func (r *rows) body(l scenario.RowList, grid [][]scenario.Input, form rowForm, w
 			body = append(body, more...)
 		}
 	}
+	if l != nil && l.Len() == 0 {
+		body = append(body, "      none: a adds one")
+	}
 	if form.shares && l.Len() > 1 {
 		body = append(body, m.dim("      "+m.text(sums(l, mixed))))
 	}

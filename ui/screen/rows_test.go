@@ -49,7 +49,7 @@ func TestRowsChange(t *testing.T) {
 		"undone":              {[]string{"tab", "0.7", "enter", "u"}, share, "0.25"},
 		"redone":              {[]string{"tab", "0.7", "enter", "u", "U"}, share, "0.70"},
 		"the kind of shares":  {[]string{"left", "enter", "down", "enter"}, "shares-by", "mass"},
-		"from end to start":   {[]string{"right", "right", "right", "right", "right", "right", "0.7", "enter"}, share, "0.70"},
+		"from end to start":   {[]string{"right", "right", "right", "right", "right", "right", "right", "0.7", "enter"}, share, "0.70"},
 		"no letter starts":    {[]string{"tab", "x", "z"}, share, "0.25"},
 	} {
 		t.Run(name, func(t *testing.T) {

@@ -1,0 +1,194 @@
+package answer
+
+import (
+	"errors"
+	"math"
+	"slices"
+
+	"dropcrest/atmos"
+	"dropcrest/koehler"
+	"dropcrest/solutes"
+	"dropcrest/ui/scenario"
+)
+
+// newCurve makes the particle of a scenario.
+func newCurve(env Env, s scenario.Scenario) (*curve, error) {
+	c := &curve{asked: s}
+	recipe, notes, err := newRecipe(env, s)
+	if err != nil {
+		return nil, err
+	}
+	dissolved, more, err := dissolve(recipe, s)
+	if err != nil {
+		return nil, recipeError(err)
+	}
+	c.dissolved = dissolved
+	c.parts = recipe.Parts
+	c.notes = distinct(slices.Concat(notes, waterNotes(s), more))
+	dry := dryDiameter(s)
+	if !(dry > 0) {
+		return nil, &InputError{Input: "dry-diameter", Text: "no volume-equivalent diameter belongs to this mobility diameter and shape factor"}
+	}
+	c.particle, err = newParticle(dissolved, s, dry)
+	if err != nil {
+		return nil, recipeError(err)
+	}
+	if dissolved.Core != nil {
+		c.dissolved.Solution = c.particle.Solution
+	}
+	c.twin, c.hasTwin = c.particle.Dissolved()
+	return c, nil
+}
+
+// recipeError names the input that a refused particle is about.
+func recipeError(err error) error {
+	input := "component"
+	var refused *solutes.RefusedError
+	if errors.As(err, &refused) {
+		input = refused.Input
+	}
+	return &InputError{Input: input, Text: reason(err)}
+}
+
+// dissolve makes the solution of a recipe with the solubility that the scenario
+// asks for. A solubility counts where it is known and a published model joins it
+// with the rest; where none does, a note says so.
+func dissolve(r solutes.Recipe, s scenario.Scenario) (solutes.Dissolved, []atmos.Note, error) {
+	all, notes, err := solutes.Dissolve(r)
+	if err != nil || s.Solubility != "limited" || len(all.Limits) == 0 {
+		return all, notes, err
+	}
+	limited := r
+	limited.Solubility = solutes.LimitedSolubility
+	if _, ok := all.Solution.(solutes.Kappa); ok && r.Model == solutes.IonInteraction {
+		limited.Model = solutes.KappaModel // that is what stands in for all its parts
+	}
+	if limited.Adsorption == solutes.KnownAdsorption {
+		limited.Adsorption = solutes.NoAdsorption
+	}
+	kept, more, err := solutes.Dissolve(limited)
+	var refused *solutes.RefusedError
+	if errors.As(err, &refused) {
+		return all, append(notes, atmos.Note{Code: "solubility-not-limited", Input: "solubility",
+			Text: "All of the particle is taken as soluble: " + refused.Why + "."}), nil
+	}
+	if limited.Model != r.Model {
+		more = append(notes, more...)
+	}
+	return kept, more, err
+}
+
+// newParticle is the droplet's particle: plain, with a film, or with water
+// adsorbed on a core.
+func newParticle(d solutes.Dissolved, s scenario.Scenario, dry float64) (p koehler.Particle, err error) {
+	switch {
+	case d.Film != nil:
+		f := d.Film
+		salt := koehler.Salt{Share: f.RestShare, Solution: f.Rest}
+		if f.Rest == nil {
+			salt.Kappa = f.RestKappa
+		}
+		p, err = koehler.Surfactant{Share: f.Share, Density: f.Density, MolarMass: f.MolarMass,
+			GammaMax: f.GammaMax, K: f.K, Floor: f.Floor, Partitioning: s.Partitioning == "on",
+		}.Particle(dry, s.Temperature, salt)
+	case d.Core != nil:
+		c := d.Core
+		p, err = koehler.Adsorption{A: c.A, B: c.B, SolubleShare: c.SolubleShare, Kappa: c.Kappa}.Particle(dry, s.Temperature)
+		p.Tension = d.Tension
+	default:
+		p = koehler.Particle{DryDiameter: dry, Temperature: s.Temperature, Solution: d.Solution, Swelling: d.Swelling, Tension: d.Tension}
+	}
+	p.Kelvin, p.TolmanLength = kelvinForm(s.Kelvin), s.TolmanLength
+	if err != nil {
+		return p, err
+	}
+	return p, p.Check()
+}
+
+// dryDiameter is the volume-equivalent dry diameter. A classifier measures at
+// laboratory pressure: one standard atmosphere.
+func dryDiameter(s scenario.Scenario) float64 {
+	if s.DrySizeIs == "mobility" {
+		return atmos.VolumeEquivalent(s.DryDiameter, s.ShapeFactor, s.Temperature, atmos.StandardPressure)
+	}
+	return s.DryDiameter
+}
+
+func kelvinForm(word string) koehler.Kelvin {
+	switch word {
+	case "pure-vapour":
+		return koehler.PureVapour
+	case "compressible":
+		return koehler.Compressible
+	}
+	return koehler.Standard
+}
+
+// solve finds crest, extrema, haze and the textbook crest. What does not exist
+// is no error of the question: it is said in words and is null in the facts.
+func (c *curve) solve() {
+	s := c.particle.Solve(c.asked.RelativeHumidity)
+	c.crest, c.noCrest, c.extrema, c.noHaze = s.Crest, s.NoCrest, s.Extrema, s.NoHaze
+	c.textbook, c.noCubic = c.particle.Textbook()
+	if s.Stable.WetDiameter > 0 {
+		c.haze = append(c.haze, hazeState{"stable", s.Stable})
+	}
+	if s.Unstable.WetDiameter > 0 && !math.IsInf(s.Unstable.WetDiameter, 0) {
+		c.haze = append(c.haze, hazeState{"unstable", s.Unstable})
+	}
+	if c.hasTwin {
+		c.solveTwin()
+	}
+	c.branches()
+}
+
+// solveTwin finds what the particle does once all of it has been dissolved.
+func (c *curve) solveTwin() {
+	s := c.twin.Solve(c.asked.RelativeHumidity)
+	c.twinCrest, c.hasTwin = s.Crest, s.NoCrest == nil
+	if s.Stable.WetDiameter > 0 && c.hasTwin {
+		c.haze = append(c.haze, hazeState{"dissolved", s.Stable})
+	}
+}
+
+// branches puts the particle on the branch that its history gives it: a crystal,
+// or a solution. Above 100 % every salt is dissolved.
+func (c *curve) branches() {
+	flat, notes := solutes.PhasesOf(c.parts, c.asked.Temperature)
+	c.flat = flat
+	if c.asked.RelativeHumidity >= 1 || c.noHaze != nil || c.hasTwin || c.dissolved.Film != nil {
+		return
+	}
+	history := solutes.Rising
+	if c.asked.HumidityHistory == "falling" {
+		history = solutes.Falling
+	}
+	h, err := c.particle.Hysteresis(c.asked.RelativeHumidity, flat, history)
+	if err != nil {
+		c.notes = append(c.notes, atmos.Note{Code: "no-phase-branch", Input: "humidity-history", Text: "Its phase at this humidity cannot be given: " + reason(err) + "."})
+		return
+	}
+	c.phase, c.hasPhase = h, true
+	if h.Several || h.Now.Branch != solutes.SolutionBranch {
+		c.notes = distinct(append(c.notes, notes...))
+	}
+	c.haze = c.haze[:0]
+	c.haze = append(c.haze, c.branched(h.Now))
+	if h.Several {
+		c.haze = append(c.haze, c.branched(h.Other))
+	}
+}
+
+// branched names the state of a particle on its branch. A drop below the humidity
+// at which a dry particle would dissolve is metastable.
+func (c *curve) branched(b koehler.Branched) hazeState {
+	switch {
+	case b.Branch == solutes.CrystalBranch:
+		return hazeState{"dry", b.State}
+	case b.Branch == solutes.PartlyDissolved:
+		return hazeState{"partly_dissolved", b.State}
+	case c.asked.RelativeHumidity < c.phase.Over.Dissolved:
+		return hazeState{"metastable", b.State}
+	}
+	return hazeState{"stable", b.State}
+}
