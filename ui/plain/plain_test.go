@@ -9,6 +9,7 @@ func TestASCII(t *testing.T) {
 		"kappa 0.65 → 0.61": "kappa 0.65 -> 0.61",
 		"κ 0.6 ± 0.1":       "kappa 0.6 +- 0.1",
 		"日":                 "?",
+		"997 kg/m³, B/D³":   "997 kg/m3, B/D^3",
 	} {
 		if got := ASCII(in); got != want {
 			t.Errorf("ASCII(%q) = %q, want %q", in, got, want)

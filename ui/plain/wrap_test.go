@@ -24,3 +24,12 @@ func TestWrap(t *testing.T) {
 		t.Errorf("nothing becomes %q", got)
 	}
 }
+
+// A number stays with its unit, also in brackets and before a full stop.
+func TestWordsKeepUnits(t *testing.T) {
+	text := "At 95.0 % humidity (71.97 mN/m; 0.0169 mol/kg) it is 3 % of 0.102 µm. 1013 hPa, 40 °C, 5 drops"
+	want := "At|95.0 %|humidity|(71.97 mN/m;|0.0169 mol/kg)|it|is|3 %|of|0.102 µm.|1013 hPa,|40 °C,|5|drops"
+	if got := strings.Join(Words(text), "|"); got != want {
+		t.Errorf("words %s", got)
+	}
+}

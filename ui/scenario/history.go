@@ -48,6 +48,9 @@ func (h *History) Add(p Path, before, after Scenario, step bool) {
 	h.Past = append(h.Past[:len(h.Past):len(h.Past)], e)
 }
 
+// EndRun makes the next step an entry of its own.
+func (h *History) EndRun() { h.run = "" }
+
 // Undo takes the last change back: the scenario is then the Before of the entry.
 func (h *History) Undo() (Entry, bool) { return h.move(&h.Past, &h.Future) }
 

@@ -18,18 +18,17 @@ func newHelp(m *model) panel {
 		text = append(text, "", p.title)
 		text = append(text, keyTable(helpItems(p.panel.keys(m.keys)))...)
 	}
-	return &reader{title: "Keys", text: text, opener: m.keys.Help}
+	return &reader{title: "Keys", text: text, opener: m.keys.Help, hang: keyColumn}
 }
+
+// keyColumn is where in a list of keys it stands what they do.
+const keyColumn = 17
 
 // keyTable is one line a key, aligned.
 func keyTable(names, does []string) []string {
-	wide := 0
-	for _, n := range names {
-		wide = max(wide, len([]rune(n)))
-	}
 	out := make([]string, len(names))
 	for i, n := range names {
-		out[i] = strings.TrimRight("  "+padded(n, wide)+"  "+does[i], " ")
+		out[i] = strings.TrimRight("  "+padded(n, keyColumn-4)+"  "+does[i], " ")
 	}
 	return out
 }

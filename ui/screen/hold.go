@@ -1,6 +1,7 @@
 package screen
 
 import (
+	"fmt"
 	"strings"
 
 	"github.com/charmbracelet/x/ansi"
@@ -34,6 +35,7 @@ func (m *model) hold() {
 	default:
 		h := newHeld(m.freeLetter(), m.scenario, m.answer)
 		m.held = append(m.held, h)
+		m.history.EndRun() // undo leads back to what was held
 		m.say("held as " + string(h.letter))
 		m.redraw()
 		m.keep()
@@ -91,16 +93,24 @@ func (m *model) heldLine(w int) string {
 	if len(m.held) == 0 {
 		return ""
 	}
-	line := m.heldWords(true)
-	if ansi.StringWidth(line) > w {
-		line = m.heldWords(false)
+	for _, long := range []bool{true, false} {
+		if line := m.heldWords(len(m.held), long); ansi.StringWidth(line) <= w {
+			return line
+		}
 	}
-	return cut(line, w)
+	for n := len(m.held) - 1; n > 0; n-- { // no number is cut in two
+		line := m.heldWords(n, false) + m.text(fmt.Sprintf(", %d more", len(m.held)-n))
+		if ansi.StringWidth(line) <= w {
+			return line
+		}
+	}
+	return cut(m.heldWords(len(m.held), false), w)
 }
 
-func (m *model) heldWords(long bool) string {
+// heldWords names the first n held curves.
+func (m *model) heldWords(n int, long bool) string {
 	var words []string
-	for _, h := range m.held {
+	for _, h := range m.held[:n] {
 		says := []string{string(h.letter)}
 		s := h.scenario
 		if in, ok := scenario.Find(&s, "dry-diameter"); ok {

@@ -32,7 +32,7 @@ type (
 // keep saves the session soon.
 func (m *model) keep() {
 	m.keeper.touched = true
-	if m.keeper.aside {
+	if m.keeper.aside || m.offered != nil {
 		m.decline()
 	}
 	if m.keeper.waiting || !m.keeper.store.Owned() {
@@ -133,9 +133,5 @@ func (m *model) greet(o Options) {
 	if !last.Saved.IsZero() {
 		when = last.Saved.Local().Format("2 January 15:04")
 	}
-	offer := "Enter: go on with the session of " + when + ". Esc: leave it"
-	if m.message != "" {
-		offer += " (" + m.message + ")"
-	}
-	m.say(offer)
+	m.offer = "Enter: go on with the session of " + when + ". Esc: leave it"
 }

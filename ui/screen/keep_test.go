@@ -68,10 +68,9 @@ func TestResume(t *testing.T) {
 	}
 }
 
-// Any key but Enter and those that leave is a no: the session is put aside, and
-// the key acts.
+// Esc and the first change are a no: the session is put aside, and the key acts.
 func TestDecline(t *testing.T) {
-	for keys, size := range map[string]float64{"esc": 1e-7, "up": 1.1e-7, "5": 1e-7} {
+	for keys, size := range map[string]float64{"esc": 1e-7, "up": 1.1e-7, "5 0 enter": 5e-8, "space": 1e-7} {
 		dir, _ := keptSession(t)
 		m := opened(withStore(t, dir), 80, 24)
 		press(m, keys)
@@ -80,6 +79,24 @@ func TestDecline(t *testing.T) {
 		}
 		if _, err := os.Stat(filepath.Join(dir, "scenario-before.toml")); err != nil {
 			t.Errorf("%s: the session was not put aside: %v", keys, err)
+		}
+	}
+}
+
+// Keys that only look are no answer: the offer stands, and is on the screen.
+func TestOfferStands(t *testing.T) {
+	for _, keys := range []string{"y", "right", "? esc", "end i esc", "t esc", "o", "u", "5 esc", "w a esc"} {
+		dir, left := keptSession(t)
+		m := opened(withStore(t, dir), 80, 24)
+		press(m, keys)
+		press(m, "home") // what a key says stands in place of the offer until the next key
+		if m.offered == nil || !strings.Contains(m.View(), "Enter: go on with the session") {
+			t.Errorf("%s: no offer in\n%s", keys, m.View())
+			continue
+		}
+		press(m, "enter")
+		if !m.scenario.Equal(left) {
+			t.Errorf("%s: Enter does not take the session up", keys)
 		}
 	}
 }

@@ -178,8 +178,11 @@ func (l *list) lines(w, h int, m *model) []string {
 // line is one item: its word, and what it says where that is more.
 func (l *list) line(o scenario.Option, chosen bool, wide int, m *model) string {
 	word := m.text(o.Word)
-	says := strings.TrimPrefix(m.text(o.Says), word) // "ammonium sulfate, (NH4)2SO4"
-	if says = strings.TrimPrefix(says, ", "); says != "" {
+	says := strings.TrimPrefix(m.text(o.Says), word+", ") // "ammonium sulfate, (NH4)2SO4"
+	if says == word {
+		says = ""
+	}
+	if says != "" {
 		says = m.dim("  " + says)
 		word = padded(word, wide)
 	}

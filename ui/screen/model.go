@@ -37,6 +37,7 @@ type model struct {
 	work          work
 	keeper        keeper
 	offered       *session.State // the session that Enter takes up
+	offer         string         // in words, on the message line while nothing else is said
 	todo          []tea.Cmd      // what Update hands to Bubble Tea at its end
 	fatal         error          // why the program ends, nil for a wish
 }

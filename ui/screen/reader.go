@@ -14,6 +14,7 @@ type reader struct {
 	title  string
 	text   []string    // paragraphs, an empty one is a blank line
 	opener key.Binding // the key that opened it closes it too
+	hang   int         // the column of a line too long that its rest begins in; 0: as it is indented
 	scroll scroll
 	back   panel // what is open afterwards
 }
@@ -31,7 +32,7 @@ func (r *reader) press(k tea.KeyMsg, m *model) (panel, tea.Cmd) {
 }
 
 func (r *reader) lines(w, h int, m *model) []string {
-	body := laid(r.text, w, m)
+	body := laid(r.text, r.hang, w, m)
 	first, end := r.scroll.part(len(body), max(h-1, 0))
 	return fit(append([]string{heading(r.title, first, end, len(body), "line", w, m)}, body[first:end]...), w, h)
 }
@@ -47,12 +48,18 @@ func heading(title string, first, end, n int, unit string, w int, m *model) stri
 }
 
 // laid is text in lines of at most w columns.
-func laid(text []string, w int, m *model) []string {
+func laid(text []string, hang, w int, m *model) []string {
 	var out []string
 	for _, t := range text {
 		t = m.text(t)
 		if ansi.StringWidth(t)+1 <= min(w, textWidth) {
 			out = append(out, strings.TrimRight(" "+t, " "))
+			continue
+		}
+		if head := []rune(t); hang > 0 && len(head) > hang && head[hang-1] == ' ' {
+			rest := folded(string(head[hang:]), w, strings.Repeat(" ", hang+1))
+			rest[0] = " " + string(head[:hang]) + rest[0][hang+1:]
+			out = append(out, rest...)
 			continue
 		}
 		indent := " " + t[:len(t)-len(strings.TrimLeft(t, " "))]

@@ -137,3 +137,16 @@ func TestTabulate(t *testing.T) {
 		}
 	}
 }
+
+// What a key does stands in a column of its own, also where it takes several lines.
+func TestHelpKeepsItsColumn(t *testing.T) {
+	m := opened(onTerminal("plain"), 60, 40)
+	for _, line := range newHelp(m).lines(60, 200, m)[1:] {
+		if key := strings.TrimSpace(string([]rune(line + strings.Repeat(" ", 18))[:18])); strings.HasPrefix(line, "   ") && strings.Contains(key, "  ") {
+			t.Errorf("no column in %q", line)
+		}
+		if r := []rune(line); strings.HasPrefix(line, "   ") && (len(r) < 18 || r[17] != ' ' || len(r) > 60) {
+			t.Errorf("no column in %q", line)
+		}
+	}
+}

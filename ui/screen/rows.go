@@ -14,6 +14,7 @@ import (
 // rows is a list of rows, such as the components of a particle, edited with the
 // keys of the page: each value is a slot, the chosen one in <>.
 type rows struct {
+	back   panel           // what opened it, nil: the page
 	list   string          // key of the list; "" when these are settings
 	given  []scenario.Path // the settings, one a row
 	row    int             // the chosen row; 0 is the line above the rows
@@ -39,6 +40,9 @@ func newSettings(m *model) panel {
 	r := &rows{row: 1}
 	for _, in := range answer.FurtherInputs(m.question, &m.scenario) {
 		r.given = append(r.given, in.Path())
+	}
+	for _, l := range answer.FurtherLists(m.question, &m.scenario) {
+		r.given = append(r.given, scenario.Path(l.Key()))
 	}
 	return r
 }
@@ -110,6 +114,8 @@ func (r *rows) settingsGrid(m *model) [][]scenario.Input {
 	for _, p := range r.given {
 		if in, ok := scenario.Find(&m.scenario, p); ok {
 			grid = append(grid, []scenario.Input{in})
+		} else if l, ok := m.listOf(string(p)); ok {
+			grid = append(grid, []scenario.Input{listSlot{l}})
 		}
 	}
 	return grid
@@ -160,7 +166,7 @@ func (r *rows) press(k tea.KeyMsg, m *model) (panel, tea.Cmd) {
 	}
 	r.wrong = nil
 	if hits(k, m.keys.Leave) {
-		return nil, nil
+		return r.back, nil
 	}
 	if r.choose(k, grid, m) {
 		return r, nil
@@ -215,15 +221,19 @@ func (r *rows) change(k tea.KeyMsg, in scenario.Input, m *model) (panel, bool) {
 	kept := m.left[in.Path()]
 	switch {
 	case hits(k, m.keys.Up):
-		r.wrong = m.step(in.Path(), 1, false)
+		r.step(in, 1, false, m)
 	case hits(k, m.keys.Down):
-		r.wrong = m.step(in.Path(), -1, false)
+		r.step(in, -1, false, m)
 	case hits(k, m.keys.BigUp):
-		r.wrong = m.step(in.Path(), 1, true)
+		r.step(in, 1, true, m)
 	case hits(k, m.keys.BigDown):
-		r.wrong = m.step(in.Path(), -1, true)
+		r.step(in, -1, true, m)
 	case hits(k, m.keys.Type) && number:
 		r.entry = openEntry(in, k.Runes[0], "", r)
+	case hits(k, m.keys.Open) && isList(in):
+		next := newRows(in.(listSlot).RowList).(*rows)
+		next.back = r
+		return next, true
 	case hits(k, m.keys.Open) && (kept != "" || len(in.Choices()) == 0):
 		r.entry = openEntry(in, 0, kept, r)
 	case hits(k, m.keys.Open):
@@ -234,6 +244,17 @@ func (r *rows) change(k tea.KeyMsg, in scenario.Input, m *model) (panel, bool) {
 		return r, false
 	}
 	return r, true
+}
+
+// step changes the chosen slot by a step.
+func (r *rows) step(in scenario.Input, dir int, big bool, m *model) {
+	if isList(in) {
+		r.wrong = in.Step(dir, big)
+		return
+	}
+	if err := m.step(in.Path(), dir, big); err != nil {
+		m.say(stopped(err))
+	}
 }
 
 // whole takes a key that concerns the rows as a whole.

@@ -35,6 +35,9 @@ func (r *rows) lines(w, h int, m *model) []string {
 	room := max(h-1-len(foot), 1)
 	r.scroll.reveal(at, room)
 	first, end := r.scroll.part(len(body), room)
+	if end-first < len(body) {
+		head += m.dim(fmt.Sprintf("  (line %d to %d of %d)", first+1, end, len(body)))
+	}
 	return fit(slices.Concat([]string{head}, body[first:end], foot), w, h)
 }
 

@@ -14,12 +14,17 @@ import (
 const slotMark = "\x00"
 
 // statement is the question in prose in lines of at most w columns. A clause
-// begins a new line; the chosen slot is <value>, the others are [value].
+// begins a new line where there is room for that; the chosen slot is <value>, the others are [value].
 func (m *model) statement(w int) []string {
-	w = min(w, textWidth)
+	w = min(w, textWidth) - 2
 	var lines []string
+	var all []token
 	for _, clause := range m.question.Statement(m.scenario) {
-		lines = append(lines, flow(m.tokens(clause, w-2), w-2)...)
+		tokens := m.tokens(clause, w)
+		lines, all = append(lines, flow(tokens, w)...), append(all, tokens...)
+	}
+	if !m.roomy() {
+		lines = flow(all, w)
 	}
 	return indented(lines)
 }

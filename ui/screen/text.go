@@ -4,6 +4,8 @@ import (
 	"strings"
 
 	"github.com/charmbracelet/x/ansi"
+
+	"dropcrest/ui/plain"
 )
 
 // textWidth is the widest that text may be: longer lines are hard to read.
@@ -48,7 +50,7 @@ func wrap(text string, w int) []string { return flow(words(text), w) }
 // words are the tokens of a text.
 func words(text string) []token {
 	var out []token
-	for _, w := range strings.Fields(text) {
+	for _, w := range plain.Words(text) {
 		out = append(out, wordToken(w))
 	}
 	return out

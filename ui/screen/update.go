@@ -1,6 +1,9 @@
 package screen
 
 import (
+	"errors"
+	"strings"
+
 	"github.com/charmbracelet/bubbles/key"
 	tea "github.com/charmbracelet/bubbletea"
 
@@ -64,7 +67,7 @@ func (m *model) press(k tea.KeyMsg) {
 			m.do(safely(cmd))
 		}
 	case k.Paste:
-		// No value is open for pasted text.
+		m.paste(k)
 	case len(k.Runes) > 1:
 		m.pressBurst(k)
 	default:
@@ -101,18 +104,18 @@ func (m *model) pressBurst(k tea.KeyMsg) {
 }
 
 // pressPage takes a key while no panel is open. A session on offer is taken up by
-// Enter; any other key but leaving is a no.
+// Enter and put aside by Esc, or by the first change; keys that only look leave
+// it on offer.
 func (m *model) pressPage(k tea.KeyMsg) {
-	if m.offered != nil && !key.Matches(k, m.keys.Quit) {
-		if key.Matches(k, m.keys.Open) {
-			m.resume()
-			return
-		}
+	switch {
+	case m.offered == nil:
+	case key.Matches(k, m.keys.Open):
+		m.resume()
+		return
+	case k.Type == tea.KeyEsc:
 		m.message = ""
 		m.decline()
-		if k.Type == tea.KeyEsc {
-			return
-		}
+		return
 	}
 	said := m.message
 	m.message = ""
@@ -194,8 +197,31 @@ func (m *model) stepSlot(dir int, big bool) {
 		return // the line of ranges says what Enter does here
 	}
 	if err := m.step(in.Path(), dir, big); err != nil {
-		m.say("error: " + err.Error())
+		m.say(stopped(err))
 	}
+}
+
+// stopped says why a step leads nowhere: at the end of a range, which the line of
+// ranges gives, that is no error.
+func stopped(err error) string {
+	var value *scenario.ValueError
+	if errors.As(err, &value) {
+		return value.Problem
+	}
+	return refusal(err)
+}
+
+// paste opens an entry with a number pasted on a slot that takes one. Other text
+// would drive the page.
+func (m *model) paste(k tea.KeyMsg) {
+	text := strings.TrimSpace(string(k.Runes))
+	in, ok := m.input()
+	first := tea.KeyMsg{Type: tea.KeyRunes, Runes: []rune(text)[:min(1, len(text))]}
+	if ok && in.Kind() == scenario.Number && key.Matches(first, m.keys.Type) {
+		m.panel = newEntry(in, 0, text)
+		return
+	}
+	m.say("pasted text is taken by an entry, or when it is a number on a slot for one")
 }
 
 // startEntry starts an entry with the first character typed.

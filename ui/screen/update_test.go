@@ -1,10 +1,12 @@
 package screen
 
 import (
+	"fmt"
 	"strings"
 	"testing"
 
 	tea "github.com/charmbracelet/bubbletea"
+	"github.com/charmbracelet/x/ansi"
 
 	"dropcrest/ui/scenario"
 )
@@ -127,6 +129,39 @@ func TestHeldCurves(t *testing.T) {
 	}
 }
 
+// The line of held curves leaves whole curves out, never half a number.
+func TestHeldLine(t *testing.T) {
+	m := opened(onTerminal("plain"), 80, 24)
+	press(m, "space up space up space up space up space up space")
+	for w := 30; w < 250; w++ {
+		line := m.heldLine(w)
+		if ansi.StringWidth(line) > w || strings.Contains(line, "...") {
+			t.Fatalf("%d columns: %q", w, line)
+		}
+		if n := strings.Count(line, " %"); n < 6 && !strings.HasSuffix(line, fmt.Sprintf(", %d more", 6-n)) {
+			t.Fatalf("%d columns: %q", w, line)
+		}
+	}
+}
+
+// Undo leads back to what was held, though the steps were on one slot.
+func TestUndoAfterHold(t *testing.T) {
+	m := opened(onTerminal("plain"), 80, 24)
+	press(m, "up up space up up u")
+	if m.scenario.DryDiameter != 120e-9 {
+		t.Errorf("undone to %g m", m.scenario.DryDiameter)
+	}
+}
+
+// A step at the end of a range is no error.
+func TestStepAtTheEnd(t *testing.T) {
+	m := opened(onTerminal("plain"), 80, 24)
+	press(m, "1 enter down")
+	if want := "dry size ends at 1 nm"; m.message != want {
+		t.Errorf("the message is %q, want %q", m.message, want)
+	}
+}
+
 // Every other line is shown once, and the last press shows none again.
 func TestOtherLines(t *testing.T) {
 	m := opened(onTerminal("plain"), 80, 24)
@@ -141,8 +176,9 @@ func TestOtherLines(t *testing.T) {
 	}
 }
 
-// Pieces of a broken key and pasted text change nothing on a page; what is typed
-// on a slow line arrives at once and counts.
+// Pieces of a broken key and pasted text change nothing on a page, but a number
+// that is pasted opens an entry; what is typed on a slow line arrives at once and
+// counts.
 func TestBursts(t *testing.T) {
 	for name, c := range map[string]struct {
 		key   tea.KeyMsg
@@ -152,7 +188,8 @@ func TestBursts(t *testing.T) {
 		"piece of down":   {tea.KeyMsg{Type: tea.KeyRunes, Runes: []rune("[B")}, false, 1e-7},
 		"piece of home":   {tea.KeyMsg{Type: tea.KeyRunes, Runes: []rune("OH")}, false, 1e-7},
 		"piece of pgup":   {tea.KeyMsg{Type: tea.KeyRunes, Runes: []rune("[5~")}, false, 1e-7},
-		"paste":           {keyOf("paste:50"), false, 1e-7},
+		"pasted number":   {keyOf("paste: 50 nm\n"), true, 1e-7},
+		"pasted nothing":  {keyOf("paste:\n"), false, 1e-7},
 		"pasted commands": {keyOf("paste:qxu"), false, 1e-7},
 		"typed at once":   {keyOf("50"), true, 1e-7},
 	} {

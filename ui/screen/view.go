@@ -37,7 +37,11 @@ func (m *model) tooSmall() bool { return m.width < leastWidth || m.height < leas
 // finding or what lies over them, then range and help.
 func (m *model) page() []string {
 	if m.tooSmall() {
-		return []string{fmt.Sprintf("dropcrest needs a %dx%d window", leastWidth, leastHeight)}
+		says := fmt.Sprintf("dropcrest needs a %dx%d window", leastWidth, leastHeight)
+		if ansi.StringWidth(says) > m.width {
+			says = fmt.Sprintf("needs %dx%d", leastWidth, leastHeight)
+		}
+		return []string{says}
 	}
 	head := []string{m.header()}
 	if m.roomy() {
@@ -80,9 +84,13 @@ func (m *model) body(h int) []string {
 		free--
 	}
 	over := fit(slices.Clone(m.panel.lines(m.width, free, m)), m.width, free)
+	_, sharing := m.panel.(sharingPanel)
+	if left := free - leastRows - 2; sharing && len(over) > left && left >= leastShared {
+		over = fit(slices.Clone(m.panel.lines(m.width, left, m)), m.width, left)
+	}
 	above := free - len(over)
 	var lines []string
-	switch _, sharing := m.panel.(sharingPanel); {
+	switch {
 	case len(over) <= smallPanel:
 		lines = append(padTo(m.under(h-1), above), over...)
 	case sharing && above > leastRows+1:
@@ -96,6 +104,10 @@ func (m *model) body(h int) []string {
 // smallPanel is the number of lines up to which a panel leaves the picture as it
 // is and lies over its foot.
 const smallPanel = 4
+
+// leastShared is the number of lines with which a panel that scrolls is content,
+// so that the picture stays in sight.
+const leastShared = 6
 
 // under is picture, finding and held curves in h lines.
 func (m *model) under(h int) []string {
@@ -156,6 +168,9 @@ func (m *model) rangeLine() string {
 	message := m.text(m.message)
 	if working := m.work.words(); working != "" {
 		message = working
+	}
+	if message == "" && m.offered != nil && m.panel == nil {
+		message = m.text(m.offer)
 	}
 	says := m.rangeWords()
 	if m.panel != nil {
