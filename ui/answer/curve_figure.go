@@ -126,6 +126,9 @@ func (c *curve) figure() figure.Figure {
 	}
 	current := figure.Line{Crest: true}
 	current.X, current.Y = c.points(func(s koehler.State) float64 { return s.Supersaturation })
+	for _, e := range c.extrema {
+		current.Extrema = append(current.Extrema, e.WetDiameter/2*micro)
+	}
 	f.Lines = []figure.Line{current}
 	if c.noCrest == nil {
 		f.Marks = append(f.Marks, figure.Mark{Kind: figure.CrestMark, X: c.crest.WetDiameter / 2 * micro,

@@ -35,6 +35,9 @@ type Line struct {
 	Dash   Dash
 	X, Y   []float64
 	Crest  bool // its extrema count when the frame is fitted
+	// Extrema are the X of the extrema where they are known; nil: they are found
+	// among the points.
+	Extrema []float64
 }
 
 // MarkKind says what a mark stands for.

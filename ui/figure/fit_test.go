@@ -152,7 +152,7 @@ func TestTicksAreRound(t *testing.T) {
 
 func TestTickLabels(t *testing.T) {
 	for v, want := range map[float64]string{
-		0: "0", 0.2: "0.2", 0.001: "0.001", 0.0005: "5e-4", 1e-9: "1e-9", 50: "50", 10000: "10000", 1e5: "1e5", -0.25: "-0.25",
+		0: "0", 0.2: "0.2", 0.001: "0.001", 0.0005: "0.0005", 0.00005: "5e-5", 1e-9: "1e-9", 50: "50", 10000: "10000", 1e5: "1e5", -0.25: "-0.25",
 	} {
 		if got := TickLabel(v); got != want {
 			t.Errorf("%g: got %s, want %s", v, got, want)
@@ -183,6 +183,21 @@ func TestTurningPoints(t *testing.T) {
 				t.Errorf("%s: got %v, want %v", name, got, c.want)
 			}
 		}
+	}
+}
+
+// Where the extrema are known, a rise at the end of what a formula can say is none.
+func TestFitKnowsExtrema(t *testing.T) {
+	l := Line{X: []float64{1, 2, 3, 4, 5, 6}, Y: []float64{20, -100, -1, 0.3, 0.2, 0.1}, Crest: true}
+	free, _ := Fit(Figure{Lines: []Line{l}}, Frame{}, 12)
+	l.Extrema = []float64{4}
+	known, _ := Fit(Figure{Lines: []Line{l}}, Frame{}, 12)
+	if free.YMin > -100 || known.YMin < -0.5 || known.YMax < 0.3 || known.XMax < 4 {
+		t.Errorf("found %+v, known %+v", free, known)
+	}
+	l.Extrema = []float64{4.5} // none of the points
+	if again, _ := Fit(Figure{Lines: []Line{l}}, Frame{}, 12); again != free {
+		t.Errorf("with extrema off the line %+v, want %+v", again, free)
 	}
 }
 

@@ -15,7 +15,7 @@ type glyphSet struct {
 
 var boxGlyphs = glyphSet{
 	bar: '│', barLabelled: '┤', corner: '└', floor: '─', tick: '┬', zero: '╌',
-	crest: '◆', haze: '▼', point: '●', up: '▲', down: '▼', left: '←', right: '→',
+	crest: '◆', haze: '○', point: '●', up: '▲', down: '▼', left: '←', right: '→',
 	lines: [3]asciigraph.CharSet{
 		Solid: {
 			Horizontal: "─", VerticalLine: "│", ArcDownRight: "╭", ArcDownLeft: "╮", ArcUpRight: "╰", ArcUpLeft: "╯",
@@ -31,7 +31,7 @@ var boxGlyphs = glyphSet{
 
 var asciiGlyphs = glyphSet{
 	bar: '|', barLabelled: '+', corner: '+', floor: '-', tick: '+', zero: '-',
-	crest: '#', haze: 'v', point: 'o', up: '^', down: 'v', left: '<', right: '>',
+	crest: '#', haze: 'o', point: '@', up: '^', down: 'v', left: '<', right: '>',
 	lines: [3]asciigraph.CharSet{
 		Solid: dots("*"),
 		Dashed: {

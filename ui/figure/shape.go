@@ -1,6 +1,9 @@
 package figure
 
-import "math"
+import (
+	"math"
+	"slices"
+)
 
 // usable leaves out what cannot be drawn: NaN, infinities, and numbers so large
 // or small that arithmetic with them would end there.
@@ -35,7 +38,7 @@ func shapeOf(l Line, log bool) (shape, bool) {
 	}
 	s := shape{crest: math.Inf(-1), bottom: math.Inf(1), end: x[len(x)-1]}
 	first := -1
-	for _, i := range turns(y, 0.002*math.Abs(top)) {
+	for _, i := range l.turns(x, y, 0.002*math.Abs(top)) {
 		if first < 0 {
 			first = i
 		}
@@ -55,6 +58,20 @@ func shapeOf(l Line, log bool) (shape, bool) {
 	}
 	s.entry = entryOf(x, y, first, s.low)
 	return s, true
+}
+
+// turns returns the indices of the extrema of a line through x, y.
+func (l Line) turns(x, y []float64, least float64) []int {
+	var at []int
+	for _, e := range l.Extrema {
+		if i := slices.Index(x, e); i >= 0 {
+			at = append(at, i)
+		}
+	}
+	if len(at) > 0 {
+		return at
+	}
+	return turns(y, least)
 }
 
 // entryOf is where the line, followed to the left from its first extremum,

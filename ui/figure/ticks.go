@@ -120,7 +120,7 @@ func tidy(v, step float64) float64 {
 // TickLabel writes a round value: plainly where that is short, with a power of
 // ten where it is not.
 func TickLabel(v float64) string {
-	if a := math.Abs(v); v != 0 && (a < 0.00099 || a >= 99999.5) {
+	if a := math.Abs(v); v != 0 && (a < 0.000099 || a >= 99999.5) {
 		return short(strconv.FormatFloat(v, 'e', -1, 64))
 	}
 	return strconv.FormatFloat(v, 'f', -1, 64)
@@ -155,13 +155,18 @@ func rowLabels(fr Frame, rows int) (labels []string, widest int) {
 	for places < 6 && math.Abs(spacing*math.Pow10(places)-math.Round(spacing*math.Pow10(places))) > 1e-6 {
 		places++
 	}
-	plainly := spacing > 0.99e-4 && math.Max(math.Abs(fr.YMin), fr.YMax) < 99999.5
+	plainly := spacing > 0.99e-5 && math.Max(math.Abs(fr.YMin), fr.YMax) < 99999.5
 	for i := range labels {
 		if (first+i)%every != 0 {
 			continue
 		}
 		v := tidy(float64(first+i)*fr.YStep, fr.YStep)
-		if labels[i] = strconv.FormatFloat(v, 'f', places, 64); !plainly && v != 0 {
+		switch {
+		case plainly:
+			labels[i] = strconv.FormatFloat(v, 'f', places, 64)
+		case v == 0:
+			labels[i] = "0"
+		default:
 			labels[i] = short(strconv.FormatFloat(v, 'e', -1, 64))
 		}
 		widest = max(widest, len(labels[i]))
