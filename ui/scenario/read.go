@@ -6,17 +6,12 @@ import (
 	"io"
 	"strings"
 
-	"github.com/pelletier/go-toml/v2"
 	"github.com/pelletier/go-toml/v2/unstable"
 
 	"dropcrest/solutes"
 	"dropcrest/ui/near"
 	"dropcrest/ui/plain"
 )
-
-// largest is far more than any scenario; it keeps a wrong file from filling the
-// memory.
-const largest = 1 << 20
 
 // Decode reads a scenario file. Keys that are absent keep their defaults; a file
 // that names components has no others. The error is FileErrors: all that is wrong,
@@ -35,17 +30,10 @@ func DecodeUsing(c *solutes.Catalogue, name string, r io.Reader) (Scenario, erro
 }
 
 func decode(name string, r io.Reader, s Scenario) (Scenario, error) {
-	text, err := io.ReadAll(io.LimitReader(r, largest+1))
+	name = plain.Clean(name)
+	text, _, err := ReadTOML(name, r, "scenario file")
 	if err != nil {
 		return s, err
-	}
-	name = plain.Clean(name)
-	if len(text) > largest {
-		return s, FileErrors{{name, 1, 1, "", errors.New("larger than 1 MiB, which no scenario file is")}}
-	}
-	var any map[string]any
-	if err := toml.Unmarshal(text, &any); err != nil {
-		return s, syntaxError(name, err)
 	}
 	f := file{name: name, s: &s}
 	f.walk(text)
@@ -56,16 +44,6 @@ func decode(name string, r io.Reader, s Scenario) (Scenario, error) {
 		return s, f.problems
 	}
 	return s, nil
-}
-
-func syntaxError(name string, err error) FileErrors {
-	var at *toml.DecodeError
-	if !errors.As(err, &at) {
-		return FileErrors{{name, 1, 1, "", errors.New(plain.Clean(err.Error()))}}
-	}
-	line, column := at.Position()
-	text := strings.TrimPrefix(at.Error(), "toml: ")
-	return FileErrors{{name, line, column, plain.Clean(strings.Join(at.Key(), ".")), errors.New("no TOML: " + plain.Clean(text))}}
 }
 
 // file is a scenario file that is being read. Its syntax was checked before.
@@ -101,10 +79,7 @@ func (f *file) walk(text []byte) {
 }
 
 func (f *file) position(n *unstable.Node) unstable.Position {
-	if n.Raw.Length == 0 && len(n.Data) > 0 {
-		return f.parser.Shape(f.parser.Range(n.Data)).Start
-	}
-	return f.parser.Shape(n.Raw).Start
+	return f.parser.Shape(NodeRange(&f.parser, n)).Start
 }
 
 func (f *file) fail(at unstable.Position, key string, err error) {
@@ -178,8 +153,12 @@ func (f *file) keyValue(n *unstable.Node) {
 	}
 	for _, in := range inputs {
 		if in.Key() == name {
-			f.where[in.Path()] = f.position(n.Value())
-			f.set(in, n.Value())
+			value := n.Value()
+			f.where[in.Path()] = f.position(value)
+			if NodeRange(&f.parser, value).Length == 0 { // an empty list
+				f.where[in.Path()] = at
+			}
+			f.set(in, value)
 			return
 		}
 	}
@@ -205,22 +184,23 @@ func (f *file) version(n *unstable.Node) {
 }
 
 func (f *file) set(in Input, n *unstable.Node) {
+	at := f.where[in.Path()]
 	switch n.Kind {
 	case unstable.String, unstable.Integer, unstable.Float:
 	default:
-		f.fail(f.position(n), in.Key(), &ValueError{Problem: "neither text nor a number", Right: in.Range()})
+		f.fail(at, in.Key(), &ValueError{Problem: "neither text nor a number", Right: in.Range()})
 		return
 	}
 	text := string(n.Data)
 	if n.Kind == unstable.Integer && !isDecimal(text) {
-		f.fail(f.position(n), in.Key(), &ValueError{Problem: shortened(text) + " is no decimal number", Right: in.Range()})
+		f.fail(at, in.Key(), &ValueError{Problem: shortened(text) + " is no decimal number", Right: in.Range()})
 		return
 	}
 	if n.Kind != unstable.String {
 		text = strings.ReplaceAll(text, "_", "")
 	}
 	if err := in.SetWithUnit(text); err != nil {
-		f.fail(f.position(n), in.Key(), err)
+		f.fail(at, in.Key(), err)
 	}
 }
 
