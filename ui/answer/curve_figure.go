@@ -1,7 +1,7 @@
 package answer
 
 import (
-	"fmt"
+	"cmp"
 	"math"
 	"slices"
 
@@ -39,7 +39,9 @@ func (c *curve) dense() []koehler.State {
 		}
 	}
 	for _, h := range c.haze {
-		bottom = math.Min(bottom, h.Water/2)
+		if h.Water > 0 {
+			bottom = math.Min(bottom, h.Water/2)
+		}
 	}
 	near, far := 1e3*top, 1e7*top                    // 10 and 200 times the crest's size
 	if from := c.asked.FromRadius; from.Word == "" { // the frame may reach a decade beyond
@@ -56,9 +58,11 @@ func (c *curve) dense() []koehler.State {
 		line = append(line, e.State)
 	}
 	for _, h := range c.haze {
-		line = append(line, h.State)
+		if h.isOnLine() {
+			line = append(line, h.State)
+		}
 	}
-	slices.SortStableFunc(line, func(a, b koehler.State) int { return compare(a.WetDiameter, b.WetDiameter) })
+	slices.SortStableFunc(line, bySize)
 	return line
 }
 
@@ -75,15 +79,7 @@ func (c *curve) waterAt(radius float64) float64 {
 	return u
 }
 
-func compare(a, b float64) int {
-	switch {
-	case a < b:
-		return -1
-	case a > b:
-		return 1
-	}
-	return 0
-}
+func bySize(a, b koehler.State) int { return cmp.Compare(a.WetDiameter, b.WetDiameter) }
 
 // between appends n states from u = lo to u = hi.
 func (c *curve) between(line []koehler.State, lo, hi float64, n int) []koehler.State {
@@ -117,66 +113,25 @@ func (c *curve) sample(lo, hi float64, n int) []koehler.State {
 	return out
 }
 
-// figure is the picture: the line with its crest and the drop at the humidity.
+// figure is the picture: lines and marks.
 func (c *curve) figure() figure.Figure {
 	f := figure.Figure{
 		Key: "curve", Title: "supersaturation, % against wet radius, µm",
 		X: figure.Axis{Says: "wet radius", Unit: "µm", Log: true},
 		Y: figure.Axis{Says: "supersaturation", Unit: "%"},
 	}
-	current := figure.Line{Crest: true}
-	current.X, current.Y = c.points(func(s koehler.State) float64 { return s.Supersaturation })
-	for _, e := range c.extrema {
-		current.Extrema = append(current.Extrema, e.WetDiameter/2*micro)
-	}
-	f.Lines = []figure.Line{current}
-	if c.noCrest == nil {
-		f.Marks = append(f.Marks, figure.Mark{Kind: figure.CrestMark, X: c.crest.WetDiameter / 2 * micro,
-			Y: 100 * c.crest.Supersaturation, Text: percent(c.crest.Supersaturation)})
-	}
-	for _, h := range c.haze {
-		if math.IsNaN(h.WetDiameter) {
-			continue // partly dissolved
-		}
-		m := figure.Mark{Kind: figure.HazeMark, X: h.WetDiameter / 2 * micro, Y: 100 * h.Supersaturation,
-			Text: fmt.Sprintf("haze %s at %s", micrometres(h.WetDiameter/2), humidity(c.asked.RelativeHumidity))}
-		switch h.branch {
-		case "unstable":
-			m.Kind, m.Text = figure.PointMark, "unstable "+micrometres(h.WetDiameter/2)
-		case "dissolved":
-			continue // on another line
-		case "metastable":
-			m.Kind, m.Text = figure.PointMark, "supersaturated drop "+micrometres(h.WetDiameter/2)
-			if len(c.haze) == 1 || c.haze[0].branch == "metastable" {
-				m.Kind = figure.HazeMark
-			}
-		case "dry":
-			if c.haze[0].branch != "dry" {
-				continue
-			}
-			m.Text = "dry at " + humidity(c.asked.RelativeHumidity)
-		}
-		f.Marks = append(f.Marks, m)
-	}
+	f.Lines = c.lines()
+	f.Marks = c.marks()
 	return f
 }
 
 // others are the two effects alone, along the line.
 func (c *curve) others() []figure.Line {
 	kelvin := figure.Line{Says: "Kelvin only", Dash: figure.Dotted}
-	kelvin.X, kelvin.Y = c.points(func(s koehler.State) float64 { return s.KelvinFactor - 1 })
+	kelvin.X, kelvin.Y = coordinates(c.line, func(s koehler.State) float64 { return s.KelvinFactor - 1 })
 	raoult := figure.Line{Says: "Raoult only", Dash: figure.Dotted, X: kelvin.X}
-	_, raoult.Y = c.points(func(s koehler.State) float64 { return s.WaterActivity - 1 })
+	_, raoult.Y = coordinates(c.line, func(s koehler.State) float64 { return s.WaterActivity - 1 })
 	return []figure.Line{kelvin, raoult}
-}
-
-// points are the coordinates of the dense line in shown units.
-func (c *curve) points(of func(koehler.State) float64) (x, y []float64) {
-	x, y = make([]float64, len(c.line)), make([]float64, len(c.line))
-	for i, s := range c.line {
-		x[i], y[i] = s.WetDiameter/2*micro, 100*of(s)
-	}
-	return x, y
 }
 
 // CurveFrame is the frame for a picture of h rows, with the ends of the wet
@@ -200,7 +155,8 @@ func CurveFrame(s scenario.Scenario, f figure.Figure, last figure.Frame, h int) 
 	return fr, refitted
 }
 
-// HeldLine is the line of an answer as a held curve, and the mark of its crest.
+// HeldLine is the line of an answer as a held curve, and the mark of its barrier,
+// which is the first one.
 func HeldLine(letter rune, a Answer) (figure.Line, []figure.Mark) {
 	if len(a.Figures) == 0 || len(a.Figures[0].Lines) == 0 {
 		return figure.Line{Letter: letter, Dash: figure.Dashed}, nil
@@ -212,6 +168,7 @@ func HeldLine(letter rune, a Answer) (figure.Line, []figure.Mark) {
 		if m.Kind == figure.CrestMark {
 			m.Letter = letter
 			marks = append(marks, m)
+			break
 		}
 	}
 	return line, marks
