@@ -3,7 +3,6 @@ package answer
 import (
 	"errors"
 	"fmt"
-	"math"
 	"strings"
 
 	"dropcrest/atmos"
@@ -18,8 +17,10 @@ func (c *curve) finding(limits []atmos.Note) []string {
 	if c.hasTwin {
 		out = []string{c.crestSentence(), c.twinSentence(), c.hazeSentence()}
 	}
-	if len(limits) > 0 {
-		out = append(out, limits[0].Text)
+	for _, n := range limits {
+		if n.Code != aboveCrest { // the drop's sentence has said it
+			return append(out, n.Text)
+		}
 	}
 	return out
 }
@@ -38,7 +39,7 @@ func (c *curve) crestSentence() string {
 			at, micrometres(c.particle.DryDiameter/2))
 	}
 	inside := "water activity " + activity(c.crest.WaterActivity)
-	if m := c.molality(); !math.IsNaN(m) {
+	if m := c.molality(); m > 0 { // of a κ without a molar mass it is not known
 		inside += ", " + digits(m, 3) + " mol/kg"
 	}
 	return fmt.Sprintf("It crosses at %s supersaturation, where its wet radius is %s (%s times the dry radius; %s)%s.",
@@ -87,11 +88,12 @@ func (c *curve) hazeSentence() string {
 // hazeWords say what the particle is in one of its states.
 func (c *curve) hazeWords(h hazeState) string {
 	radius := micrometres(h.WetDiameter / 2)
+	times := digits(c.growth(h.State), 3)
 	switch h.branch {
 	case "unstable":
 		return fmt.Sprintf("; a drop larger than %s would grow on", radius)
 	case "dissolved":
-		return fmt.Sprintf("; already dissolved it is haze of %s", radius)
+		return fmt.Sprintf("; already dissolved it is haze of %s radius (growth factor %s)", radius, times)
 	case "dry":
 		if over := c.phase.Over.Uptake; c.asked.RelativeHumidity < over {
 			return fmt.Sprintf("it is dry and takes up water from %s on", humidity(roundTo(over, 3)))
@@ -100,9 +102,9 @@ func (c *curve) hazeWords(h hazeState) string {
 	case "partly_dissolved":
 		return "it is partly dissolved, of a size that is not known"
 	case "metastable":
-		return fmt.Sprintf("it is a supersaturated drop of %s radius, down to %s", radius, humidity(roundTo(c.phase.Over.Efflorescence, 3)))
+		return fmt.Sprintf("it is a supersaturated drop of %s radius (growth factor %s), down to %s", radius, times, humidity(roundTo(c.phase.Over.Efflorescence, 3)))
 	}
-	return fmt.Sprintf("it is haze of %s radius", radius)
+	return fmt.Sprintf("it is haze of %s radius (growth factor %s)", radius, times)
 }
 
 // otherHistory is the history that was not asked for.

@@ -2,6 +2,7 @@ package answer
 
 import (
 	"fmt"
+	"math"
 	"slices"
 	"strings"
 
@@ -9,6 +10,29 @@ import (
 	"dropcrest/koehler"
 	"dropcrest/ui/scenario"
 )
+
+const (
+	// aboveCrest is the code of the note that there is no haze size.
+	aboveCrest = "humidity-above-crest"
+	// fewMolecules is the number of water molecules below which bulk properties
+	// are doubted: a drop of 2 nm radius. Common practice.
+	fewMolecules = 1000.0
+	// freezing is the temperature (K), -38 °C, below which cloud drops freeze
+	// homogeneously. From memory.
+	freezing = 235.15
+	// avogadro is the number of molecules per mol (CODATA 2018, exact).
+	avogadro = 6.02214076e23
+)
+
+// molecules is how many molecules of water the drop has at its crest; endless
+// when there is no crest in solution.
+func (c *curve) molecules() float64 {
+	if c.noCrest != nil || !(c.crest.Water > 0) {
+		return math.Inf(1)
+	}
+	dry := math.Pi / 6 * math.Pow(c.particle.DryDiameter, 3)
+	return c.crest.Water * dry * c.dissolved.WaterDensity / atmos.WaterMolarMass * avogadro
+}
 
 // limits are the notes that say in words what limits the crest and the haze
 // size, the most important first. from and to are the ends of the wet radius
@@ -22,17 +46,23 @@ func (c *curve) limits(from, to float64) []atmos.Note {
 		add("frame-below-particle", "to-radius", "No drop is as small as the wet radii asked for, up to %s: the dry particle has %s.",
 			micrometres(to), micrometres(dry))
 	}
-	if c.noCrest == nil && c.crest.Kind == koehler.BoundaryMaximum {
+	if c.noCrest == nil && c.crest.Kind == koehler.BoundaryMaximum && !c.hasTwin {
 		add("barrier-at-dry-size", "component", "There is no crest in solution: what must be overcome is the curvature of the dry particle, taken as wettable.")
 	}
 	if c.noCrest == nil && c.crest.Kind != koehler.BoundaryMaximum && c.crest.Extrapolated {
 		add("crest-outside-model", "water-activity", "The crest lies where the water activity model is outside its range: it is extrapolated.")
 	}
 	if c.particle.Giant() {
-		add("giant-nucleus", "dry-diameter", "This is a giant nucleus: growth to its crest%s takes longer than a cloud gives it, so equilibrium is not the question.", c.crestRadius())
+		add("giant-nucleus", "dry-diameter", "This is a giant nucleus: growth to its crest%s takes longer than a cloud lasts, so kinetics decide and not equilibrium.", c.crestRadius())
+	}
+	if n := c.molecules(); n < fewMolecules {
+		add("few-molecules", "dry-diameter", "The drop at its crest has about %s molecules of water: whether so few have the surface tension and the activity of bulk water is not known.", digits(n, 2))
+	}
+	if c.asked.Temperature < freezing {
+		add("freezes-by-itself", "temperature", "At %s dilute drops freeze without an ice nucleus: the curve is that of a drop that is still liquid.", celsius(c.asked.Temperature))
 	}
 	if c.pastCrest() {
-		add("humidity-above-crest", "relative-humidity", "The humidity looked at, %s, is not below the crest at %s: there is no haze size.",
+		add(aboveCrest, "relative-humidity", "The humidity looked at, %s, is not below the crest at %s: there is no haze size.",
 			humidity(c.asked.RelativeHumidity), percent(c.crest.Supersaturation))
 	}
 	least := c.dissolved.Solution.LeastWater()

@@ -91,7 +91,7 @@ func TestLimitsAreSaid(t *testing.T) {
 		finding string
 	}{
 		"shares":             {[]string{"component=ammonium sulfate share=1", "component=sodium chloride share=0.25"}, "shares-scaled", ""},
-		"giant nucleus":      {[]string{"dry-diameter=3000nm"}, "giant-nucleus", "takes longer than a cloud gives it"},
+		"giant nucleus":      {[]string{"dry-diameter=3000nm"}, "giant-nucleus", "kinetics decide and not equilibrium"},
 		"above the crest":    {[]string{"relative-humidity=101%"}, "humidity-above-crest", "it grows to a cloud droplet"},
 		"insoluble":          {append(kappa, "kappa=0"), "barrier-at-dry-size", "the Kelvin barrier at its dry radius"},
 		"insoluble is dry":   {append(kappa, "kappa=0"), "barrier-at-dry-size", "it stays dry"},

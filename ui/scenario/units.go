@@ -75,7 +75,7 @@ var (
 
 // doubtFraction refuses a bare humidity that may be meant as a fraction.
 func doubtFraction(x float64) (problem, right string) {
-	if x < 0 || x > 1.1 {
+	if x <= 0 || x > 1.1 {
 		return "", ""
 	}
 	return fmt.Sprintf("%s may be a fraction or per cent", figures(x)),

@@ -141,6 +141,9 @@ func TestBareNumbers(t *testing.T) {
 	if err := at(t, &s, "relative-humidity").Set("90"); err != nil || s.RelativeHumidity != 0.9 {
 		t.Errorf("90 is %v, %v", s.RelativeHumidity, err)
 	}
+	if err := at(t, &s, "relative-humidity").Set("0"); err == nil || !strings.Contains(err.Error(), "too small") {
+		t.Errorf("0: %v", err) // it is the same in either unit
+	}
 	for _, text := range []string{"0.95", "1", "1.05"} {
 		err := at(t, &s, "relative-humidity").Set(text)
 		if err == nil || !strings.Contains(err.Error(), text+"%") {

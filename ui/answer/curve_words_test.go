@@ -1,0 +1,37 @@
+package answer
+
+import (
+	"slices"
+	"strings"
+	"testing"
+)
+
+// What a scientist would miss is said, and nothing is said twice or of the wrong
+// particle.
+func TestWordsOfTheFinding(t *testing.T) {
+	for name, c := range map[string]struct {
+		values     []string
+		code       string // among the notes, "" for none
+		says, hush string
+	}{
+		"growth factor":         {nil, "", "it is haze of 0.102 µm radius (growth factor 2.03)", ""},
+		"few molecules":         {[]string{"dry-diameter=1nm"}, "few-molecules", "has about 33 molecules of water", ""},
+		"many molecules":        {[]string{"dry-diameter=20nm"}, "", "", "molecules"},
+		"drops that freeze":     {[]string{"temperature=-40C"}, "freezes-by-itself", "freeze without an ice nucleus", ""},
+		"supercooled":           {[]string{"temperature=-20C"}, "", "", "freeze"},
+		"above the crest, once": {[]string{"relative-humidity=101%"}, "humidity-above-crest", "it has no equilibrium size", "is not below the crest"},
+		"no molar mass":         {[]string{"component=mineral dust"}, "", "water activity 0.99564)", "mol/kg"},
+		"crest once dissolved":  {[]string{"component=succinic acid", "water-activity=kappa"}, "", "Already dissolved it crosses", "There is no crest in solution"},
+	} {
+		t.Run(name, func(t *testing.T) {
+			a := asked(t, c.values...)
+			all := strings.Join(a.Finding, " ")
+			if !strings.Contains(all, c.says) || c.hush != "" && strings.Contains(all, c.hush) {
+				t.Errorf("finding %q, want %q in it and not %q", all, c.says, c.hush)
+			}
+			if c.code != "" && !slices.Contains(codes(a), c.code) {
+				t.Errorf("notes %q, want %q among them", codes(a), c.code)
+			}
+		})
+	}
+}
