@@ -18,18 +18,19 @@ func Keys() []Key {
 
 // meanings say in a list of keys what the help line says in a word.
 var meanings = map[string]string{
-	"choose": "choose a slot of the question; behind the last slot stands the finding",
-	"change": "change its value by a natural step; in a list of words: the word above, below",
-	"type":   "type a value with its unit, such as 0.25 um; so do . - +",
-	"open":   "open what lies behind the slot: an entry, a list of words, rows",
-	"page":   "next page",
-	"hold":   "hold this curve, with a letter, to compare others with it",
-	"table":  "table of the numbers behind the picture",
-	"about":  "about the slot: what it is, its range, where its default comes from; about the finding: formulas, constants, sources",
-	"undo":   "undo the last change; a run of steps on one slot is one change",
-	"redo":   "redo what was undone",
-	"keys":   "keys: this list",
-	"leave":  "leave; the session is kept, and so it is by ctrl+c",
+	"choose":      "choose a slot of the question; behind the last slot stands the finding",
+	"change":      "change its value by a natural step; in a list of words: the word above, below",
+	"type":        "type a value with its unit, such as 0.25 um; so do . - +",
+	"open":        "open what lies behind the slot: an entry, a list of words, rows",
+	"page":        "next page",
+	"hold":        "hold this curve, with a letter, to compare others with it",
+	"other lines": "other lines behind the curve, such as Kelvin only: all, each alone, none",
+	"table":       "table of the numbers behind the picture",
+	"about":       "about the slot: what it is, its range, where its default comes from; about the finding: formulas, constants, sources",
+	"undo":        "undo the last change; a run of steps on one slot is one change",
+	"redo":        "redo what was undone",
+	"keys":        "keys: this list",
+	"leave":       "leave; the session is kept, and so it is by ctrl+c",
 }
 
 func inFull(does string) string {

@@ -139,6 +139,14 @@ func (l *list) take(m *model) panel {
 	return l.back
 }
 
+// nothing says what can be done when no word holds what is typed.
+func (l *list) nothing() string {
+	if l.kind == scenario.Text {
+		return "none of the list; Enter looks it up as a formula or another name"
+	}
+	return "none of the list; Backspace widens it again"
+}
+
 // number opens an entry in place of the list.
 func (l *list) number(first rune, m *model) panel {
 	in, ok := scenario.Find(&m.scenario, l.path)
@@ -168,6 +176,9 @@ func (l *list) lines(w, h int, m *model) []string {
 	wide := 0
 	for _, o := range items {
 		wide = max(wide, ansi.StringWidth(m.text(o.Word)))
+	}
+	if len(items) == 0 && l.wrong == nil {
+		out = append(out, m.dim(" "+m.text(l.nothing())))
 	}
 	for i := first; i < end; i++ {
 		out = append(out, l.line(items[i], i == l.at, min(wide, w/2), m))

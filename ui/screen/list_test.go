@@ -75,3 +75,12 @@ func TestListNarrows(t *testing.T) {
 		t.Errorf("at %d of %d", l.at, len(l.all))
 	}
 }
+
+// A name that is in no list is said not to be, before Enter looks it up.
+func TestListWithoutItems(t *testing.T) {
+	m := opened(onTerminal("plain"), 80, 24)
+	press(m, "right right enter enter x x")
+	if view := m.View(); !strings.Contains(view, "none of the list; Enter looks it up") {
+		t.Errorf("no word of it in\n%s", view)
+	}
+}

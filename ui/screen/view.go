@@ -146,6 +146,13 @@ func (m *model) finding(w int) []string {
 	if !m.roomy() {
 		sentences = sentences[:min(len(sentences), 1)]
 	}
+	if n := m.unsaid(); n > 0 && m.roomy() && m.unsolved == "" {
+		says := "1 more note"
+		if n > 1 {
+			says = fmt.Sprintf("%d more notes", n)
+		}
+		sentences = append(slices.Clone(sentences), "("+says+": End, i)")
+	}
 	text := m.text(strings.Join(sentences, " "))
 	if m.work.old {
 		text = "(of the question before) " + text
@@ -159,6 +166,17 @@ func (m *model) finding(w int) []string {
 		lines = padTo(lines, leastFinding)
 	}
 	return lines
+}
+
+// unsaid is the number of notes that the finding leaves to i.
+func (m *model) unsaid() int {
+	n := 0
+	for _, note := range m.answer.Notes {
+		if !slices.Contains(m.answer.Finding, note.Text) {
+			n++
+		}
+	}
+	return n
 }
 
 // rangeLine says what the chosen slot takes and, at its right, the message of

@@ -210,6 +210,21 @@ func TestTextFromFilesIsCleaned(t *testing.T) {
 	}
 }
 
+// What the finding leaves to i is counted, where there is room for more than its
+// first sentence.
+func TestUnsaidNotesAreCounted(t *testing.T) {
+	o := onTerminal("plain")
+	o.Scenario.Temperature = 243.15
+	m := opened(o, 80, 24)
+	text := strings.Join(m.finding(200), " ")
+	if n := len(m.answer.Notes) - 1; n < 2 || !strings.HasSuffix(text, fmt.Sprintf("(%d more notes: End, i)", n)) {
+		t.Errorf("%d notes, finding %q", len(m.answer.Notes), text)
+	}
+	if start := strings.Join(opened(onTerminal("plain"), 80, 24).finding(80), " "); strings.Contains(start, "more note") {
+		t.Errorf("notes of a particle that has none: %q", start)
+	}
+}
+
 // A scenario without an answer is shown with the reason, and can be put right.
 func TestUnsolvedStart(t *testing.T) {
 	o := onTerminal("plain")
