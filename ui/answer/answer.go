@@ -16,6 +16,7 @@ type Env struct {
 	Substances *solutes.Catalogue
 	Version    string
 	Workers    int                     // 0: one
+	Kept       *Kept                   // nil: nothing is kept from one question to the next
 	Progress   func(done, total int64) // nil: nobody listens
 }
 
@@ -24,6 +25,7 @@ type Question struct {
 	Key   string // "curve"
 	Title string // "Curve"
 	Says  string // the question in one sentence
+	Groups []Group // the inputs that it looks at, in the order of the help
 	Live  bool   // answered within a frame, inside Update
 
 	// Statement is the question in prose, one clause a line; {path} stands for

@@ -16,6 +16,7 @@ func curveQuestion() Question {
 		Key:       "curve",
 		Title:     "Curve",
 		Says:      "Over which saturation is a droplet grown on this dry particle in equilibrium, and which crest must it cross to become a cloud droplet?",
+		Groups:    curveGroups,
 		Live:      true,
 		Statement: curveStatement,
 		Ask:       askCurve,
@@ -42,9 +43,10 @@ type curve struct {
 	twinCrest koehler.Crest
 	hasTwin   bool
 
-	flat     solutes.Phases // humidities over a flat surface; NaN: not known
-	phase    koehler.Hysteresis
-	hasPhase bool
+	flat       solutes.Phases // humidities over a flat surface; NaN: not known
+	phase      koehler.Hysteresis
+	hasPhase   bool
+	isDoubtful bool // whether the drop has dissolved is not known
 
 	line  []koehler.State // dense, with the extrema, far to both sides
 	table []koehler.State // what is printed: Points states over the frame

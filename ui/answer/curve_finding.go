@@ -30,34 +30,46 @@ func (c *curve) crestSentence() string {
 		return fmt.Sprintf("It has no crest: %s.", strings.TrimSuffix(reason(c.noCrest), "."))
 	}
 	at := percent(c.crest.Supersaturation)
-	if _, limited := c.dissolved.Solution.(*solutes.Limited); limited && c.crest.Kind == koehler.BoundaryMaximum {
-		return fmt.Sprintf("Started dry it must first dissolve: the barrier is %s supersaturation at its dry surface, of %s radius%s.",
-			at, micrometres(c.particle.DryDiameter/2), c.placeWords())
-	}
-	if c.crest.Kind == koehler.BoundaryMaximum {
+	dry := micrometres(c.particle.DryDiameter / 2)
+	switch {
+	case c.crest.Kind == koehler.BoundaryMaximum && c.isLimited():
+		return fmt.Sprintf("Started dry it crosses at %s supersaturation: the barrier is its dissolution at the dry surface of %s radius%s.",
+			at, dry, c.placeWords())
+	case c.crest.Kind == koehler.BoundaryMaximum:
 		return fmt.Sprintf("It must be wetted at %s supersaturation, the Kelvin barrier at its dry radius of %s; from there it grows without another crest.",
-			at, micrometres(c.particle.DryDiameter/2))
+			at, dry)
 	}
 	inside := "water activity " + activity(c.crest.WaterActivity)
 	if m := c.molality(); m > 0 { // of a κ without a molar mass it is not known
 		inside += ", " + digits(m, 3) + " mol/kg"
 	}
-	return fmt.Sprintf("It crosses at %s supersaturation, where its wet radius is %s (%s times the dry radius; %s)%s.",
-		at, micrometres(c.crest.WetDiameter/2), digits(c.crest.GrowthFactor, 3), inside, c.placeWords())
+	if c.dissolved.Film != nil {
+		inside += ", surface tension " + digits(c.crest.SurfaceTension*1e3, 3) + " mN/m"
+	}
+	start := "It crosses"
+	if c.hasTwin {
+		start = "Started dry it crosses"
+	}
+	return fmt.Sprintf("%s at %s supersaturation, where its wet radius is %s (%s times the dry radius; %s)%s.",
+		start, at, micrometres(c.crest.WetDiameter/2), digits(c.crest.GrowthFactor, 3), inside, c.placeWords())
 }
 
-// placeWords say which of several maxima the barrier is.
+func (c *curve) isLimited() bool {
+	_, limited := c.dissolved.Solution.(*solutes.Limited)
+	return limited
+}
+
+// placeWords say which of several maxima the barrier is, and whether it is crossed
+// before all is dissolved.
 func (c *curve) placeWords() string {
-	maxima := 0
-	for _, e := range c.extrema {
-		if e.Kind == koehler.Maximum || e.Kind == koehler.BoundaryMaximum {
-			maxima++
-		}
+	says := ""
+	if n := len(c.otherMaxima()) + 1; n > 1 {
+		says = fmt.Sprintf(", the %s of %s", c.crest.Place, maximaWords(n))
 	}
-	if maxima < 2 {
-		return ""
+	if mix, ok := c.dissolved.Solution.(*solutes.Limited); ok && c.crest.Kind == koehler.Maximum && mix.SegmentAt(c.crest.Water) < mix.Points() {
+		says += ", with part of it undissolved"
 	}
-	return fmt.Sprintf(", the %s of %d maxima", c.crest.Place, maxima)
+	return says
 }
 
 // twinSentence is what the particle does once it has been dissolved.
@@ -96,7 +108,8 @@ func (c *curve) hazeWords(h hazeState) string {
 		return fmt.Sprintf("; already dissolved it is haze of %s radius (growth factor %s)", radius, times)
 	case "dry":
 		if over := c.phase.Over.Uptake; c.asked.RelativeHumidity < over {
-			return fmt.Sprintf("it is dry and takes up water from %s on", humidity(roundTo(over, 3)))
+			return fmt.Sprintf("it is dry and takes up water from %s on (%s over a flat surface)",
+				humidity(roundTo(over, 3)), humidity(roundTo(c.flat.Uptake, 3)))
 		}
 		return "it is dry"
 	case "partly_dissolved":
@@ -104,7 +117,11 @@ func (c *curve) hazeWords(h hazeState) string {
 	case "metastable":
 		return fmt.Sprintf("it is a supersaturated drop of %s radius (growth factor %s), down to %s", radius, times, humidity(roundTo(c.phase.Over.Efflorescence, 3)))
 	}
-	return fmt.Sprintf("it is haze of %s radius (growth factor %s)", radius, times)
+	says := fmt.Sprintf("it is haze of %s radius (growth factor %s)", radius, times)
+	if c.isDoubtful && h.branch == "stable" {
+		says += " if it is dissolved"
+	}
+	return says
 }
 
 // otherHistory is the history that was not asked for.

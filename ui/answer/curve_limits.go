@@ -34,6 +34,10 @@ func (c *curve) molecules() float64 {
 	return c.crest.Water * dry * c.dissolved.WaterDensity / atmos.WaterMolarMass * avogadro
 }
 
+// worthSaying is the growth, relative to the dry size, below which nobody looks at
+// the curve: a film of the first layer of water on dust.
+const worthSaying = 0.01
+
 // limits are the notes that say in words what limits the crest and the haze
 // size, the most important first. from and to are the ends of the wet radius
 // shown (m).
@@ -42,7 +46,8 @@ func (c *curve) limits(from, to float64) []atmos.Note {
 	add := func(code, input, format string, values ...any) {
 		notes = append(notes, atmos.Note{Code: code, Input: input, Text: fmt.Sprintf(format, values...)})
 	}
-	if dry := c.particle.DryDiameter / 2; to <= dry {
+	dry := c.particle.DryDiameter / 2
+	if to <= dry {
 		add("frame-below-particle", "to-radius", "No drop is as small as the wet radii asked for, up to %s: the dry particle has %s.",
 			micrometres(to), micrometres(dry))
 	}
@@ -73,7 +78,7 @@ func (c *curve) limits(from, to float64) []atmos.Note {
 	}
 	notes = append(notes, c.ranges()...)
 	if least > 0 && c.noCrest == nil {
-		if edge := c.particle.AtWater(least).WetDiameter / 2; edge > from*(1+1e-6) {
+		if edge := c.particle.AtWater(least).WetDiameter / 2; edge > from*(1+1e-6) && edge > dry*(1+worthSaying) {
 			add("curve-outside-model", "water-activity", "Below a wet radius of %s the water activity model is outside its range: the curve is extrapolated there.", micrometres(edge))
 		}
 	}

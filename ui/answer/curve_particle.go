@@ -14,26 +14,21 @@ import (
 // newCurve makes the particle of a scenario.
 func newCurve(env Env, s scenario.Scenario) (*curve, error) {
 	c := &curve{asked: s}
-	recipe, notes, err := newRecipe(env, s)
+	made, err := env.matter(s)
 	if err != nil {
 		return nil, err
 	}
-	dissolved, more, err := dissolve(recipe, s)
-	if err != nil {
-		return nil, recipeError(err)
-	}
-	c.dissolved = dissolved
-	c.parts = recipe.Parts
-	c.notes = distinct(slices.Concat(notes, waterNotes(s), more))
+	c.dissolved, c.parts = made.dissolved, made.parts
+	c.notes = distinct(slices.Concat(made.notes, waterNotes(s), made.more))
 	dry := dryDiameter(s)
 	if !(dry > 0) {
 		return nil, &InputError{Input: "dry-diameter", Text: "no volume-equivalent diameter belongs to this mobility diameter and shape factor"}
 	}
-	c.particle, err = newParticle(dissolved, s, dry)
+	c.particle, err = newParticle(made.dissolved, s, dry)
 	if err != nil {
 		return nil, recipeError(err)
 	}
-	if dissolved.Core != nil {
+	if made.dissolved.Core != nil {
 		c.dissolved.Solution = c.particle.Solution
 	}
 	c.twin, c.hasTwin = c.particle.Dissolved()
@@ -169,7 +164,10 @@ func (c *curve) branches() {
 		return
 	}
 	c.phase, c.hasPhase = h, true
-	if h.Several || h.Now.Branch != solutes.SolutionBranch {
+	crystals, solutions := c.partsAt(h.Now.WaterActivity)
+	c.isDoubtful = h.Now.Branch == solutes.BranchUnknown && crystals > 0
+	isSolution := h.Now.Branch == solutes.SolutionBranch || h.Now.Branch == solutes.BranchUnknown && crystals == 0 && solutions > 0
+	if h.Several || !isSolution {
 		c.notes = distinct(append(c.notes, notes...))
 	}
 	c.haze = c.haze[:0]
@@ -177,6 +175,21 @@ func (c *curve) branches() {
 	if h.Several {
 		c.haze = append(c.haze, c.branched(h.Other))
 	}
+}
+
+// partsAt counts the parts that would be crystals by themselves at that water
+// activity, and those that would dissolve. A mixture dissolves below the
+// deliquescence of each of its parts.
+func (c *curve) partsAt(activity float64) (crystals, solutions int) {
+	for _, p := range c.parts {
+		switch humidity, known := p.Substance.DeliquescenceHumidity(c.asked.Temperature); {
+		case known && activity < humidity:
+			crystals++
+		case known:
+			solutions++
+		}
+	}
+	return crystals, solutions
 }
 
 // branched names the state of a particle on its branch. A drop below the humidity

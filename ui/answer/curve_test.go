@@ -96,7 +96,7 @@ func TestLimitsAreSaid(t *testing.T) {
 		"insoluble":          {append(kappa, "kappa=0"), "barrier-at-dry-size", "the Kelvin barrier at its dry radius"},
 		"insoluble is dry":   {append(kappa, "kappa=0"), "barrier-at-dry-size", "it stays dry"},
 		"extrapolated σ":     {[]string{"temperature=-30C"}, "surface-tension-extrapolated", "surface tension of water is extrapolated"},
-		"deliquescence":      {[]string{"relative-humidity=60%"}, "deliquescence-disputed", "it is dry and takes up water from 81.0 % on; after falling humidity it is a supersaturated drop"},
+		"deliquescence":      {[]string{"relative-humidity=60%"}, "deliquescence-disputed", "it is dry and takes up water from 81.0 % on (79.9 % over a flat surface); after falling humidity it is a supersaturated drop"},
 		"model left by haze": {[]string{"component=calcium nitrate", "relative-humidity=20%", "humidity-history=falling"}, "haze-outside-model", "the water activity model is outside its range"},
 	} {
 		t.Run(name, func(t *testing.T) {
@@ -280,6 +280,9 @@ func TestLineContainsItsMarks(t *testing.T) {
 			t.Errorf("%s: the line turns back", name)
 		}
 		for _, m := range a.Figures[0].Marks {
+			if strings.HasPrefix(m.Text, "dry at") {
+				continue // a crystal is on no line
+			}
 			i, ok := slices.BinarySearch(line.X, m.X)
 			if !ok || math.Abs(line.Y[i]-m.Y) > 1e-6*math.Max(1e-3, math.Abs(m.Y)) {
 				t.Errorf("%s: mark %q at %g, %g is not on the line", name, m.Text, m.X, m.Y)

@@ -16,9 +16,8 @@ const Further scenario.Path = "further"
 func FurtherInputs(q Question, s *scenario.Scenario) []scenario.Input {
 	named := slots(q, *s)
 	var out []scenario.Input
-	for _, in := range scenario.Inputs(s) {
-		own := string(in.Path()) == in.Key()
-		if own && in.Used() && !slices.Contains(named, in.Key()) {
+	for _, in := range q.Inputs(s) {
+		if in.Used() && !slices.Contains(named, in.Key()) {
 			out = append(out, in)
 		}
 	}
@@ -28,7 +27,7 @@ func FurtherInputs(q Question, s *scenario.Scenario) []scenario.Input {
 // FurtherLists are the lists of rows without a slot of their own.
 func FurtherLists(q Question, s *scenario.Scenario) []scenario.RowList {
 	named := slots(q, *s)
-	return slices.DeleteFunc(scenario.Lists(s), func(l scenario.RowList) bool { return slices.Contains(named, l.Key()) })
+	return slices.DeleteFunc(q.Lists(s), func(l scenario.RowList) bool { return slices.Contains(named, l.Key()) })
 }
 
 // slots are the names of the slots of a statement in their order.

@@ -54,6 +54,7 @@ func newModel(o Options) *model {
 		left: map[scenario.Path]string{}, keys: newKeyMap(ascii, len(questions)),
 		styles: newStyles(coloured(o)), ascii: ascii, keeper: keeper{store: o.Store},
 	}
+	m.env.Kept = &answer.Kept{}
 	m.answerFirst()
 	m.settle(0)
 	m.greet(o)
