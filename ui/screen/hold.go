@@ -117,7 +117,7 @@ func (m *model) heldWords(n int, long bool) string {
 			says = append(says, in.Show(m.style()))
 		}
 		for _, l := range scenario.Lists(&s) {
-			if long {
+			if long && l.Len() > 0 {
 				says = append(says, l.Show(m.style()))
 			}
 		}

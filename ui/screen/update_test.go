@@ -144,6 +144,15 @@ func TestHeldLine(t *testing.T) {
 	}
 }
 
+// Lists without rows are not named.
+func TestHeldLineNamesTheMatter(t *testing.T) {
+	m := opened(onTerminal("plain"), 80, 24)
+	press(m, "space")
+	if want, got := "held: A 100 nm ammonium sulfate 0.147 %", m.heldLine(78); got != want {
+		t.Errorf("the line is %q, want %q", got, want)
+	}
+}
+
 // Undo leads back to what was held, though the steps were on one slot.
 func TestUndoAfterHold(t *testing.T) {
 	m := opened(onTerminal("plain"), 80, 24)
