@@ -88,7 +88,11 @@ func newParticle(d solutes.Dissolved, s scenario.Scenario, dry float64) (p koehl
 		}.Particle(dry, s.Temperature, salt)
 	case d.Core != nil:
 		c := d.Core
-		p, err = koehler.Adsorption{A: c.A, B: c.B, SolubleShare: c.SolubleShare, Kappa: c.Kappa}.Particle(dry, s.Temperature)
+		film := koehler.Adsorption{A: c.A, B: c.B, SolubleShare: c.SolubleShare, Kappa: c.Kappa}
+		if len(s.Adsorption) > 0 && s.Adsorption[0].Form == "exponential" {
+			film.Form = koehler.Exponential
+		}
+		p, err = film.Particle(dry, s.Temperature)
 		p.Tension = d.Tension
 	default:
 		p = koehler.Particle{DryDiameter: dry, Temperature: s.Temperature, Solution: d.Solution, Swelling: d.Swelling, Tension: d.Tension}

@@ -39,8 +39,8 @@ var filmList = list[Film]{
 // isothermList is the adsorption of water on insoluble matter.
 var isothermList = list[Isotherm]{
 	key: "adsorption", says: "adsorption",
-	help: "How water adsorbs on insoluble matter, by the isotherm of Frenkel, Halsey and Hill: A=, B=, as in \"A=2.25 B=1.20\". Left out, the values of the " +
-		"catalogue count; A=0 B=1 takes adsorption away.",
+	help: "How water adsorbs on insoluble matter, by the isotherm of Frenkel, Halsey and Hill: A=, B=, and form= for the term of a soluble share, as in " +
+		"\"A=2.25 B=1.20\". Left out, the values of the catalogue count; A=0 B=1 takes adsorption away.",
 	rows: func(s *Scenario) *[]Isotherm { return &s.Adsorption },
 	fields: []field[Isotherm]{
 		{key: "A", says: "A", quantity: isothermA,
@@ -51,8 +51,13 @@ var isothermList = list[Isotherm]{
 			help:   "How fast the hold falls with every layer.",
 			origin: "a common value for mineral dust",
 			at:     func(i *Isotherm) any { return &i.B }},
+		{key: "form", says: "form of the soluble term", words: []Option{{"kappa", "kappa"}, {"exponential", "exponential"}},
+			help: "How a soluble share on the particle enters: by the water activity of kappa, or by its first order, an exponential that stays finite at the " +
+				"dry size. Both are published (Kumar et al. 2011); they differ near the dry size.",
+			origin: "the kappa form is that of all other particles",
+			at:     func(i *Isotherm) any { return &i.Form }},
 	},
-	standard: func() Isotherm { return Isotherm{2.25, 1.2} },
+	standard: func() Isotherm { return Isotherm{2.25, 1.2, "kappa"} },
 	required: []string{"A", "B"},
 	most:     1,
 	show: func(s *Scenario) string {
@@ -62,6 +67,10 @@ var isothermList = list[Isotherm]{
 		case s.Adsorption[0].A == 0:
 			return "none"
 		}
-		return "A " + isothermA.show(s.Adsorption[0].A) + ", B " + isothermB.show(s.Adsorption[0].B)
+		text := "A " + isothermA.show(s.Adsorption[0].A) + ", B " + isothermB.show(s.Adsorption[0].B)
+		if s.Adsorption[0].Form == "exponential" {
+			text += ", exponential"
+		}
+		return text
 	},
 }

@@ -60,7 +60,10 @@ type Film struct {
 }
 
 // Isotherm is the adsorption of water by Frenkel, Halsey and Hill. A = 0 is none.
-type Isotherm struct{ A, B float64 }
+type Isotherm struct {
+	A, B float64
+	Form string // kappa | exponential: the term of a soluble share
+}
 
 // Measure is a number or a word that stands for one.
 type Measure struct {
