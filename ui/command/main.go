@@ -15,7 +15,6 @@ import (
 	"dropcrest/ui/answer"
 	_ "dropcrest/ui/dark" // nobody asks the terminal for its background
 	"dropcrest/ui/plain"
-	"dropcrest/ui/scenario"
 	"dropcrest/ui/terminal"
 )
 
@@ -79,15 +78,10 @@ func (w world) complain(kind, text string) {
 	fmt.Fprintf(w.err, "dropcrest: %s: %s\n", kind, text)
 }
 
-// complainAll says what went wrong; of a scenario file all of it, one line each.
+// complainAll says what went wrong; of a file all of it, one line each.
 func (w world) complainAll(err error) {
-	var file scenario.FileErrors
-	if !errors.As(err, &file) {
-		w.complain("error", err.Error())
-		return
-	}
-	for _, e := range file {
-		w.complain("error", "--from: "+e.Error())
+	for _, text := range complaints(err) {
+		w.complain("error", text)
 	}
 }
 

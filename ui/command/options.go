@@ -14,6 +14,8 @@ import (
 	"github.com/spf13/pflag"
 
 	"dropcrest/atmos"
+	"dropcrest/solutes"
+	"dropcrest/ui/answer"
 	"dropcrest/ui/scenario"
 )
 
@@ -22,10 +24,16 @@ import (
 type options struct {
 	given    []setting
 	fromFile string
-	isPlain  bool
-	as, out  string
 
-	set *pflag.FlagSet
+	substancesFile string
+	env            func(string) string // where the default file is
+	known          *solutes.Catalogue  // nil: not read yet
+
+	isPlain bool
+	as, out string
+
+	set      *pflag.FlagSet
+	question answer.Question
 }
 
 // setting is one option as it was given.
@@ -93,18 +101,19 @@ func chooseForm(as, out string, formats []string) (string, error) {
 		out, ending, strings.Join(formats[1:], ", ."))
 }
 
-// inputs adds every input of the scenario as an option.
-func (o *options) inputs(cmd *cobra.Command) {
+// inputs adds every input of a question as an option.
+func (o *options) inputs(cmd *cobra.Command, q answer.Question) {
+	o.question = q
 	s := scenario.Default()
-	lists := scenario.Lists(&s)
-	for _, group := range inputGroups() {
-		for _, key := range group.keys {
+	lists := q.Lists(&s)
+	for _, group := range q.Groups {
+		for _, key := range group.Keys {
 			if in, ok := scenario.Find(&s, scenario.Path(key)); ok {
-				o.input(cmd, group.title, in)
+				o.input(cmd, group.Title, in)
 			}
 			for _, l := range lists {
 				if l.Key() == key {
-					o.list(cmd, group.title, l)
+					o.list(cmd, group.Title, l)
 				}
 			}
 		}
@@ -126,17 +135,11 @@ func (o *options) list(cmd *cobra.Command, group string, l scenario.RowList) {
 	key := l.Key()
 	o.set.Var(&late{o, key, "ROW"}, key, l.Help()+" May be given several times. Default: "+l.Show(scenario.Style{})+".")
 	o.group(key, group)
-	var names []string
-	if l.Len() > 0 {
-		for _, in := range l.Row(0) {
-			for _, c := range in.Choices() {
-				if in.Kind() == scenario.Text {
-					names = append(names, c.Word)
-				}
-			}
-		}
+	complete := cobra.NoFileCompletions
+	if l.Len() > 0 && slices.ContainsFunc(l.Row(0), func(in scenario.Input) bool { return in.Kind() == scenario.Text }) {
+		complete = o.names()
 	}
-	_ = cmd.RegisterFlagCompletionFunc(key, cobra.FixedCompletions(names, cobra.ShellCompDirectiveNoFileComp))
+	_ = cmd.RegisterFlagCompletionFunc(key, complete)
 }
 
 // late is an option whose value is read later, with the scenario it changes.
@@ -157,6 +160,11 @@ func (l *late) Set(text string) error {
 // question does not look at.
 func (o *options) scenario(w world) (scenario.Scenario, []atmos.Note, error) {
 	s := scenario.Default()
+	known, err := o.catalogue()
+	if err != nil {
+		return s, nil, err
+	}
+	s.Use(known)
 	if o.set.Changed("from") {
 		read, err := o.read(w)
 		if err != nil {
@@ -202,7 +210,7 @@ func (o *options) unused(s *scenario.Scenario) []atmos.Note {
 	if o.fromFile == "" {
 		return notes
 	}
-	for _, in := range scenario.Inputs(s) {
+	for _, in := range o.question.Inputs(s) {
 		if !in.Used() && !in.IsDefault() && !said[string(in.Path())] {
 			notes = append(notes, unusedNote(in, "The value of "+string(in.Path())+" in the scenario file"))
 		}
@@ -245,9 +253,9 @@ func (o *options) read(w world) (scenario.Scenario, error) {
 	if len(text) > largestScenario {
 		return scenario.Scenario{}, fmt.Errorf("--from: %s is larger than 1 MiB, which no scenario file is", name)
 	}
-	s, err := scenario.Decode(name, bytes.NewReader(text))
+	s, err := scenario.DecodeUsing(o.known, name, bytes.NewReader(text))
 	if err != nil {
-		return s, fmt.Errorf("--from: %w", err)
+		return s, fileError{"--from: ", err}
 	}
 	return s, nil
 }

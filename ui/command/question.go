@@ -9,7 +9,6 @@ import (
 	"github.com/spf13/cobra"
 
 	"dropcrest/atmos"
-	"dropcrest/solutes"
 	"dropcrest/ui/answer"
 	"dropcrest/ui/form"
 	"dropcrest/ui/scenario"
@@ -26,8 +25,9 @@ func (w world) newQuestion(q answer.Question) *cobra.Command {
 		Args:    noArguments,
 	}
 	o := newOptions(cmd)
-	o.inputs(cmd)
+	o.inputs(cmd, q)
 	o.from(cmd)
+	o.substances(w)
 	o.form(cmd, form.Formats()...)
 	o.plain(cmd)
 	cmd.RunE = func(cmd *cobra.Command, _ []string) error {
@@ -63,7 +63,11 @@ func (w world) ask(ctx context.Context, q answer.Question, s scenario.Scenario, 
 	if err := w.refuseBinary(as, o.out); err != nil {
 		return err
 	}
-	a, err := q.Ask(ctx, answer.Env{Substances: solutes.Standard(), Version: version()}, s)
+	env, err := o.environment()
+	if err != nil {
+		return err
+	}
+	a, err := q.Ask(ctx, env, s)
 	if err != nil {
 		return questionError(err)
 	}

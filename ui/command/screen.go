@@ -7,7 +7,6 @@ import (
 
 	"github.com/spf13/cobra"
 
-	"dropcrest/solutes"
 	"dropcrest/ui/answer"
 	"dropcrest/ui/scenario"
 	"dropcrest/ui/screen"
@@ -18,7 +17,9 @@ import (
 // addScreen makes the root command open the screen, or print where there is none.
 func (w world) addScreen(root *cobra.Command) {
 	o := newOptions(root)
+	o.question = answer.Questions()[0]
 	o.from(root)
+	o.substances(w)
 	o.plain(root)
 	root.RunE = func(cmd *cobra.Command, _ []string) error {
 		s, notes, err := o.scenario(w)
@@ -35,10 +36,13 @@ func (w world) addScreen(root *cobra.Command) {
 // openScreen shows the screen on a scenario; without --from it offers the session
 // that was kept. The program's exit code is that of the signal that has ended it.
 func (w world) openScreen(ctx context.Context, o *options, s scenario.Scenario) error {
+	env, err := o.environment()
+	if err != nil {
+		return err
+	}
 	options := screen.Options{
 		Scenario: s, Given: o.fromFile != "", Plain: o.isPlain, Getenv: w.env,
-		Env: answer.Env{Substances: solutes.Standard(), Version: version()},
-		In:  w.in.(*os.File), Out: w.out, Wrap: w.model,
+		Env: env, In: w.in.(*os.File), Out: w.out, Wrap: w.model,
 	}
 	dir, err := session.Dir(w.env)
 	options.Note = err

@@ -23,19 +23,18 @@ func (w world) newSubstances() *cobra.Command {
 			"every value with its source.",
 		Example: examples()["substances"],
 		Args:    atMostOne,
-		ValidArgsFunction: func(*cobra.Command, []string, string) ([]string, cobra.ShellCompDirective) {
-			var names []string
-			for _, s := range solutes.Standard().All() {
-				names = append(names, s.Name)
-			}
-			return names, cobra.ShellCompDirectiveNoFileComp
-		},
 	}
 	o := newOptions(cmd)
+	cmd.ValidArgsFunction = o.names()
+	o.substances(w)
 	o.form(cmd, "text", "csv", "json")
 	o.plain(cmd)
 	cmd.RunE = func(_ *cobra.Command, args []string) error {
-		list, err := chosen(solutes.Standard(), args)
+		known, err := o.catalogue()
+		if err != nil {
+			return err
+		}
+		list, err := chosen(known, args)
 		if err != nil {
 			return err
 		}

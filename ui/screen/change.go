@@ -78,6 +78,7 @@ func (m *model) whatChanged(before, now scenario.Scenario) string {
 // take makes next the scenario, with its answer if that is there within a frame,
 // else with work that will bring it. After an error nothing has changed.
 func (m *model) take(next scenario.Scenario) error {
+	next.Use(m.env.Substances)
 	if !m.question.Live {
 		m.scenario = next
 		m.begin()
@@ -110,6 +111,7 @@ func (m *model) changed() {
 // answerFirst answers the question at the start. There is nothing to fall back
 // to: a scenario without an answer is shown with the reason.
 func (m *model) answerFirst() {
+	m.scenario.Use(m.env.Substances) // that of a session knows none of the user's
 	if !m.question.Live {
 		m.begin()
 		return
