@@ -3,6 +3,7 @@ package answer
 import (
 	"errors"
 	"fmt"
+	"math"
 	"strings"
 
 	"dropcrest/atmos"
@@ -43,6 +44,9 @@ func (c *curve) crestSentence() string {
 	if m := c.molality(); m > 0 { // of a κ without a molar mass it is not known
 		inside += ", " + digits(m, 3) + " mol/kg"
 	}
+	if film, ok := c.particle.Solution.(koehler.AdsorbedWater); ok && c.dissolved.Core.SolubleShare == 0 && c.dissolved.Core.A > 0 {
+		inside += ", " + digits(film.Layers(c.crest.Water), 3) + " layers of adsorbed water"
+	}
 	if c.dissolved.Film != nil {
 		inside += ", surface tension " + digits(c.crest.SurfaceTension*1e3, 3) + " mN/m"
 	}
@@ -74,8 +78,17 @@ func (c *curve) placeWords() string {
 
 // twinSentence is what the particle does once it has been dissolved.
 func (c *curve) twinSentence() string {
+	if c.isDissolvedAtCrest() {
+		return "It has dissolved by then: already dissolved it crosses there as well."
+	}
 	return fmt.Sprintf("Already dissolved it crosses at %s, where its wet radius is %s.",
 		percent(c.twinCrest.Supersaturation), micrometres(c.twinCrest.WetDiameter/2))
+}
+
+// isDissolvedAtCrest reports whether the barrier is the same for a particle that
+// started dry and for one that has been dissolved before.
+func (c *curve) isDissolvedAtCrest() bool {
+	return c.noCrest == nil && math.Abs(c.twinCrest.WetDiameter/c.crest.WetDiameter-1) < 1e-9
 }
 
 func (c *curve) hazeSentence() string {

@@ -20,7 +20,7 @@ func (c *curve) marks() []figure.Mark {
 	for _, e := range c.otherMaxima() {
 		marks = append(marks, markAt(figure.PointMark, e.State, percent(e.Supersaturation)))
 	}
-	if c.hasTwin {
+	if c.hasTwin && !c.isDissolvedAtCrest() {
 		marks = append(marks, markAt(figure.CrestMark, c.twinCrest.State, percent(c.twinCrest.Supersaturation)+" dissolved"))
 	}
 	for i := range c.haze {

@@ -53,7 +53,7 @@ func matterClauses(s scenario.Scenario) []string {
 	if limited || s.Solubility != "limited" {
 		clauses = append(clauses, "solubility {solubility},")
 	}
-	if len(s.Adsorption) > 0 {
+	if s.Adsorbs() {
 		clauses = append(clauses, "adsorption {adsorption},")
 	}
 	if s.TolmanLength != 0 {

@@ -1,5 +1,7 @@
 package scenario
 
+import "slices"
+
 // filmList is the surface activity of the organics.
 var filmList = list[Film]{
 	key: "szyszkowski", says: "surface-active film",
@@ -73,4 +75,13 @@ var isothermList = list[Isotherm]{
 		}
 		return text
 	},
+}
+
+// Adsorbs reports whether the adsorption of water on insoluble matter concerns the
+// particle: an isotherm is given, or the catalogue has one for one of its parts.
+func (s Scenario) Adsorbs() bool {
+	return len(s.Adsorption) > 0 || slices.ContainsFunc(s.Components, func(c Component) bool {
+		found, ok := s.catalogue().Find(c.Substance)
+		return ok && found.Insoluble() && found.Adsorption != nil
+	})
 }
