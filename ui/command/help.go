@@ -3,6 +3,7 @@ package command
 import (
 	"fmt"
 	"strings"
+	"unicode/utf8"
 
 	"github.com/spf13/cobra"
 	"github.com/spf13/pflag"
@@ -115,10 +116,11 @@ func optionHelp(f *pflag.Flag) string {
 // hang writes a name and its explanation beside it, or below a long name.
 func hang(name, text string, column, width int) string {
 	body := plain.Wrap(text, width, strings.Repeat(" ", column))
-	if len(name)+4 > column {
+	taken := 2 + utf8.RuneCountInString(name)
+	if taken+2 > column {
 		return "  " + name + "\n" + body + "\n"
 	}
-	return "  " + name + body[2+len(name):] + "\n"
+	return "  " + name + body[taken:] + "\n"
 }
 
 // helpCommand is "dropcrest help COMMAND".
