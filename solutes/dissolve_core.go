@@ -101,6 +101,8 @@ func (d *dissolving) coat(c *Core, kappa float64) error {
 	}
 	c.Kappa = kappa / c.SolubleShare
 	if d.Model == IonInteraction {
+		d.out.Models = nil // what they say does not count
+		d.says("the coat: κ %.4g, by volume", c.Kappa)
 		d.note("adsorption-kappa", inputActivity,
 			"The published forms of adsorption with a soluble share know κ only: ion interaction is not used, the coat counts by its κ %.4g.", c.Kappa)
 	}

@@ -37,6 +37,6 @@ func (l Limit) note() atmos.Note {
 		return n
 	}
 	n.Text = fmt.Sprintf("%s is taken as wholly dissolved; its solubility allows that only from %.4g times the dry diameter on. "+
-		"Limited solubility shows the barrier of a particle that starts dry.", l.Substance, math.Cbrt(1+l.Water))
+		"Limited solubility with water activity by kappa shows the barrier of a particle that starts dry.", l.Substance, math.Cbrt(1+l.Water))
 	return n
 }

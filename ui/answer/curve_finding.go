@@ -20,7 +20,7 @@ func (c *curve) finding(limits []atmos.Note) []string {
 	}
 	for _, n := range limits {
 		if n.Code != aboveCrest { // the drop's sentence has said it
-			return append(out, n.Text)
+			return append(out, capital(n.Text))
 		}
 	}
 	return out
@@ -148,6 +148,15 @@ func (c *curve) otherHistory() string {
 // pastCrest reports whether the humidity looked at is at or above the crest.
 func (c *curve) pastCrest() bool {
 	return c.noCrest == nil && c.asked.RelativeHumidity >= c.crest.SaturationRatio
+}
+
+// capital begins a sentence with a capital letter, also one that begins with the
+// name of a substance.
+func capital(text string) string {
+	if text != "" && text[0] >= 'a' && text[0] <= 'z' {
+		return strings.ToUpper(text[:1]) + text[1:]
+	}
+	return text
 }
 
 // reason is an error as part of a sentence: without the name of the package it

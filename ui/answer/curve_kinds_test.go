@@ -157,3 +157,27 @@ func TestUnknownPhaseIsSaid(t *testing.T) {
 		t.Errorf("of a sugar that never crystallises: %q", all)
 	}
 }
+
+// What stands behind the finding names the model that was used, and no other.
+func TestWhyNamesTheModel(t *testing.T) {
+	sulfate, organic := "component=ammonium sulfate share=0.2", "component=pinic acid density=1200kg/m3 share=0.8"
+	film := "szyszkowski=gamma-max=3e-6mol/m2 k=20m3/mol"
+	for name, c := range map[string]struct {
+		values     []string
+		says, hush string
+	}{
+		"sparing":      {adipicAcid, "adipic acid (C 0.0183) is wholly dissolved from 3.82 times the dry diameter on", "Adsorption"},
+		"film":         {[]string{sulfate, organic, film}, "missing in the bulk", "Surface tension: pure water"},
+		"whole film":   {[]string{sulfate, organic, film, "partitioning=off"}, "counts it twice", "missing in the bulk"},
+		"dust":         {[]string{"component=illite"}, "θ^(-B_F)", "soluble share ε"},
+		"coated dust":  {[]string{"component=illite share=0.9", "component=ammonium sulfate share=0.1"}, "ln(1 + ε κ", "ion interaction (Pitzer"},
+		"the old form": {[]string{"component=illite share=0.9", "component=ammonium sulfate share=0.1", "adsorption=A=1 B=1.1 form=exponential"}, "less ε κ Dd³/(D³", "ln(1 + ε κ"},
+		"salt":         {nil, "at 79.89 % over a flat surface and at 81.02 % over this particle", "Film:"},
+		"Tolman":       {[]string{"tolman=0.1nm"}, "Tolman's length δ of 0.1 nm", "Film:"},
+	} {
+		why := strings.Join(asked(t, c.values...).Why, "\n")
+		if !strings.Contains(why, c.says) || strings.Contains(why, c.hush) {
+			t.Errorf("%s: want %q and not %q in\n%s", name, c.says, c.hush, why)
+		}
+	}
+}

@@ -89,7 +89,7 @@ func newParticle(d solutes.Dissolved, s scenario.Scenario, dry float64) (p koehl
 	case d.Core != nil:
 		c := d.Core
 		film := koehler.Adsorption{A: c.A, B: c.B, SolubleShare: c.SolubleShare, Kappa: c.Kappa}
-		if len(s.Adsorption) > 0 && s.Adsorption[0].Form == "exponential" {
+		if isExponential(s) {
 			film.Form = koehler.Exponential
 		}
 		p, err = film.Particle(dry, s.Temperature)
@@ -102,6 +102,11 @@ func newParticle(d solutes.Dissolved, s scenario.Scenario, dry float64) (p koehl
 		return p, err
 	}
 	return p, p.Check()
+}
+
+// isExponential tells which published form a soluble share on adsorbing matter has.
+func isExponential(s scenario.Scenario) bool {
+	return len(s.Adsorption) > 0 && s.Adsorption[0].Form == "exponential"
 }
 
 // dryDiameter is the volume-equivalent dry diameter. A classifier measures at

@@ -20,6 +20,7 @@ func (c *curve) why() []string {
 	for _, model := range c.dissolved.Models {
 		out = append(out, "Water activity: "+model+".")
 	}
+	out = append(out, c.kindWords()...)
 	out = append(out, c.tensionWords(), c.volumeWords())
 	if c.asked.DrySizeIs == "mobility" {
 		out = append(out, fmt.Sprintf("The mobility diameter of %s nm with shape factor %s is a volume-equivalent diameter of %s nm, by slip correction at 1013.25 hPa (ISO 15900).",
@@ -29,8 +30,8 @@ func (c *curve) why() []string {
 		out = append(out, fmt.Sprintf("The particle's κ, mixed by volume, is %s.", digits(c.dissolved.Kappa, 3)))
 	}
 	if c.noCubic == nil {
-		out = append(out, fmt.Sprintf("The textbook form s = A/D - B/D³, which takes the drop as very dilute and exp(x) as 1 + x, puts the crest at %s and %s.",
-			percent(c.textbook.Supersaturation), micrometres(c.textbook.WetDiameter/2)))
+		out = append(out, fmt.Sprintf("The textbook form s = A/D - B/D³, which takes the drop as very dilute%s and exp(x) as 1 + x, puts the crest at %s and %s.",
+			c.textbookLeavesOut(), percent(c.textbook.Supersaturation), micrometres(c.textbook.WetDiameter/2)))
 	}
 	out = append(out, fmt.Sprintf("Constants: R = %v J/(mol K), molar mass of water %v kg/mol (%s).",
 		atmos.GasConstant, atmos.WaterMolarMass, "CODATA 2018; IUPAC"))
@@ -60,6 +61,8 @@ func (c *curve) kelvinWords() string {
 func (c *curve) tensionWords() string {
 	says := "Surface tension: "
 	switch {
+	case c.dissolved.Film != nil:
+		says += "σ = σ_w - Γmax R T ln(1 + K c), of the bulk concentration c of the organic (Szyszkowski and Langmuir)"
 	case c.asked.SurfaceTension.Is("solution"):
 		says += "pure water and a linear increment per molality of the solutes"
 	case c.asked.SurfaceTension.Is("water"):
@@ -69,6 +72,10 @@ func (c *curve) tensionWords() string {
 	}
 	if c.noCrest == nil {
 		says += fmt.Sprintf("; %s mN/m at the crest", digits(c.crest.SurfaceTension*1e3, 4))
+	}
+	if c.particle.TolmanLength != 0 {
+		says += fmt.Sprintf("; it is divided by 1 + 4 δ/D with Tolman's length δ of %s nm (Tolman 1949), which is disputed in value and sign",
+			shortest(c.particle.TolmanLength*1e9))
 	}
 	return says + "."
 }
