@@ -66,7 +66,7 @@ func writeSubstance(b *strings.Builder, s solutes.Substance, width int) {
 	}
 	if l := s.DeliquescenceLaw; l != nil {
 		b.WriteString(hang("deliquescence by T", fmt.Sprintf("a law from %.4g to %.4g °C; %s",
-			l.Low-atmos.ZeroCelsius, l.High-atmos.ZeroCelsius, sourceWords(l.Source, l.Evidence)), column, width))
+			l.Low-atmos.ZeroCelsius, l.High-atmos.ZeroCelsius, answer.Sources(l.Source, l.Evidence)), column, width))
 	}
 	if gaps := s.Gaps(); len(gaps) > 0 {
 		b.WriteString(hang("not known", strings.Join(gaps, "; "), column, width))
@@ -82,20 +82,5 @@ func valueWords(q quantity) string {
 	if d.Low != 0 || d.High != 0 {
 		text += fmt.Sprintf(" (%.7g to %.7g)", d.Low, d.High)
 	}
-	return text + "; " + sourceWords(d.Source, d.Evidence)
-}
-
-// sourceWords is a source with how it was seen, unless that goes without saying.
-func sourceWords(source string, e solutes.Evidence) string {
-	switch e {
-	case solutes.Memory:
-		return source + " (from memory)"
-	case solutes.Computed:
-		return source + " (computed from other values)"
-	case solutes.User:
-		if source != "user" {
-			return source + " (given by the user)"
-		}
-	}
-	return source
+	return text + "; " + answer.Sources(d.Source, d.Evidence)
 }

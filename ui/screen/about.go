@@ -14,7 +14,11 @@ func newAbout(m *model) panel {
 		return aboutInput(in, nil, m)
 	}
 	if l, ok := m.list(); ok {
-		return aboutReader(l.Says(), []string{l.Help(), "", "Now: " + l.Show(m.style()) + "."}, nil, m)
+		text := []string{l.Help(), "", "Now: " + l.Show(m.style()) + "."}
+		if l.Key() == "component" {
+			text = append(append(answer.Components(m.env, m.scenario), ""), l.Help())
+		}
+		return aboutReader(l.Says(), text, nil, m)
 	}
 	if m.cursor == answer.Further {
 		text := []string{"What the sentence does not name: choices that are at their usual value, and what only concerns table and picture. " +
