@@ -18,6 +18,7 @@ type RecordError struct {
 	Right  string
 }
 
+// Error names record and field, what was given and what would be right.
 func (e *RecordError) Error() string {
 	field := e.Field
 	if field == "" {

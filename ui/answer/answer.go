@@ -22,11 +22,11 @@ type Env struct {
 
 // Question is one page and one subcommand.
 type Question struct {
-	Key   string // "curve"
-	Title string // "Curve"
-	Says  string // the question in one sentence
+	Key    string  // "curve"
+	Title  string  // "Curve"
+	Says   string  // the question in one sentence
 	Groups []Group // the inputs that it looks at, in the order of the help
-	Live  bool   // answered within a frame, inside Update
+	Live   bool    // answered within a frame, inside Update
 
 	// Statement is the question in prose, one clause a line; {path} stands for
 	// the slot of that input, {component} for the composition as a whole.

@@ -6,22 +6,6 @@ import (
 	"dropcrest/ui/scenario"
 )
 
-// inputGroup is one group of options under a heading of the help text.
-type inputGroup struct {
-	title string
-	keys  []string // inputs and row lists
-}
-
-// inputGroups is the order of the options. A test holds that no input is left out.
-func inputGroups() []inputGroup {
-	return []inputGroup{
-		{"The dry particle", []string{"dry-diameter", "dry-size-is", "shape-factor", "component", "shares-by", "adsorption"}},
-		{"The solution", []string{"water-activity", "kappa", "vant-hoff-factor", "solubility", "surface-tension", "szyszkowski", "partitioning", "tolman", "solution-density", "kelvin"}},
-		{"The air", []string{"temperature", "relative-humidity", "humidity-history"}},
-		{"Table and picture", []string{"points", "from-radius", "to-radius"}},
-	}
-}
-
 // placeholder stands for the value in the help text.
 func placeholder(in scenario.Input) string {
 	if in.Kind() != scenario.Choice {

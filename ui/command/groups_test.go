@@ -4,23 +4,16 @@ import (
 	"slices"
 	"testing"
 
+	"dropcrest/ui/answer"
 	"dropcrest/ui/scenario"
 )
 
-// Every input and every list of rows has its place among the options, and no
-// place is left for one that does not exist.
+// Every input and every list of rows is an option of the questions that look at
+// it, some question looks at each, and no place is left for one that does not
+// exist.
 func TestEveryInputIsAnOption(t *testing.T) {
-	var placed []string
-	for _, g := range inputGroups() {
-		for _, key := range g.keys {
-			if slices.Contains(placed, key) {
-				t.Errorf("%s stands twice", key)
-			}
-			placed = append(placed, key)
-		}
-	}
 	s := scenario.Default()
-	var want []string
+	var want, placed []string
 	for _, in := range scenario.Inputs(&s) {
 		if string(in.Path()) == in.Key() {
 			want = append(want, in.Key())
@@ -29,19 +22,29 @@ func TestEveryInputIsAnOption(t *testing.T) {
 	for _, l := range scenario.Lists(&s) {
 		want = append(want, l.Key())
 	}
+	root := newRoot(world{env: func(string) string { return "" }})
+	for _, q := range answer.Questions() {
+		cmd, _, err := root.Find([]string{q.Key})
+		if err != nil {
+			t.Fatal(err)
+		}
+		var own []string
+		for _, g := range q.Groups {
+			for _, key := range g.Keys {
+				if slices.Contains(own, key) {
+					t.Errorf("%s: %s stands twice", q.Key, key)
+				}
+				if cmd.Flags().Lookup(key) == nil {
+					t.Errorf("dropcrest %s has no --%s", q.Key, key)
+				}
+				own = append(own, key)
+			}
+		}
+		placed = append(placed, own...)
+	}
 	slices.Sort(placed)
 	slices.Sort(want)
-	if !slices.Equal(placed, want) {
+	if placed = slices.Compact(placed); !slices.Equal(placed, want) {
 		t.Errorf("options %q, want %q", placed, want)
-	}
-	root := newRoot(world{env: func(string) string { return "" }})
-	curve, _, err := root.Find([]string{"curve"})
-	if err != nil {
-		t.Fatal(err)
-	}
-	for _, key := range want {
-		if curve.Flags().Lookup(key) == nil {
-			t.Errorf("dropcrest curve has no --%s", key)
-		}
 	}
 }

@@ -77,8 +77,8 @@ func questionRows() []string {
 func optionRows() []string {
 	rows := []string{"| option | what it is | default |", "|---|---|---|"}
 	s := scenario.Default()
-	for _, g := range inputGroups() {
-		for _, key := range g.keys {
+	for _, g := range answer.Questions()[0].Groups {
+		for _, key := range g.Keys {
 			if in, ok := scenario.Find(&s, scenario.Path(key)); ok {
 				rows = append(rows, fmt.Sprintf("| `--%s` | %s: %s | %s |", key, in.Says(), in.Range(), in.Show(scenario.Style{})))
 			}

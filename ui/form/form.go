@@ -40,7 +40,7 @@ func (s Sheet) Write(b *bytes.Buffer, format string) error {
 		s.writeText(b)
 		return nil
 	case format == "json":
-		return writeJSON(b, s.Scenario, s.Answer, s.Version)
+		return writeJSON(b, s.Question, s.Scenario, s.Answer, s.Version)
 	case format == "csv" && len(s.Answer.Tables) == 0:
 		return errors.New("this answer has no table")
 	case format == "csv":

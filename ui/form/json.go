@@ -56,13 +56,13 @@ func marshal(v any) ([]byte, error) {
 }
 
 // writeJSON writes facts, scenario, constants, notes and version as one object.
-func writeJSON(w io.Writer, s scenario.Scenario, a answer.Answer, version string) error {
+func writeJSON(w io.Writer, q answer.Question, s scenario.Scenario, a answer.Answer, version string) error {
 	facts, err := marshal(a.Facts)
 	if err != nil {
 		return err
 	}
 	rest, err := marshal(Object{
-		{"scenario", scenarioObject(&s)},
+		{"scenario", scenarioObject(q, &s)},
 		{"constants", constantsObject()},
 		{"notes", notesList(a.Notes)},
 		{"version", version},
@@ -99,15 +99,14 @@ func indent(w io.Writer, text []byte) error {
 	return err
 }
 
-// scenarioObject is every input in SI units, rows as lists of objects.
-func scenarioObject(s *scenario.Scenario) Object {
+// scenarioObject is every input that a question looks at in SI units, rows as
+// lists of objects.
+func scenarioObject(q answer.Question, s *scenario.Scenario) Object {
 	var out Object
-	for _, in := range scenario.Inputs(s) {
-		if string(in.Path()) == in.Key() {
-			out = append(out, siMember(in))
-		}
+	for _, in := range q.Inputs(s) {
+		out = append(out, siMember(in))
 	}
-	for _, l := range scenario.Lists(s) {
+	for _, l := range q.Lists(s) {
 		rows := make([]Object, 0, l.Len())
 		for i := range l.Len() {
 			var row Object
