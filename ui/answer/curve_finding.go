@@ -34,7 +34,7 @@ func (c *curve) crestSentence() string {
 	dry := micrometres(c.particle.DryDiameter / 2)
 	switch {
 	case c.crest.Kind == koehler.BoundaryMaximum && c.isLimited():
-		return fmt.Sprintf("Started dry it crosses at %s supersaturation: the barrier is its dissolution at the dry surface of %s radius%s.",
+		return fmt.Sprintf("Started dry it activates at %s supersaturation: the barrier is its dissolution at the dry surface of %s radius%s.",
 			at, dry, c.placeWords())
 	case c.crest.Kind == koehler.BoundaryMaximum:
 		return fmt.Sprintf("It must be wetted at %s supersaturation, the Kelvin barrier at its dry radius of %s; from there it grows without another crest.",
@@ -50,9 +50,9 @@ func (c *curve) crestSentence() string {
 	if c.dissolved.Film != nil {
 		inside += ", surface tension " + digits(c.crest.SurfaceTension*1e3, 3) + " mN/m"
 	}
-	start := "It crosses"
+	start := "It activates"
 	if c.hasTwin {
-		start = "Started dry it crosses"
+		start = "Started dry it activates"
 	}
 	return fmt.Sprintf("%s at %s supersaturation, where its wet radius is %s (%s times the dry radius; %s)%s.",
 		start, at, micrometres(c.crest.WetDiameter/2), digits(c.crest.GrowthFactor, 3), inside, c.placeWords())
@@ -79,9 +79,9 @@ func (c *curve) placeWords() string {
 // twinSentence is what the particle does once it has been dissolved.
 func (c *curve) twinSentence() string {
 	if c.isDissolvedAtCrest() {
-		return "It has dissolved by then: already dissolved it crosses there as well."
+		return "It has dissolved by then: already dissolved it activates there as well."
 	}
-	return fmt.Sprintf("Already dissolved it crosses at %s, where its wet radius is %s.",
+	return fmt.Sprintf("Already dissolved it activates at %s, where its wet radius is %s.",
 		percent(c.twinCrest.Supersaturation), micrometres(c.twinCrest.WetDiameter/2))
 }
 

@@ -169,7 +169,8 @@ func (c *curve) branches() {
 	}
 	h, err := c.particle.Hysteresis(c.asked.RelativeHumidity, flat, history)
 	if err != nil {
-		c.notes = append(c.notes, atmos.Note{Code: "no-phase-branch", Input: "humidity-history", Text: "Its phase at this humidity cannot be given: " + reason(err) + "."})
+		c.notes = append(c.notes, atmos.Note{Code: "no-phase-branch", Input: "humidity-history",
+			Text: "A dry crystal of this size would dissolve only beyond its crest: whether it is dry or a drop at this humidity is not said."})
 		return
 	}
 	c.phase, c.hasPhase = h, true

@@ -147,7 +147,7 @@ func TestFirstSentence(t *testing.T) {
 		a := asked(t, values...)
 		m := regexp.MustCompile(`at ([0-9.]+ %) supersaturation`).FindStringSubmatch(a.Finding[0])
 		if m == nil {
-			t.Errorf("%s: %q does not say where it crosses", name, a.Finding[0])
+			t.Errorf("%s: %q does not say where it activates", name, a.Finding[0])
 			continue
 		}
 		if want := percent(float64(facts(t, a).CriticalSupersaturation) / 100); m[1] != want {

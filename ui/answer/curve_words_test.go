@@ -21,7 +21,7 @@ func TestWordsOfTheFinding(t *testing.T) {
 		"supercooled":           {[]string{"temperature=-20C"}, "", "", "freeze"},
 		"above the crest, once": {[]string{"relative-humidity=101%"}, "humidity-above-crest", "it has no equilibrium size", "is not below the crest"},
 		"no molar mass":         {[]string{"component=mineral dust"}, "", "water activity 0.99564, 182 layers of adsorbed water)", "mol/kg"},
-		"crest once dissolved":  {[]string{"component=succinic acid", "water-activity=kappa"}, "", "Already dissolved it crosses", "There is no crest in solution"},
+		"crest once dissolved":  {[]string{"component=succinic acid", "water-activity=kappa"}, "", "Already dissolved it activates", "There is no crest in solution"},
 	} {
 		t.Run(name, func(t *testing.T) {
 			a := asked(t, c.values...)

@@ -36,7 +36,7 @@ func TestMuteTerminal(t *testing.T) {
 	}{
 		"screen":    {nil, "dry particle", false},
 		"--version": {[]string{"--version"}, "dropcrest", true},
-		"curve":     {[]string{"curve"}, "cross", true},
+		"curve":     {[]string{"curve"}, "activates", true},
 	} {
 		t.Run(name, func(t *testing.T) {
 			s := newUser(t).run(t, 80, 24, c.args...)

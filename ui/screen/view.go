@@ -68,7 +68,15 @@ func (m *model) header() string {
 		}
 		titles = append(titles, title)
 	}
-	return " " + strings.Join(titles, "   ")
+	line := " " + strings.Join(titles, "   ")
+	if m.keeper.store == nil || m.keeper.store.Owned() {
+		return line
+	}
+	const says = "this session is not saved"
+	if gap := m.width - ansi.StringWidth(line) - len(says) - 1; gap > 1 {
+		line += strings.Repeat(" ", gap) + m.dim(says)
+	}
+	return line
 }
 
 // body is all between statement and help line in exactly h lines: picture, finding

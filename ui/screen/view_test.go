@@ -236,7 +236,7 @@ func TestUnsolvedStart(t *testing.T) {
 	if err := m.set("component[0].substance", "sodium chloride"); err != nil {
 		t.Fatal(err)
 	}
-	if view := m.View(); strings.Contains(view, "no answer") || !strings.Contains(view, "crosses at") {
+	if view := m.View(); strings.Contains(view, "no answer") || !strings.Contains(view, "activates at") {
 		t.Errorf("the view after the repair:\n%s", view)
 	}
 }

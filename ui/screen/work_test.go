@@ -141,7 +141,7 @@ func TestTurnPages(t *testing.T) {
 		t.Errorf("header and help line:\n%s", m.View())
 	}
 	press(m, "tab")
-	if !strings.Contains(m.View(), " CURVE   Slow") || !strings.Contains(m.View(), "crosses at") {
+	if !strings.Contains(m.View(), " CURVE   Slow") || !strings.Contains(m.View(), "activates at") {
 		t.Errorf("after another Tab:\n%s", m.View())
 	}
 	press(m, "shift+tab")
