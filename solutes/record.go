@@ -19,6 +19,7 @@ type RecordError struct {
 }
 
 // Error names record and field, what was given and what would be right.
+// Error says all of it in one sentence.
 func (e *RecordError) Error() string {
 	field := e.Field
 	if field == "" {

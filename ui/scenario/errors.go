@@ -1,9 +1,7 @@
 package scenario
 
 import (
-	"cmp"
 	"fmt"
-	"slices"
 	"strings"
 )
 
@@ -58,11 +56,4 @@ func (e FileErrors) Unwrap() []error {
 		out[i] = f
 	}
 	return out
-}
-
-// Sort puts the problems into the order of the file.
-func (e FileErrors) Sort() {
-	slices.SortStableFunc(e, func(a, b *FileError) int {
-		return cmp.Or(cmp.Compare(a.Line, b.Line), cmp.Compare(a.Column, b.Column))
-	})
 }

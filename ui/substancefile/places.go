@@ -96,16 +96,21 @@ func (p *places) has(path string) bool {
 	return there
 }
 
-// position is the place of a path, or of the nearest table around it.
-func (p *places) position(path string) unstable.Position {
+// offset is where a path stands in the text, or the nearest table around it.
+func (p *places) offset(path string) int {
 	for {
 		if at, there := p.ranges[path]; there {
-			return p.parser.Shape(at).Start
+			return int(at.Offset)
 		}
 		cut := strings.LastIndexAny(path, ".[")
 		if cut < 0 {
-			return unstable.Position{Line: 1, Column: 1}
+			return 0
 		}
 		path = strings.TrimPrefix(path[:cut], "=")
 	}
+}
+
+// position is the line and column of an offset.
+func (p *places) position(offset int) unstable.Position {
+	return p.parser.Shape(unstable.Range{Offset: uint32(offset)}).Start
 }

@@ -1,9 +1,11 @@
 package substancefile
 
 import (
+	"cmp"
 	"errors"
 	"fmt"
 	"io"
+	"slices"
 	"strings"
 	"unicode"
 
@@ -17,6 +19,7 @@ const tableKey = "substance"
 
 const (
 	mostRecords  = 1000 // a catalogue of all that was ever measured is smaller
+	mostKeys     = 500  // of a record, those of its tables included; the catalogue knows about 80
 	mostProblems = 50   // nobody reads on
 )
 
@@ -47,12 +50,19 @@ func Extend(c *solutes.Catalogue, name string, r io.Reader) (*solutes.Catalogue,
 type file struct {
 	name     string
 	places   *places
-	problems scenario.FileErrors
+	problems []problem
+}
+
+// problem is what is wrong at a place. Line and column are found at the end, for as
+// many as are said: that takes a walk through the text each.
+type problem struct {
+	offset int
+	key    string
+	err    error
 }
 
 func (f *file) fail(path, key string, err error) {
-	at := f.places.position(path)
-	f.problems = append(f.problems, &scenario.FileError{Name: f.name, Line: at.Line, Column: at.Column, Key: shortened(plain.Clean(key)), Err: err})
+	f.problems = append(f.problems, problem{f.places.offset(path), shortened(plain.Clean(key)), err})
 }
 
 // records are the tables [[substance]]; anything else at the top is refused.
@@ -88,6 +98,10 @@ func (f *file) substance(i int, record map[string]any) solutes.Substance {
 		return solutes.Substance{}
 	}
 	top := item(tableKey, i)
+	if n := keys(record); n > mostKeys {
+		f.fail(top, tableKey, &scenario.ValueError{Problem: fmt.Sprintf("%d keys", n), Right: "those of the catalogue"})
+		return solutes.Substance{}
+	}
 	u := &unitReader{file: f, top: top, said: map[string]bool{}}
 	u.read(record)
 	s, err := solutes.NewSubstance(fmt.Sprint(i+1), record)
@@ -98,6 +112,23 @@ func (f *file) substance(i int, record map[string]any) solutes.Substance {
 		}
 	}
 	return s
+}
+
+// keys counts the keys of a value, and of the tables in it.
+func keys(value any) int {
+	n := 0
+	switch value := value.(type) {
+	case map[string]any:
+		n = len(value)
+		for _, v := range value {
+			n += keys(v)
+		}
+	case []any:
+		for _, v := range value {
+			n += keys(v)
+		}
+	}
+	return n
 }
 
 // recordErrors are the errors of a record one by one.
@@ -162,14 +193,18 @@ func (f *file) taken(c *solutes.Catalogue, substances []solutes.Substance) {
 
 // all is what is wrong, in the order of the file and not longer than anybody reads.
 func (f *file) all() error {
-	f.problems.Sort()
+	slices.SortStableFunc(f.problems, func(a, b problem) int { return cmp.Compare(a.offset, b.offset) })
 	if more := len(f.problems) - mostProblems; more > 0 {
 		f.problems = f.problems[:mostProblems]
-		last := *f.problems[mostProblems-1]
-		last.Key, last.Err = "", fmt.Errorf("and %d more problems from here on", more+1)
-		f.problems[mostProblems-1] = &last
+		last := &f.problems[mostProblems-1]
+		last.key, last.err = "", fmt.Errorf("and %d more problems from here on", more+1)
 	}
-	return f.problems
+	var out scenario.FileErrors
+	for _, p := range f.problems {
+		at := f.places.position(p.offset)
+		out = append(out, &scenario.FileError{Name: f.name, Line: at.Line, Column: at.Column, Key: p.key, Err: p.err})
+	}
+	return out
 }
 
 // item is the path of an item of a list.
