@@ -108,7 +108,7 @@ func DryOf(kappa, kelvin, s float64) (float64, error) {
 	if kappa == 0 {
 		return kelvin / lnS, nil
 	}
-	q := lnS / (1 + math.Sqrt(1+3*lnS/kappa))
+	q := lnS / (1 + math.Sqrt(1+math.Max(-0.5, (3/kappa-2.5)*lnS))) // to second order in q
 	for range 30 {
 		p := q / kappa
 		step := (3*q*(1+p)/(1+q) - math.Log1p(q) - lnS) * (1 + q) * (1 + q) / (2 - q + 6*p + 3*p*q)

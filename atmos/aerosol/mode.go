@@ -126,6 +126,14 @@ func (m Modes) sum(of func(Mode) float64) (total float64) {
 	return total
 }
 
+// AddAbove adds share times Above of every diameter (m) to dst, which is as long
+// as diameters.
+func (m Modes) AddAbove(dst, diameters []float64, share float64) {
+	for _, mode := range m {
+		mode.AddAbove(dst, diameters, share)
+	}
+}
+
 // Bins returns what an instrument with these bins would count.
 func (m Modes) Bins(g *Grid) *Bins {
 	b := &Bins{grid: g, counts: make([]float64, g.Len()), above: make([]float64, g.Len()+1)}

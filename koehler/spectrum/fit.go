@@ -1,0 +1,293 @@
+package spectrum
+
+import (
+	"fmt"
+	"math"
+	"sort"
+
+	"dropcrest/atmos/fit"
+	"gonum.org/v1/gonum/mat"
+)
+
+// Point is one measured number of activated particles.
+type Point struct {
+	Supersaturation float64 // fraction
+	Count           float64 // 1/m³
+	Uncertainty     float64 // standard uncertainty of Count, 1/m³; 0: not known
+}
+
+// Fitted is a form laid through measured points.
+type Fitted struct {
+	Form Form
+	// Covariance of the values of Form.Parameters(), in their order. With
+	// uncertainties of the points it is what these make of it; without, it is scaled
+	// with the scatter about the fit, and nil where no degree of freedom is left.
+	Covariance       *mat.SymDense
+	Low, High        float64 // the supersaturations that were fitted, fractions: outside, the form extrapolates
+	Points           int
+	DegreesOfFreedom int
+	ReducedChiSquare float64 // NaN without uncertainties or degrees of freedom
+	Deviation        float64 // root mean square of ln(form/measured) of the counts above 0
+}
+
+// Uncertainty returns the standard uncertainty of parameter i, NaN where there is no
+// covariance.
+func (f Fitted) Uncertainty(i int) float64 {
+	if f.Covariance == nil {
+		return math.NaN()
+	}
+	return math.Sqrt(f.Covariance.At(i, i))
+}
+
+// Extrapolates tells whether s lies outside the fitted range.
+func (f Fitted) Extrapolates(s float64) bool { return !(s >= f.Low && s <= f.High) }
+
+// model is a form as the search sees it: x of order 1, all of them free.
+type model struct {
+	of     func(x []float64) Form
+	starts [][]float64
+}
+
+// FitPower fits a power law. At least two points; see Fitted. With uncertainties
+// the numbers are fitted, without them their logarithms, and then all must be
+// above 0. Errors of the three fits wrap ErrInput or one of package fit.
+func FitPower(points []Point) (Fitted, error) {
+	d, err := newData(points)
+	if err != nil {
+		return Fitted{}, err
+	}
+	c, k := d.line()
+	return d.fit(model{
+		of:     func(x []float64) Form { return Power{math.Exp(x[0]), x[1]} },
+		starts: [][]float64{{c, k}},
+	})
+}
+
+// FitCohard fits the form of Cohard, Pinty & Bedos with Mu > K/2, so that it is
+// bounded. At least four points; they must bend, or Mu and Beta are not determined.
+func FitCohard(points []Point) (Fitted, error) {
+	d, err := newData(points)
+	if err != nil {
+		return Fitted{}, err
+	}
+	m := model{of: func(x []float64) Form {
+		k := math.Exp(x[1])
+		return Cohard{math.Exp(x[0]), k, k/2 + math.Exp(x[2]), math.Exp(x[3])}
+	}}
+	_, slope := d.line()
+	for _, k := range []float64{math.Max(slope, 0.1) + 0.3, 1.5, 3} {
+		for _, bend := range []float64{0.3, 0.7} { // where in the range the power law ends
+			for _, spare := range []float64{-1, 0.5} {
+				S := math.Pow(d.low, 1-bend) * math.Pow(d.high, bend) / Percent
+				// C such that the power law meets the middle of the data at the bend
+				n := math.Log(d.most/2) - k*math.Log(S)
+				m.starts = append(m.starts, []float64{n, math.Log(k), spare, -2 * math.Log(S)})
+			}
+		}
+	}
+	return d.fit(m)
+}
+
+// FitErrorFunctions fits one or two steps. total is the number of all particles
+// (1/m³), which then is the sum of the steps; 0: not known, fitted. It needs at
+// least as many points as parameters: 3 or 6, one fewer where total is known.
+func FitErrorFunctions(points []Point, steps int, total float64) (Fitted, error) {
+	d, err := newData(points)
+	if err != nil {
+		return Fitted{}, err
+	}
+	switch {
+	case steps != 1 && steps != 2:
+		return Fitted{}, &InputError{"number of error functions", -1, float64(steps), "1 or 2"}
+	case !(total >= 0) || math.IsInf(total, 1):
+		return Fitted{}, &InputError{"number of all particles", -1, total, "above 0, or 0 where it is not known"}
+	}
+	if steps == 1 {
+		return d.fit(d.oneStep(total))
+	}
+	return d.fit(d.twoSteps(total))
+}
+
+func (d *data) oneStep(total float64) model {
+	of := func(x []float64) Form {
+		n := total
+		if n == 0 {
+			n = math.Exp(x[2])
+		}
+		return ErrorFunctions{{n, math.Exp(x[0]), math.Exp(x[1])}}
+	}
+	m := model{of: of}
+	for _, at := range []float64{0, 0.5, 1} {
+		for _, width := range []float64{0, 0.5} {
+			x := []float64{math.Log(d.low) + at*math.Log(d.high/d.low), width}
+			if total == 0 {
+				x = append(x, math.Log(1.2*d.most))
+			}
+			m.starts = append(m.starts, x)
+		}
+	}
+	return m
+}
+
+// twoSteps has the lower centre first: the second is the first times 1 + exp(x).
+func (d *data) twoSteps(total float64) model {
+	of := func(x []float64) Form {
+		n := total
+		if n == 0 {
+			n = math.Exp(x[5])
+		}
+		first := 1 / (1 + math.Exp(-x[4]))
+		centre := math.Exp(x[0])
+		return ErrorFunctions{
+			{n * first, centre, math.Exp(x[1])},
+			{n * (1 - first), centre * (1 + math.Exp(x[2])), math.Exp(x[3])},
+		}
+	}
+	m := model{of: of}
+	span := math.Log(d.high / d.low)
+	for _, at := range [][2]float64{{0.1, 0.6}, {0.3, 0.9}, {0.2, 1.2}, {-0.2, 0.4}} {
+		for _, width := range []float64{-0.4, 0.1} {
+			for _, share := range []float64{-1, 1} {
+				x := []float64{math.Log(d.low) + at[0]*span, width, math.Log(math.Expm1((at[1] - at[0]) * span)), width, share}
+				if total == 0 {
+					x = append(x, math.Log(1.3*d.most))
+				}
+				m.starts = append(m.starts, x)
+			}
+		}
+	}
+	return m
+}
+
+// data is points made ready to be fitted, in the order of s.
+type data struct {
+	points          []Point
+	weighted        bool
+	low, high, most float64
+}
+
+func newData(points []Point) (*data, error) {
+	if len(points) < 2 {
+		return nil, &InputError{"number of points", -1, float64(len(points)), "2 or more"}
+	}
+	d := &data{points: append([]Point(nil), points...)}
+	for i, p := range points {
+		if p.Uncertainty != 0 {
+			d.weighted = true
+		}
+		switch {
+		case !(p.Supersaturation > 0) || math.IsInf(p.Supersaturation, 1):
+			return nil, &InputError{"supersaturation of point", i, p.Supersaturation, "above 0"}
+		case !(p.Count >= 0) || math.IsInf(p.Count, 1):
+			return nil, &InputError{"number at point", i, p.Count, "0 or more"}
+		}
+		d.most = math.Max(d.most, p.Count)
+	}
+	for i, p := range points {
+		switch {
+		case d.weighted && !(p.Uncertainty > 0 && p.Uncertainty < math.MaxFloat64):
+			return nil, &InputError{"uncertainty of point", i, p.Uncertainty, "above 0, as other points have one"}
+		case !d.weighted && p.Count == 0:
+			return nil, &InputError{"number at point", i, 0, "above 0: without uncertainties the logarithms are fitted"}
+		}
+	}
+	if d.most == 0 {
+		return nil, &InputError{"largest number", -1, 0, "above 0"}
+	}
+	sort.SliceStable(d.points, func(i, j int) bool { return d.points[i].Supersaturation < d.points[j].Supersaturation })
+	d.low, d.high = d.points[0].Supersaturation, d.points[len(points)-1].Supersaturation
+	if d.low == d.high {
+		return nil, &InputError{"supersaturations", -1, d.low, "at least two different ones"}
+	}
+	return d, nil
+}
+
+// line is ln C and K of the straight line through the logarithms.
+func (d *data) line() (c, k float64) {
+	var n, sx, sy, sxx, sxy float64
+	for _, p := range d.points {
+		if p.Count > 0 {
+			x, y := math.Log(p.Supersaturation/Percent), math.Log(p.Count)
+			n, sx, sy, sxx, sxy = n+1, sx+x, sy+y, sxx+x*x, sxy+x*y
+		}
+	}
+	if det := n*sxx - sx*sx; det > 1e-12*n*sxx {
+		k = (n*sxy - sx*sy) / det
+	}
+	return (sy - k*sx) / n, k
+}
+
+func (d *data) residuals(dst []float64, f Form) {
+	for i, p := range d.points {
+		n := f.Count(p.Supersaturation)
+		if d.weighted {
+			dst[i] = (n - p.Count) / p.Uncertainty
+		} else {
+			dst[i] = math.Log(n / p.Count)
+		}
+	}
+}
+
+// enough is how many starts must lead to the best minimum so far before the rest
+// of them is spared.
+const enough = 3
+
+func (d *data) fit(m model) (Fitted, error) {
+	var best fit.Result
+	var failed error
+	found := 0
+	residuals := func(dst, x []float64) { d.residuals(dst, m.of(x)) }
+	for _, start := range m.starts {
+		r, err := fit.LeastSquares(residuals, len(d.points), start)
+		if err != nil {
+			failed = err
+			continue
+		}
+		better := best.SumOfSquares - r.SumOfSquares
+		switch {
+		case best.X != nil && math.Abs(better) <= 1e-6*r.SumOfSquares+1e-12:
+			found++
+		case best.X == nil || better > 0:
+			best, found = r, 1
+		}
+		if found == enough {
+			break
+		}
+	}
+	if best.X == nil {
+		return Fitted{}, fmt.Errorf("%d parameters through %d points: %w", len(m.starts[0]), len(d.points), failed)
+	}
+	return d.fitted(m, best), nil
+}
+
+func (d *data) fitted(m model, r fit.Result) Fitted {
+	f := Fitted{Form: m.of(r.X), Low: d.low, High: d.high, Points: len(d.points),
+		DegreesOfFreedom: r.DegreesOfFreedom, ReducedChiSquare: math.NaN(), Deviation: d.deviation(m.of(r.X))}
+	parameters := func(dst, x []float64) {
+		for i, p := range m.of(x).Parameters() {
+			dst[i] = p.Value
+		}
+	}
+	reduced := r.SumOfSquares / float64(r.DegreesOfFreedom)
+	if d.weighted || r.DegreesOfFreedom > 0 {
+		f.Covariance = r.Transformed(len(f.Form.Parameters()), parameters)
+	}
+	switch {
+	case d.weighted && r.DegreesOfFreedom > 0:
+		f.ReducedChiSquare = reduced
+	case f.Covariance != nil && !d.weighted:
+		f.Covariance.ScaleSym(reduced, f.Covariance)
+	}
+	return f
+}
+
+func (d *data) deviation(f Form) float64 {
+	sum, n := 0.0, 0.0
+	for _, p := range d.points {
+		if p.Count > 0 {
+			e := math.Log(f.Count(p.Supersaturation) / p.Count)
+			sum, n = sum+e*e, n+1
+		}
+	}
+	return math.Sqrt(sum / n)
+}
