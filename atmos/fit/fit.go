@@ -7,7 +7,6 @@ import (
 	"gonum.org/v1/gonum/diff/fd"
 	"gonum.org/v1/gonum/floats"
 	"gonum.org/v1/gonum/mat"
-	"gonum.org/v1/gonum/optimize"
 )
 
 // The reasons why there is no fit.
@@ -41,8 +40,7 @@ const (
 const converged = 1e-7
 
 // LeastSquares minimises the sum of the squares of n residuals from start: damped
-// Gauss-Newton (gonum's Newton method on JᵀJ with a line search), then undamped
-// steps by QR while they help. It finds the minimum near start; start from several
+// steps downhill, then undamped ones by QR while they help. It finds the minimum near start; start from several
 // places where there may be more, and compare SumOfSquares.
 func LeastSquares(residuals Residuals, n int, start []float64) (Result, error) {
 	if n < len(start) {
@@ -81,35 +79,72 @@ func (p *problem) jacobian(x []float64) {
 	p.residuals(p.r, x)
 }
 
+// The damping of a step: where it starts, how it falls after a step that helped and
+// rises after one that did not, and where the search gives up.
+const (
+	firstDamping = 1e-3
+	fallDamping  = 0.1
+	riseDamping  = 4
+	leastDamping = 1e-12
+	mostDamping  = 1e12
+)
+
+// searchDone is the relative gain of the sum, or the step, at which the search
+// leaves the rest to polish.
+const searchDone = 1e-8
+
+// search goes downhill from start by the steps of Levenberg and Marquardt,
+//
+//	(JᵀJ + λ diag JᵀJ) step = -Jᵀr,
+//
+// with λ as small as a falling sum allows. gonum's Newton method on JᵀJ with a line
+// search found the same minima in ten times as many evaluations.
 func (p *problem) search(start []float64) []float64 {
-	scale := p.sum(start)
-	if !(scale > 0) || math.IsInf(scale, 1) {
-		return append([]float64(nil), start...)
+	k := len(start)
+	x, next := append([]float64(nil), start...), make([]float64, k)
+	best, damping := p.sum(x), firstDamping
+	var normal mat.SymDense
+	gradient, step := mat.NewVecDense(k, nil), mat.NewVecDense(k, nil)
+	for range maxSteps {
+		p.jacobian(x)
+		normal.Reset()
+		normal.SymOuterK(1, p.jac.T())
+		gradient.MulVec(p.jac.T(), mat.NewVecDense(len(p.r), p.r))
+		gain, size := 0.0, math.Inf(1)
+		for ; gain == 0 && damping < mostDamping; damping *= riseDamping {
+			if !damped(step, &normal, gradient, damping) {
+				continue
+			}
+			floats.SubTo(next, x, step.RawVector().Data)
+			size = floats.Norm(step.RawVector().Data, math.Inf(1))
+			if s := p.sum(next); s < best {
+				gain, best = 1-s/best, s
+			} else if size < searchDone {
+				return x
+			}
+		}
+		if gain == 0 {
+			return x
+		}
+		copy(x, next)
+		damping = math.Max(damping*fallDamping/riseDamping, leastDamping)
+		if best == 0 || gain < searchDone && size < math.Sqrt(searchDone) {
+			return x
+		}
 	}
-	task := optimize.Problem{
-		Func: func(x []float64) float64 { return p.sum(x) / scale },
-		Grad: func(grad, x []float64) {
-			p.jacobian(x)
-			g := mat.NewVecDense(len(grad), grad)
-			g.MulVec(p.jac.T(), mat.NewVecDense(len(p.r), p.r))
-			g.ScaleVec(2/scale, g)
-		},
-		Hess: func(hess *mat.SymDense, x []float64) {
-			p.jacobian(x)
-			hess.SymOuterK(2/scale, p.jac.T())
-		},
+	return x
+}
+
+// damped solves for one step; false where the matrix is not positive definite.
+func damped(step *mat.VecDense, normal *mat.SymDense, gradient *mat.VecDense, damping float64) bool {
+	k := gradient.Len()
+	a := mat.NewSymDense(k, nil)
+	a.CopySym(normal)
+	for i := range k {
+		a.SetSym(i, i, normal.At(i, i)*(1+damping))
 	}
-	settings := &optimize.Settings{
-		MajorIterations: maxSteps,
-		Converger:       &optimize.FunctionConverge{Relative: 1e-10, Iterations: 5},
-	}
-	// An error is a line search that found nothing lower: what it has reached is
-	// judged by polish.
-	found, _ := optimize.Minimize(task, start, settings, &optimize.Newton{})
-	if found == nil || !(found.F <= 1) {
-		return append([]float64(nil), start...)
-	}
-	return found.X
+	var chol mat.Cholesky
+	return chol.Factorize(a) && chol.SolveVecTo(step, gradient) == nil
 }
 
 // polish improves x by undamped steps and returns the size of the last one. ok

@@ -20,7 +20,7 @@ type broken interface {
 }
 
 // Composition says which particles of a size distribution activate. It is a
-// Kappa, a *Matter, a Spread, a *KappaTable or a *Ranges.
+// Kappa, a *Matter, a Spread, an External, a *KappaTable or a *Ranges.
 type Composition interface {
 	// Critical returns the dry diameter (m) from which on every wider particle
 	// activates at s: 0 where all do, +Inf where none does. Of a Spread it is that
@@ -53,7 +53,7 @@ func (k Kappa) AddCounts(dst, s []float64, sizes Sizes, share float64) error {
 // the answers in Cuts where many records ask for the same supersaturations.
 type Matter struct{ Particle koehler.Particle }
 
-// mattersSizes are the smallest and widest dry particles (m) that are looked at.
+// These are the smallest and widest dry particles (m) that are looked at.
 const (
 	leastMatter = 1e-10
 	mostMatter  = 1e-3

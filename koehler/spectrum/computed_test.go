@@ -66,8 +66,12 @@ func (in spectraInput) population(t *testing.T) Population {
 	var p Population
 	for _, m := range in.Modes {
 		sizes := aerosol.Mode{Concentration: m.N, Median: m.Dg, GSD: m.Sg}
+		var mix External
 		for _, c := range m.Components {
-			p = append(p, Group{sizes, c[0], Kappa{c[1], A}})
+			mix = append(mix, Part{c[0], Kappa{c[1], A}})
+		}
+		if mix != nil {
+			p = append(p, Group{sizes, 1, mix})
 		}
 		if m.Sk > 0 {
 			p = append(p, Group{sizes, 1, Spread{m.Kg, m.Sk, A}})

@@ -12,8 +12,7 @@ type Group struct {
 	Of    Composition
 }
 
-// Population is a sum of groups. An internal mixture is one group a mode; an
-// external one is several groups with the same sizes, see External.
+// Population is a sum of groups, such as one a mode.
 type Population []Group
 
 // A GroupError says which group cannot be counted.
@@ -27,16 +26,6 @@ func (e *GroupError) Error() string { return fmt.Sprintf("group %d: %v", e.Group
 
 // Unwrap returns what was wrong.
 func (e *GroupError) Unwrap() error { return e.Err }
-
-// External returns the groups of an external mixture: each composition has its
-// share of the particles at every size.
-func External(sizes Sizes, shares []float64, of []Composition) Population {
-	var p Population
-	for i, c := range of {
-		p = append(p, Group{sizes, shares[i], c})
-	}
-	return p
-}
 
 // Number returns the number of all particles, 1/m³.
 func (p Population) Number() float64 {
@@ -66,31 +55,31 @@ func (p Population) Counts(dst, s []float64) ([]float64, error) {
 	var cuts []float64
 	var cutsOf Composition
 	for i, g := range p {
-		err := checkShare(g.Share)
-		switch {
-		case err != nil:
-		case !isSharp(g.Of):
-			err = g.Of.AddCounts(sum, s, g.Sizes, g.Share)
-		default:
-			if cuts == nil {
-				cuts = make([]float64, 0, len(s))
-			}
-			if g.Of != cutsOf {
-				cuts, err = criticals(cuts[:0], g.Of, s)
-				cutsOf = g.Of
-			}
-			if err == nil {
-				addAbove(sum, cuts, g.Sizes, g.Share)
-			}
-		}
-		if err != nil {
+		if err := checkShare(g.Share); err != nil {
 			return dst, &GroupError{i, err}
 		}
+		if !isSharp(g.Of) {
+			if err := g.Of.AddCounts(sum, s, g.Sizes, g.Share); err != nil {
+				return dst, &GroupError{i, err}
+			}
+			continue
+		}
+		if cuts == nil {
+			cuts = make([]float64, 0, len(s))
+		}
+		if g.Of != cutsOf {
+			var err error
+			if cuts, err = criticals(cuts[:0], g.Of, s); err != nil {
+				return dst, &GroupError{i, err}
+			}
+			cutsOf = g.Of
+		}
+		addAbove(sum, cuts, g.Sizes, g.Share)
 	}
 	return dst, nil
 }
 
-func checkShare(share float64) error {
+func checkShare(share float64) *InputError {
 	if !(share > 0 && share <= 1) {
 		return &InputError{"share", -1, share, "above 0 and up to 1"}
 	}

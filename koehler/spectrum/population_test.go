@@ -200,12 +200,12 @@ func TestMeasuresGiveOneSpectrum(t *testing.T) {
 func TestMixing(t *testing.T) {
 	k, other := Kappa{0.3, kelvin}, Kappa{0.05, kelvin}
 	whole, _ := Population{{invented(), 1, k}}.Counts(nil, supersaturations)
-	same, err := External(invented(), []float64{0.4, 0.6}, []Composition{k, k}).Counts(nil, supersaturations)
+	same, err := Population{{invented(), 1, External{{0.4, k}, {0.6, k}}}}.Counts(nil, supersaturations)
 	if err != nil {
 		t.Fatal(err)
 	}
 	second, _ := Population{{invented(), 1, other}}.Counts(nil, supersaturations)
-	mixed, _ := External(invented(), []float64{0.4, 0.6}, []Composition{k, other}).Counts(nil, supersaturations)
+	mixed, _ := Population{{invented(), 1, External{{0.4, k}, {0.6, other}}}}.Counts(nil, supersaturations)
 	cut, _ := NewRanges([]float64{70e-9}, []Composition{k, k})
 	halves, _ := Population{{invented(), 1, cut}}.Counts(nil, supersaturations)
 	flat, _ := NewKappaTable([]float64{50e-9, 90e-9}, []float64{0.3, 0.3}, kelvin)
@@ -282,7 +282,8 @@ func TestCritical(t *testing.T) {
 	steep, _ := NewKappaTable([]float64{40e-9, 50e-9, 120e-9}, []float64{1.2, 0.01, 0.4}, kelvin)
 	ranges, _ := NewRanges([]float64{60e-9}, []Composition{Kappa{0.5, kelvin}, Kappa{0.001, kelvin}})
 	all, _ := NewRanges([]float64{60e-9}, []Composition{Kappa{0.5, kelvin}, Kappa{0.5, kelvin}})
-	for name, c := range map[string]Composition{"steep": steep, "ranges": ranges, "one": all} {
+	for name, c := range map[string]Composition{"steep": steep, "ranges": ranges, "one": all,
+		"external": External{{0.5, Kappa{0.5, kelvin}}, {0.5, Kappa{0.05, kelvin}}}} {
 		for _, s := range supersaturations {
 			d, err := c.Critical(s)
 			if err != nil {
@@ -295,6 +296,9 @@ func TestCritical(t *testing.T) {
 				t.Fatal(err)
 			}
 			near(t, name, n, above.Number(), 1e-9)
+			if name == "external" {
+				continue // half of the particles below activate
+			}
 			below, _ := Population{{newWindow(invented(), d*0.98, d*(1-1e-9)), 1, c}}.Count(s)
 			if want := newWindow(invented(), d*0.98, d).Number(); below > 0.01*want {
 				t.Errorf("%s at %g: particles just below %g m activate too", name, s, d)
@@ -313,6 +317,9 @@ func TestWhatCannotBeCounted(t *testing.T) {
 		"kelvin":      {{invented(), 1, k}, {invented(), 1, Kappa{1, 0}}},
 		"spread":      {{invented(), 1, k}, {invented(), 1, Spread{0.3, 1, kelvin}}},
 		"spread of 0": {{invented(), 1, k}, {invented(), 1, Spread{0, 2, kelvin}}},
+		"shares":      {{invented(), 1, k}, {invented(), 1, External{{0.4, k}, {0.5, k}}}},
+		"a share":     {{invented(), 1, k}, {invented(), 1, External{{1.4, k}, {-0.4, k}}}},
+		"a part":      {{invented(), 1, k}, {invented(), 1, External{{0.4, k}, {0.6, Kappa{-1, kelvin}}}}},
 		"matter":      {{invented(), 1, k}, {invented(), 1, &Matter{}}},
 	} {
 		_, err := p.Counts(nil, []float64{0.002})
