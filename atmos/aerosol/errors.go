@@ -3,12 +3,14 @@ package aerosol
 import (
 	"errors"
 	"fmt"
+	"math"
 )
 
-// ErrInput is wrapped by every error of this package.
-var ErrInput = errors.New("size distribution not usable")
+// ErrInput is wrapped by every InputError.
+var ErrInput = errors.New("input not usable")
 
-// An InputError says which value of a size distribution is not usable.
+// An InputError says which value, of a size distribution or of what rests on one,
+// is not usable.
 type InputError struct {
 	What  string  // "edge", "count", "gsd"
 	Index int     // which of a list, from 0; -1: there is only one
@@ -27,3 +29,17 @@ func (e *InputError) Error() string {
 
 // Unwrap returns ErrInput.
 func (e *InputError) Unwrap() error { return ErrInput }
+
+// CheckDiameters returns nil or an *InputError: diameters (m) are above 0, finite,
+// and ascend. what names one of them.
+func CheckDiameters(what string, diameters []float64) error {
+	for i, d := range diameters {
+		if !(d > 0) || math.IsInf(d, 1) {
+			return &InputError{what, i, d, "above 0, in m"}
+		}
+		if i > 0 && !(d > diameters[i-1]) {
+			return &InputError{what, i, d, "larger than the one before it"}
+		}
+	}
+	return nil
+}

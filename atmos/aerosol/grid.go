@@ -16,14 +16,11 @@ func NewGrid(edges []float64) (*Grid, error) {
 	if len(edges) < 2 {
 		return nil, &InputError{"number of bin limits", -1, float64(len(edges)), "2 or more"}
 	}
+	if err := CheckDiameters("bin limit", edges); err != nil {
+		return nil, err
+	}
 	g := &Grid{edges: append([]float64(nil), edges...), ln: make([]float64, len(edges))}
 	for i, e := range edges {
-		if !(e > 0) || math.IsInf(e, 1) {
-			return nil, &InputError{"bin limit", i, e, "above 0, in m"}
-		}
-		if i > 0 && !(e > edges[i-1]) {
-			return nil, &InputError{"bin limit", i, e, "larger than the one before it"}
-		}
 		g.ln[i] = math.Log(e)
 	}
 	return g, nil
@@ -38,13 +35,8 @@ func GridAround(midpoints []float64) (*Grid, error) {
 	if n < 2 {
 		return nil, &InputError{"number of bin midpoints", -1, float64(n), "2 or more: one midpoint has no width"}
 	}
-	for i, d := range midpoints {
-		if !(d > 0) || math.IsInf(d, 1) {
-			return nil, &InputError{"bin midpoint", i, d, "above 0, in m"}
-		}
-		if i > 0 && !(d > midpoints[i-1]) {
-			return nil, &InputError{"bin midpoint", i, d, "larger than the one before it"}
-		}
+	if err := CheckDiameters("bin midpoint", midpoints); err != nil {
+		return nil, err
 	}
 	edges := make([]float64, n+1)
 	for i := 1; i < n; i++ {

@@ -1,9 +1,6 @@
 package aerosol
 
-import (
-	"math"
-	"sort"
-)
+import "math"
 
 // Response is the share of particles of a size that get through an inlet or that
 // an instrument counts, 0 to 1 (a little above 1 where a calibration says so).
@@ -22,44 +19,6 @@ type ResponseFunc func(d float64) float64
 
 // At calls the function.
 func (f ResponseFunc) At(d float64) float64 { return f(d) }
-
-// Table is a response given at some diameters, linear in ln D between them and
-// held at its ends.
-type Table struct {
-	ln, shares []float64
-}
-
-// NewTable makes the table of shares at the diameters (m), which ascend.
-func NewTable(diameters, shares []float64) (*Table, error) {
-	if len(diameters) == 0 || len(diameters) != len(shares) {
-		return nil, &InputError{"number of shares", -1, float64(len(shares)), "one a diameter, and one or more"}
-	}
-	t := &Table{shares: append([]float64(nil), shares...)}
-	for i, d := range diameters {
-		switch {
-		case !(d > 0) || math.IsInf(d, 1) || i > 0 && !(d > diameters[i-1]):
-			return nil, &InputError{"diameter", i, d, "above 0 and above the one before it, in m"}
-		case !(shares[i] >= 0) || math.IsInf(shares[i], 1):
-			return nil, &InputError{"share", i, shares[i], "0 or more"}
-		}
-		t.ln = append(t.ln, math.Log(d))
-	}
-	return t, nil
-}
-
-// At returns the share at d (m).
-func (t *Table) At(d float64) float64 {
-	x := math.Log(d)
-	i := sort.SearchFloat64s(t.ln, x)
-	switch {
-	case i == 0:
-		return t.shares[0]
-	case i == len(t.ln):
-		return t.shares[i-1]
-	}
-	w := (x - t.ln[i-1]) / (t.ln[i] - t.ln[i-1])
-	return t.shares[i-1] + w*(t.shares[i]-t.shares[i-1])
-}
 
 // Chain is several responses in a row: the particle must pass them all.
 type Chain []Response

@@ -33,6 +33,13 @@ func TestLineAgainstItsClosedForm(t *testing.T) {
 			t.Errorf("variance %d = %.12g, want %.12g", i, got, want)
 		}
 	}
+	sum := 0.0
+	for i := range x {
+		sum += (a + b*x[i] - y[i]) * (a + b*x[i] - y[i])
+	}
+	if math.Abs(r.SumOfSquares-sum) > 1e-12 {
+		t.Errorf("sum of squares %.15g, want %.15g", r.SumOfSquares, sum)
+	}
 	if r.DegreesOfFreedom != 5 {
 		t.Errorf("degrees of freedom %d, want 5", r.DegreesOfFreedom)
 	}

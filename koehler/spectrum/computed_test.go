@@ -165,7 +165,7 @@ func TestKappaOfCountAgainstComputed(t *testing.T) {
 	}
 }
 
-// The chapter says why there is no κ.
+// Where there is no κ, the reason is said; where there is, how much it rests on.
 func TestWhyACountHasNoKappa(t *testing.T) {
 	g, _ := aerosol.NewGrid([]float64{20e-9, 40e-9, 80e-9, 160e-9})
 	b, _ := aerosol.NewBins(g, []float64{4e8, 2e8, 1e8}, aerosol.Counts)
@@ -184,6 +184,29 @@ func TestWhyACountHasNoKappa(t *testing.T) {
 		if !errors.As(err, &why) || why.Reason != c.want || !errors.Is(err, ErrUnsolved) {
 			t.Errorf("%g at %g: %v, want %s", c.count, c.s, err, c.want)
 		}
+	}
+	// the sensitivities are those of the result itself
+	at := func(count, s, wider float64) float64 {
+		moved, err := b.Resized(func(d float64) float64 { return d * wider })
+		if err != nil {
+			t.Fatal(err)
+		}
+		k, err := KappaOfCount(moved, count, s, A)
+		if err != nil {
+			t.Fatal(err)
+		}
+		return k.Kappa
+	}
+	got, err := KappaOfCount(b, 2e8, 0.004, A)
+	if err != nil {
+		t.Fatal(err)
+	}
+	const h = 1e-4
+	near(t, "by count", got.ByCount, math.Log(at(2e8*(1+h), 0.004, 1)/at(2e8*(1-h), 0.004, 1))/(2*h), 1e-6)
+	near(t, "by diameter", got.ByDiameter, math.Log(at(2e8, 0.004, 1+h)/at(2e8, 0.004, 1-h))/(2*h), 1e-6)
+	near(t, "by supersaturation", got.BySupersaturation, math.Log(at(2e8, 0.004*(1+h), 1)/at(2e8, 0.004*(1-h), 1))/(2*h), 1e-6)
+	if math.Abs(got.ByDiameter+3) > 0.1 || math.Abs(got.BySupersaturation+2) > 0.1 || got.ByCount < 0 {
+		t.Errorf("sensitivities far from those of small s: %+v", got)
 	}
 	for _, c := range []struct {
 		count           float64

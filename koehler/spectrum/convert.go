@@ -19,7 +19,7 @@ func StepOfMode(m aerosol.Mode, kappa, kelvin float64) (ErrorFunction, error) {
 		return ErrorFunction{}, err
 	}
 	if !(kappa > 0 && kappa <= mostKappa) {
-		return ErrorFunction{}, &InputError{"kappa", -1, kappa, "above 0 and up to 30"}
+		return ErrorFunction{}, unusable("kappa", -1, kappa, "above 0 and up to 30")
 	}
 	crest := koehler.SolveKappa(m.Median, kelvin, kappa)
 	return ErrorFunction{m.Concentration, crest.Supersaturation, 3 * math.Log(m.GSD) / math.Sqrt2}, nil
@@ -30,10 +30,10 @@ func StepOfMode(m aerosol.Mode, kappa, kelvin float64) (ErrorFunction, error) {
 // another Dg: a spectrum alone does not tell them apart.
 func ModeOfStep(f ErrorFunction, kappa, kelvin float64) (aerosol.Mode, error) {
 	if !(f.Width > 0) || math.IsInf(f.Width, 1) {
-		return aerosol.Mode{}, &InputError{"width", -1, f.Width, "above 0"}
+		return aerosol.Mode{}, unusable("width", -1, f.Width, "above 0")
 	}
 	if !(kappa > 0 && kappa <= mostKappa) {
-		return aerosol.Mode{}, &InputError{"kappa", -1, kappa, "above 0 and up to 30"}
+		return aerosol.Mode{}, unusable("kappa", -1, kappa, "above 0 and up to 30")
 	}
 	dry, err := koehler.DryOf(kappa, kelvin, f.Centre)
 	if err != nil {

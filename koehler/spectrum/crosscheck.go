@@ -21,10 +21,10 @@ type CrossCheck struct {
 // NewCrossCheck looks at n diameters (2 or more), equal in ln D, from low to high (m).
 func NewCrossCheck(low, high float64, n int) (*CrossCheck, error) {
 	if !(low > 0 && high > low) || math.IsInf(high, 1) {
-		return nil, &InputError{"range of diameters", -1, low, "above 0 and below its upper end, in m"}
+		return nil, unusable("range of diameters", -1, low, "above 0 and below its upper end, in m")
 	}
 	if n < 2 {
-		return nil, &InputError{"number of diameters", -1, float64(n), "2 or more"}
+		return nil, unusable("number of diameters", -1, float64(n), "2 or more")
 	}
 	c := &CrossCheck{ln: make([]float64, n), xx: make([]float64, n), xy: make([]float64, n)}
 	for i := range c.ln {

@@ -26,7 +26,7 @@ func (e External) check() error {
 		sum += p.Share
 	}
 	if !(math.Abs(sum-1) <= shareSlack) {
-		return &InputError{"sum of shares", -1, sum, "1"}
+		return unusable("sum of shares", -1, sum, "1")
 	}
 	return nil
 }

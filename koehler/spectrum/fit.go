@@ -98,9 +98,9 @@ func FitErrorFunctions(points []Point, steps int, total float64) (Fitted, error)
 	}
 	switch {
 	case steps != 1 && steps != 2:
-		return Fitted{}, &InputError{"number of error functions", -1, float64(steps), "1 or 2"}
+		return Fitted{}, unusable("number of error functions", -1, float64(steps), "1 or 2")
 	case !(total >= 0) || math.IsInf(total, 1):
-		return Fitted{}, &InputError{"number of all particles", -1, total, "above 0, or 0 where it is not known"}
+		return Fitted{}, unusable("number of all particles", -1, total, "above 0, or 0 where it is not known")
 	}
 	if steps == 1 {
 		return d.fit(d.oneStep(total))
@@ -168,7 +168,7 @@ type data struct {
 
 func newData(points []Point) (*data, error) {
 	if len(points) < 2 {
-		return nil, &InputError{"number of points", -1, float64(len(points)), "2 or more"}
+		return nil, unusable("number of points", -1, float64(len(points)), "2 or more")
 	}
 	d := &data{points: append([]Point(nil), points...)}
 	for i, p := range points {
@@ -177,27 +177,27 @@ func newData(points []Point) (*data, error) {
 		}
 		switch {
 		case !(p.Supersaturation > 0) || math.IsInf(p.Supersaturation, 1):
-			return nil, &InputError{"supersaturation of point", i, p.Supersaturation, "above 0"}
+			return nil, unusable("supersaturation of point", i, p.Supersaturation, "above 0")
 		case !(p.Count >= 0) || math.IsInf(p.Count, 1):
-			return nil, &InputError{"number at point", i, p.Count, "0 or more"}
+			return nil, unusable("number at point", i, p.Count, "0 or more")
 		}
 		d.most = math.Max(d.most, p.Count)
 	}
 	for i, p := range points {
 		switch {
 		case d.weighted && !(p.Uncertainty > 0 && p.Uncertainty < math.MaxFloat64):
-			return nil, &InputError{"uncertainty of point", i, p.Uncertainty, "above 0, as other points have one"}
+			return nil, unusable("uncertainty of point", i, p.Uncertainty, "above 0, as other points have one")
 		case !d.weighted && p.Count == 0:
-			return nil, &InputError{"number at point", i, 0, "above 0: without uncertainties the logarithms are fitted"}
+			return nil, unusable("number at point", i, 0, "above 0: without uncertainties the logarithms are fitted")
 		}
 	}
 	if d.most == 0 {
-		return nil, &InputError{"largest number", -1, 0, "above 0"}
+		return nil, unusable("largest number", -1, 0, "above 0")
 	}
 	sort.SliceStable(d.points, func(i, j int) bool { return d.points[i].Supersaturation < d.points[j].Supersaturation })
 	d.low, d.high = d.points[0].Supersaturation, d.points[len(points)-1].Supersaturation
 	if d.low == d.high {
-		return nil, &InputError{"supersaturations", -1, d.low, "at least two different ones"}
+		return nil, unusable("supersaturations", -1, d.low, "at least two different ones")
 	}
 	return d, nil
 }

@@ -312,6 +312,13 @@ func TestAtStandard(t *testing.T) {
 		near(t, "number", got.Count, c.want, 1e-12)
 		near(t, "uncertainty", got.Uncertainty, c.u, 1e-12)
 	}
+	// on the straight line of logarithms relative uncertainties go with the weights
+	got, err := AtStandard([]Point{{0.001, 1e8, 4e6}, {0.008, 3e8, 6e6}}, 0.002)
+	if err != nil {
+		t.Fatal(err)
+	}
+	near(t, "number", got.Count, 1e8*math.Cbrt(3), 1e-14)
+	near(t, "uncertainty", got.Uncertainty/got.Count, math.Hypot(0.04*2/3, 0.02/3), 1e-13)
 	for _, s := range []float64{0.0009, 0.009, math.NaN()} {
 		if _, err := AtStandard(points, s); !errors.Is(err, ErrInput) {
 			t.Errorf("at %g: %v", s, err)

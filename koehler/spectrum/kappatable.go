@@ -2,50 +2,31 @@ package spectrum
 
 import (
 	"math"
-	"sort"
 
+	"dropcrest/atmos/aerosol"
 	"dropcrest/koehler"
 )
 
 // KappaTable is a κ that depends on dry size: given at some diameters, linear in
 // ln D between them and held at its ends.
 type KappaTable struct {
-	ln, kappas []float64
-	kelvin     float64
+	*aerosol.Table
+	kelvin float64
 }
 
 // NewKappaTable makes the table of kappas (0 to 30) at the diameters (m), which
 // ascend, for a Kelvin length in m.
 func NewKappaTable(diameters, kappas []float64, kelvin float64) (*KappaTable, error) {
-	if len(diameters) == 0 || len(diameters) != len(kappas) {
-		return nil, &InputError{"number of kappas", -1, float64(len(kappas)), "one a diameter, and one or more"}
+	t, err := aerosol.NewTable(diameters, kappas)
+	if err != nil {
+		return nil, err
 	}
-	t := &KappaTable{kappas: append([]float64(nil), kappas...), kelvin: kelvin}
-	for i, d := range diameters {
-		switch {
-		case !(d > 0) || math.IsInf(d, 1) || i > 0 && !(d > diameters[i-1]):
-			return nil, &InputError{"diameter", i, d, "above 0 and above the one before it, in m"}
-		case !(kappas[i] >= 0 && kappas[i] <= mostKappa):
-			return nil, &InputError{"kappa", i, kappas[i], "0 to 30"}
+	for i, k := range kappas {
+		if k > mostKappa {
+			return nil, unusable("kappa", i, k, "0 to 30")
 		}
-		t.ln = append(t.ln, math.Log(d))
 	}
-	return t, nil
-}
-
-// At returns κ at the dry diameter d (m).
-func (t *KappaTable) At(d float64) float64 { return t.at(math.Log(d)) }
-
-func (t *KappaTable) at(x float64) float64 {
-	i := sort.SearchFloat64s(t.ln, x)
-	switch {
-	case i == 0:
-		return t.kappas[0]
-	case i == len(t.ln):
-		return t.kappas[i-1]
-	}
-	w := (x - t.ln[i-1]) / (t.ln[i] - t.ln[i-1])
-	return t.kappas[i-1] + w*(t.kappas[i]-t.kappas[i-1])
+	return &KappaTable{t, kelvin}, nil
 }
 
 // Critical returns the dry diameter (m) from which on every wider particle
@@ -84,22 +65,23 @@ const tableSteps = 8
 // not. Two crossings closer than an eighth of the distance between two given
 // diameters may be missed.
 func (t *KappaTable) crossings(dst []float64, s float64) ([]float64, error) {
-	last := len(t.ln) - 1
-	low, err := koehler.DryOf(t.kappas[0], t.kelvin, s)
+	ln := t.Ln()
+	last := len(ln) - 1
+	low, err := koehler.DryOf(t.AtLn(ln[0]), t.kelvin, s)
 	if err != nil {
 		return dst, err
 	}
-	high, err := koehler.DryOf(t.kappas[last], t.kelvin, s)
+	high, err := koehler.DryOf(t.AtLn(ln[last]), t.kelvin, s)
 	if err != nil {
 		return dst, err
 	}
-	x0, f0 := t.ln[0], t.excess(t.ln[0], s)
+	x0, f0 := ln[0], t.excess(ln[0], s)
 	if !(f0 > 0) {
 		dst = append(dst, math.Min(math.Log(low), x0))
 	}
 	for i := 1; i <= last; i++ {
 		for k := 1; k <= tableSteps; k++ {
-			x1 := t.ln[i-1] + (t.ln[i]-t.ln[i-1])*float64(k)/tableSteps
+			x1 := ln[i-1] + (ln[i]-ln[i-1])*float64(k)/tableSteps
 			f1 := t.excess(x1, s)
 			if (f0 > 0) != (f1 > 0) {
 				dst = append(dst, t.cross(x0, f0, x1, f1, s))
@@ -115,7 +97,7 @@ func (t *KappaTable) crossings(dst []float64, s float64) ([]float64, error) {
 
 // excess is ln s_c - ln s at ln D = x: above 0 where the particle stays haze.
 func (t *KappaTable) excess(x, s float64) float64 {
-	return math.Log(koehler.SolveKappa(math.Exp(x), t.kelvin, t.at(x)).Supersaturation / s)
+	return math.Log(koehler.SolveKappa(math.Exp(x), t.kelvin, t.AtLn(x)).Supersaturation / s)
 }
 
 // cross closes in on the crossing between a and b by the regula falsi of

@@ -29,7 +29,7 @@ func (m Ions) Check() error {
 	}{{"organic", m.Organic}, {"sulfate", m.Sulfate}, {"nitrate", m.Nitrate}, {"ammonium", m.Ammonium},
 		{"chloride", m.Chloride}, {"black carbon", m.BlackCarbon}} {
 		if !(x.mass >= 0) || math.IsInf(x.mass, 1) {
-			return &InputError{"mass of " + x.what, -1, x.mass, "0 or more, in kg/m³ (a negative value below the detection limit counts as 0)"}
+			return unusable("mass of "+x.what, -1, x.mass, "0 or more, in kg/m³ (a negative value below the detection limit counts as 0)")
 		}
 	}
 	return nil
@@ -157,7 +157,7 @@ func Mix(m Ions, t SpeciesTable) (Mixed, error) {
 		}
 	}
 	if mass == 0 {
-		return Mixed{}, &InputError{"mass of all species", -1, 0, "above 0"}
+		return Mixed{}, unusable("mass of all species", -1, 0, "above 0")
 	}
 	for i := range out.Parts {
 		p := &out.Parts[i]

@@ -81,7 +81,7 @@ func (p Population) Counts(dst, s []float64) ([]float64, error) {
 
 func checkShare(share float64) *InputError {
 	if !(share > 0 && share <= 1) {
-		return &InputError{"share", -1, share, "above 0 and up to 1"}
+		return unusable("share", -1, share, "above 0 and up to 1")
 	}
 	return nil
 }

@@ -98,11 +98,11 @@ func NewJudge(rules []Rule) (*Judge, error) {
 	j := &Judge{}
 	for i, r := range rules {
 		if _, ok := measures[r.Key]; !ok && r.Key != Monotonic {
-			return nil, &InputError{"rule " + r.Key, i, math.NaN(), "one of the rules of Defaults"}
+			return nil, unusable("rule "+r.Key, i, math.NaN(), "one of the rules of Defaults")
 		}
 		for _, bound := range []float64{r.Flag, r.Reject} {
 			if !math.IsNaN(bound) && !(bound >= r.Least && bound <= r.Most) {
-				return nil, &InputError{"bound of rule " + r.Key, i, bound, rangeWords(r.Least, r.Most)}
+				return nil, unusable("bound of rule "+r.Key, i, bound, rangeWords(r.Least, r.Most))
 			}
 		}
 		j.tallies = append(j.tallies, Tally{Rule: r})

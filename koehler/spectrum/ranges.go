@@ -3,6 +3,8 @@ package spectrum
 import (
 	"math"
 	"sort"
+
+	"dropcrest/atmos/aerosol"
 )
 
 // Ranges is a composition that differs between ranges of dry size: Of[0] below
@@ -17,12 +19,10 @@ type Ranges struct {
 // compositions.
 func NewRanges(limits []float64, of []Composition) (*Ranges, error) {
 	if len(of) != len(limits)+1 {
-		return nil, &InputError{"number of compositions", -1, float64(len(of)), "one more than limits"}
+		return nil, unusable("number of compositions", -1, float64(len(of)), "one more than limits")
 	}
-	for i, d := range limits {
-		if !(d > 0) || math.IsInf(d, 1) || i > 0 && !(d > limits[i-1]) {
-			return nil, &InputError{"limit", i, d, "above 0 and above the one before it, in m"}
-		}
+	if err := aerosol.CheckDiameters("limit", limits); err != nil {
+		return nil, err
 	}
 	return &Ranges{append([]float64(nil), limits...), append([]Composition(nil), of...)}, nil
 }

@@ -29,9 +29,9 @@ func (k Spread) Critical(s float64) (float64, error) {
 func (k Spread) check() error {
 	switch {
 	case !(k.Median > 0 && k.Median <= mostKappa):
-		return &InputError{"median kappa", -1, k.Median, "above 0 and up to 30"}
+		return unusable("median kappa", -1, k.Median, "above 0 and up to 30")
 	case !(k.GSD > 1 && k.GSD <= aerosol.MostGSD):
-		return &InputError{"spread of kappa", -1, k.GSD, "above 1 and up to 10 (a geometric standard deviation; without spread use one kappa)"}
+		return unusable("spread of kappa", -1, k.GSD, "above 1 and up to 10 (a geometric standard deviation; without spread use one kappa)")
 	}
 	return nil
 }

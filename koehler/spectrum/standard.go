@@ -20,7 +20,7 @@ func AtStandard(points []Point, s float64) (Point, error) {
 		if n > 0 {
 			right = fmt.Sprintf("inside the measured %.6g to %.6g", p[0].Supersaturation, p[n-1].Supersaturation)
 		}
-		return Point{}, &InputError{"supersaturation", -1, s, right}
+		return Point{}, unusable("supersaturation", -1, s, right)
 	}
 	i := sort.Search(len(p), func(i int) bool { return p[i].Supersaturation >= s })
 	if p[i].Supersaturation == s {
