@@ -8,8 +8,13 @@ import (
 	"gonum.org/v1/gonum/stat"
 )
 
-// tailBins is how many bins at the end of a distribution say how it goes on.
-const tailBins = 5
+// tailReach is how far from the end, in ln D, the bins say how a distribution goes on:
+// a factor of two, but two bins at least and five at most (own choice).
+const (
+	tailReach = math.Ln2
+	leastTail = 2
+	mostTail  = 5
+)
 
 // Tail is what probably lies beyond one end of the bins.
 type Tail struct {
@@ -20,9 +25,9 @@ type Tail struct {
 }
 
 // UpperTail estimates what lies above the last limit. The line through ln
-// dN/dlnD of the last bins that are not empty, up to five, is continued: a power
-// law, which falls more slowly than a lognormal mode does, so the number is rather
-// too high. An empty last bin has no tail.
+// dN/dlnD of the last bins that are not empty, up to five within a factor of two,
+// is continued: a power law, which falls more slowly than a lognormal mode does,
+// so the number is rather too high. An empty last bin has no tail.
 func (b *Bins) UpperTail() Tail { return b.tail(len(b.counts)-1, -1) }
 
 // LowerTail estimates what lies below the first limit in the same way.
@@ -38,9 +43,13 @@ func (b *Bins) tail(from, inwards int) Tail {
 		return t
 	}
 	var x, y []float64 // x: distance from the edge in ln D, inwards
-	for i := from; i >= 0 && i < len(b.counts) && len(x) < tailBins; i += inwards {
+	for i := from; i >= 0 && i < len(b.counts) && len(x) < mostTail; i += inwards {
+		distance := math.Abs(b.grid.middleLn(i) - b.grid.ln[outer])
+		if distance > tailReach && len(x) >= leastTail {
+			break
+		}
 		if b.counts[i] > 0 {
-			x = append(x, math.Abs(b.grid.middleLn(i)-b.grid.ln[outer]))
+			x = append(x, distance)
 			y = append(y, math.Log(b.counts[i]/b.grid.WidthLn(i)))
 		}
 	}
