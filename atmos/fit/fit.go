@@ -31,13 +31,19 @@ type Result struct {
 
 // maxSteps bounds the steps of the search and of its last, undamped part.
 const (
-	maxSteps    = 200
+	maxSteps    = 100
 	polishSteps = 20
 )
 
-// converged is the largest undamped step, relative to max(1, |x|), at a minimum.
-// Central differences leave the gradient uncertain at about 1e-10.
-const converged = 1e-7
+// A minimum is one where the next undamped step is small: relative to max(1, |x|),
+// as for points that lie on the curve, or relative to the uncertainty of the
+// parameters, which the relative offset of Bates & Watts 1981 (Technometrics 23,
+// 179; from memory, with their 0.001) measures. Central differences leave
+// the gradient uncertain at about 1e-10 of the residuals.
+const (
+	smallStep   = 1e-7
+	smallOffset = 1e-3
+)
 
 // LeastSquares minimises the sum of the squares of n residuals from start: damped
 // steps downhill, then undamped ones by QR while they help. It finds the minimum near start; start from several
@@ -48,11 +54,11 @@ func LeastSquares(residuals Residuals, n int, start []float64) (Result, error) {
 	}
 	p := problem{residuals: residuals, r: make([]float64, n), jac: mat.NewDense(n, len(start), nil)}
 	x := p.search(start)
-	step, ok := p.polish(x)
+	step, offset, ok := p.polish(x)
 	switch {
 	case !ok:
 		return Result{}, ErrUndetermined
-	case !(step <= converged):
+	case !(step <= smallStep || offset <= smallOffset):
 		return Result{}, ErrNotConverged
 	}
 	return p.result(x)
@@ -91,7 +97,7 @@ const (
 
 // searchDone is the relative gain of the sum, or the step, at which the search
 // leaves the rest to polish.
-const searchDone = 1e-8
+const searchDone = 1e-10
 
 // search goes downhill from start by the steps of Levenberg and Marquardt,
 //
@@ -147,20 +153,22 @@ func damped(step *mat.VecDense, normal *mat.SymDense, gradient *mat.VecDense, da
 	return chol.Factorize(a) && chol.SolveVecTo(step, gradient) == nil
 }
 
-// polish improves x by undamped steps and returns the size of the last one. ok
-// is false where the steps are not determined.
+// polish improves x by undamped steps and returns the size of the next one and its
+// relative offset. ok is false where the steps are not determined.
 //
 // Near the minimum the sum no longer tells x from its neighbours, while the step
 // still does: a step that leaves the sum alone is taken as long as steps shrink.
-func (p *problem) polish(x []float64) (size float64, ok bool) {
+func (p *problem) polish(x []float64) (size, offset float64, ok bool) {
 	best, last := p.sum(x), math.Inf(1)
 	next := make([]float64, len(x))
 	for range polishSteps {
 		p.jacobian(x)
-		var step mat.VecDense
+		var step, move mat.VecDense
 		if err := step.SolveVec(p.jac, mat.NewVecDense(len(p.r), p.r)); err != nil {
-			return size, false
+			return size, offset, false
 		}
+		move.MulVec(p.jac, &step)
+		offset = relativeOffset(mat.Dot(&move, &move), best, len(p.r), len(x))
 		size = 0
 		for i := range x {
 			next[i] = x[i] - step.AtVec(i)
@@ -173,7 +181,16 @@ func (p *problem) polish(x []float64) (size float64, ok bool) {
 		best, last = s, size
 		copy(x, next)
 	}
-	return size, true
+	return size, offset, true
+}
+
+// relativeOffset compares the part of the sum of squares that a step can still take
+// away with what must remain, each a degree of freedom; +Inf without any.
+func relativeOffset(away, sum float64, n, k int) float64 {
+	if n == k {
+		return math.Inf(1)
+	}
+	return math.Sqrt(away / float64(k) / ((sum - away) / float64(n-k)))
 }
 
 func (p *problem) result(x []float64) (Result, error) {

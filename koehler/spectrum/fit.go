@@ -3,6 +3,7 @@ package spectrum
 import (
 	"fmt"
 	"math"
+	"slices"
 	"sort"
 
 	"dropcrest/atmos/fit"
@@ -28,12 +29,13 @@ type Fitted struct {
 	DegreesOfFreedom int
 	ReducedChiSquare float64 // NaN without uncertainties or degrees of freedom
 	Deviation        float64 // root mean square of ln(form/measured) of the counts above 0
+	Held             []int   // parameters that were held, not fitted: they have no uncertainty
 }
 
 // Uncertainty returns the standard uncertainty of parameter i, NaN where there is no
-// covariance.
+// covariance or the parameter was held.
 func (f Fitted) Uncertainty(i int) float64 {
-	if f.Covariance == nil {
+	if f.Covariance == nil || slices.Contains(f.Held, i) {
 		return math.NaN()
 	}
 	return math.Sqrt(f.Covariance.At(i, i))
@@ -46,6 +48,7 @@ func (f Fitted) Extrapolates(s float64) bool { return !(s >= f.Low && s <= f.Hig
 type model struct {
 	of     func(x []float64) Form
 	starts [][]float64
+	held   []int // parameters of the form that do not move
 }
 
 // FitPower fits a power law. At least two points; see Fitted. With uncertainties
@@ -63,29 +66,47 @@ func FitPower(points []Point) (Fitted, error) {
 	})
 }
 
-// FitCohard fits the form of Cohard, Pinty & Bedos with Mu > K/2, so that it is
-// bounded. At least four points; they must bend, or Mu and Beta are not determined.
+// HeldExponent is the K at which FitCohard holds a spectrum that would drive it to
+// infinity. Published fits lie at 0.3 to 4.2 or so (from memory).
+const HeldExponent = 4
+
+// FitCohard fits the form of Cohard, Pinty & Bedos. At least four points; they must
+// bend, or Mu and Beta are not determined and a power law is the answer. A spectrum
+// of two modes has no best K: it fits the better the larger K is, C with it. Then K is
+// held at HeldExponent and the other three are fitted, which Fitted.Held says.
 func FitCohard(points []Point) (Fitted, error) {
 	d, err := newData(points)
 	if err != nil {
 		return Fitted{}, err
 	}
-	m := model{of: func(x []float64) Form {
-		k := math.Exp(x[1])
-		return Cohard{math.Exp(x[0]), k, k/2 + math.Exp(x[2]), math.Exp(x[3])}
-	}}
 	_, slope := d.line()
+	free := model{of: func(x []float64) Form {
+		return Cohard{math.Exp(x[0]), math.Exp(x[3]), math.Exp(x[1]), math.Exp(x[2])}
+	}}
 	for _, k := range []float64{math.Max(slope, 0.1) + 0.3, 1.5, 3} {
-		for _, bend := range []float64{0.3, 0.7} { // where in the range the power law ends
-			for _, spare := range []float64{-1, 0.5} {
-				S := math.Pow(d.low, 1-bend) * math.Pow(d.high, bend) / Percent
-				// C such that the power law meets the middle of the data at the bend
-				n := math.Log(d.most/2) - k*math.Log(S)
-				m.starts = append(m.starts, []float64{n, math.Log(k), spare, -2 * math.Log(S)})
-			}
-		}
+		free.starts = append(free.starts, append(d.cohardStart(k, 0.5), math.Log(k)))
 	}
-	return d.fit(m)
+	f, err := d.fit(free)
+	if err == nil || len(points) < 4 {
+		return f, err
+	}
+	held := model{held: []int{1}, of: func(x []float64) Form {
+		return Cohard{math.Exp(x[0]), HeldExponent, math.Exp(x[1]), math.Exp(x[2])}
+	}}
+	for _, bend := range []float64{0.3, 0.7} {
+		held.starts = append(held.starts, d.cohardStart(HeldExponent, bend))
+	}
+	if f, heldErr := d.fit(held); heldErr == nil {
+		return f, nil
+	}
+	return Fitted{}, err
+}
+
+// cohardStart is ln C, ln Mu and ln Beta of a form whose power law K ends at this
+// share of the range of ln s, where it meets half of the largest number.
+func (d *data) cohardStart(k, bend float64) []float64 {
+	S := math.Pow(d.low, 1-bend) * math.Pow(d.high, bend) / Percent
+	return []float64{math.Log(d.most/2) - k*math.Log(S), math.Log(k/2 + 0.3), -2 * math.Log(S)}
 }
 
 // FitErrorFunctions fits one or two steps. total is the number of all particles
@@ -262,7 +283,7 @@ func (d *data) fit(m model) (Fitted, error) {
 
 func (d *data) fitted(m model, r fit.Result) Fitted {
 	f := Fitted{Form: m.of(r.X), Low: d.low, High: d.high, Points: len(d.points),
-		DegreesOfFreedom: r.DegreesOfFreedom, ReducedChiSquare: math.NaN(), Deviation: d.deviation(m.of(r.X))}
+		DegreesOfFreedom: r.DegreesOfFreedom, ReducedChiSquare: math.NaN(), Deviation: d.deviation(m.of(r.X)), Held: m.held}
 	parameters := func(dst, x []float64) {
 		for i, p := range m.of(x).Parameters() {
 			dst[i] = p.Value

@@ -36,7 +36,7 @@ func (n *noise) next() float64 {
 // dN/dS of Cohard's form by quadrature, on both sides of Mu = K/2.
 func TestCohardAgainstQuadrature(t *testing.T) {
 	for _, c := range []Cohard{
-		{1e9, 1.2, 1.5, 40}, {1e9, 0.6, 0.31, 200}, {1e9, 3, 0.8, 30}, {1e9, 0.5, 2, 1e-3}, {1e9, 2, 0, 5}, {1e9, 2.1, 1.05, 9},
+		{1e9, 1.2, 1.5, 40}, {1e9, 0.6, 0.31, 200}, {1e9, 3, 0.8, 30}, {1e9, 0.5, 2, 1e-3}, {1e9, 2, 0, 5}, {1e9, 2.1, 1.05, 9}, {1e9, 2, 1 + 1e-6, 9}, {1e9, 2, 1 - 1e-6, 9},
 	} {
 		for _, s := range []float64{1e-5, 0.0005, 0.002, 0.01, 0.05} {
 			S := s / Percent
@@ -82,6 +82,7 @@ func TestFitsFindTheForm(t *testing.T) {
 		{"power", Power{6e8, 0.55}, 5, FitPower, 1e-9},
 		{"falling power", Power{6e8, -0.2}, 5, FitPower, 1e-9},
 		{"Cohard", Cohard{2e10, 2.3, 1.6, 30}, 9, FitCohard, 1e-5},
+		{"Cohard without limit", Cohard{2e9, 1.4, 0.5, 10}, 9, FitCohard, 1e-5},
 		{"one step", one, 6, func(p []Point) (Fitted, error) { return FitErrorFunctions(p, 1, 0) }, 1e-8},
 		{"one step, all known", one, 6, func(p []Point) (Fitted, error) { return FitErrorFunctions(p, 1, 8e8) }, 1e-8},
 		{"two steps", two, 12, func(p []Point) (Fitted, error) { return FitErrorFunctions(p, 2, 0) }, 1e-5},
@@ -189,6 +190,67 @@ func TestWhatCannotBeFitted(t *testing.T) {
 	f, err := FitPower(power[:2])
 	if err != nil || f.Covariance != nil || !math.IsNaN(f.Uncertainty(0)) {
 		t.Errorf("two points: %+v, %v", f, err)
+	}
+}
+
+// Noisy spectra of two modes determine two steps most of the time, and what is found
+// describes the points as well as their noise lets it.
+func TestTwoStepsThroughNoise(t *testing.T) {
+	var p Population
+	for _, m := range invented() {
+		p = append(p, Group{m, 1, Kappa{0.3, kelvin}})
+	}
+	r, failed := noise(9), 0
+	const rows = 20
+	for range rows {
+		var points []Point
+		for i := range 8 {
+			s := 0.0007 * math.Pow(20, float64(i)/7)
+			n, err := p.Count(s)
+			if err != nil {
+				t.Fatal(err)
+			}
+			points = append(points, Point{s, n * (1 + 0.02*r.next()), 0.02 * n})
+		}
+		f, err := FitErrorFunctions(points, 2, 0)
+		if err != nil {
+			failed++
+		} else if f.Deviation > 0.04 {
+			t.Errorf("%+v", f)
+		}
+	}
+	if failed > rows/5 {
+		t.Errorf("%d of %d not fitted", failed, rows)
+	}
+}
+
+// The spectrum of two modes has no best exponent: it is held, and said to be.
+func TestCohardOfTwoModes(t *testing.T) {
+	var p Population
+	for _, m := range invented() {
+		p = append(p, Group{m, 1, Kappa{0.3, kelvin}})
+	}
+	r := noise(9)
+	for range 5 {
+		var points []Point
+		for i := range 8 {
+			s := 0.0007 * math.Pow(20, float64(i)/7)
+			n, err := p.Count(s)
+			if err != nil {
+				t.Fatal(err)
+			}
+			points = append(points, Point{s, n * (1 + 0.03*r.next()), 0.03 * n})
+		}
+		f, err := FitCohard(points)
+		if err != nil {
+			t.Fatal(err)
+		}
+		if k := f.Form.(Cohard).K; k != HeldExponent || len(f.Held) != 1 || !math.IsNaN(f.Uncertainty(1)) || f.DegreesOfFreedom != 5 {
+			t.Errorf("%+v", f)
+		}
+		if !(f.Uncertainty(0) > 0 && f.Uncertainty(2) > 0 && f.Uncertainty(3) > 0) || f.Deviation > 0.08 {
+			t.Errorf("%+v", f)
+		}
 	}
 }
 

@@ -46,7 +46,8 @@ func (p Power) Parameters() []Parameter {
 //	dN/dS = C K S^(K-1) (1 + Beta S²)^(-Mu)
 //	N     = C S^K 2F1(Mu, K/2; K/2+1; -Beta S²)
 //
-// Beta → 0 is the power law. For Mu > K/2 it is bounded, see Limit.
+// Beta → 0 is the power law. For Mu > K/2 it is bounded, see Limit. The relative
+// error is some 1e-13, and 1e-16/|Mu - K/2| where that is larger.
 type Cohard struct {
 	C    float64 // 1/m³
 	K    float64 // > 0
