@@ -1,0 +1,270 @@
+package fieldfile
+
+import (
+	"bytes"
+	"math"
+	"slices"
+	"strings"
+	"time"
+)
+
+// icarttKeys are the keywords of the normal comments, in their order. All are
+// required; "N/A" is a value.
+var icarttKeys = []string{
+	"PI_CONTACT_INFO", "PLATFORM", "LOCATION", "ASSOCIATED_DATA", "INSTRUMENT_INFO", "DATA_INFO", "UNCERTAINTY",
+	"ULOD_FLAG", "ULOD_VALUE", "LLOD_FLAG", "LLOD_VALUE", "DM_CONTACT_INFO", "PROJECT_INFO",
+	"STIPULATIONS_ON_USE", "OTHER_COMMENTS", "REVISION",
+}
+
+// openICARTT reads the header of ICARTT, FFI 1001.
+func (f *File) openICARTT() error {
+	f.Format = ICARTT
+	h := &headerReader{f: f, comma: true}
+	t, err := h.readTop()
+	if err != nil {
+		return err
+	}
+	f.Interval = seconds(t.dx)
+	axis := icarttVariable(t.axis)
+	axis.time = "seconds since " + f.Begin.Format(time.DateOnly)
+	f.Columns = append(f.Columns, axis)
+	if err := h.readVariables(icarttVariable); err != nil {
+		return err
+	}
+	special, normal, err := h.readComments(t)
+	if err != nil {
+		return err
+	}
+	for _, line := range special {
+		f.Comments = append(f.Comments, clean(line))
+	}
+	f.readKeywords(normal)
+	f.readLimits()
+	for i := range f.Columns {
+		f.checkShortName(f.Columns[i].Name)
+		if u := strings.ToLower(f.Columns[i].Unit); i > 0 && strings.HasPrefix(u, "s") && isTimeName(f.Columns[i]) {
+			f.Columns[i].time = axis.time // Time_Stop and Time_Mid are on the same axis
+		}
+	}
+	f.rows = &tableRows{f: f, parting: f.parting()}
+	return nil
+}
+
+// seconds as a duration; what no duration can hold is none.
+func seconds(x float64) time.Duration {
+	const longest = 1e8 // three years
+	if !(x > 0 && x < longest) {
+		return 0
+	}
+	return time.Duration(math.Round(x * 1e9))
+}
+
+// icarttVariable reads "shortname, units[, standardname[, longname]]"; the long
+// name may contain commas.
+func icarttVariable(line string) Column {
+	parts := strings.SplitN(line, ",", 4)
+	c := newColumn(clean(parts[0]))
+	text := func(i int) string {
+		if i >= len(parts) {
+			return ""
+		}
+		s := clean(parts[i])
+		if strings.EqualFold(s, "n/a") || i == 2 && strings.EqualFold(s, "none") {
+			return ""
+		}
+		return s
+	}
+	c.Unit, c.Standard, c.Long = text(1), text(2), text(3)
+	return c
+}
+
+// checkShortName notes names against the grammar: a letter, then letters, digits
+// and underscores, at most 31.
+func (f *File) checkShortName(name string) {
+	const longest = 31
+	good := name != "" && len(name) <= longest
+	for i, c := range name {
+		letter := 'a' <= c && c <= 'z' || 'A' <= c && c <= 'Z'
+		if !letter && (i == 0 || !('0' <= c && c <= '9') && c != '_') {
+			good = false
+		}
+	}
+	if !good {
+		f.notes.add("short_name", 0, "%s is no short name of ICARTT: a letter, then letters, digits and underscores, at most 31", quoted(name))
+	}
+}
+
+// readKeywords parts the normal comments: free lines, keywords with their
+// continuation lines, and last the short names.
+func (f *File) readKeywords(normal []string) {
+	if len(normal) == 0 {
+		f.notes.add("no_comments", 0, "no normal comments: no keywords and no line of short names")
+		return
+	}
+	f.checkNames(normal[len(normal)-1])
+	for _, line := range normal[:len(normal)-1] {
+		key, value, ok := keyword(line)
+		switch n := len(f.Attributes); {
+		case ok:
+			f.Attributes = append(f.Attributes, Attribute{key, value})
+		case n == 0:
+			f.Comments = append(f.Comments, clean(line))
+		case f.Attributes[n-1].Value == "":
+			f.Attributes[n-1].Value = clean(line)
+		default:
+			f.Attributes[n-1].Value += "\n" + clean(line)
+		}
+	}
+	var absent []string
+	for _, key := range icarttKeys {
+		if !slices.ContainsFunc(f.Attributes, func(a Attribute) bool { return a.Key == key }) {
+			absent = append(absent, key)
+		}
+	}
+	if len(absent) > 0 {
+		f.notes.add("keywords", 0, "the header lacks %s", strings.Join(absent, ", "))
+	}
+}
+
+// keyword reads "KEY: value"; a blank before the colon is tolerated. Revisions,
+// "R1: text" and "RA: text", count as keys too.
+func keyword(line string) (key, value string, ok bool) {
+	key, value, ok = strings.Cut(line, ":")
+	key = strings.TrimRight(key, " \t")
+	if !ok {
+		return "", "", false
+	}
+	revision := len(key) >= 2 && len(key) <= 3 && key[0] == 'R' && strings.Trim(key[1:], "0123456789ABCDEFGHIJKLMNOPQRSTUVWXYZ") == ""
+	if !revision && !slices.Contains(icarttKeys, key) {
+		return "", "", false
+	}
+	return key, clean(value), true
+}
+
+// checkNames compares the line of short names with the declared ones.
+func (f *File) checkNames(line string) {
+	names := splitAny(line, strings.Contains(line, ","))
+	if len(names) != len(f.Columns) {
+		f.notes.add("names", f.lines.number, "the line of short names has %d names for %d columns: the position counts", len(names), len(f.Columns))
+		return
+	}
+	for i, n := range names {
+		if clean(n) != f.Columns[i].Name {
+			f.notes.add("names", f.lines.number, "column %d is called %s in the line of short names and %s where it is declared: the position counts",
+				i+1, quoted(n), quoted(f.Columns[i].Name))
+		}
+	}
+}
+
+// limit is the code of a limit of detection.
+type limit struct {
+	code  float64 // NaN: none
+	digit byte    // of a code that is that digit alone, whose length may vary; 0: not so
+}
+
+func (l limit) is(x float64) bool {
+	return alike(x, l.code) || l.digit != 0 && x < suspiciousLimit && isRepeated(x, l.digit)
+}
+
+// suspiciousLimit is above every code of at least three digits.
+const suspiciousLimit = -700
+
+// alike compares codes as numbers: -9999.0 is -9999.00.
+func alike(x, code float64) bool { return x == code || math.Abs(x-code) <= 1e-6*math.Abs(code) }
+
+func readLimit(text string, digit byte) limit {
+	text, _, _ = strings.Cut(text, "\n")
+	x, ok := number([]byte(strings.TrimSpace(text)))
+	if !ok {
+		return limit{code: math.NaN()}
+	}
+	l := limit{code: x}
+	if x < 0 && isRepeated(x, digit) {
+		l.digit = digit
+	}
+	return l
+}
+
+// readLimits takes codes and values of the limits of detection, and the
+// uncertainties, out of the keywords.
+func (f *File) readLimits() {
+	f.above = readLimit(f.Attribute("ULOD_FLAG"), 7)
+	f.below = readLimit(f.Attribute("LLOD_FLAG"), 8)
+	f.spread("ULOD_VALUE", func(c *Column, x float64) { c.Upper = x })
+	f.spread("LLOD_VALUE", func(c *Column, x float64) { c.Lower = x })
+	f.spread("UNCERTAINTY", func(c *Column, x float64) { c.Uncertainty = x })
+	for i := range f.Columns[1:] {
+		if c := &f.Columns[i+1]; f.below.is(c.missing) {
+			f.notes.add("llod_is_missing", 0, "LLOD_FLAG is also the missing-data code of %s: such values are taken as missing", quoted(c.Name))
+		}
+	}
+}
+
+// spread gives each dependent variable its value of a keyword: one for all, or
+// one each; text says nothing.
+func (f *File) spread(key string, set func(*Column, float64)) {
+	parts := splitAny(strings.ReplaceAll(f.Attribute(key), "\n", ","), true)
+	if len(parts) != 1 && len(parts) != len(f.Columns)-1 {
+		return
+	}
+	for i := range f.Columns[1:] {
+		p := parts[0]
+		if len(parts) > 1 {
+			p = parts[i]
+		}
+		if x, ok := number([]byte(p)); ok {
+			set(&f.Columns[i+1], x)
+		}
+	}
+}
+
+// coded tells what a stored number of ICARTT or NASA Ames says: codes are
+// compared before the scale is applied.
+func (f *File) coded(s *step, x float64) State {
+	switch {
+	case alike(x, s.code):
+		return Missing
+	case f.Format != ICARTT:
+		return Value
+	case x > suspiciousLimit:
+		if f.below.digit == 0 && alike(x, f.below.code) {
+			return Below
+		}
+		if f.above.digit == 0 && alike(x, f.above.code) {
+			return Above
+		}
+		return Value
+	case f.below.is(x):
+		return Below
+	case f.above.is(x):
+		return Above
+	case isRepeated(x, 9):
+		f.notes.add("nines", f.row.line, "%s in column %s, whose missing-data code is %s, is taken as missing",
+			short(x), quoted(f.Columns[s.column].Name), f.Columns[s.column].Missing)
+		return Missing
+	}
+	return Value
+}
+
+// parting is what parts the values of the records: commas, and if lenient
+// whatever the first record shows.
+func (f *File) parting() byte {
+	if !f.opt.Lenient {
+		return ','
+	}
+	line, err := f.lines.next()
+	if err != nil {
+		return ','
+	}
+	f.lines.again()
+	if bytes.IndexByte(line, ',') < 0 {
+		f.notes.add("parted", f.lines.number+1, "values are parted by blanks or tabs instead of commas")
+		return ' '
+	}
+	return ','
+}
+
+// isTimeName reports whether a column is called a time.
+func isTimeName(c Column) bool {
+	return strings.Contains(strings.ToLower(c.Name+" "+c.Standard), "time")
+}
