@@ -132,6 +132,26 @@ func (f *File) setAxis(t top) {
 	}
 }
 
+// ebasBasis is what the metadata of EBAS say on the state of the air: the keys
+// "Volume std. temperature" and "Volume std. pressure" (from memory), or that size
+// distributions of level 1 and 2 are at 273.15 K and 1013.25 hPa.
+func (f *File) ebasBasis(q Quantity) Basis {
+	if !f.isEBAS() {
+		return Unstated
+	}
+	t, p := f.Attribute("Volume std. temperature"), f.Attribute("Volume std. pressure")
+	level := f.Attribute("Data level")
+	switch {
+	case strings.HasPrefix(t, "273.15") && strings.HasPrefix(p, "1013.25"):
+		return Standard
+	case strings.EqualFold(t, "ambient") && strings.EqualFold(p, "ambient"):
+		return Ambient
+	case t == "" && q.IsSize() && (strings.HasPrefix(level, "1") || strings.HasPrefix(level, "2")):
+		return Standard
+	}
+	return Unstated
+}
+
 // startDate brings YYYYMMDDhhmmss into the basic form of ISO 8601.
 func startDate(s string) string {
 	const date = 8

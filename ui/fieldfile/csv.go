@@ -293,7 +293,7 @@ func csvUnit(name string) (unit, time string) {
 		}
 	}
 	if unit == "" {
-		if i := strings.LastIndex(name, ", "); i >= 0 {
+		if i := strings.LastIndex(name, ", "); i >= 0 && isUnit(name[i+1:]) {
 			unit = strings.TrimSpace(name[i+1:])
 		}
 	}

@@ -160,8 +160,11 @@ func (f *File) guessColumn(c *Column) (r Role, ask string) {
 	if q == RelativeHumidity && f.Format == CSV && unitKey(c.Unit) == "" {
 		r.Unit = "" // asked for below
 	}
-	if d.dim != concentration {
+	switch {
+	case d.dim != concentration:
 		r.Basis = Unstated
+	case r.Basis == Unstated:
+		r.Basis = f.ebasBasis(q)
 	}
 	if d.at != nowhere {
 		r = f.placed(c, r)

@@ -65,7 +65,6 @@ func (l *lines) next() ([]byte, error) {
 			break
 		}
 		if searched > longestLine {
-			l.number++
 			return nil, errLongLine
 		}
 		l.fill()

@@ -2,6 +2,7 @@ package fieldfile
 
 import (
 	"math"
+	"slices"
 	"strings"
 )
 
@@ -111,6 +112,20 @@ func (d *dimension) unit(name string) (unit, bool) {
 		return unit{1, 1, 0}, true
 	}
 	return u, ok
+}
+
+// dimensions are all of them.
+var dimensions = []*dimension{none, concentration, length, excess, humidity, heat, heatStep, force, mass, speed, flow, span}
+
+// isUnit reports whether a text is a unit of anything, or of a time.
+func isUnit(text string) bool {
+	if _, ok := parseTimeUnit(text); ok {
+		return true
+	}
+	return slices.ContainsFunc(dimensions, func(d *dimension) bool {
+		_, ok := d.unit(text)
+		return ok && strings.TrimSpace(text) != ""
+	})
 }
 
 // right says which units there are, by example.
