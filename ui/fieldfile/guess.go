@@ -193,14 +193,8 @@ func orShown(u string, d *dimension) string {
 // then where and in which unit.
 func (f *File) ownName(c *Column) (Quantity, bool) {
 	name, _, _ := strings.Cut(c.Name, "_at_")
-	name, _, _ = strings.Cut(name, " ")
-	if q, ok := quantityOf(name); ok {
-		return q, true
-	}
-	if q, ok := quantityOf(strings.TrimSuffix(name, suffixOf(name))); ok {
-		return q, true
-	}
-	return Unused, false
+	name = strings.TrimSuffix(strings.TrimSuffix(name, suffixOf(name)), "_stp")
+	return quantityOf(name)
 }
 
 func (f *File) guessTime(c *Column, q Quantity) (Role, string) {

@@ -4,6 +4,8 @@ import (
 	"errors"
 	"io"
 	"math"
+	"os"
+	"path/filepath"
 	"strings"
 	"testing"
 )
@@ -84,4 +86,13 @@ func noted(f *File, code string) bool {
 
 func same2(a, b Cell) bool {
 	return a.State == b.State && (a.X == b.X || math.IsNaN(a.X) && math.IsNaN(b.X) || a.State == Missing)
+}
+
+func readDemo(t testing.TB, name string) string {
+	t.Helper()
+	data, err := os.ReadFile(filepath.Join(demoDir, name))
+	if err != nil {
+		t.Fatal(err)
+	}
+	return string(data)
 }
