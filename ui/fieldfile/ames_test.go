@@ -127,3 +127,24 @@ func TestAmesWithoutAUnitOfTimeAsks(t *testing.T) {
 		t.Errorf("time %v", got[1].Start)
 	}
 }
+
+// The long layout of EBAS: one record a setting, the supersaturation beside the
+// count, its uncertainty a second column of the same parameter.
+func TestEBASLongLayout(t *testing.T) {
+	const parameter = "cloud_condensation_nuclei_number_concentration, 1/cm3"
+	lines := amesFile()
+	lines[9], lines[10], lines[11] = "6", "1 1 1 1 1 1", "9999.999999 99.99 9999.99 9999.99 9999.99 9.999"
+	lines[13], lines[14], lines[15] = "supersaturation, %", parameter, parameter+", Statistics=uncertainty"
+	lines[16] = parameter + ", Statistics=percentile:15.87\nnumflag, no unit"
+	lines[0], lines[26] = "28 1001", "start_time end_time ss ccn unc p15 flag"
+	lines = append(lines[:27], "0.0 0.041667 0.10 100.00 3.00 90.00 0.000", "0.041667 0.083333 0.50 500.00 9.00 400.00 0.000")
+	f := open(t, join2(lines))
+	want := []string{"ss=supersaturation in %", "ccn=ccn in 1/cm3", "unc=ccn_uncertainty in 1/cm3", "flag=flag"}
+	if got := f.Mapping()[2:]; !slices.Equal(got, want) {
+		t.Errorf("mapping %q, want %q; notes %v", got, want, f.Notes())
+	}
+	got := samples(t, f)
+	if len(got) != 2 || got[1].Counts[0].At() != 0.005 || got[1].Counts[0].N.X != 5e8 || got[1].Counts[0].Uncertainty.X != 9e6 {
+		t.Errorf("samples %+v", got)
+	}
+}

@@ -2,9 +2,10 @@ package fieldfile
 
 import (
 	"bytes"
+	"encoding/binary"
 	"io"
 	"math"
-	"strings"
+	"math/bits"
 )
 
 // csvRows reads records by RFC 4180. Lines without a quote, nearly all, are
@@ -66,8 +67,11 @@ func newColumn(name string) Column {
 func (c *csvRows) firstLine() ([]byte, error) {
 	for {
 		line, err := c.f.lines.next()
+		if err == io.EOF {
+			return nil, c.f.wrongAt(c.f.lines.number+1, 0, "the file ends before the names", "a line of names and records")
+		}
 		if err != nil {
-			return nil, c.f.end(err)
+			return nil, c.f.broken(err)
 		}
 		switch {
 		case len(bytes.TrimSpace(line)) == 0:
@@ -178,167 +182,29 @@ func (c *csvRows) split(r *row) error {
 	if bytes.IndexByte(line, '"') >= 0 {
 		return c.splitQuoted(r, line)
 	}
-	fields, starts, start := r.fields[:0], r.starts[:0], 0
-	for i, b := range line {
-		if b == c.comma {
-			fields, starts = append(fields, line[start:i]), append(starts, start)
-			start = i + 1
-		}
-	}
-	r.fields, r.starts = append(fields, line[start:]), append(starts, start)
+	r.fields, r.quoted = appendFields(r.fields[:0], line, c.comma), false
 	return nil
 }
 
-// splitQuoted reads a record with quotes, which may hold commas, doubled quotes
-// and line breaks.
-func (c *csvRows) splitQuoted(r *row, line []byte) error {
-	c.joined = append(c.joined[:0], line...)
-	quotes := bytes.Count(line, []byte{'"'})
-	for added := line; ; {
-		// an odd number of quotes cannot end a record, but the first line is tried
-		// for a quote in a wrong place
-		if quotes%2 == 0 || len(added) == len(c.joined) {
-			if done, err := c.unquote(r, c.joined); err != nil || done {
-				return err
-			}
-		}
-		if len(c.joined) > longestLine {
-			return c.unclosed(r)
-		}
-		var err error
-		added, err = c.f.lines.next()
-		if err == io.EOF {
-			return c.unclosed(r)
-		}
-		if err != nil {
-			return c.f.end(err)
-		}
-		quotes += bytes.Count(added, []byte{'"'})
-		c.joined = append(append(c.joined, '\n'), added...)
-	}
-}
-
-func (c *csvRows) unclosed(r *row) error {
-	return c.f.wrongAt(r.line, r.columnOf(len(r.starts)-1), "a quote that does not end", `a closing "`)
-}
-
-// unquote splits a record. It reports false where the record goes on in the next
-// line; the text is left as it was then.
-func (c *csvRows) unquote(r *row, text []byte) (done bool, err error) {
-	r.fields, r.starts = r.fields[:0], r.starts[:0]
-	r.text = text
-	for at := 0; ; {
-		r.starts = append(r.starts, at)
-		if at >= len(text) || text[at] != '"' {
-			end := bytes.IndexByte(text[at:], c.comma)
-			field := text[at:]
-			if end >= 0 {
-				field = text[at : at+end]
-			}
-			if q := bytes.IndexByte(field, '"'); q >= 0 {
-				r.starts[len(r.starts)-1] = at + q
-				return false, c.f.wrongAt(r.line, r.columnOf(len(r.starts)-1), "a quote inside a field", `the whole field in quotes, inner quotes doubled: "a ""b"" c"`)
-			}
-			r.fields = append(r.fields, field)
-			if end < 0 {
-				return true, nil
-			}
-			at += end + 1
-			continue
-		}
-		field, next, ended := quotedField(text, at+1)
-		if !ended {
-			return false, nil
-		}
-		r.fields = append(r.fields, field)
-		if next == len(text) {
-			return true, nil
-		}
-		if text[next] != c.comma {
-			r.starts[len(r.starts)-1] = next
-			return false, c.f.wrongAt(r.line, r.columnOf(len(r.starts)-1), "text after a closing quote", "a comma or the end of the line")
-		}
-		at = next + 1
-	}
-}
-
-// quotedField reads from behind the opening quote to behind the closing one.
-func quotedField(text []byte, from int) (field []byte, next int, ended bool) {
-	doubled := false
-	for i := from; i < len(text); i++ {
-		if text[i] != '"' {
-			continue
-		}
-		if i+1 < len(text) && text[i+1] == '"' {
-			doubled = true
-			i++
-			continue
-		}
-		field = text[from:i]
-		if doubled {
-			field = bytes.ReplaceAll(field, []byte(`""`), []byte(`"`))
-		}
-		return field, i + 1, true
-	}
-	return nil, 0, false
-}
-
-// csvUnit finds the unit in a column's name: "ccn (cm-3)", "ccn [cm-3]", "ccn,
-// cm-3" or, as this program writes, "ccn_per_cm3", "diameter_nm". What follows
-// "seconds since" is the unit of a time.
-func csvUnit(name string) (unit, time string) {
-	for _, pair := range []string{"()", "[]"} {
-		if i := strings.LastIndexByte(name, pair[0]); i >= 0 && strings.HasSuffix(name, pair[1:]) {
-			unit = strings.TrimSpace(name[i+1 : len(name)-1])
+// appendFields parts a line without quotes. It looks at eight bytes at a time:
+// with x the eight bytes, each exclusive-or the comma, the mask has the top bit
+// of every byte that is zero, and carries nothing from byte to byte.
+func appendFields(fields [][]byte, line []byte, comma byte) [][]byte {
+	const ones, sevens, step = 0x0101010101010101, 0x7f7f7f7f7f7f7f7f, 8
+	start, i := 0, 0
+	for ; i+step <= len(line); i += step {
+		x := binary.LittleEndian.Uint64(line[i:]) ^ ones*uint64(comma)
+		for mask := ^((x&sevens + sevens) | x | sevens); mask != 0; mask &= mask - 1 {
+			end := i + bits.TrailingZeros64(mask)/8
+			fields = append(fields, line[start:end])
+			start = end + 1
 		}
 	}
-	if unit == "" {
-		if i := strings.LastIndex(name, ", "); i >= 0 && isUnit(name[i+1:]) {
-			unit = strings.TrimSpace(name[i+1:])
+	for ; i < len(line); i++ {
+		if line[i] == comma {
+			fields = append(fields, line[start:i])
+			start = i + 1
 		}
 	}
-	if unit == "" {
-		unit = suffixUnit(name)
-	}
-	if _, ok := parseTimeUnit(unit); ok {
-		return unit, unit
-	}
-	return unit, ""
-}
-
-// suffixes of names that are units.
-var suffixes = []string{"_per_cm3", "_cm-3", "_cm3", "_per_m3", "_m-3", "_percent", "_pct", "_nm", "_um", "_hpa", "_pa", "_mbar",
-	"_degc", "_c", "_k", "_ug_per_m3", "_ugm3", "_ug_m3", "_m_per_s", "_l_per_min", "_lpm", "_m", "_s"}
-
-// suffixUnit is the unit at the end of a name. "_cm3" and "_m3" behind a number
-// concentration leave out the "per".
-func suffixUnit(name string) string {
-	switch longest := strings.ToLower(suffixOf(name)); longest {
-	case "":
-		return ""
-	case "_cm3":
-		return "1/cm3"
-	case "_ugm3", "_ug_m3", "_ug_per_m3":
-		return "ug/m3"
-	case "_per_m3":
-		return "1/m3"
-	case "_per_cm3":
-		return "1/cm3"
-	case "_m_per_s":
-		return "m/s"
-	case "_l_per_min":
-		return "L/min"
-	}
-	return suffixOf(name)[1:]
-}
-
-// suffixOf is the longest suffix of a name that is a unit.
-func suffixOf(name string) string {
-	longest := 0
-	for _, s := range suffixes {
-		if n := len(name) - len(s); n >= 0 && strings.EqualFold(name[n:], s) {
-			longest = max(longest, len(s))
-		}
-	}
-	return name[len(name)-longest:]
+	return append(fields, line[start:])
 }

@@ -78,7 +78,7 @@ var rules = []rule{
 	{"=ccn =unc", "", CCNUncertainty},
 	{"=ccn counted", "", CCNCounted},
 	{"cloud_condensation_nuclei", "log10", CCN},
-	{"=ccn", "supersaturation_in temp flow pressure size", CCN},
+	{"=ccn", "temp flow pressure size", CCN},
 	{"=nccn", "temp flow pressure size", CCN},
 	{"supersaturation uncertainty", "", SupersaturationUncertainty},
 	{"supersaturation =set", "", SupersaturationSet},

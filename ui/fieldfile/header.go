@@ -1,7 +1,6 @@
 package fieldfile
 
 import (
-	"bytes"
 	"io"
 	"math"
 	"strings"
@@ -69,7 +68,18 @@ func (h *headerReader) line(what string) (string, error) {
 	if err != nil {
 		return "", h.f.broken(err)
 	}
+	h.checkASCII(line)
 	return strings.TrimSpace(string(line)), nil
+}
+
+// checkASCII notes what the formats do not allow and readers take all the same.
+func (h *headerReader) checkASCII(line []byte) {
+	for _, c := range line {
+		if c >= 0x80 {
+			h.f.notes.add("not_ascii", h.f.lines.number, "the header has signs that are not ASCII")
+			return
+		}
+	}
 }
 
 func (h *headerReader) wrong(text, right string) error {
@@ -137,6 +147,7 @@ func (h *headerReader) texts(n int, what string) ([]string, error) {
 		if err != nil {
 			return nil, h.f.broken(err)
 		}
+		h.checkASCII(line)
 		all = append(all, strings.TrimRight(string(line), " \t"))
 	}
 	return all, nil
@@ -172,8 +183,9 @@ func (h *headerReader) readTop() (t top, err error) {
 	if line, err = h.line("line 8, the interval"); err != nil {
 		return t, err
 	}
-	x, ok := f.strangeOrPlain([]byte(splitAny(line+" ", h.comma)[0]))
-	if line == "" || !ok || !(x >= 0) {
+	first, _, _ := strings.Cut(strings.ReplaceAll(line, ",", " "), " ")
+	x, ok := f.strangeOrPlain([]byte(first))
+	if !ok || !(x >= 0) {
 		return t, h.wrong(line, "line 8: the interval of the records, 0 where it is not constant")
 	}
 	t.dx = x
@@ -271,111 +283,4 @@ func (h *headerReader) readComments(t top) (special, normal []string, err error)
 		h.f.notes.add("nlhead", 1, "line 1 says %d header lines, the header counts %d: the counts are trusted", t.nlhead, got)
 	}
 	return special, normal, nil
-}
-
-// tableRows reads the records of both formats.
-type tableRows struct {
-	f       *File
-	parting byte // ',' or ' '
-	wrapped bool // records over several lines, NASA Ames
-	joined  []byte
-}
-
-func (t *tableRows) next(r *row) error {
-	for {
-		line, err := t.f.lines.next()
-		if err != nil {
-			return t.f.end(err)
-		}
-		r.line, r.text = t.f.lines.number, line
-		t.split(r, line)
-		if len(r.fields) == len(t.f.Columns) {
-			return nil
-		}
-		if len(bytes.TrimSpace(line)) == 0 {
-			if err := (&csvRows{f: t.f}).blank(r.line); err != nil {
-				return err
-			}
-			continue
-		}
-		if t.wrapped && len(r.fields) < len(t.f.Columns) {
-			return t.unwrap(r)
-		}
-		return t.uneven(r)
-	}
-}
-
-func (t *tableRows) split(r *row, line []byte) {
-	fields, starts := r.fields[:0], r.starts[:0]
-	if t.parting == ',' {
-		start := 0
-		for i := 0; i <= len(line); i++ {
-			if i < len(line) && line[i] != ',' {
-				continue
-			}
-			from, to := start, i
-			for from < to && line[from] == ' ' {
-				from++
-			}
-			for to > from && line[to-1] == ' ' {
-				to--
-			}
-			fields, starts = append(fields, line[from:to]), append(starts, from)
-			start = i + 1
-		}
-		r.fields, r.starts = fields, starts
-		return
-	}
-	for i := 0; i < len(line); {
-		if line[i] == ' ' || line[i] == '\t' {
-			i++
-			continue
-		}
-		start := i
-		for i < len(line) && line[i] != ' ' && line[i] != '\t' {
-			i++
-		}
-		fields, starts = append(fields, line[start:i]), append(starts, start)
-	}
-	r.fields, r.starts = fields, starts
-}
-
-// unwrap adds lines until the record is complete.
-func (t *tableRows) unwrap(r *row) error {
-	t.joined = append(t.joined[:0], r.text...)
-	for len(r.fields) < len(t.f.Columns) {
-		line, err := t.f.lines.next()
-		if err == io.EOF {
-			return t.uneven(r)
-		}
-		if err != nil {
-			return t.f.end(err)
-		}
-		t.joined = append(append(t.joined, ' '), line...)
-		if len(t.joined) > longestLine {
-			return t.uneven(r)
-		}
-		t.split(r, t.joined)
-		r.text = nil
-	}
-	if len(r.fields) > len(t.f.Columns) {
-		return t.uneven(r)
-	}
-	return nil
-}
-
-func (t *tableRows) uneven(r *row) error {
-	want := len(t.f.Columns)
-	problem := itoa(len(r.fields)) + " values instead of " + itoa(want)
-	right := "one value for each variable and the time"
-	switch {
-	case !t.f.lines.ended && len(r.fields) < want:
-		problem += ": the file ends inside a record"
-		right = "the complete file"
-	case t.parting == ',' && len(r.fields) > want:
-		right += "; decimal commas give more: the decimal sign is a point"
-	case t.parting == ',' && len(r.fields) == 1:
-		right += ", parted by commas (or lenient reading)"
-	}
-	return t.f.wrongAt(r.line, 0, problem, right)
 }

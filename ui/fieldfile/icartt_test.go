@@ -133,6 +133,8 @@ func TestICARTTNotes(t *testing.T) {
 		"short_name":      func(l []string) { l[14] = "2T, K" },
 		"llod_is_missing": func(l []string) { l[11] = "-9999, -8888, -9999.99" },
 		"nines":           func(l []string) { l[39] = "0, 60, -9999, 280" },
+		"time_still":      func(l []string) { l[40] = "0, 60, 1, 280" },
+		"not_ascii":       func(l []string) { l[2] = "Zürich" },
 		"time_back":       func(l []string) { l[40] = "-60, 0, 1, 280" },
 		"revision_date":   func(l []string) { l[6] = "2026, 03, 14, 0, 0, 0" },
 	} {

@@ -66,7 +66,7 @@ func TestUse(t *testing.T) {
 		t.Errorf("used again: %q, %v", again.Mapping(), err)
 	}
 	before := f.Mapping()
-	for line, want := range map[string]string{"c (cm-3)": "want column=quantity", "d=kappa": `no column "d"`, "slat=salt": "salt?", "a=b=capa": "no quantity", "t=cn": "cn has no unit"} {
+	for line, want := range map[string]string{"c (cm-3)": "want column=quantity", "d=kappa": `no column "d"`, "slat=salt": "salt?", "a=b=capa": "no quantity", "t=cn": "cn has no unit", "t=flag": "holds no flags"} {
 		if err := f.Use("salt=unused", line); err == nil || !strings.Contains(err.Error(), want) {
 			t.Errorf("%q: %v, want %q", line, err, want)
 		}

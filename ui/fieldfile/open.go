@@ -100,7 +100,8 @@ type row struct {
 	line   int
 	text   []byte // the line, where the fields still lie in it
 	fields [][]byte
-	starts []int // of the fields in text
+	starts []int // of the fields in text, where quoted
+	quoted bool  // fields may be copies; else they are parts of text
 }
 
 // rows hands out records as text; io.EOF ends them.

@@ -84,7 +84,7 @@ var (
 		same(unit{1, 100, 0}, "%", "%rh", "/cent", "pct"), same(unit{1, 1, 0}, "fraction", "1"))}
 
 	heat = &dimension{says: "temperature", shown: "K", units: join(
-		same(unit{1, 1, 0}, "k", "kelvin"), same(unit{1, 1, 273.15}, "c", "degc", "celsius", "degreec", "degreecelsius", "deg"))}
+		same(unit{1, 1, 0}, "k", "kelvin"), same(unit{1, 1, 273.15}, "c", "degc", "celsius", "degreec", "degreecelsius"))}
 
 	heatStep = &dimension{says: "temperature difference", shown: "K", units: same(unit{1, 1, 0}, "k", "kelvin", "c", "degc", "celsius")}
 
