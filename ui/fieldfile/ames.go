@@ -17,15 +17,9 @@ func (f *File) openAmes() error {
 	axis := newColumn(amesName(t.axis))
 	axis.Long = clean(t.axis)
 	f.Columns = append(f.Columns, axis)
-	if err := h.readVariables(ebasVariable); err != nil {
-		return err
-	}
-	special, normal, err := h.readComments(t)
+	normal, err := h.readBody(t, ebasVariable)
 	if err != nil {
 		return err
-	}
-	for _, line := range special {
-		f.Comments = append(f.Comments, clean(line))
 	}
 	f.readMetadata(normal)
 	f.nameColumns(normal)
@@ -164,7 +158,7 @@ func startDate(s string) string {
 // findFlags tells each column which flag column judges it: the next one.
 func (f *File) findFlags() {
 	flag := -1
-	for i := len(f.Columns) - 1; i >= 0; i-- {
+	for i := len(f.Columns) - 1; i > 0; i-- {
 		c := &f.Columns[i]
 		if strings.HasPrefix(strings.ToLower(c.Standard), "numflag") {
 			flag = i
@@ -172,7 +166,7 @@ func (f *File) findFlags() {
 			c.missing = math.NaN() // a flag is never missing
 			continue
 		}
-		if i > 0 && c.time == "" {
+		if c.time == "" {
 			c.flag = flag
 		}
 	}

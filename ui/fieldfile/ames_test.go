@@ -25,7 +25,7 @@ func amesFile() []string {
 }
 
 func TestEBAS(t *testing.T) {
-	f := open(t, join2(amesFile()))
+	f := open(t, byLines(amesFile()))
 	if f.Format != NASAAmes || f.Interval != time.Hour || f.Attribute("station name") != "An invented one" || !slices.Contains(f.Comments, "a line without a key") {
 		t.Errorf("header %+v", f.Header)
 	}
@@ -38,7 +38,7 @@ func TestEBAS(t *testing.T) {
 	states := [][2]Cell{{{1000.5e6, Value}, {200e6, Value}}, {{}, {210e6, Value}}, {{}, {220e6, Value}}, {{}, {230e6, Below}}, {{}, {240e6, Value}}}
 	flags := [][]int{nil, {147, 559}, {460, 100}, {781}, {123}} // of the second flag column; 147559 is C40
 	for i, w := range states {
-		if !same2(got[i].Cells[2], w[0]) || !same2(got[i].Cells[4], w[1]) {
+		if !sameCell(got[i].Cells[2], w[0]) || !sameCell(got[i].Cells[4], w[1]) {
 			t.Errorf("record %d: %v %v, want %v", i, got[i].Cells[2], got[i].Cells[4], w)
 		}
 		if !slices.Equal(got[i].Flags[1], flags[i]) {
@@ -78,20 +78,20 @@ func TestAmesDamaged(t *testing.T) {
 		t.Run(name, func(t *testing.T) {
 			lines := amesFile()
 			lines[c.at] = c.text
-			err := failure(join2(lines), Options{})
+			err := failure(byLines(lines), Options{})
 			if err == nil || !strings.Contains(err.Error(), c.says) || !strings.HasPrefix(err.Error(), "f:"+itoa(c.line)+":") {
 				t.Errorf("got %v, want line %d and %q", err, c.line, c.says)
 			}
 		})
 	}
-	text := join2(amesFile())
+	text := byLines(amesFile())
 	says(t, failure(text[:len(text)-20], Options{}), 32, 0, "the file ends inside a record")
 }
 
 // Plain NASA Ames: lists and records wrap, Fortran exponents, the unit of time in
 // line 9, scale factors.
 func TestPlainAmesWraps(t *testing.T) {
-	text := join2([]string{"19 1001", "A", "B", "C", "D", "1 1", "2026 03 14 2026 05 02", "60", "Elapsed time in seconds from 0000 UT", "3",
+	text := byLines([]string{"19 1001", "A", "B", "C", "D", "1 1", "2026 03 14 2026 05 02", "60", "Elapsed time in seconds from 0000 UT", "3",
 		"1.0D0 1.0E0", "0.1", "9999 9999", "99999",
 		"cloud condensation nuclei at 0.3 % (ccn), 1/cm3", "air temperature, K", "kappa", "0", "0",
 		"0 100", "280.0 3", "60 9999", "281 99999", "120 1.5D2 ", "282", "4"})
@@ -116,7 +116,7 @@ func TestPlainAmesWraps(t *testing.T) {
 func TestAmesWithoutAUnitOfTimeAsks(t *testing.T) {
 	lines := amesFile()
 	lines[8], lines[19] = "When it was", "Data definition:     none"
-	f := open(t, join2(lines))
+	f := open(t, byLines(lines))
 	if !noted(f, "ask") {
 		t.Errorf("nothing asked: %v", f.Notes())
 	}
@@ -138,7 +138,7 @@ func TestEBASLongLayout(t *testing.T) {
 	lines[16] = parameter + ", Statistics=percentile:15.87\nnumflag, no unit"
 	lines[0], lines[26] = "28 1001", "start_time end_time ss ccn unc p15 flag"
 	lines = append(lines[:27], "0.0 0.041667 0.10 100.00 3.00 90.00 0.000", "0.041667 0.083333 0.50 500.00 9.00 400.00 0.000")
-	f := open(t, join2(lines))
+	f := open(t, byLines(lines))
 	want := []string{"ss=supersaturation in %", "ccn=ccn in 1/cm3", "unc=ccn_uncertainty in 1/cm3", "flag=flag"}
 	if got := f.Mapping()[2:]; !slices.Equal(got, want) {
 		t.Errorf("mapping %q, want %q; notes %v", got, want, f.Notes())

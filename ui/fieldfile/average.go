@@ -1,6 +1,7 @@
 package fieldfile
 
 import (
+	"cmp"
 	"math"
 	"slices"
 )
@@ -59,7 +60,7 @@ func (p *pool) average(a Averaging) float64 {
 	if a == Mean || len(p.values) == 1 {
 		return mean(p.values)
 	}
-	slices.SortFunc(p.values, func(a, b weighted) int { return compare(a.x, b.x) })
+	slices.SortFunc(p.values, func(a, b weighted) int { return cmp.Compare(a.x, b.x) })
 	if a == Median {
 		return quantile(p.values, 0.5)
 	}

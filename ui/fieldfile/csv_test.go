@@ -44,7 +44,7 @@ func TestCSVGrammar(t *testing.T) {
 				t.Fatalf("%d records, want %d", len(got), len(c.want))
 			}
 			for i := range got {
-				if !same2(got[i].Cells[0], c.want[i]) {
+				if !sameCell(got[i].Cells[0], c.want[i]) {
 					t.Errorf("record %d: got %v, want %v", i, got[i].Cells[0], c.want[i])
 				}
 			}
@@ -144,7 +144,7 @@ func TestCSVInSmallPieces(t *testing.T) {
 			t.Fatalf("%s: %d records, want %d", name, len(got), len(want))
 		}
 		for i := range got {
-			if got[i].Start != want[i].Start || !same2(got[i].Cells[7], want[i].Cells[7]) {
+			if got[i].Start != want[i].Start || !sameCell(got[i].Cells[7], want[i].Cells[7]) {
 				t.Fatalf("%s: record %d differs", name, i)
 			}
 		}

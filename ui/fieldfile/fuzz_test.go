@@ -97,6 +97,7 @@ func FuzzCSV(f *testing.F) {
 	f.Add([]byte("\"a, \"\"b\"\"\",diameter (nm),dN/dlogDp (cm-3)\r\n\"x\ny\",50,1e3\r\n"))
 	f.Add([]byte("kappa;x\n0,5;1\n"))
 	f.Add([]byte("#0000000000"))
+	f.Add([]byte("nu,flag"))
 	f.Add([]byte("# c\n0.5,20260314T0830\n"))
 	f.Add([]byte("\xef\xbb\xbfN_10 nm (cm-3),ccn 0.3% [1/cc]\n,\n"))
 	f.Fuzz(func(t *testing.T, data []byte) {
@@ -107,7 +108,7 @@ func FuzzCSV(f *testing.F) {
 }
 
 func FuzzICARTT(f *testing.F) {
-	f.Add([]byte(join2(icarttFile())))
+	f.Add([]byte(byLines(icarttFile())))
 	f.Add([]byte(strings.Join(icarttFile(), "\r\n")))
 	f.Add([]byte("15, 1001\na\nb\nc\nd\n1,1\n2026,3,14,2026,3,14\n0\nt, s\n1\n1\n-9\nx\n0\n1\nt, x\n0,1\n"))
 	f.Fuzz(func(t *testing.T, data []byte) {
@@ -117,7 +118,7 @@ func FuzzICARTT(f *testing.F) {
 }
 
 func FuzzNASAAmes(f *testing.F) {
-	f.Add([]byte(join2(amesFile())))
+	f.Add([]byte(byLines(amesFile())))
 	f.Add([]byte("00 1001\n\n\n\n\n\n1 1 1 0 0 0\n\n0"))
 	f.Add([]byte("15 1001\na\nb\nc\nd\n1 1\n2026 3 14 2026 3 14\n0\nseconds\n2\n1\n1\n9 9\nx\ny\n0\n0\n0 1\n2\n"))
 	f.Fuzz(func(t *testing.T, data []byte) { readable(t, data, Options{}) })

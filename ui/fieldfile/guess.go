@@ -25,7 +25,9 @@ func (f *File) guess() []Role {
 			r = Role{}
 		}
 		if r.Quantity == Unused || r.Quantity == Flag {
-			roles[i] = r
+			if slices.Contains(f.flagColumns, i) {
+				roles[i] = r
+			}
 			continue
 		}
 		same := Role{Quantity: r.Quantity, At: r.At}

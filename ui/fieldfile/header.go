@@ -264,23 +264,31 @@ func (h *headerReader) readVariables(describe func(line string) Column) error {
 	return nil
 }
 
-// readComments reads the two blocks of comments.
-func (h *headerReader) readComments(t top) (special, normal []string, err error) {
+// readBody reads the variables and both blocks of comments. The special ones are
+// free text; the normal ones are returned.
+func (h *headerReader) readBody(t top, describe func(line string) Column) (normal []string, err error) {
+	if err := h.readVariables(describe); err != nil {
+		return nil, err
+	}
 	n, err := h.count("the number of special comments")
 	if err != nil {
-		return nil, nil, err
+		return nil, err
 	}
-	if special, err = h.texts(n, "the special comments"); err != nil {
-		return nil, nil, err
+	special, err := h.texts(n, "the special comments")
+	if err != nil {
+		return nil, err
+	}
+	for _, line := range special {
+		h.f.Comments = append(h.f.Comments, clean(line))
 	}
 	if n, err = h.count("the number of normal comments"); err != nil {
-		return nil, nil, err
+		return nil, err
 	}
 	if normal, err = h.texts(n, "the normal comments"); err != nil {
-		return nil, nil, err
+		return nil, err
 	}
 	if got := h.f.lines.number; got != t.nlhead {
 		h.f.notes.add("nlhead", 1, "line 1 says %d header lines, the header counts %d: the counts are trusted", t.nlhead, got)
 	}
-	return special, normal, nil
+	return normal, nil
 }

@@ -84,7 +84,7 @@ func noted(f *File, code string) bool {
 	return false
 }
 
-func same2(a, b Cell) bool {
+func sameCell(a, b Cell) bool {
 	return a.State == b.State && (a.X == b.X || math.IsNaN(a.X) && math.IsNaN(b.X) || a.State == Missing)
 }
 

@@ -28,15 +28,9 @@ func (f *File) openICARTT() error {
 	axis := icarttVariable(t.axis)
 	axis.time = "seconds since " + f.Begin.Format(time.DateOnly)
 	f.Columns = append(f.Columns, axis)
-	if err := h.readVariables(icarttVariable); err != nil {
-		return err
-	}
-	special, normal, err := h.readComments(t)
+	normal, err := h.readBody(t, icarttVariable)
 	if err != nil {
 		return err
-	}
-	for _, line := range special {
-		f.Comments = append(f.Comments, clean(line))
 	}
 	f.readKeywords(normal)
 	f.readLimits()

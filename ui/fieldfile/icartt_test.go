@@ -28,10 +28,10 @@ func icarttFile() []string {
 		"86400, 86460, 2000, 282")
 }
 
-func join2(lines []string) string { return strings.Join(lines, "\n") + "\n" }
+func byLines(lines []string) string { return strings.Join(lines, "\n") + "\n" }
 
 func TestICARTTHeaderAndStates(t *testing.T) {
-	f := open(t, join2(icarttFile()))
+	f := open(t, byLines(icarttFile()))
 	if f.Format != ICARTT || f.Investigator != "Last, First; Other, Name" || f.Mission != "A mission" ||
 		!f.Begin.Equal(time.Date(2026, 3, 14, 0, 0, 0, 0, time.UTC)) || !f.Revised.Equal(time.Date(2026, 5, 2, 0, 0, 0, 0, time.UTC)) || f.Interval != time.Minute {
 		t.Errorf("header %+v", f.Header)
@@ -57,7 +57,7 @@ func TestICARTTHeaderAndStates(t *testing.T) {
 	got := all(t, f)
 	cells := [][2]Cell{{{1e8, Value}, {280.5, Value}}, {{}, {}}, {{5e6, Below}, {math.NaN(), Above}}, {{5e6, Below}, {281, Value}}, {{2e8, Value}, {282, Value}}}
 	for i, w := range cells {
-		if !same2(got[i].Cells[2], w[0]) || !same2(got[i].Cells[3], w[1]) {
+		if !sameCell(got[i].Cells[2], w[0]) || !sameCell(got[i].Cells[3], w[1]) {
 			t.Errorf("record %d: %v, want %v", i, got[i].Cells[2:], w)
 		}
 	}
@@ -95,7 +95,7 @@ func TestICARTTDamagedHeaders(t *testing.T) {
 		t.Run(name, func(t *testing.T) {
 			lines := icarttFile()
 			lines[c.at] = c.text
-			err := failure(join2(lines), Options{})
+			err := failure(byLines(lines), Options{})
 			if err == nil || !strings.Contains(err.Error(), c.says) || !strings.HasPrefix(err.Error(), "f:"+itoa(c.line)+":") {
 				t.Errorf("got %v, want line %d and %q", err, c.line, c.says)
 			}
@@ -106,7 +106,7 @@ func TestICARTTDamagedHeaders(t *testing.T) {
 // Wherever the file is cut, there is an error or fewer records, never a panic and
 // never a value that was not there.
 func TestICARTTCutAnywhere(t *testing.T) {
-	text := join2(icarttFile())
+	text := byLines(icarttFile())
 	header := strings.LastIndex(text, "Time_Start") // the last line of the header
 	for n := range text {
 		f, err := Open("f", strings.NewReader(text[:n]), Options{})
@@ -140,7 +140,7 @@ func TestICARTTNotes(t *testing.T) {
 	} {
 		lines := icarttFile()
 		change(lines)
-		f := open(t, join2(lines))
+		f := open(t, byLines(lines))
 		if len(all(t, f)) != 5 {
 			t.Errorf("%s: records are lost", code)
 		}
@@ -166,7 +166,7 @@ func TestICARTTLenientBlanks(t *testing.T) {
 		lines[i] = strings.ReplaceAll(lines[i], ",", " ")
 	}
 	lines[40] = lines[40] + "\n\n"
-	f, err := Open("f", strings.NewReader(join2(lines)), Options{Lenient: true})
+	f, err := Open("f", strings.NewReader(byLines(lines)), Options{Lenient: true})
 	if err != nil {
 		t.Fatal(err)
 	}

@@ -139,7 +139,7 @@ func TestGuess(t *testing.T) {
 
 // What the guess says can be told again and means the same.
 func TestGuessIsItsOwnMapping(t *testing.T) {
-	f := open(t, join2(icarttFile()))
+	f := open(t, byLines(icarttFile()))
 	before := f.Mapping()
 	if err := f.Use(before...); err != nil || !slices.Equal(before, f.Mapping()) {
 		t.Errorf("%q becomes %q: %v", before, f.Mapping(), err)

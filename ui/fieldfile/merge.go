@@ -19,6 +19,8 @@ type Merging struct {
 
 // Merger hands out one sample a window, with what every file has in it:
 //
+//   - Where the first file gives instants, a window reaches to its next record, or
+//     over a gap as far as its records usually do.
 //   - A record counts in each window with the time it shares with it, so that a
 //     composition over an hour serves all of the hour's size scans. An instant
 //     belongs to the window it lies in and counts as one second.
@@ -33,20 +35,21 @@ type Merger struct {
 	sources []*source
 	owner   [Quantities]int
 	window  window
-	ahead   Sample // the next record of the first file, where that gives the windows
-	more    bool
 	started bool
 	at      time.Time // start of the next window, for Every
 	err     error
 }
 
-// source reads one file with one sample in hand.
+// source reads one file with one sample in hand, and where its records are the
+// windows also the next one.
 type source struct {
 	Source
-	now        Sample
-	have, done bool
+	now, ahead Sample
+	have, more bool // now and ahead hold a sample
+	done       bool
 	last       time.Time
-	windows    bool // the first file, whose records are the windows
+	windows    bool
+	usual      time.Duration // the shortest step between records so far
 }
 
 // Merge begins to read the files. The first one gives the windows where
@@ -57,7 +60,7 @@ func Merge(how Merging, sources ...Source) *Merger {
 		m.owner[q] = -1
 	}
 	for i, s := range sources {
-		m.sources = append(m.sources, &source{Source: s})
+		m.sources = append(m.sources, &source{Source: s, windows: i == 0 && how.Every == 0})
 		for _, r := range s.Samples.f.roles {
 			if m.owner[r.Quantity] < 0 {
 				m.owner[r.Quantity] = i
@@ -74,30 +77,59 @@ func single(q Quantity) bool {
 	return q != Unused && declared[q].kind == asNumber && declared[q].at == nowhere
 }
 
-// step takes the next sample; the clock of a merged file must not run back.
-func (s *source) step() error {
-	if s.done {
-		return nil
-	}
-	err := s.Samples.Next(&s.now)
-	if err == io.EOF {
-		s.have, s.done = false, true
-		return nil
-	}
-	if err != nil {
+// step goes on to the next sample.
+func (s *source) step() (err error) {
+	if !s.windows {
+		s.have, err = s.fetch(&s.now)
 		return err
 	}
-	f := s.Samples.f
-	if s.now.Start.IsZero() {
-		return f.wrongAt(s.now.Line, 0, "no time in the record, but files are merged on time", "a column mapped to time, start_time or mid_time")
+	s.now, s.ahead, s.have = s.ahead, s.now, s.more
+	s.more, err = s.fetch(&s.ahead)
+	if gap := s.ahead.Start.Sub(s.now.Start); s.have && s.more && gap > 0 && (s.usual == 0 || gap < s.usual) {
+		s.usual = gap
 	}
-	s.now.Start, s.now.End = s.now.Start.Add(s.Offset), s.now.End.Add(s.Offset)
-	if s.now.Start.Before(s.last) {
-		return f.wrongAt(s.now.Line, 0, "time runs backwards, from "+s.last.Format(time.RFC3339)+" to "+s.now.Start.Format(time.RFC3339),
+	return err
+}
+
+// fetch reads a sample; the clock of a merged file must not run back.
+func (s *source) fetch(to *Sample) (bool, error) {
+	if s.done {
+		return false, nil
+	}
+	err := s.Samples.Next(to)
+	if err == io.EOF {
+		s.done = true
+		return false, nil
+	}
+	if err != nil {
+		return false, err
+	}
+	f := s.Samples.f
+	if to.Start.IsZero() {
+		return false, f.wrongAt(to.Line, 0, "no time in the record, but files are merged on time", "a column mapped to time, start_time or mid_time")
+	}
+	to.Start, to.End = to.Start.Add(s.Offset), to.End.Add(s.Offset)
+	if to.Start.Before(s.last) {
+		return false, f.wrongAt(to.Line, 0, "time runs backwards, from "+s.last.Format(time.RFC3339)+" to "+to.Start.Format(time.RFC3339),
 			"records in order of time where files are merged")
 	}
-	s.last, s.have = s.now.Start, true
-	return nil
+	s.last = to.Start
+	return true, nil
+}
+
+// end of the window that the sample in hand gives.
+func (s *source) end() time.Time {
+	from := s.now.Start
+	const fewest = time.Second
+	switch gap := s.ahead.Start.Sub(from); {
+	case s.now.End.After(from):
+		return s.now.End
+	case s.more && gap > 0 && gap <= 2*s.usual:
+		return s.ahead.Start
+	case s.usual > 0:
+		return from.Add(s.usual)
+	}
+	return from.Add(fewest)
 }
 
 // Next gives the next window that holds anything; io.EOF ends them.
@@ -128,6 +160,11 @@ func (m *Merger) start() error {
 	}
 	m.started = true
 	for _, s := range m.sources {
+		if s.windows { // the sample in hand and the one after it
+			if err := s.step(); err != nil {
+				return err
+			}
+		}
 		if err := s.step(); err != nil {
 			return err
 		}
@@ -147,11 +184,7 @@ func (m *Merger) nextWindow() (from, to time.Time, err error) {
 	if !first.have {
 		return from, to, io.EOF
 	}
-	from, to = first.now.Start, first.now.End
-	if to.After(from) {
-		return from, to, nil
-	}
-	return from, from.Add(time.Second), nil
+	return first.now.Start, first.end(), nil
 }
 
 // nextOfGrid goes on to the window of the earliest sample in hand: empty ones
@@ -179,13 +212,13 @@ func (m *Merger) nextOfGrid() (from, to time.Time, err error) {
 func (m *Merger) gather() error {
 	for i, s := range m.sources {
 		for taken := 0; s.have && s.now.Start.Before(m.window.to); taken++ {
-			if m.how.Every == 0 && i == 0 && taken > 0 {
-				break // the window is one record of the first file
+			if s.windows && taken > 0 {
+				break // the window is one record of this file
 			}
 			if seconds, share := m.window.shared(&s.now); seconds > 0 {
 				m.window.add(m, i, &s.now, seconds, share)
 			}
-			if s.now.End.After(m.window.to) && !(m.how.Every == 0 && i == 0) {
+			if s.now.End.After(m.window.to) && !s.windows {
 				break
 			}
 			if err := s.step(); err != nil {

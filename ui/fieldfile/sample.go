@@ -1,6 +1,7 @@
 package fieldfile
 
 import (
+	"cmp"
 	"io"
 	"math"
 	"slices"
@@ -88,23 +89,13 @@ func (f *File) Samples() *Samples {
 			s.single = append(s.single, i)
 		}
 	}
-	slices.SortFunc(s.wide, func(a, b int) int { return compare(f.roles[a].At, f.roles[b].At) })
+	slices.SortFunc(s.wide, func(a, b int) int { return cmp.Compare(f.roles[a].At, f.roles[b].At) })
 	for _, c := range s.wide {
 		s.bins = append(s.bins, binOf(f.roles[c]))
 	}
 	s.counts = slices.DeleteFunc(s.counts, func(c countColumns) bool { return c.n < 0 && c.counted < 0 })
-	slices.SortFunc(s.counts, func(a, b countColumns) int { return compare(a.at, b.at) })
+	slices.SortFunc(s.counts, func(a, b countColumns) int { return cmp.Compare(a.at, b.at) })
 	return s
-}
-
-func compare(a, b float64) int {
-	switch {
-	case a < b:
-		return -1
-	case a > b:
-		return 1
-	}
-	return 0
 }
 
 func binOf(r Role) Bin {

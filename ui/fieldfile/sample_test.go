@@ -37,7 +37,7 @@ func TestWideAndLongSizes(t *testing.T) {
 			t.Errorf("sample %d: %v and %v", i, wide[i].Bins, long[i].Bins)
 		}
 		for j, want := range [][]Cell{{{1e6, Value}, {2e6, Value}}, {{3e6, Value}, {}}}[i] {
-			if !same2(wide[i].Sizes[j], want) || !same2(long[i].Sizes[j], want) {
+			if !sameCell(wide[i].Sizes[j], want) || !sameCell(long[i].Sizes[j], want) {
 				t.Errorf("sample %d, size %d: %v and %v, want %v", i, j, wide[i].Sizes[j], long[i].Sizes[j], want)
 			}
 		}
@@ -60,13 +60,13 @@ func TestIntervals(t *testing.T) {
 	half := 30 * time.Minute
 	lines := icarttFile()
 	lines[7], lines[8], lines[12] = "3600", "Time_Mid, seconds, Time_Mid", "Other, K"
-	rec := all(t, open(t, join2(lines)))[4]
+	rec := all(t, open(t, byLines(lines)))[4]
 	mid := time.Date(2026, 3, 15, 0, 0, 0, 0, time.UTC)
 	if !rec.Start.Equal(mid.Add(-half)) || !rec.End.Equal(mid.Add(half)) {
 		t.Errorf("middle: %v to %v", rec.Start, rec.End)
 	}
 	lines[8] = "UTC, seconds"
-	rec = all(t, open(t, join2(lines)))[4]
+	rec = all(t, open(t, byLines(lines)))[4]
 	if !rec.Start.Equal(mid) || !rec.End.Equal(mid.Add(2*half)) {
 		t.Errorf("start and interval: %v to %v", rec.Start, rec.End)
 	}
@@ -92,7 +92,7 @@ func merged(t *testing.T, how Merging, sources ...Source) []Sample {
 	}
 }
 
-func source1(t *testing.T, text string, offset time.Duration, use ...string) Source {
+func asSource(t *testing.T, text string, offset time.Duration, use ...string) Source {
 	return Source{open(t, text, use...).Samples(), offset}
 }
 
@@ -101,7 +101,7 @@ func TestMergeOnTheFirstFile(t *testing.T) {
 		"2026-03-14T00:00:00Z,2026-03-14T00:10:00Z,1\n2026-03-14T00:10:00Z,2026-03-14T00:20:00Z,2\n2026-03-14T01:00:00Z,2026-03-14T01:10:00Z,3\n"
 	air := "start_time,end_time,kappa,cn (cm-3)\n2026-03-14T00:00:00Z,2026-03-14T00:15:00Z,0.1,100\n2026-03-14T00:15:00Z,2026-03-14T00:30:00Z,0.2,<50\n"
 	use := "n @50nm (cm-3)=dN/dlog10D @50nm"
-	got := merged(t, Merging{}, source1(t, sizes, 0, use), source1(t, air, 0))
+	got := merged(t, Merging{}, asSource(t, sizes, 0, use), asSource(t, air, 0))
 	if len(got) != 3 {
 		t.Fatalf("%d windows, want 3", len(got))
 	}
@@ -111,21 +111,40 @@ func TestMergeOnTheFirstFile(t *testing.T) {
 		{Cell{3e6, Value}, Cell{}, Cell{}},
 	} {
 		k := got[i].Values[Kappa]
-		if !same2(got[i].Sizes[0], want.size) || k.State != want.kappa.State || math.Abs(k.X-want.kappa.X) > 1e-12 || !same2(got[i].Values[CN], want.cn) {
+		if !sameCell(got[i].Sizes[0], want.size) || k.State != want.kappa.State || math.Abs(k.X-want.kappa.X) > 1e-12 || !sameCell(got[i].Values[CN], want.cn) {
 			t.Errorf("window %d: %v %v %v, want %v", i, got[i].Sizes[0], k, got[i].Values[CN], want)
 		}
 	}
 	// with its clock 15 minutes slow, the second file's second record is the first's
-	got = merged(t, Merging{}, source1(t, sizes, 0, use), source1(t, air, -15*time.Minute))
+	got = merged(t, Merging{}, asSource(t, sizes, 0, use), asSource(t, air, -15*time.Minute))
 	if got[0].Values[Kappa].X != 0.2 || got[0].Values[CN].State != Below || got[0].Values[CN].X != 5e7 {
 		t.Errorf("with an offset: %v %v", got[0].Values[Kappa], got[0].Values[CN])
+	}
+}
+
+// Instants make windows that reach to the next record, and over a gap as far as
+// usual.
+func TestMergeOnInstants(t *testing.T) {
+	counts := "time,ccn 0.3% (cm-3)\n2026-03-14T00:00:00Z,1\n2026-03-14T00:10:00Z,2\n2026-03-14T00:20:00Z,3\n2026-03-14T05:00:00Z,4\n"
+	air := "time,kappa\n"
+	for minute := 0; minute < 600; minute += 5 {
+		air += time.Date(2026, 3, 14, 0, minute, 0, 0, time.UTC).Format(time.RFC3339) + "," + itoa(minute) + "\n"
+	}
+	got := merged(t, Merging{}, asSource(t, counts, 0), asSource(t, air, 0))
+	if len(got) != 4 {
+		t.Fatalf("%d windows, want 4", len(got))
+	}
+	for i, want := range []float64{2.5, 12.5, 22.5, 302.5} {
+		if got[i].Values[Kappa].X != want || got[i].Counts[0].N.X != float64(i+1)*1e6 || got[i].End.Sub(got[i].Start) != 10*time.Minute {
+			t.Errorf("window %d: %v to %v: %v, want %v", i, got[i].Start, got[i].End, got[i].Values[Kappa], want)
+		}
 	}
 }
 
 func TestMergeOnAGrid(t *testing.T) {
 	long := "time,supersaturation_set (%),supersaturation (%),ccn (cm-3),ccn_uncertainty (cm-3),ccn_counted\n" +
 		"2026-03-14T00:05:00Z,0.1,0.102,100,3,50\n2026-03-14T00:10:00Z,0.2,0.2,200,4,60\n2026-03-14T00:35:00Z,0.1,0.104,120,4,70\n2026-03-14T05:00:00Z,0.5,0.5,1,1,1\n"
-	got := merged(t, Merging{Every: time.Hour}, source1(t, long, 0))
+	got := merged(t, Merging{Every: time.Hour}, asSource(t, long, 0))
 	if len(got) != 2 || len(got[0].Counts) != 2 || !got[0].Start.Equal(time.Date(2026, 3, 14, 0, 0, 0, 0, time.UTC)) || got[1].Start.Hour() != 5 {
 		t.Fatalf("got %+v", got)
 	}
@@ -138,8 +157,8 @@ func TestMergeOnAGrid(t *testing.T) {
 func TestMergeJoinsFiles(t *testing.T) {
 	a := "time,n @50nm (cm-3),temperature (K)\n2026-03-14T00:00:00Z,1,280\n2026-03-14T00:01:00Z,3,282\n"
 	b := "time,n @500nm (cm-3),temperature (K)\n2026-03-14T00:00:30Z,7,300\n"
-	second := source1(t, b, 0, "n @500nm (cm-3)=dN/dlog10D @500nm")
-	got := merged(t, Merging{Every: time.Hour}, source1(t, a, 0, "n @50nm (cm-3)=dN/dlog10D @50nm"), second)
+	second := asSource(t, b, 0, "n @500nm (cm-3)=dN/dlog10D @500nm")
+	got := merged(t, Merging{Every: time.Hour}, asSource(t, a, 0, "n @50nm (cm-3)=dN/dlog10D @50nm"), second)
 	if len(got) != 1 || len(got[0].Bins) != 2 || got[0].Sizes[0].X != 2e6 || got[0].Sizes[1].X != 7e6 || got[0].Values[Temperature].X != 281 {
 		t.Errorf("got %+v", got)
 	}
@@ -149,7 +168,7 @@ func TestMergeJoinsFiles(t *testing.T) {
 }
 
 func TestMergeRefusesTimeThatRunsBack(t *testing.T) {
-	m := Merge(Merging{}, source1(t, "time,kappa\n2026-03-14,1\n2026-03-13,1\n", 0))
+	m := Merge(Merging{}, asSource(t, "time,kappa\n2026-03-14,1\n2026-03-13,1\n", 0))
 	var s Sample
 	err := m.Next(&s)
 	if err == nil {
@@ -157,7 +176,7 @@ func TestMergeRefusesTimeThatRunsBack(t *testing.T) {
 	}
 	says(t, err, 3, 0, "time runs backwards")
 	says(t, m.Next(&s), 3, 0, "time runs backwards") // and it stays so
-	says(t, Merge(Merging{}, source1(t, "kappa\n1\n", 0)).Next(&s), 2, 0, "no time in the record")
+	says(t, Merge(Merging{}, asSource(t, "kappa\n1\n", 0)).Next(&s), 2, 0, "no time in the record")
 }
 
 func TestAverages(t *testing.T) {

@@ -1,6 +1,7 @@
 package fieldfile
 
 import (
+	"cmp"
 	"math"
 	"slices"
 )
@@ -17,7 +18,7 @@ func AtStandard(counts []Count, supersaturations []float64) []Count {
 			known = append(known, c)
 		}
 	}
-	slices.SortStableFunc(known, func(a, b Count) int { return compare(a.At(), b.At()) })
+	slices.SortStableFunc(known, func(a, b Count) int { return cmp.Compare(a.At(), b.At()) })
 	out := make([]Count, 0, len(supersaturations))
 	for _, s := range supersaturations {
 		c := Count{Set: Cell{s, Value}}

@@ -1,6 +1,7 @@
 package fieldfile
 
 import (
+	"cmp"
 	"math"
 	"slices"
 	"time"
@@ -196,7 +197,7 @@ func (w *window) give(out *Sample, how Averaging) {
 			N: p.n.cell(how), Uncertainty: p.u.combined(), Counted: p.counts.total(), Basis: p.basis,
 		})
 	}
-	slices.SortStableFunc(out.Counts, func(a, b Count) int { return compare(a.At(), b.At()) })
+	slices.SortStableFunc(out.Counts, func(a, b Count) int { return cmp.Compare(a.At(), b.At()) })
 }
 
 // allBins joins the bins of the files. The slice of the last window is given

@@ -5,6 +5,7 @@ import (
 	"fmt"
 	"io"
 	"math"
+	"slices"
 	"strings"
 	"time"
 
@@ -164,20 +165,11 @@ func shortName(name string, taken []string) string {
 		base = "x"
 	}
 	out := base[:min(len(base), longest)]
-	for n := 2; contains(taken, out); n++ {
+	for n := 2; slices.Contains(taken, out); n++ {
 		tail := "_" + itoa(n)
 		out = base[:min(len(base), longest-len(tail))] + tail
 	}
 	return out
-}
-
-func contains(list []string, s string) bool {
-	for _, x := range list {
-		if x == s {
-			return true
-		}
-	}
-	return false
 }
 
 // Write writes a record; times have to rise.
