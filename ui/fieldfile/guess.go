@@ -75,14 +75,10 @@ type rule struct {
 // CF and parameters of EBAS; the rest is common practice.
 var rules = []rule{
 	{"numflag", "", Flag},
-	{"cloud_condensation_nuclei uncertainty", "", CCNUncertainty},
-	{"=ccn uncertainty", "", CCNUncertainty},
-	{"=ccn =unc", "", CCNUncertainty},
 	{"=ccn counted", "", CCNCounted},
 	{"cloud_condensation_nuclei", "log10", CCN},
 	{"=ccn", "temp flow pressure size", CCN},
 	{"=nccn", "temp flow pressure size", CCN},
-	{"supersaturation uncertainty", "", SupersaturationUncertainty},
 	{"supersaturation =set", "", SupersaturationSet},
 	{"supersaturation setpoint", "", SupersaturationSet},
 	{"supersaturation nominal", "", SupersaturationSet},
@@ -95,8 +91,6 @@ var rules = []rule{
 	{"dn/dlog", "", PerLogDiameter},
 	{"dndln", "", PerLnDiameter},
 	{"dn/dln", "", PerLnDiameter},
-	{"particle_number_concentration uncertainty", "", CNUncertainty},
-	{"=cn uncertainty", "", CNUncertainty},
 	{"=cn counted", "", CNCounted},
 	{"particle_number_concentration", "", CN},
 	{"number_concentration_of_aerosol_particles", "", CN},
@@ -107,7 +101,7 @@ var rules = []rule{
 	{"ammonium", "", Ammonium}, {"=nh4", "", Ammonium},
 	{"chloride", "", Chloride}, {"=chl", "", Chloride},
 	{"elemental_carbon", "", BlackCarbon}, {"black_carbon", "", BlackCarbon}, {"black carbon", "", BlackCarbon}, {"=ebc", "", BlackCarbon}, {"=bc", "", BlackCarbon},
-	{"organic", "", Organic}, {"=org", "", Organic},
+	{"organic", "inorganic", Organic}, {"=org", "", Organic},
 	{"kappa", "", Kappa},
 	{"growth_factor", "", GrowthFactor}, {"growth factor", "", GrowthFactor}, {"=gf", "", GrowthFactor},
 	{"temperature_difference", "", TemperatureDifference}, {"temperature difference", "", TemperatureDifference}, {"delta =t", "", TemperatureDifference},
@@ -123,6 +117,33 @@ var rules = []rule{
 	{"=status", "", Status}, {"=stable", "", Status},
 }
 
+// uncertaintyRules are for columns that are called an uncertainty.
+var uncertaintyRules = []rule{
+	{"cloud_condensation_nuclei", "", CCNUncertainty}, {"=ccn", "", CCNUncertainty},
+	{"supersaturation", "", SupersaturationUncertainty}, {"=ss", "", SupersaturationUncertainty},
+	{"particle_number_concentration", "", CNUncertainty}, {"=cn", "", CNUncertainty},
+}
+
+// rulesFor chooses the rules by what the column's name says it is of a quantity.
+// The long name does not count: "CCN, uncertainty 10 %" is the value. A spread,
+// such as a standard deviation or a percentile, is not used.
+func rulesFor(c *Column) []rule {
+	statistics := strings.ToLower(c.Tags["Statistics"])
+	tokens := tokensOf(strings.ToLower(c.Name + " " + c.Standard + " " + statistics))
+	has := func(words ...string) bool {
+		return slices.ContainsFunc(words, func(w string) bool { return slices.Contains(tokens, w) })
+	}
+	switch {
+	case has("uncertainty", "unc"):
+		return uncertaintyRules
+	case has("std", "stdev", "stddev", "sd", "deviation", "sigma", "error", "variance", "percentile"):
+		return nil
+	case statistics != "" && statistics != "arithmetic mean" && statistics != "median":
+		return nil
+	}
+	return rules
+}
+
 // timeRules tell the stamps apart.
 var timeRules = []rule{
 	{"start_time", "", StartTime}, {"time_start", "", StartTime}, {"starttime", "", StartTime}, {"start time", "", StartTime}, {"time start", "", StartTime},
@@ -134,33 +155,22 @@ var timeRules = []rule{
 // guessColumn guesses one column; ask is what the user would have to say.
 func (f *File) guessColumn(c *Column) (r Role, ask string) {
 	all := strings.ToLower(c.Name + " | " + c.Standard + " | " + c.Long)
-	for tag, value := range c.Tags {
-		if tag == "Statistics" {
-			all += " | " + strings.ToLower(value)
-		}
-	}
 	tokens := tokensOf(all)
 	if q := apply(timeRules, all, tokens); q != Unused && c.Tags == nil {
 		return f.guessTime(c, q)
 	}
-	q := apply(rules, all, tokens)
+	q := apply(rulesFor(c), all, tokens)
 	if exact, ok := f.ownName(c); ok {
 		q = exact
 	}
 	if q == Unused || q == Flag {
 		return Role{Quantity: q}, ""
 	}
-	if s := strings.ToLower(c.Tags["Statistics"]); s != "" && s != "arithmetic mean" && s != "median" && s != "uncertainty" {
-		return Role{}, "" // percentiles and spreads are not the value
-	}
 	r = Role{Quantity: q, Unit: c.Unit, Basis: basisOf(all)}
 	d := declared[q]
 	if d.kind != asNumber {
 		r.Unit, r.Basis = "", Unstated
 		return r, ""
-	}
-	if q == RelativeHumidity && f.Format == CSV && unitKey(c.Unit) == "" {
-		r.Unit = "" // asked for below
 	}
 	switch {
 	case d.dim != concentration:
@@ -236,7 +246,7 @@ func apply(list []rule, all string, tokens []string) Quantity {
 			continue
 		}
 		fits := true
-		for _, word := range parts(r.all) {
+		for _, word := range strings.Fields(r.all) {
 			fits = fits && has(word)
 		}
 		if fits {
@@ -245,9 +255,6 @@ func apply(list []rule, all string, tokens []string) Quantity {
 	}
 	return Unused
 }
-
-// parts are the words of a rule: "black carbon" is looked for as two.
-func parts(all string) []string { return strings.Fields(all) }
 
 // tokensOf parts a text at everything but letters, and at the border of letters
 // and digits; so4, no3 and nh4 stay.

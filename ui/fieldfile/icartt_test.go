@@ -174,3 +174,15 @@ func TestICARTTLenientBlanks(t *testing.T) {
 		t.Errorf("got %v", got)
 	}
 }
+
+// A limit code that is no row of digits is compared as it stands, and one code
+// may serve as another file's value.
+func TestOtherLimitCodes(t *testing.T) {
+	lines := icarttFile()
+	lines[27], lines[29] = "ULOD_FLAG: 99", "LLOD_FLAG: -1"
+	lines[41] = "120,180,-1,99"
+	got := all(t, open(t, byLines(lines)))
+	if got[2].Cells[2].State != Below || got[2].Cells[3].State != Above || !alike(got[3].Cells[2].X, -88888e5) {
+		t.Errorf("got %v and %v", got[2].Cells, got[3].Cells)
+	}
+}

@@ -122,8 +122,10 @@ func TestGuess(t *testing.T) {
 		"CCN_030 (cm-3)":             "ccn in cm-3", // 0.30 or 30: not guessed
 		"cn":                         "",            // no unit: asked for
 		"CCN temperature (C)":        "temperature in C",
-		"nonsense":                   "",
-		"timeliness":                 "",
+		"CCN_0.3_uncertainty (cm-3)": "ccn_uncertainty @0.3% in cm-3",
+		"kappa stdev":                "", "kappa uncertainty": "", "ccn sigma (cm-3)": "", "inorganic (ug/m3)": "",
+		"nonsense":   "",
+		"timeliness": "",
 	} {
 		quoted := `"` + strings.ReplaceAll(name, `"`, `""`) + `",x` + "\n"
 		f := open(t, quoted)
@@ -134,6 +136,15 @@ func TestGuess(t *testing.T) {
 		if got != want {
 			t.Errorf("%s: guessed %q, want %q", name, got, want)
 		}
+	}
+}
+
+// The long name may speak of the uncertainty of the value.
+func TestTheLongNameIsNoUncertainty(t *testing.T) {
+	lines := icarttFile()
+	lines[13] = "CCN, cm-3, , CCN at 0.30 % supersaturation, uncertainty 10 %"
+	if got := open(t, byLines(lines)).Mapping()[2]; got != "CCN=ccn @0.3% in cm-3" {
+		t.Errorf("mapped as %q", got)
 	}
 }
 
