@@ -38,7 +38,23 @@ func (f *File) guess() []Role {
 		taken[same] = i
 		roles[i] = r
 	}
+	f.askForNumbers(roles)
 	return f.oneClock(roles)
+}
+
+// askForNumbers: columns called by numbers are likely the sizes of bins, but a
+// number alone has no unit.
+func (f *File) askForNumbers(roles []Role) {
+	const fewest = 3
+	n := 0
+	for i, c := range f.Columns {
+		if _, ok := number([]byte(c.Name)); ok && roles[i].Quantity == Unused {
+			n++
+		}
+	}
+	if n >= fewest {
+		f.notes.add("ask_sizes", 0, "%d columns called by numbers are not used: if they are sizes say *=%s @*nm in cm-3", n, PerLogDiameter)
+	}
 }
 
 // firstTime makes a time of the independent variable, whatever its name.

@@ -139,6 +139,20 @@ func TestGuess(t *testing.T) {
 	}
 }
 
+// Sizes as bare numbers: the unit is asked for, and one line answers.
+func TestColumnsCalledByNumbers(t *testing.T) {
+	f := open(t, "time,10.5,20,40\n2026-03-14,1,2,3\n")
+	if !noted(f, "ask_sizes") || len(f.Mapping()) != 1 {
+		t.Errorf("notes %v, mapping %q", f.Notes(), f.Mapping())
+	}
+	if err := f.Use("*=dN/dlog10D @*nm in cm-3"); err != nil {
+		t.Fatal(err)
+	}
+	if got := samples(t, f)[0]; len(got.Bins) != 3 || !alike(got.Bins[0].Diameter, 10.5e-9) || got.Sizes[2].X != 3e6 {
+		t.Errorf("got %+v", got)
+	}
+}
+
 // The long name may speak of the uncertainty of the value.
 func TestTheLongNameIsNoUncertainty(t *testing.T) {
 	lines := icarttFile()
