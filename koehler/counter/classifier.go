@@ -93,3 +93,24 @@ func (c Classifier) TransferWidth(d, ratio float64) float64 {
 	T, p := c.air()
 	return ratio / math.Sqrt(6) * mobilityWidth(d, T, p)
 }
+
+// CutOff is the counting efficiency of a particle counter near its smallest sizes,
+//
+//	Plateau/(1 + exp((Half - d)/Scale))
+//
+// a common form of its published efficiency curves (common practice).
+type CutOff struct {
+	Half    float64 // m, where it counts half of its plateau
+	Scale   float64 // m, above 0
+	Plateau float64 // 0: 1
+}
+
+// Efficiency returns the share of particles of diameter d (m) that are counted, for
+// Options.CNEfficiency.
+func (c CutOff) Efficiency(d float64) float64 {
+	top := c.Plateau
+	if top == 0 {
+		top = 1
+	}
+	return top / (1 + math.Exp((c.Half-d)/c.Scale))
+}

@@ -115,7 +115,8 @@ func TestScansOverTemperatureDifference(t *testing.T) {
 func TestEfficiencyAndRatioAreTakenOut(t *testing.T) {
 	w := usual(40e-9, 0.05)
 	s := clean(w)
-	efficiency := func(d float64) float64 { return 1 - 0.5*math.Exp(-(d-15e-9)/10e-9) }
+	efficiency := CutOff{Half: 12e-9, Scale: 6e-9, Plateau: 0.98}.Efficiency
+	near(t, "efficiency at the half", efficiency(12e-9), 0.49, 1e-12)
 	for i := range s.Points {
 		p := &s.Points[i]
 		p.CN *= efficiency(p.Setting)

@@ -50,6 +50,9 @@ type likelihood struct {
 	samples  []sample
 	logistic bool
 	free     [parameters]bool
+	// narrowest is the least width: below a tenth of the distance of the settings
+	// the counts say nothing about it, and the step is somewhere between two of them.
+	narrowest float64
 }
 
 // hazy is |z| beyond which a step is 0 or 1 to rounding.
@@ -159,16 +162,22 @@ const (
 	mostShare  = 0.45
 )
 
-// climbDone is the gain in ln likelihood that the last step promised.
-const climbDone = 1e-9
+// climbDone is the gain in ln likelihood that the last step promised: a step of
+// 0.001 standard deviations gains 5e-7, and what is left after it is its square.
+const climbDone = 1e-8
+
+// nearlyDone is the gain at which a climb that creeps along a flat ridge is taken as
+// settled all the same: 0.01 standard deviations.
+const nearlyDone = 5e-5
 
 // climb maximises the likelihood from a start by Fisher scoring, damped as by
 // Levenberg and Marquardt. It reports false where it does not settle.
 func (l *likelihood) climb(t vector) (best vector, value float64, info matrix, ok bool) {
+	t[spread] = math.Max(t[spread], math.Log(l.narrowest))
 	value, score, info := l.slope(&t)
-	damping := 1e-6
+	damping, gain := 1e-6, math.Inf(1)
 	for range 100 {
-		damped, push := pinned(&t, info, score)
+		damped, push := l.pinned(&t, info, score)
 		for a := range damped {
 			damped[a][a] += damping * (damped[a][a] + 1)
 		}
@@ -179,8 +188,8 @@ func (l *likelihood) climb(t vector) (best vector, value float64, info matrix, o
 			}
 			continue
 		}
-		next := bounded(t, move)
-		gain := 0.0
+		next := l.bounded(t, move)
+		gain = 0
 		for a := range score {
 			gain += score[a] * (next[a] - t[a])
 		}
@@ -197,12 +206,12 @@ func (l *likelihood) climb(t vector) (best vector, value float64, info matrix, o
 			return t, value, info, true // no step gains anything: rounding
 		}
 	}
-	return t, value, info, false
+	return t, value, info, gain <= nearlyDone
 }
 
 // pinned holds the parameters that stand at a bound and want to go beyond it, so
 // that the others find their best there.
-func pinned(t *vector, info matrix, score vector) (matrix, vector) {
+func (l *likelihood) pinned(t *vector, info matrix, score vector) (matrix, vector) {
 	pin := func(a int) {
 		score[a] = 0
 		for b := range info {
@@ -213,18 +222,18 @@ func pinned(t *vector, info matrix, score vector) (matrix, vector) {
 	if t[double] <= leastShare && score[double] < 0 || t[double] >= mostShare && score[double] > 0 {
 		pin(double)
 	}
-	if w := math.Exp(t[spread]); w <= leastWidth*1.0001 && score[spread] < 0 || w >= mostWidth*0.9999 && score[spread] > 0 {
+	if w := math.Exp(t[spread]); w <= l.narrowest*1.0001 && score[spread] < 0 || w >= mostWidth*0.9999 && score[spread] > 0 {
 		pin(spread)
 	}
 	return info, score
 }
 
 // bounded is t moved, at most half a unit in each direction and inside the bounds.
-func bounded(t, move vector) vector {
+func (l *likelihood) bounded(t, move vector) vector {
 	for a := range t {
 		t[a] += math.Max(-0.5, math.Min(0.5, move[a]))
 	}
-	t[spread] = math.Max(math.Log(leastWidth), math.Min(math.Log(mostWidth), t[spread]))
+	t[spread] = math.Max(math.Log(l.narrowest), math.Min(math.Log(mostWidth), t[spread]))
 	t[double] = math.Max(leastShare, math.Min(mostShare, t[double]))
 	return t
 }

@@ -2,6 +2,7 @@ package counter
 
 import (
 	"math"
+	"slices"
 
 	"dropcrest/atmos"
 )
@@ -28,8 +29,20 @@ func (f *Fit) prepare(s Scan, used []Point, o Options) error {
 		}
 		l.samples[i] = m
 	}
+	l.narrowest = l.tenthOfDistance()
 	f.like = l
 	return nil
+}
+
+// tenthOfDistance is a tenth of the mean distance in ln x of different settings.
+func (l *likelihood) tenthOfDistance() float64 {
+	x := make([]float64, len(l.samples))
+	for i := range l.samples {
+		x[i] = l.samples[i].x
+	}
+	slices.Sort(x)
+	x = slices.Compact(x)
+	return math.Max(leastWidth, (x[len(x)-1]-x[0])/float64(10*(len(x)-1)))
 }
 
 func (o Options) fitsDouble() bool {
@@ -92,7 +105,7 @@ func (l *likelihood) starts(given float64) []vector {
 	for _, s := range l.samples {
 		least, most = math.Min(least, s.x), math.Max(most, s.x)
 	}
-	const grid = 40
+	const grid = 24
 	for _, width := range []float64{0.05, 0.2} {
 		best, value := vector{}, math.Inf(-1)
 		for i := range grid {

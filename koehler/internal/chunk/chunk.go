@@ -7,7 +7,6 @@ import (
 	"math/rand/v2"
 	"runtime"
 	"sync"
-	"sync/atomic"
 )
 
 // Run calls work for the pieces 0 to n-1, at most workers at a time (0: as many
@@ -21,42 +20,43 @@ func Run(ctx context.Context, n, workers int, work func(piece int), finished fun
 	if workers <= 0 {
 		workers = runtime.GOMAXPROCS(0)
 	}
-	var next, ended atomic.Int64
-	var mu sync.Mutex
-	var wait sync.WaitGroup
-	begin := func() (int, bool) {
-		mu.Lock()
-		defer mu.Unlock()
-		if ctx.Err() != nil || next.Load() >= int64(n) {
+	var taking, telling sync.Mutex
+	begun, done := 0, 0
+	take := func() (piece int, ok bool) {
+		taking.Lock()
+		defer taking.Unlock()
+		if ctx.Err() != nil || begun >= n {
 			return 0, false
 		}
-		return int(next.Add(1) - 1), true
+		begun++
+		return begun - 1, true
 	}
-	var report sync.Mutex
+	tell := func() {
+		telling.Lock()
+		defer telling.Unlock()
+		done++
+		if finished != nil {
+			finished(done)
+		}
+	}
+	var wait sync.WaitGroup
 	for range min(workers, n) {
 		wait.Go(func() {
 			for {
-				i, ok := begin()
+				piece, ok := take()
 				if !ok {
 					return
 				}
-				work(i)
-				if finished == nil {
-					ended.Add(1)
-					continue
-				}
-				report.Lock()
-				finished(int(ended.Add(1)))
-				report.Unlock()
+				work(piece)
+				tell()
 			}
 		})
 	}
 	wait.Wait()
-	ran = int(ended.Load())
-	if ran < n {
-		return ran, ctx.Err()
+	if done < n {
+		return done, ctx.Err()
 	}
-	return ran, nil
+	return done, nil
 }
 
 // Generator returns the random numbers of one piece: they depend on the seed
