@@ -61,7 +61,7 @@ func TestComputedCharges(t *testing.T) {
 	}
 }
 
-// C15: Wiedensohler 1988, Table 1; from memory, computed.
+// Wiedensohler 1988, Table 1; from memory, computed.
 func TestPublishedChargeEquilibrium(t *testing.T) {
 	sum := 0.0
 	for i, want := range []float64{0.0561, 0.2793, 0.4259, 0.2138, 0.0317} {
@@ -84,7 +84,7 @@ func TestPublishedChargeEquilibrium(t *testing.T) {
 	}
 }
 
-// C16: slip correction and mean free path of ISO 15900; computed.
+// Slip correction and mean free path of ISO 15900; computed.
 func TestPublishedEqualMobility(t *testing.T) {
 	want := []float64{43.2, 72.9, 119.2, 151.3, 235.2, 323.6}
 	for i, nm := range []float64{30, 50, 80, 100, 150, 200} {

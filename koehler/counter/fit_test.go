@@ -53,8 +53,8 @@ func TestNoiseFreeScansAreFoundExactly(t *testing.T) {
 }
 
 // What the two-step curve is for: curves that take multiply charged particles as
-// active at all sizes, and a plain crossing of one half, are biased. C19 says that
-// the crossing biases s by 1.0 to 1.1 %, so D50 by -0.7 %.
+// active at all sizes, and a plain crossing of one half, are biased. Another routine
+// of the project has the crossing bias s by 1.0 to 1.1 %, so D50 by -0.7 %.
 func TestSimplerCurvesAreBiased(t *testing.T) {
 	w := usual(60e-9, 0.05)
 	w.plateau = 1

@@ -23,10 +23,10 @@ func sulfate(t testing.TB) Standard {
 	return SaltStandard(salt(t, "ammonium sulfate"), solutes.IonInteraction, 298.15, Classifier{})
 }
 
-// C11: van 't Hoff with the constants of the public LExNO workshop note, basis of
+// Van 't Hoff with the constants of the public LExNO workshop note, basis of
 // Snider et al. 2010, J. Geophys. Res.; s_c computed. The figures are those of the
 // exponential form ln a_w = -i n_s/n_w. The mole-fraction form, which is that of the
-// recipe, is κ²/2u² above it in ln a_w: 0.1 % of s_c at 1 %, nothing at 0.1 %. C12:
+// recipe, is κ²/2u² above it in ln a_w: 0.1 % of s_c at 1 %, nothing at 0.1 %. Then
 // the mole-fraction form against κ 0.61 with the same A, where that drops out.
 func TestPublishedVantHoff(t *testing.T) {
 	s := salt(t, "ammonium sulfate")
@@ -46,17 +46,17 @@ func TestPublishedVantHoff(t *testing.T) {
 		if err != nil {
 			t.Fatal(err)
 		}
-		near(t, "C11 s_c, %", 100*crest.Supersaturation, want[i], 1e-4)
+		near(t, "s_c, %", 100*crest.Supersaturation, want[i], 1e-4)
 		got, err := w.Supersaturation(nm * 1e-9)
 		if err != nil {
 			t.Fatal(err)
 		}
-		near(t, "C11 s_c of the mole-fraction form, %", 100*got, want[i], 1e-4+0.0013*want[i]*want[i])
+		near(t, "s_c of the mole-fraction form, %", 100*got, want[i], 1e-4+0.0013*want[i]*want[i])
 		simple, err := k.Supersaturation(nm * 1e-9)
 		if err != nil {
 			t.Fatal(err)
 		}
-		near(t, "C12 ratio", got/simple, 1.0505, 0.002)
+		near(t, "ratio", got/simple, 1.0505, 0.002)
 	}
 }
 
@@ -70,7 +70,7 @@ func TestSensitivities(t *testing.T) {
 	// s_c ∝ A^3/2 Dd^-3/2 κ^-1/2; the osmotic coefficient makes them a little less
 	near(t, "sizing", c.Sensitivity.Dry, -1.5, 0.06)
 	near(t, "tension", c.Sensitivity.Tension, 1.5, 0.06)
-	near(t, "temperature", c.Sensitivity.Temperature, -0.0081, 0.0008) // C13: -4.1 % for 5 K
+	near(t, "temperature", c.Sensitivity.Temperature, -0.0081, 0.0008) // computed for the project: -4.1 % for 5 K
 	if c.Sensitivity.Shape < 0.4 || c.Sensitivity.Shape > 1.5 {
 		t.Errorf("shape %g, want about 0.8: a less dense particle is smaller than it looks", c.Sensitivity.Shape)
 	}
@@ -87,7 +87,7 @@ func TestSensitivities(t *testing.T) {
 	near(t, "tension of the solution", d.Sensitivity.Tension, c.Sensitivity.Tension, 0.02)
 }
 
-// C12 again: the choice of the model is worth 5 %.
+// The choice of the model is worth 5 %.
 func TestSpreadOfModels(t *testing.T) {
 	choices := sulfate(t).Spread(80e-9)
 	least, most := math.Inf(1), 0.0
