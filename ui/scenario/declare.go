@@ -1,7 +1,10 @@
 package scenario
 
-// fields declares the quantities of a scenario in the order of the statement.
-var fields = []field[Scenario]{
+// fields declares the quantities of a scenario.
+var fields = append(particleFields, populationFields...)
+
+// particleFields declares the quantities of one particle.
+var particleFields = []field[Scenario]{
 	{key: "dry-diameter", says: "dry size", quantity: drySize,
 		help:   "The diameter of the dry particle, of the kind that dry-size-is names.",
 		origin: "common practice: a frequent size in laboratory work on activation",
@@ -104,7 +107,7 @@ var fields = []field[Scenario]{
 
 // componentFields declares the quantities of one component.
 var componentFields = []field[Component]{
-	{key: "substance", says: "substance",
+	{key: "substance", says: "substance", form: Name,
 		help:   "The substance by its name, formula or an alias of the catalogue.",
 		origin: "ammonium sulfate, the salt that most calibrations use (common practice)",
 		at:     func(c *Component) any { return &c.Substance }},

@@ -15,7 +15,9 @@ type field[R any] struct {
 	key, says, help, origin string
 
 	quantity *quantity // of a number
+	several  bool      // several numbers of that quantity
 	words    []Option  // of a choice; of a number: words that may stand for it
+	form     Kind      // of a text: Text, Name or File
 	at       func(*R) any
 	used     func(*Scenario) bool // nil: always
 }
@@ -38,16 +40,23 @@ func (i slot[R]) Used() bool     { return i.used == nil || i.used(i.s) }
 
 func (i slot[R]) Kind() Kind {
 	switch {
+	case i.several:
+		return Numbers
 	case i.quantity != nil:
 		return Number
 	case i.words != nil:
 		return Choice
+	case i.form != 0:
+		return i.form
 	}
 	return Text
 }
 
+// isText reports whether the field holds a text of any kind.
+func (i slot[R]) isText() bool { return i.quantity == nil && i.words == nil }
+
 func (i slot[R]) Choices() []Option {
-	if i.Kind() != Text {
+	if i.Kind() != Name {
 		return slices.Clone(i.words)
 	}
 	var names []Option
@@ -67,8 +76,14 @@ func (i slot[R]) Range() string {
 		words = append(words, w.Word)
 	}
 	switch {
-	case i.Kind() == Text:
+	case i.Kind() == Name:
 		return "a name, a formula or an alias of the catalogue"
+	case i.Kind() == File:
+		return "the name of a file"
+	case i.Kind() == Text:
+		return "text"
+	case i.several:
+		return "numbers with commas between them, each " + i.quantity.span()
 	case i.quantity == nil:
 		return strings.Join(words, ", ")
 	}
@@ -86,6 +101,8 @@ func value(at any) Measure {
 		return Measure{Word: *p}
 	case *Measure:
 		return *p
+	case *[]float64:
+		return Measure{Word: fmt.Sprint(*p)} // to be compared only
 	}
 	panic(fmt.Sprintf("scenario: a field cannot be a %T", at))
 }
@@ -105,19 +122,26 @@ func (i slot[R]) assign(m Measure) {
 	}
 }
 
+// numbers are those of a field of several.
+func (i slot[R]) numbers() []float64 { return *i.at(i.r).(*[]float64) }
+
 func (i slot[R]) IsDefault() bool { return i.value() == value(i.at(i.standard)) }
 
 // isWord reports whether a word stands in the field, which the number 0 is not.
-func (i slot[R]) isWord() bool { return i.quantity == nil || i.value().Word != "" }
+func (i slot[R]) isWord() bool { return i.quantity == nil || !i.several && i.value().Word != "" }
 
 func (i slot[R]) Show(st Style) string {
 	m := i.value()
 	text := m.Word
 	switch {
+	case i.several:
+		text = i.quantity.showAll(i.numbers())
 	case !i.isWord():
 		text = i.quantity.show(m.Number)
-	case i.Kind() == Text && m.Word == "":
+	case i.Kind() == Name && m.Word == "":
 		text = "values of its own"
+	case i.isText() && m.Word == "":
+		text = "none"
 	default:
 		if w, ok := i.word(m.Word); ok {
 			text = w.Says
@@ -131,6 +155,9 @@ func (i slot[R]) Show(st Style) string {
 
 // exact is the value as a file keeps it.
 func (i slot[R]) exact() string {
+	if i.several {
+		return i.quantity.exactAll(i.numbers())
+	}
 	if i.isWord() {
 		return i.value().Word
 	}
@@ -153,7 +180,16 @@ func (i slot[R]) SI() (key string, si any) {
 	}
 	m := i.value()
 	switch {
-	case i.Kind() == Text && m.Word == "":
+	case i.several:
+		out := make([]float64, 0, len(i.numbers()))
+		for _, x := range i.numbers() {
+			if i.quantity.si == "percent" {
+				x = i.quantity.units[0].fromSI(x)
+			}
+			out = append(out, x)
+		}
+		return key, out
+	case i.isText() && m.Word == "":
 		return key, nil
 	case i.isWord():
 		return key, m.Word
@@ -167,6 +203,9 @@ func (i slot[R]) Set(text string) error         { return i.set(text, true) }
 func (i slot[R]) SetWithUnit(text string) error { return i.set(text, false) }
 
 func (i slot[R]) set(text string, bare bool) error {
+	if i.several {
+		return i.setAll(text, bare)
+	}
 	m, problem := i.read(text, bare)
 	if problem != nil {
 		problem.Path = i.path
@@ -181,8 +220,11 @@ func (i slot[R]) read(text string, bare bool) (Measure, *ValueError) {
 	if clean := plain.Clean(text); clean != text {
 		return Measure{}, &ValueError{Given: clean, Problem: fmt.Sprintf("%q holds control characters", shortened(clean)), Right: i.Range()}
 	}
-	if i.Kind() == Text {
+	switch i.Kind() {
+	case Name:
 		return i.readName(text)
+	case File, Text:
+		return i.readText(text)
 	}
 	if w, ok := i.word(text); ok && text != "" {
 		return Measure{Word: w.Word}, nil
@@ -198,6 +240,48 @@ func (i slot[R]) read(text string, bare bool) (Measure, *ValueError) {
 		return Measure{}, problem
 	}
 	return Measure{Number: x}, nil
+}
+
+// longestWords is more than any file name or line of a mapping needs.
+const longestWords = 1000
+
+// readText reads a free text; "none" takes it away.
+func (i slot[R]) readText(text string) (Measure, *ValueError) {
+	if text == "none" {
+		text = ""
+	}
+	if len(text) > longestWords {
+		return Measure{}, &ValueError{Given: shortened(text), Problem: "a text that long", Right: fmt.Sprintf("at most %d bytes", longestWords)}
+	}
+	return Measure{Word: text}, nil
+}
+
+// mostNumbers keeps a series from filling the memory.
+const mostNumbers = 1000
+
+// setAll reads several numbers. One without a unit has that of the last one.
+func (i slot[R]) setAll(text string, bare bool) error {
+	parts := strings.Split(text, ",")
+	if len(parts) > mostNumbers {
+		return &ValueError{Path: i.path, Given: shortened(text), Problem: fmt.Sprintf("%d numbers", len(parts)), Right: fmt.Sprintf("at most %d", mostNumbers)}
+	}
+	last := strings.TrimSpace(parts[len(parts)-1])
+	unit := last[numberLength(last):]
+	var out []float64
+	for _, p := range parts {
+		p = strings.TrimSpace(p)
+		if p != "" && numberLength(p) == len(p) {
+			p += unit
+		}
+		x, problem := i.quantity.read(plain.Clean(p), bare)
+		if problem != nil {
+			problem.Path = i.path
+			return problem
+		}
+		out = append(out, x)
+	}
+	*i.at(i.r).(*[]float64) = out
+	return nil
 }
 
 // readName reads the name of a substance and writes it as the catalogue does.
@@ -222,6 +306,9 @@ func (i slot[R]) readName(text string) (Measure, *ValueError) {
 }
 
 func (i slot[R]) Step(dir int, big bool) error {
+	if i.several || i.isText() && i.Kind() != Name {
+		return &ValueError{Path: i.path, Problem: i.says + " has no steps", Right: "Enter, which opens it"}
+	}
 	if i.isWord() {
 		return i.stepWord(dir)
 	}

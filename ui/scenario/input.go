@@ -10,10 +10,13 @@ type Path string
 type Kind int
 
 const (
-	Number Kind = iota // a number with a unit; may also accept the words of Choices
-	Choice             // one of Choices
-	Text               // free text, may offer Choices (substance names)
-	Switch             // on or off
+	Number  Kind = iota // a number with a unit; may also accept the words of Choices
+	Choice              // one of Choices
+	Text                // free text
+	Name                // a name of the catalogue, which Choices offers
+	File                // the name of a file
+	Numbers             // several numbers of one quantity, with commas between them
+	Switch              // on or off
 )
 
 // Option is one word that an input accepts.

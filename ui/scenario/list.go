@@ -22,6 +22,7 @@ type list[R any] struct {
 	required    []string               // fields that a file or an option must give
 	least, most int                    // rows
 	first       string                 // field of the words before the first key of a row
+	raw         bool                   // a row is one text, whatever signs it has
 	show        func(*Scenario) string // all rows in a few words
 }
 
@@ -181,6 +182,12 @@ func (l rowsOf[R]) pairs(text string) ([]pair, error) {
 	fail := func(problem, right string) ([]pair, error) {
 		return nil, &ValueError{Path: Path(l.key), Given: text, Problem: problem, Right: right}
 	}
+	if l.raw {
+		if strings.TrimSpace(text) == "" {
+			return fail("no value", l.first)
+		}
+		return []pair{{l.first, strings.TrimSpace(text)}}, nil
+	}
 	pairs := []pair{{l.first, ""}}
 	for _, word := range strings.Fields(text) {
 		key, rest, found := strings.Cut(word, "=")
@@ -227,7 +234,7 @@ func (l rowsOf[R]) entries(i int) []entry {
 	var out []entry
 	for f := range l.fields {
 		in := slot[R]{field: &l.fields[f], r: &(*l.rows(l.s))[i]}
-		if in.value().Is("catalogue") || in.Kind() == Text && in.value().Word == "" {
+		if in.value().Is("catalogue") || in.isText() && in.value().Word == "" {
 			continue
 		}
 		out = append(out, in.entry())

@@ -220,6 +220,24 @@ func (q *quantity) show(x float64) string {
 	return strings.TrimSpace(text + " " + q.units[0].name())
 }
 
+// showAll writes several numbers with one unit: "0.1, 0.2, 0.5 %".
+func (q *quantity) showAll(xs []float64) string {
+	texts := make([]string, len(xs))
+	for i, x := range xs {
+		texts[i] = figures(q.units[0].fromSI(x))
+	}
+	return strings.TrimSpace(strings.Join(texts, ", ") + " " + q.units[0].name())
+}
+
+// exactAll writes several numbers so that reading them gives the same again.
+func (q *quantity) exactAll(xs []float64) string {
+	texts := make([]string, len(xs))
+	for i, x := range xs {
+		texts[i] = q.exact(x)
+	}
+	return strings.Join(texts, ", ")
+}
+
 // exact writes a number so that reading it gives the same number again.
 func (q *quantity) exact(x float64) string {
 	for _, u := range q.units {

@@ -36,6 +36,21 @@ type Scenario struct {
 	FromRadius       Measure // m, or "frame"
 	ToRadius         Measure // m, or "frame"
 
+	Population       string     // data | modes | bins
+	Modes            []Mode     // of a population of modes
+	Bins             string     // file of a size distribution, "": none
+	Data             []DataFile // measured files; "demo" is the invented station
+	Map              []MapLine  // what columns hold, where the guess is wrong
+	Record           Measure    // number of the record looked at, or "all"
+	Every            Measure    // s: windows that are averaged over, or "records" of the first file
+	Average          string     // mean | median | quartile-mean
+	Composition      string     // measured | given
+	Mixing           string     // internal | external
+	KappaSpread      float64    // geometric standard deviation of kappa
+	Supersaturations []float64  // fractions
+	Fit              string     // none | power | cohard | erf | erf2
+	Axes             string     // log | linear
+
 	substances *solutes.Catalogue // nil: the standard one
 	anyName    bool               // names of substances are not looked up
 }
@@ -97,6 +112,18 @@ func Default() Scenario {
 		Points:           200,
 		FromRadius:       Measure{Word: "frame"},
 		ToRadius:         Measure{Word: "frame"},
+		Population:       "data",
+		Modes:            defaultModes(),
+		Data:             []DataFile{{Name: DemoData}},
+		Record:           Measure{Number: 1},
+		Every:            Measure{Word: "records"},
+		Average:          "mean",
+		Composition:      "measured",
+		Mixing:           "internal",
+		KappaSpread:      1,
+		Supersaturations: []float64{0.001, 0.002, 0.004, 0.006, 0.01},
+		Fit:              "none",
+		Axes:             "log",
 	}
 }
 
@@ -111,17 +138,21 @@ func (s Scenario) Clone() Scenario {
 	s.Components = slices.Clone(s.Components)
 	s.Szyszkowski = slices.Clone(s.Szyszkowski)
 	s.Adsorption = slices.Clone(s.Adsorption)
+	s.Modes, s.Data, s.Map = slices.Clone(s.Modes), slices.Clone(s.Data), slices.Clone(s.Map)
+	s.Supersaturations = slices.Clone(s.Supersaturations)
 	return s
 }
 
 // Equal reports whether both ask the same.
 func (s Scenario) Equal(other Scenario) bool {
-	return slices.Equal(s.Components, other.Components) && slices.Equal(s.Szyszkowski, other.Szyszkowski) &&
+	return slices.Equal(s.Modes, other.Modes) && slices.Equal(s.Data, other.Data) && slices.Equal(s.Map, other.Map) &&
+		slices.Equal(s.Components, other.Components) && slices.Equal(s.Szyszkowski, other.Szyszkowski) &&
 		slices.Equal(s.Adsorption, other.Adsorption) && reflect.DeepEqual(s.plain(), other.plain())
 }
 
 // plain is the scenario without its rows and without where names are looked up.
 func (s Scenario) plain() Scenario {
+	s.Modes, s.Data, s.Map = nil, nil, nil
 	s.Components, s.Szyszkowski, s.Adsorption, s.substances, s.anyName = nil, nil, nil, nil, false
 	return s
 }

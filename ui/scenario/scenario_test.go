@@ -20,7 +20,7 @@ func TestInputsSayEverything(t *testing.T) {
 				t.Errorf("%s has no %s", in.Path(), what)
 			}
 		}
-		if !in.IsDefault() {
+		if !in.IsDefault() && !strings.HasPrefix(string(in.Path()), "mode[") { // two invented modes, a new one is a third
 			t.Errorf("%s is not at its default in the default scenario", in.Path())
 		}
 		if got := in.Show(Style{ASCII: true}); strings.ContainsFunc(got, func(r rune) bool { return r > 127 }) {

@@ -27,6 +27,13 @@ var (
 	cubicMetrePerMole       = unit{[]string{"m³/mol", "m3/mol"}, "1", ""}
 	litrePerMole            = unit{[]string{"L/mol", "l/mol"}, "1e-3", ""}
 
+	perCubicCentimetre = unit{[]string{"/cm³", "/cm3", "cm-3", "1/cm3"}, "1e6", ""}
+	perCubicMetre      = unit{[]string{"/m³", "/m3", "m-3", "1/m3"}, "1", ""}
+
+	second = unit{[]string{"s"}, "1", ""}
+	minute = unit{[]string{"min"}, "60", ""}
+	hour   = unit{[]string{"h"}, "3600", ""}
+
 	gramPerMole     = unit{[]string{"g/mol"}, "1e-3", ""}
 	kilogramPerMole = unit{[]string{"kg/mol"}, "1", ""}
 )
@@ -67,9 +74,18 @@ var (
 		min: 0, open: true, max: 1e6, start: 20, step: stepper{ladder: true}}
 	filmFloor = &quantity{says: "surface tension", units: []unit{millinewton, newton}, si: "n_per_m",
 		min: 0, max: 0.072, start: 0.03, step: stepper{small: 1, big: 10, decimals: 1}}
-	isothermA = &quantity{says: "number", units: []unit{bare}, min: 0, max: 20, start: 2.25, step: stepper{small: 0.05, big: 0.5, decimals: 2}}
-	isothermB = &quantity{says: "number", units: []unit{bare}, min: 0.1, max: 5, start: 1.2, step: stepper{small: 0.05, big: 0.5, decimals: 2}}
-	ionCount  = &quantity{says: "number of ions", units: []unit{bare}, min: 0, max: 10, start: 2,
+	isothermA           = &quantity{says: "number", units: []unit{bare}, min: 0, max: 20, start: 2.25, step: stepper{small: 0.05, big: 0.5, decimals: 2}}
+	isothermB           = &quantity{says: "number", units: []unit{bare}, min: 0.1, max: 5, start: 1.2, step: stepper{small: 0.05, big: 0.5, decimals: 2}}
+	numberConcentration = &quantity{says: "number concentration", units: []unit{perCubicCentimetre, perCubicMetre}, si: "per_m3",
+		min: 0, open: true, max: 1e12, start: 1e9, step: stepper{ladder: true}}
+	geometricDeviation = &quantity{says: "geometric standard deviation", units: []unit{bare}, min: 1, max: 10, start: 1.6,
+		step: stepper{small: 0.05, big: 0.5, decimals: 2}}
+	recordNumber    = &quantity{says: "number", units: []unit{bare}, min: 1, max: 1e9, whole: true, start: 1, step: stepper{small: 1, big: 10}}
+	duration        = &quantity{says: "time", units: []unit{minute, second, hour}, si: "s", min: 1, max: 86400, start: 1800, step: stepper{ladder: true}}
+	clockOffset     = &quantity{says: "time", units: []unit{second, minute, hour}, si: "s", min: -86400, max: 86400, start: 0, step: stepper{small: 1, big: 60}}
+	supersaturation = &quantity{says: "supersaturation", units: []unit{perCent}, si: "percent",
+		min: 0, open: true, max: 0.1, start: 0.002, step: stepper{ladder: true}}
+	ionCount = &quantity{says: "number of ions", units: []unit{bare}, min: 0, max: 10, start: 2,
 		step: stepper{small: 1, big: 1}}
 )
 
