@@ -4,6 +4,8 @@ package answer
 
 import (
 	"context"
+	"io"
+	"io/fs"
 
 	"dropcrest/atmos"
 	"dropcrest/solutes"
@@ -18,6 +20,15 @@ type Env struct {
 	Workers    int                     // 0: one
 	Kept       *Kept                   // nil: nothing is kept from one question to the next
 	Progress   func(done, total int64) // nil: nobody listens
+
+	Open func(name string) (io.ReadCloser, error) // measured files; nil: there are none
+	Demo fs.FS                                    // files of the invented station; nil: none
+
+	// Row takes the rows of a table as they are found, so that a campaign of any
+	// length streams through; nil: rows are collected in the answer. Columns comes
+	// before the first row.
+	Columns func(table string, columns []Column) error
+	Row     func(table string, row []any) error
 }
 
 // Question is one page and one subcommand.
@@ -26,12 +37,32 @@ type Question struct {
 	Title  string  // "Curve"
 	Says   string  // the question in one sentence
 	Groups []Group // the inputs that it looks at, in the order of the help
-	Live   bool    // answered within a frame, inside Update
+
+	// Live reports whether the question is answered within a frame, so that it can
+	// be asked at every key; else it is a job that can be stopped. nil: always.
+	Live func(scenario.Scenario) bool
 
 	// Statement is the question in prose, one clause a line; {path} stands for
 	// the slot of that input, {component} for the composition as a whole.
 	Statement func(scenario.Scenario) []string
 	Ask       func(context.Context, Env, scenario.Scenario) (Answer, error)
+
+	// Frame is the frame of a figure in h rows, as like the last one as may be; nil:
+	// figure.Fit.
+	Frame func(s scenario.Scenario, f figure.Figure, last figure.Frame, h int) (figure.Frame, bool)
+	// Formats are the forms besides text, csv, json and figure files.
+	Formats []string
+}
+
+// IsLive reports whether the question is answered at once for that scenario.
+func (q Question) IsLive(s scenario.Scenario) bool { return q.Live == nil || q.Live(s) }
+
+// FrameOf is the frame of a figure of the question's answer.
+func (q Question) FrameOf(s scenario.Scenario, f figure.Figure, last figure.Frame, h int) (figure.Frame, bool) {
+	if q.Frame != nil {
+		return q.Frame(s, f, last, h)
+	}
+	return figure.Fit(f, last, h)
 }
 
 // Answer is what a question returns. Sentences and labels use the program's own
@@ -44,6 +75,9 @@ type Answer struct {
 	Others  []figure.Line // lines of the first figure that are shown on demand
 	Tables  []Table
 	Notes   []atmos.Note
+
+	// Record is the record that was looked at, of Records in the data; 0 without data.
+	Record, Records int
 }
 
 // Table is a table of an answer. Columns carry their unit in the key.

@@ -17,7 +17,7 @@ func curveQuestion() Question {
 		Title:     "Curve",
 		Says:      "Over which saturation is a droplet grown on this dry particle in equilibrium, and which crest must it cross to become a cloud droplet?",
 		Groups:    curveGroups,
-		Live:      true,
+		Frame:     CurveFrame,
 		Statement: curveStatement,
 		Ask:       askCurve,
 	}

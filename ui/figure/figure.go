@@ -4,12 +4,13 @@ package figure
 
 // Figure is one picture: dense polylines that contain their extrema, and marks.
 type Figure struct {
-	Key   string // "curve"
-	Title string // "supersaturation, % against wet radius, µm"
-	X, Y  Axis
-	Lines []Line
-	Marks []Mark
-	Notes []string // printed below the picture in figure files
+	Key    string // "curve"
+	Title  string // "supersaturation, % against wet radius, µm"
+	X, Y   Axis
+	Lines  []Line
+	Marks  []Mark
+	Points []Point  // measured, drawn over the lines
+	Notes  []string // printed below the picture in figure files
 }
 
 // Axis is one axis of a figure.
@@ -38,6 +39,15 @@ type Line struct {
 	// Extrema are the X of the extrema where they are known; nil: they are found
 	// among the points.
 	Extrema []float64
+}
+
+// Point is a measured point with the ends of its uncertainty, NaN where there is
+// none. Letter is that of the series it belongs to, 0 for the current one.
+type Point struct {
+	Letter      rune
+	X, Y        float64
+	XLow, XHigh float64
+	YLow, YHigh float64
 }
 
 // MarkKind says what a mark stands for.

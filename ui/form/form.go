@@ -61,7 +61,7 @@ func (s Sheet) frame(i int) figure.Frame {
 	if i == 0 && s.Frame.Serves() {
 		return s.Frame
 	}
-	fr, _ := answer.CurveFrame(s.Scenario, s.Answer.Figures[i], figure.Frame{}, pictureHeight)
+	fr, _ := s.Question.FrameOf(s.Scenario, s.Answer.Figures[i], figure.Frame{}, pictureHeight)
 	return fr
 }
 

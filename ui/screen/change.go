@@ -79,7 +79,7 @@ func (m *model) whatChanged(before, now scenario.Scenario) string {
 // else with work that will bring it. After an error nothing has changed.
 func (m *model) take(next scenario.Scenario) error {
 	next.Use(m.env.Substances)
-	if !m.question.Live {
+	if !m.question.IsLive(next) {
 		m.scenario = next
 		m.begin()
 		m.changed()
@@ -112,7 +112,7 @@ func (m *model) changed() {
 // to: a scenario without an answer is shown with the reason.
 func (m *model) answerFirst() {
 	m.scenario.Use(m.env.Substances) // that of a session knows none of the user's
-	if !m.question.Live {
+	if !m.question.IsLive(m.scenario) {
 		m.begin()
 		return
 	}

@@ -5,7 +5,6 @@ import (
 	"strings"
 	"unicode/utf8"
 
-	"dropcrest/ui/answer"
 	"dropcrest/ui/figure"
 )
 
@@ -44,7 +43,7 @@ func (m *model) draw(w, h int) []string {
 		}
 		return lines[:min(len(lines), h)]
 	}
-	m.frame, _ = answer.CurveFrame(m.scenario, f, m.frame, h-1)
+	m.frame, _ = m.question.FrameOf(m.scenario, f, m.frame, h-1)
 	lines := []string{m.title(f, w)}
 	for _, row := range figure.Text(f, m.frame, w-1, h-1, figure.Style{ASCII: m.ascii}) {
 		lines = append(lines, m.row(row))

@@ -18,6 +18,7 @@ func slow(ask func(context.Context, answer.Env, scenario.Scenario) (answer.Answe
 		Key: "slow", Title: "Slow", Says: "A question for tests.",
 		Statement: func(scenario.Scenario) []string { return []string{"A size of {dry-diameter}."} },
 		Ask:       ask,
+		Live:      func(scenario.Scenario) bool { return false },
 	}
 }
 
