@@ -116,7 +116,7 @@ func (m *model) heldWords(n int, long bool) string {
 		if in, ok := scenario.Find(&s, "dry-diameter"); ok {
 			says = append(says, in.Show(m.style()))
 		}
-		for _, l := range scenario.Lists(&s) {
+		for _, l := range m.question.Lists(&s) {
 			if long && l.Len() > 0 {
 				says = append(says, l.Show(m.style()))
 			}
