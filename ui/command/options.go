@@ -136,7 +136,7 @@ func (o *options) list(cmd *cobra.Command, group string, l scenario.RowList) {
 	o.set.Var(&late{o, key, "ROW"}, key, l.Help()+" May be given several times. Default: "+l.Show(scenario.Style{})+".")
 	o.group(key, group)
 	complete := cobra.NoFileCompletions
-	if l.Len() > 0 && slices.ContainsFunc(l.Row(0), func(in scenario.Input) bool { return in.Kind() == scenario.Text }) {
+	if l.Len() > 0 && slices.ContainsFunc(l.Row(0), func(in scenario.Input) bool { return in.Kind() == scenario.Name }) {
 		complete = o.names()
 	}
 	_ = cmd.RegisterFlagCompletionFunc(key, complete)

@@ -129,7 +129,7 @@ func (l *list) take(m *model) panel {
 		return l.number(0, m)
 	case l.at < len(items):
 		word = items[l.at].Word
-	case l.kind != scenario.Text || word == "":
+	case l.kind != scenario.Name || word == "":
 		l.wrong = fmt.Errorf("no item holds %q: Backspace widens the list again", word)
 		return l
 	}
@@ -141,7 +141,7 @@ func (l *list) take(m *model) panel {
 
 // nothing says what can be done when no word holds what is typed.
 func (l *list) nothing() string {
-	if l.kind == scenario.Text {
+	if l.kind == scenario.Name {
 		return "none of the list; Enter looks it up as a formula or another name"
 	}
 	return "none of the list; Backspace widens it again"
