@@ -22,6 +22,17 @@ var curveGroups = []Group{
 	{"Table and picture", []string{"points", "from-radius", "to-radius"}},
 }
 
+// spectrumGroups are the inputs of the Spectrum question: those of the particles
+// are the ones of a curve, without their size.
+var spectrumGroups = []Group{
+	{"The population", []string{"population", "mode", "bins", "data", "map", "record", "every", "average"}},
+	{"The particles", []string{"component", "shares-by", "composition", "mixing", "kappa-spread", "adsorption"}},
+	curveGroups[1],
+	{"The air", []string{"temperature"}},
+	{"Counts", []string{"supersaturation", "fit"}},
+	{"Picture", []string{"axes"}},
+}
+
 // LooksAt reports whether the question looks at the input or list of that key.
 // One scenario serves all questions; each looks at its part.
 func (q Question) LooksAt(key string) bool {
