@@ -18,6 +18,14 @@ func curveStatement(s scenario.Scenario) []string {
 	if s.DrySizeIs == "mobility" {
 		lines = append(lines, "made of {component},")
 	}
+	lines = append(lines, solutionClauses(s)...)
+	return append(lines, "in air of {temperature}, at {relative-humidity} {humidity-history} humidity, all else {further}.")
+}
+
+// solutionClauses name how water activity and surface tension follow from the
+// composition.
+func solutionClauses(s scenario.Scenario) []string {
+	var lines []string
 	if len(s.Components) > 1 && s.SharesBy != "volume" {
 		lines = append(lines, "with shares by {shares-by},")
 	}
@@ -42,7 +50,7 @@ func curveStatement(s scenario.Scenario) []string {
 	case !additive:
 		lines = append(lines, "solution density {solution-density},")
 	}
-	return append(lines, "in air of {temperature}, at {relative-humidity} {humidity-history} humidity, all else {further}.")
+	return lines
 }
 
 // matterClauses name what concerns particles that are no plain salt, where it is

@@ -1,0 +1,241 @@
+package answer
+
+import (
+	"errors"
+	"fmt"
+	"math"
+	"strconv"
+	"strings"
+
+	"dropcrest/atmos"
+	"dropcrest/koehler/spectrum"
+)
+
+// finding is the answer in sentences: how many activate, whether that agrees with
+// what was counted, the κ of both, the numbers of the fit, and what limits it.
+func (a *activated) finding() []string {
+	out := []string{a.countSentence()}
+	for _, says := range []string{a.closureSentence(), a.kappaSentence(), a.fitSentence(), a.rejectedSentence()} {
+		if says != "" {
+			out = append(out, says)
+		}
+	}
+	for _, n := range a.notes {
+		if limits(n) {
+			return append(out, capital(n.Text))
+		}
+	}
+	return out
+}
+
+// limits tells whether a note says what limits the counts.
+func limits(n atmos.Note) bool {
+	switch n.Code {
+	case "critical-size-below-bins", "critical-size-above-bins", "count-misses-upper-tail":
+		return true
+	}
+	return strings.HasSuffix(n.Code, "-extrapolated")
+}
+
+// mostListed are as many numbers as a sentence lists; of more it gives the ends.
+const mostListed = 6
+
+// countSentence is what is predicted.
+func (a *activated) countSentence() string {
+	if a.sizes == nil {
+		return fmt.Sprintf("Nothing can be predicted: %s.", a.noSizes)
+	}
+	var at, counts, wide []string
+	for i, p := range a.predicted {
+		if len(a.predicted) > mostListed && i != 0 && i != len(a.predicted)-1 {
+			continue
+		}
+		at, counts, wide = append(at, shortest(100*p.s)), append(counts, cubic(p.count)), append(wide, nanometres(p.critical))
+	}
+	which := ""
+	if a.number == 0 && a.records > 0 {
+		which = "On average "
+	}
+	says := fmt.Sprintf("%sof %s particles per cm³ %s activate at %s %% supersaturation", which, cubic(a.sizes.Number()), list(counts), list(at))
+	if a.number == 0 && a.records > 0 {
+		return says + "." // critical diameters differ from record to record
+	}
+	return capital(says) + fmt.Sprintf(", those wider than %s nm.", list(wide))
+}
+
+// list joins words with commas and an and.
+func list(words []string) string {
+	if n := len(words); n > 1 {
+		return strings.Join(words[:n-1], ", ") + " and " + words[n-1]
+	}
+	return strings.Join(words, "")
+}
+
+// cubic writes a number concentration in 1/cm³.
+func cubic(n float64) string {
+	x := n * perCubic
+	if x >= 100 {
+		return strconv.FormatFloat(x, 'f', 0, 64)
+	}
+	return digits(x, 3)
+}
+
+// nanometres writes a length in nm, without the unit.
+func nanometres(m float64) string {
+	if math.IsNaN(m) {
+		return "any"
+	}
+	return digits(m*nano, 3)
+}
+
+// closureSentence is how predicted and measured counts agree.
+func (a *activated) closureSentence() string {
+	g := a.closures.All.Agreement()
+	switch {
+	case g.Pairs == 0 && len(a.measured) > 0 && a.sizes != nil:
+		return "No count can be compared with the prediction."
+	case g.Pairs == 0:
+		return ""
+	case a.number > 0 && g.Pairs <= mostListed:
+		var ratios []string
+		for _, m := range a.measured {
+			if r := m.ratio(); !math.IsNaN(r) {
+				ratios = append(ratios, digits(r, 3))
+			}
+		}
+		return fmt.Sprintf("Predicted over measured is %s, median %s; normalised mean bias %s.", list(ratios), digits(g.Median, 3), signedPercent(g.MeanBias))
+	}
+	return fmt.Sprintf("Predicted over measured is %s in the median of %s (5 to 95 %%: %s to %s), normalised mean bias %s; %s lie within 10 %%.",
+		digits(g.Median, 3), pairs(g.Pairs), digits(g.P05, 3), digits(g.P95, 3), signedPercent(g.MeanBias), wholePercent(g.Within10))
+}
+
+func pairs(n int) string {
+	if n == 1 {
+		return "1 pair"
+	}
+	return strconv.Itoa(n) + " pairs"
+}
+
+func signedPercent(x float64) string { return fmt.Sprintf("%+.1f %%", 100*x) }
+
+func wholePercent(x float64) string { return fmt.Sprintf("%.0f %%", 100*x) }
+
+// kappaSentence is κ by count and by composition.
+func (a *activated) kappaSentence() string {
+	var at, kappas []string
+	var without []string
+	for _, m := range a.measured {
+		if a.bins == nil {
+			break
+		}
+		if m.noKappa != nil {
+			without = append(without, fmt.Sprintf("none at %s %%: %s", shortest(100*m.s), noKappaWords(m.noKappa)))
+			continue
+		}
+		text := digits(m.kappa.Kappa, 3)
+		if u := m.kappaUncertainty(); u > 0 {
+			text = roundedPair(m.kappa.Kappa, u)
+		}
+		at, kappas = append(at, shortest(100*m.s)), append(kappas, text)
+	}
+	says := ""
+	switch {
+	case len(kappas) > 0 && len(kappas) <= mostListed:
+		says = fmt.Sprintf("The counts imply κ of %s at %s %%", list(kappas), list(at))
+		if a.number == 0 {
+			says = fmt.Sprintf("The counts imply a median κ of %s at %s %%", list(kappas), list(at))
+		}
+	case len(kappas) > 0:
+		says = fmt.Sprintf("The counts imply κ from %s at %s %% to %s at %s %%", kappas[0], at[0], kappas[len(kappas)-1], at[len(at)-1])
+	case len(without) > 0:
+		says = "The counts imply no κ"
+		without = without[:1]
+		without[0] = strings.TrimPrefix(without[0], "none ")
+	}
+	if len(without) > 0 {
+		says += " (" + strings.Join(without, "; ") + ")"
+	}
+	if k := a.kappa(); !math.IsNaN(k) {
+		if says == "" {
+			return ""
+		}
+		return says + fmt.Sprintf("; the prediction takes %s%s.", digits(k, 3), a.fromWords())
+	}
+	if says != "" {
+		says += "."
+	}
+	return says
+}
+
+func (a *activated) fromWords() string {
+	if a.kappaFrom == "" {
+		return ", as given"
+	}
+	return ", " + a.kappaFrom
+}
+
+// roundedPair writes a value and its standard uncertainty with as many decimals as
+// two digits of the uncertainty need.
+func roundedPair(x, u float64) string {
+	decimals := min(max(1-int(math.Floor(math.Log10(u))), 0), 6)
+	return strconv.FormatFloat(x, 'f', decimals, 64) + " ± " + strconv.FormatFloat(u, 'f', decimals, 64)
+}
+
+// noKappaWords say why a count implies no κ.
+func noKappaWords(err error) string {
+	var u *spectrum.UnsolvedError
+	if !errors.As(err, &u) {
+		return err.Error()
+	}
+	switch u.Reason {
+	case spectrum.NothingCounted:
+		return "nothing was counted"
+	case spectrum.MoreThanSized:
+		return fmt.Sprintf("more were counted than the %s per cm³ that were sized (size limits, losses, another state of the air)", cubic(u.Limit))
+	case spectrum.BelowInsoluble:
+		return "particles of the critical diameter would activate there without any solute"
+	case spectrum.KappaTooLarge:
+		return "it would exceed 30"
+	}
+	return "there is no supersaturation"
+}
+
+// fitSentence is the numbers of the fit.
+func (a *activated) fitSentence() string {
+	if len(a.fits) == 0 {
+		return ""
+	}
+	f := a.fits[0]
+	if f.noFit != nil {
+		return fmt.Sprintf("The %s cannot be fitted to the %s counts: %s.", formWords(f.form), f.of, f.whyNoFit())
+	}
+	fit := "fits"
+	if f.form == "erf2" {
+		fit = "fit"
+	}
+	says := fmt.Sprintf("The %s that %s the %s counts from %s to %s %%: %s", formWords(f.form), fit, f.of,
+		shortest(100*f.Low), shortest(100*f.High), f.numberWords())
+	if f.Deviation > 0 {
+		says += fmt.Sprintf("; root mean square deviation %s", wholeOrOne(f.Deviation))
+	}
+	return says + "."
+}
+
+// wholeOrOne writes a share in per cent with two digits.
+func wholeOrOne(x float64) string { return digits(100*x, 2) + " %" }
+
+// rejectedSentence is what was left out, the most frequent reason first.
+func (a *activated) rejectedSentence() string {
+	if len(a.rejected) == 0 {
+		return ""
+	}
+	total := 0
+	for _, r := range a.rejected {
+		total += r.Count
+	}
+	counts := "1 count was"
+	if total != 1 {
+		counts = strconv.Itoa(total) + " counts were"
+	}
+	return fmt.Sprintf("%s left out: %s.", counts, a.rejected[0].Reason)
+}
