@@ -1,10 +1,8 @@
 package command
 
 import (
-	"bytes"
 	"errors"
 	"fmt"
-	"io"
 	"os"
 	"path/filepath"
 	"slices"
@@ -223,10 +221,6 @@ func unusedNote(in scenario.Input, what string) atmos.Note {
 		Text: what + " is not used: with the other values as they are, nothing depends on it."}
 }
 
-// largestScenario is far more than any scenario; it keeps a wrong file from
-// filling the memory.
-const largestScenario = 1 << 20
-
 // read reads the scenario file.
 func (o *options) read(w world) (scenario.Scenario, error) {
 	name, in := o.fromFile, w.in
@@ -246,14 +240,7 @@ func (o *options) read(w world) (scenario.Scenario, error) {
 		}
 		in = f
 	}
-	text, err := io.ReadAll(io.LimitReader(in, largestScenario+1))
-	if err != nil {
-		return scenario.Scenario{}, fmt.Errorf("--from: %w", err)
-	}
-	if len(text) > largestScenario {
-		return scenario.Scenario{}, fmt.Errorf("--from: %s is larger than 1 MiB, which no scenario file is", name)
-	}
-	s, err := scenario.DecodeUsing(o.known, name, bytes.NewReader(text))
+	s, err := scenario.DecodeUsing(o.known, name, in)
 	if err != nil {
 		return s, fileError{"--from: ", err}
 	}

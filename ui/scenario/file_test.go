@@ -100,7 +100,7 @@ func TestFileProblems(t *testing.T) {
 	if got := strings.Count(err.Error(), "\n"); got != 2 {
 		t.Errorf("three problems are said as %q", err)
 	}
-	if _, err := Decode("f.toml", strings.NewReader(strings.Repeat("#", largest+1))); err == nil || !strings.Contains(err.Error(), "1 MiB") {
+	if _, err := Decode("f.toml", strings.NewReader(strings.Repeat("#", largest+1))); err == nil || !strings.Contains(err.Error(), "128 KiB") {
 		t.Errorf("a huge file: %v", err)
 	}
 }

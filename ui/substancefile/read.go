@@ -23,7 +23,7 @@ const (
 	mostProblems = 50   // nobody reads on
 )
 
-// Extend returns the catalogue with the substances of a file of at most 1 MiB.
+// Extend returns the catalogue with the substances of a file of at most 128 KiB.
 // The error is scenario.FileErrors: all that is wrong, with line and column.
 func Extend(c *solutes.Catalogue, name string, r io.Reader) (*solutes.Catalogue, error) {
 	name = plain.Clean(name)
