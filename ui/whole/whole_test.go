@@ -1,6 +1,7 @@
 package whole
 
 import (
+	"errors"
 	"os"
 	"path/filepath"
 	"runtime"
@@ -43,6 +44,52 @@ func TestWriteKeepsModeAndLink(t *testing.T) {
 	info, err := os.Stat(target)
 	if err != nil || info.Mode().Perm()&^0o640 != 0 {
 		t.Errorf("mode %v (%v), want at most 0640", info.Mode(), err)
+	}
+}
+
+// A file that is written in pieces is seen when it is whole, and never when it is
+// dropped or a write has failed.
+func TestFile(t *testing.T) {
+	dir := t.TempDir()
+	name := filepath.Join(dir, "a.csv")
+	if err := Write(name, []byte("old")); err != nil {
+		t.Fatal(err)
+	}
+	for _, c := range []struct {
+		name string
+		end  func(*File) error
+		want string
+	}{
+		{"dropped", func(w *File) error { w.Drop(); return nil }, "old"},
+		{"failed", func(w *File) error {
+			_ = w.f.Close()
+			_, _ = w.Write([]byte("more"))
+			if err := w.Commit(); err == nil {
+				return errors.New("committed after a write that failed")
+			}
+			return nil
+		}, "old"},
+		{"committed", (*File).Commit, "new, and more"},
+	} {
+		w, err := Create(name)
+		if err != nil {
+			t.Fatal(err)
+		}
+		for _, part := range []string{"new", ", and more"} {
+			if _, err := w.Write([]byte(part)); err != nil {
+				t.Fatal(err)
+			}
+			if text, err := os.ReadFile(name); err != nil || string(text) != "old" {
+				t.Errorf("%s: the file holds %q (%v) while it is written", c.name, text, err)
+			}
+		}
+		if err := c.end(w); err != nil {
+			t.Errorf("%s: %v", c.name, err)
+		}
+		if text, err := os.ReadFile(name); err != nil || string(text) != c.want {
+			t.Errorf("%s: the file holds %q (%v), want %q", c.name, text, err, c.want)
+		}
+		only(t, dir, "a.csv")
 	}
 }
 
