@@ -18,6 +18,9 @@ type Axis struct {
 	Says string // "wet radius"
 	Unit string // "µm"
 	Log  bool
+	// Time says that values are moments, in seconds since 1970-01-01 UTC; ticks are
+	// at round times of UTC. Only for X, and not with Log.
+	Time bool
 }
 
 // Dash tells lines apart without colour.
@@ -35,7 +38,8 @@ type Line struct {
 	Says   string // "Kelvin only"
 	Dash   Dash
 	X, Y   []float64
-	Crest  bool // its extrema count when the frame is fitted
+	Crest  bool // its extrema count when the frame is fitted; means nothing on a logarithmic Y axis
+	AtEnd  bool // Says stands at its end, in figure files too, and not in the legend
 	// Extrema are the X of the extrema where they are known; nil: they are found
 	// among the points.
 	Extrema []float64
@@ -72,7 +76,8 @@ type Mark struct {
 type Frame struct {
 	XMin, XMax float64
 	YMin, YMax float64 // the lowest and the highest row
-	YStep      float64 // one row
+	YStep      float64 // one row; decades where YLog is set
+	YLog       bool    // rows are evenly spaced in the logarithm
 }
 
 // Style is how a text picture is drawn.
@@ -93,6 +98,8 @@ const (
 	OtherRole // Kelvin only, Raoult only
 	CrestRole
 	HazeRole
+	PointRole // measured points
+	BarRole   // their uncertainty
 	LabelRole
 )
 

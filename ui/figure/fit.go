@@ -17,11 +17,16 @@ const (
 // crest, and at least one decade of a logarithmic axis. One row is 1, 2, 2.5 or
 // 5 times a power of ten, and zero lies on a row. The height h changes nothing
 // but YStep and the rounding of YMin and YMax to it.
+//
+// A figure without such lines is one of data: its frame shows all lines and
+// points, and stays until they leave it or use less than half of it. On a
+// logarithmic Y axis a decade is a whole number of rows, or a row of decades, and
+// of lines that fall towards zero four decades are shown.
 func Fit(f Figure, last Frame, h int) (Frame, bool) {
 	rows := pictureRows(h)
 	n := needsOf(f)
 	fresh := n.frame(rows)
-	if !last.Serves() || !n.keepsAcross(last, fresh) {
+	if !last.Suits(f) || !n.keepsAcross(last, fresh) {
 		return fresh, last != fresh
 	}
 	if last.rows() != rows { // another height is no reason to shift sideways
@@ -40,32 +45,52 @@ func pictureRows(h int) int { return max(h-2, 2) }
 
 // Serves reports whether a picture can be drawn through the frame.
 func (fr Frame) Serves() bool {
-	return fr.XMin < fr.XMax && fr.YMin < fr.YMax && fr.YStep > 0 &&
+	return fr.XMin < fr.XMax && fr.YMin < fr.YMax && fr.YStep > 0 && (!fr.YLog || fr.YMin > 0) &&
 		usable(fr.XMin) && usable(fr.XMax) && usable(fr.YMin) && usable(fr.YMax)
+}
+
+// Suits reports whether a figure can be drawn through the frame: logarithmic axes
+// begin above zero.
+func (fr Frame) Suits(f Figure) bool {
+	return fr.Serves() && fr.YLog == f.Y.Log && (!f.X.Log || fr.XMin > 0)
 }
 
 // rows is the number of rows the frame was made for.
 func (fr Frame) rows() int {
-	n := math.Round((fr.YMax-fr.YMin)/fr.YStep) + 1
+	n := math.Round(fr.row(fr.YMax)) + 1
 	if !(n < 1e6) {
 		return 0
 	}
 	return int(n)
 }
 
+// row is the row of y, not rounded: 0 for the lowest.
+func (fr Frame) row(y float64) float64 {
+	if !fr.YLog {
+		return (y - fr.YMin) / fr.YStep
+	}
+	if y <= 0 {
+		return math.Inf(-1)
+	}
+	return math.Log10(y/fr.YMin) / fr.YStep
+}
+
 // withRows is the frame for another number of rows: a round unit, zero on a
 // row, and nothing of the old frame lost.
 func (fr Frame) withRows(rows int) Frame {
-	if fr.rows() == rows {
-		return fr
+	switch {
+	case fr.rows() == rows:
+	case fr.YLog:
+		fr.YMin, fr.YMax, fr.YStep = logRows(fr.YMin, fr.YMax, rows)
+	default:
+		fr.YMin, fr.YMax, fr.YStep = roundRows(fr.YMin, fr.YMax, rows)
 	}
-	fr.YMin, fr.YMax, fr.YStep = roundRows(fr.YMin, fr.YMax, rows)
 	return fr
 }
 
 // needs is what a figure asks of its frame.
 type needs struct {
-	log         bool
+	log, ylog   bool
 	crested     bool    // there are lines with Crest set
 	low, high   float64 // all extrema, each line from -0.5 times its crest
 	deepest     float64 // the lowest that an old frame must still show
@@ -81,7 +106,7 @@ func needsOf(f Figure) needs {
 	n := needs{log: f.X.Log}
 	found := false
 	for _, l := range f.Lines {
-		if !l.Crest {
+		if !l.Crest || f.Y.Log {
 			continue
 		}
 		if s, ok := shapeOf(l, f.X.Log); ok {
@@ -122,41 +147,14 @@ func (n *needs) add(s shape, first bool) {
 	n.end = math.Max(n.end, s.end)
 }
 
-// needsOfAll is the room for every usable point and mark.
-func needsOfAll(f Figure) needs {
-	n := needs{log: f.X.Log}
-	first := true
-	add := func(x, y float64) {
-		if !usable(y) || !usableX(x, f.X.Log) {
-			return
-		}
-		if first {
-			n.low, n.high, n.left, n.end = y, y, x, x
-			first = false
-		}
-		n.low, n.high = math.Min(n.low, y), math.Max(n.high, y)
-		n.left, n.end = math.Min(n.left, x), math.Max(n.end, x)
-	}
-	for _, l := range f.Lines {
-		for i := range min(len(l.X), len(l.Y)) {
-			add(l.X[i], l.Y[i])
-		}
-	}
-	if first {
-		for _, m := range f.Marks {
-			add(m.X, m.Y)
-		}
-	}
-	if first {
-		n.left, n.end = 0.1, 1
-		n.high = 1
-	}
-	n.crest, n.deepest, n.entry, n.last = n.high, n.low, n.left, n.end
-	return n
-}
-
 // frame is the new frame of rows rows.
 func (n needs) frame(rows int) Frame {
+	var fr Frame
+	fr.XMin, fr.XMax = n.across()
+	if fr.YLog = n.ylog; n.ylog {
+		fr.YMin, fr.YMax, fr.YStep = logRows(n.low, n.high, rows)
+		return fr
+	}
 	low, high := math.Min(n.low, 0), math.Max(n.high, 0)
 	if high-low < 1e-90 {
 		low, high = -0.5, 1
@@ -164,9 +162,7 @@ func (n needs) frame(rows int) Frame {
 	if n.high > 0 && n.crested {
 		high += 0.25 * (high - low)
 	}
-	var fr Frame
 	fr.YMin, fr.YMax, fr.YStep = roundRows(low, high, rows)
-	fr.XMin, fr.XMax = n.across()
 	return fr
 }
 
@@ -199,7 +195,7 @@ func (n needs) keepsUpright(fr, fresh Frame) bool {
 		return true
 	}
 	if !n.crested {
-		return n.low >= fr.YMin && n.high <= fr.YMax && fr.YMax-fr.YMin <= 2.5*(n.high-math.Min(n.low, 0))
+		return n.keepsData(fr)
 	}
 	share := (n.crest - fr.YMin) / (fr.YMax - fr.YMin)
 	return share >= lowestCrest && share <= highestCrest && n.deepest >= fr.YMin
@@ -211,11 +207,10 @@ func (n needs) keepsAcross(fr, fresh Frame) bool {
 	if fr.XMin == fresh.XMin && fr.XMax == fresh.XMax {
 		return true
 	}
-	from, to := n.entry, n.last
 	if !n.crested {
-		from, to = n.left, n.end
+		return n.keepsDataAcross(fr, fresh)
 	}
-	if fr.XMin > from || fr.XMax < to {
+	if fr.XMin > n.entry || fr.XMax < n.last {
 		return false
 	}
 	if !n.log {

@@ -10,12 +10,15 @@ type glyphSet struct {
 	crest, haze, point  rune
 	up, down            rune // marks beyond the upper and lower edge
 	left, right         rune
+	measured            rune // points of data, with their bars
+	upright, across     rune
 	lines               [3]asciigraph.CharSet // by Dash
 }
 
 var boxGlyphs = glyphSet{
 	bar: '│', barLabelled: '┤', corner: '└', floor: '─', tick: '┬', zero: '╌',
 	crest: '◆', haze: '○', point: '●', up: '▲', down: '▼', left: '←', right: '→',
+	measured: '■', upright: '┃', across: '━',
 	lines: [3]asciigraph.CharSet{
 		Solid: {
 			Horizontal: "─", VerticalLine: "│", ArcDownRight: "╭", ArcDownLeft: "╮", ArcUpRight: "╰", ArcUpLeft: "╯",
@@ -32,6 +35,7 @@ var boxGlyphs = glyphSet{
 var asciiGlyphs = glyphSet{
 	bar: '|', barLabelled: '+', corner: '+', floor: '-', tick: '+', zero: '-',
 	crest: '#', haze: 'o', point: '@', up: '^', down: 'v', left: '<', right: '>',
+	measured: 'X', upright: '!', across: '=',
 	lines: [3]asciigraph.CharSet{
 		Solid: dots("*"),
 		Dashed: {

@@ -76,16 +76,20 @@ func (c *canvas) put(col, row int, text []rune) {
 	}
 }
 
-// names writes the names of the lines for which no letter stands, the current
-// one left out, in words near their end: above the line, below it, or on it.
+// names writes the names of the lines for which no letter stands, in words near
+// their end: above the line, below it, or on it. The current line has none unless
+// it asks for it; lines that do come first.
 func (c *canvas) names(lines []Line, paths []path) {
-	for i, l := range lines {
-		text := c.text(l.Says)
-		if kindOf(l) == Solid || l.Letter != 0 || len(text) == 0 || paths[i] == nil {
-			continue
-		}
-		if !c.nameBeside(text, paths[i], roleOf(kindOf(l))) {
-			c.nameOn(text, paths[i], roleOf(kindOf(l)))
+	for _, atEnd := range []bool{true, false} {
+		for i, l := range lines {
+			text, role := c.text(l.Says), roleOf(kindOf(l))
+			unnamed := kindOf(l) == Solid && !l.AtEnd || l.Letter != 0 || len(text) == 0
+			if l.AtEnd != atEnd || unnamed || paths[i] == nil {
+				continue
+			}
+			if !c.nameBeside(text, paths[i], role) {
+				c.nameOn(text, paths[i], role)
+			}
 		}
 	}
 }

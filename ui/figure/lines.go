@@ -58,7 +58,7 @@ func (c *canvas) sample(l Line) path {
 	var u0, r0 float64 // the point before
 	joined := false    // is there one
 	for i := range n {
-		if !usable(l.Y[i]) || !usableX(l.X[i], c.log) {
+		if !c.drawable(l.X[i], l.Y[i]) {
 			joined = false
 			continue
 		}
@@ -66,7 +66,7 @@ func (c *canvas) sample(l Line) path {
 		if joined {
 			p.join(u0, r0, u, r)
 		}
-		if last := i+1 == n || !usable(l.Y[i+1]); !joined || last {
+		if last := i+1 == n || !usableY(l.Y[i+1], c.fr.YLog); !joined || last {
 			p.end(u, r)
 		}
 		u0, r0, joined = u, r, true
@@ -113,7 +113,7 @@ func (c *canvas) peaks(p path, l Line, n int) {
 		case y < a && y <= b:
 			kind = low
 		}
-		if kind == none || !usable(a) || !usable(y) || !usable(b) || !usableX(l.X[i], c.log) {
+		if kind == none || !c.drawable(l.X[i], a) || !c.drawable(l.X[i], y) || !c.drawable(l.X[i], b) {
 			continue
 		}
 		u := math.Round(c.col(l.X[i]))

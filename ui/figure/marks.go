@@ -126,7 +126,7 @@ func pathOf(letter rune, lines []Line, paths []path) path {
 // taken reports whether a cell carries a mark, a letter or a label.
 func taken(cell *Cell) bool {
 	switch cell.Role {
-	case CrestRole, HazeRole, LabelRole:
+	case CrestRole, HazeRole, PointRole, LabelRole:
 		return true
 	case CurrentRole, HeldRole:
 		return !strings.ContainsRune(lineGlyphs, cell.Rune)

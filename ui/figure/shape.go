@@ -11,6 +11,9 @@ func usable(v float64) bool { return math.Abs(v) < 1e100 }
 
 func usableX(x float64, log bool) bool { return usable(x) && (!log || x > 1e-100) }
 
+// usableY is narrower on a logarithmic axis, because frames are rounded to decades.
+func usableY(y float64, log bool) bool { return usable(y) && (!log || y > 1e-60 && y < 1e60) }
+
 // shape is what the frame needs to know of one line.
 type shape struct {
 	crest  float64 // highest extremum; the highest point of a line without extrema

@@ -18,7 +18,7 @@ func Text(f Figure, fr Frame, w, h int, st Style) [][]Cell {
 		return nil
 	}
 	rows := pictureRows(h)
-	if !fr.Serves() || (f.X.Log && fr.XMin <= 0) {
+	if !fr.Suits(f) {
 		fr, _ = Fit(f, Frame{}, h)
 	}
 	fr = fr.withRows(rows)
@@ -28,6 +28,7 @@ func Text(f Figure, fr Frame, w, h int, st Style) [][]Cell {
 	c.axes(labels)
 	c.xAxis(f.X)
 	paths := c.lines(f.Lines)
+	c.points(f.Points)
 	c.marks(f, paths)
 	c.names(f.Lines, paths)
 	return c.cells[:min(h, len(c.cells))]
@@ -88,7 +89,10 @@ func (c *canvas) col(x float64) float64 {
 }
 
 // row is the row of y, not rounded and not clipped.
-func (c *canvas) row(y float64) float64 { return (y - c.fr.YMin) / c.fr.YStep }
+func (c *canvas) row(y float64) float64 { return c.fr.row(y) }
+
+// drawable reports whether a point of a line has a place.
+func (c *canvas) drawable(x, y float64) bool { return usableX(x, c.log) && usableY(y, c.fr.YLog) }
 
 // at is the cell of a column and row of the picture, nil outside.
 func (c *canvas) at(col, row int) *Cell {
@@ -118,6 +122,9 @@ func (c *canvas) axes(labels []string) {
 		}
 		write(row, c.gutter-1, []rune{bar}, AxisRole)
 	}
+	if c.fr.YLog {
+		return // there is no zero
+	}
 	zero := int(math.Round(-c.fr.YMin / c.fr.YStep))
 	for col := 0; col < c.cols; col += 4 {
 		if cell := c.at(col, zero); cell != nil {
@@ -139,12 +146,16 @@ func (c *canvas) xAxis(x Axis) {
 	}
 	write(below, c.gutter-2-len(unit), unit, LabelRole)
 	free := c.gutter
-	for _, v := range Ticks(c.fr.XMin, c.fr.XMax, c.log, max(c.cols/7, 1)) {
-		at := int(math.Round(c.col(v)))
+	each := 7 // columns
+	if x.Time {
+		each = 9
+	}
+	for _, tick := range x.Ticks(c.fr.XMin, c.fr.XMax, max(c.cols/each, 1)) {
+		at := int(math.Round(c.col(tick.Value)))
 		if at < 0 || at >= c.cols {
 			continue
 		}
-		label := []rune(TickLabel(v))
+		label := []rune(tick.Label)
 		from := min(c.gutter+at-len(label)/2, len(below)-len(label))
 		if from < free {
 			continue

@@ -55,8 +55,12 @@ func pictures() map[string]Figure {
 	}
 }
 
-func TestPictures(t *testing.T) {
-	for name, f := range pictures() {
+func TestPictures(t *testing.T) { compare(t, pictures()) }
+
+// compare holds pictures against those that were looked at, in three sizes.
+func compare(t *testing.T, pictures map[string]Figure) {
+	t.Helper()
+	for name, f := range pictures {
 		for _, s := range []struct {
 			name  string
 			w, h  int

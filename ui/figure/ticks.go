@@ -62,6 +62,25 @@ func twoDigits(v float64, round func(float64) float64) float64 {
 	return scaled(round(m), n)
 }
 
+// Tick is one labelled value of an axis.
+type Tick struct {
+	Value float64
+	Label string
+}
+
+// Ticks are the labelled values of the axis between lo and hi, at most most of
+// them.
+func (a Axis) Ticks(lo, hi float64, most int) []Tick {
+	if a.Time {
+		return timeTicks(lo, hi, most)
+	}
+	var at []Tick
+	for _, v := range Ticks(lo, hi, a.Log, most) {
+		at = append(at, Tick{v, TickLabel(v)})
+	}
+	return at
+}
+
 // Ticks returns round values between lo and hi, at most most of them: 1, 2, 5
 // times powers of ten on a logarithmic axis, whole multiples of such a number
 // on a linear one and on a logarithmic one too short for three of them.
@@ -134,42 +153,4 @@ func short(s string) string {
 		return s
 	}
 	return mantissa + "e" + strconv.Itoa(n)
-}
-
-// rowLabels writes the round values beside the rows, "" beside the others, and
-// says how wide the widest is. Row 0 is the lowest.
-func rowLabels(fr Frame, rows int) (labels []string, widest int) {
-	labels = make([]string, rows)
-	first := int(math.Round(fr.YMin / fr.YStep))
-	every := 2
-	// A unit of 2 has no round double: 10 is the next round number, unless so
-	// few rows are there that each can have its label.
-	if n := int(math.Floor(math.Log10(fr.YStep) + 1e-9)); math.Abs(scaled(fr.YStep, -n)-2) < 1e-6 {
-		every = 5
-		if rows < 10 {
-			every = 1
-		}
-	}
-	spacing := float64(every) * fr.YStep
-	places := 0
-	for places < 6 && math.Abs(spacing*math.Pow10(places)-math.Round(spacing*math.Pow10(places))) > 1e-6 {
-		places++
-	}
-	plainly := spacing > 0.99e-5 && math.Max(math.Abs(fr.YMin), fr.YMax) < 99999.5
-	for i := range labels {
-		if (first+i)%every != 0 {
-			continue
-		}
-		v := tidy(float64(first+i)*fr.YStep, fr.YStep)
-		switch {
-		case plainly:
-			labels[i] = strconv.FormatFloat(v, 'f', places, 64)
-		case v == 0:
-			labels[i] = "0"
-		default:
-			labels[i] = short(strconv.FormatFloat(v, 'e', -1, 64))
-		}
-		widest = max(widest, len(labels[i]))
-	}
-	return labels, widest
 }

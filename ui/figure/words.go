@@ -19,8 +19,8 @@ func Lines(cells [][]Cell) []string {
 	return out
 }
 
-// Words prints the marked points of f as text, one a line: what the picture
-// says where there is no room for a picture.
+// Words prints the marked and the measured points of f as text, one a line: what
+// the picture says where there is no room for a picture.
 func Words(f Figure) []string {
 	var out []string
 	for _, m := range f.Marks {
@@ -29,14 +29,32 @@ func Words(f Figure) []string {
 		}
 		says := f.Says(m)
 		if m.Kind != HazeMark {
-			says += " at " + amount(m.X, f.X.Unit)
+			says += " at " + f.X.amount(m.X)
 		}
 		if m.Letter != 0 {
 			says = string(m.Letter) + ": " + says
 		}
 		out = append(out, says)
 	}
+	for _, p := range f.Points {
+		if usable(p.X) && usable(p.Y) {
+			out = append(out, f.saysPoint(p))
+		}
+	}
 	return out
+}
+
+// saysPoint is a measured point in words: "measured 312 cm⁻³ (290 to 330) at 0.2 %".
+func (f Figure) saysPoint(p Point) string {
+	says := "measured " + f.Y.amount(p.Y)
+	if usable(p.YLow) && usable(p.YHigh) {
+		says += " (" + digits(p.YLow) + " to " + digits(p.YHigh) + ")"
+	}
+	says += " at " + f.X.amount(p.X)
+	if p.Letter != 0 {
+		says = string(p.Letter) + ": " + says
+	}
+	return says
 }
 
 // Says is a mark's label with what it marks, for places where its glyph does
@@ -44,9 +62,9 @@ func Words(f Figure) []string {
 func (f Figure) Says(m Mark) string {
 	text := m.Text
 	if text == "" {
-		text = amount(m.Y, f.Y.Unit)
+		text = f.Y.amount(m.Y)
 		if m.Kind == HazeMark {
-			text = "haze " + amount(m.X, f.X.Unit)
+			text = "haze " + f.X.amount(m.X)
 		}
 	}
 	if m.Kind == CrestMark && !strings.HasPrefix(text, "crest") {
@@ -55,11 +73,16 @@ func (f Figure) Says(m Mark) string {
 	return text
 }
 
-// amount is a value to three digits with its unit.
-func amount(v float64, unit string) string {
-	s := short(strconv.FormatFloat(v, 'g', 3, 64))
-	if unit == "" {
-		return s
+// amount is a value of an axis to three digits with its unit.
+func (a Axis) amount(v float64) string {
+	switch {
+	case a.Time:
+		return momentText(v)
+	case a.Unit == "":
+		return digits(v)
 	}
-	return s + " " + unit
+	return digits(v) + " " + a.Unit
 }
+
+// digits is a number to three digits.
+func digits(v float64) string { return short(strconv.FormatFloat(v, 'g', 3, 64)) }

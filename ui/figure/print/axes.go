@@ -40,8 +40,11 @@ func textStyle(size vg.Length) text.Style {
 	return text.Style{Color: ink, Font: typeface(size), Handler: plot.DefaultTextHandler}
 }
 
-// clean makes text from files safe and gives it one line.
-func clean(s string) string { return plain.Clean(s) }
+// clean makes text from files safe and gives it one line. The typeface has no
+// raised minus sign, so that per cubic centimetre is written with a stroke.
+func clean(s string) string { return raised.Replace(plain.Clean(s)) }
+
+var raised = strings.NewReplacer("cm⁻³", "1/cm³", "m⁻³", "1/m³", "⁻", "-")
 
 // axis sets one axis up for the frame, with our own ticks.
 func axis(a *plot.Axis, says figure.Axis, lo, hi float64, most int) {
@@ -51,7 +54,7 @@ func axis(a *plot.Axis, says figure.Axis, lo, hi float64, most int) {
 	a.Tick.Width = vg.Points(0.6)
 	a.Tick.Length = vg.Points(5)
 	a.Tick.Label.Font = typeface(tickSize)
-	a.Tick.Marker = ticker{log: says.Log, most: most}
+	a.Tick.Marker = ticker{axis: says, most: most}
 	a.Label.TextStyle.Font = typeface(labelSize)
 	a.Label.Padding = vg.Points(3)
 	a.Label.Text = clean(says.Says)
@@ -67,17 +70,21 @@ func axis(a *plot.Axis, says figure.Axis, lo, hi float64, most int) {
 // the plot package labels powers of ten alone, of which a frame of one and a
 // half decades may hold a single one.
 type ticker struct {
-	log  bool
+	axis figure.Axis
 	most int
 }
 
 // Ticks implements plot.Ticker.
 func (t ticker) Ticks(lo, hi float64) []plot.Tick {
 	var ticks []plot.Tick
-	for _, v := range figure.Ticks(lo, hi, t.log, t.most) {
-		ticks = append(ticks, plot.Tick{Value: v, Label: tickLabel(v)})
+	for _, at := range t.axis.Ticks(lo, hi, t.most) {
+		label := at.Label
+		if !t.axis.Time {
+			label = tickLabel(at.Value)
+		}
+		ticks = append(ticks, plot.Tick{Value: at.Value, Label: label})
 	}
-	if t.log {
+	if t.axis.Log {
 		ticks = append(ticks, minor(lo, hi, ticks)...)
 	}
 	return ticks

@@ -112,14 +112,17 @@ func (b *board) letter(letter string, style text.Style, runs [][]vg.Point) {
 	}
 	half := style.Rectangle(letter).Size().Scale(0.5)
 	box := func(i int) vg.Rectangle { return vg.Rectangle{Min: line[i].Sub(half), Max: line[i].Add(half)} }
+	free := func(i int) bool {
+		return i >= 0 && i < len(line) && b.hits(box(i)) == 0 && b.c.Contains(box(i).Min) && b.c.Contains(box(i).Max)
+	}
 	best := box(top)
 	for d := range len(line) {
-		if i := top - d; i >= 0 && b.hits(box(i)) == 0 {
-			best = box(i)
+		if free(top - d) {
+			best = box(top - d)
 			break
 		}
-		if i := top + d; i < len(line) && b.hits(box(i)) == 0 {
-			best = box(i)
+		if free(top + d) {
+			best = box(top + d)
 			break
 		}
 	}

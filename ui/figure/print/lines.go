@@ -31,7 +31,7 @@ var (
 // line is a figure's line with what tells it from the others.
 type line struct {
 	figure.Line
-	log   bool
+	x, y  figure.Axis
 	style draw.LineStyle
 	name  string
 }
@@ -46,7 +46,7 @@ func linesOf(f figure.Figure) []line {
 			if kindOf(l) != dash {
 				continue
 			}
-			out := line{Line: l, log: f.X.Log, name: clean(l.Says)}
+			out := line{Line: l, x: f.X, y: f.Y, name: clean(l.Says)}
 			switch dash {
 			case figure.Solid:
 				out.style = draw.LineStyle{Color: ink, Width: vg.Points(1.4)}
@@ -76,11 +76,12 @@ func kindOf(l figure.Line) figure.Dash {
 	return l.Dash
 }
 
-// drawable reports whether a point has a place on the page. A logarithmic axis
-// ends above zero.
-func drawable(x, y float64, log bool) bool {
-	return math.Abs(x) < 1e100 && math.Abs(y) < 1e100 && (!log || x > 1e-100)
-}
+// drawable reports whether a point has a place on the page.
+func drawable(f figure.Figure, x, y float64) bool { return placed(f.X, x) && placed(f.Y, y) }
+
+// placed reports whether a value has a place on its axis. A logarithmic one ends
+// above zero.
+func placed(a figure.Axis, v float64) bool { return math.Abs(v) < 1e100 && (!a.Log || v > 1e-100) }
 
 // runs is the line as pieces without gaps, in page coordinates. They may lie
 // outside of the canvas.
@@ -89,7 +90,7 @@ func (l line) runs(c *draw.Canvas, p *plot.Plot) [][]vg.Point {
 	var run []vg.Point
 	tx, ty := p.Transforms(c)
 	for i := range min(len(l.X), len(l.Y)) {
-		if !drawable(l.X[i], l.Y[i], l.log) {
+		if !placed(l.x, l.X[i]) || !placed(l.y, l.Y[i]) {
 			runs, run = keep(runs, run), nil
 			continue
 		}

@@ -24,10 +24,15 @@ func (m marks) Plot(c draw.Canvas, p *plot.Plot) {
 		b.cover(c.ClipLinesXY(l.runs(&c, p)...))
 	}
 	tx, ty := p.Transforms(&c)
+	for _, point := range m.f.Points {
+		if at, ok := place(m.f, point, tx, ty); ok && c.Contains(at) {
+			b.taken = append(b.taken, square{}.around(at))
+		}
+	}
 	var labels []label
 	lettered := map[rune]bool{}
 	for _, mark := range m.f.Marks {
-		if !drawable(mark.X, mark.Y, m.f.X.Log) {
+		if !drawable(m.f, mark.X, mark.Y) {
 			continue
 		}
 		at := vg.Point{X: tx(mark.X), Y: ty(mark.Y)}
@@ -44,6 +49,22 @@ func (m marks) Plot(c draw.Canvas, p *plot.Plot) {
 	for _, l := range labels {
 		b.label(l)
 	}
+	for _, l := range m.lines {
+		if l.AtEnd && l.Says != "" {
+			b.nameAtEnd(l, c.ClipLinesXY(l.runs(&c, p)...))
+		}
+	}
+}
+
+// nameAtEnd writes the name of a line beside its last point on the page.
+func (b *board) nameAtEnd(l line, runs [][]vg.Point) {
+	if len(runs) == 0 {
+		return
+	}
+	run := runs[len(runs)-1]
+	style := textStyle(tickSize)
+	style.Color = l.style.Color
+	b.label(label{run[len(run)-1], l.name, style})
 }
 
 // label is a text that belongs to a point.

@@ -38,7 +38,7 @@ func Write(w io.Writer, f figure.Figure, fr figure.Frame, format string) (err er
 	if canvasOf == nil {
 		return fmt.Errorf("figure format %q is not known: want svg, png or pdf", format)
 	}
-	if !fr.Serves() || f.X.Log && fr.XMin <= 0 {
+	if !fr.Suits(f) {
 		fr, _ = figure.Fit(f, figure.Frame{}, 24)
 	}
 	// gonum/plot panics on what it cannot draw; a figure that fails must not
@@ -91,15 +91,28 @@ type sheet struct {
 	f      figure.Figure
 	fr     figure.Frame
 	lines  []line
-	legend []line
+	legend []entry
 	notes  []string
+}
+
+// entry is one line of the legend.
+type entry interface {
+	inLegend(c *draw.Canvas, at vg.Point)
 }
 
 func newSheet(f figure.Figure, fr figure.Frame) *sheet {
 	s := &sheet{f: f, fr: fr}
 	s.lines = linesOf(f)
-	if len(s.lines) > 1 {
-		s.legend = s.lines
+	for _, l := range s.lines {
+		if !l.AtEnd {
+			s.legend = append(s.legend, l)
+		}
+	}
+	if hasOwn(f.Points) {
+		s.legend = append(s.legend, measured{})
+	}
+	if len(s.legend) == 1 {
+		s.legend = nil // there is nothing to tell it from
 	}
 	for _, n := range f.Notes {
 		s.notes = append(s.notes, wrap(n, textStyle(noteSize), pageWidth-2*margin)...)
@@ -150,13 +163,11 @@ func (s *sheet) plot() *plot.Plot {
 	p.Title.TextStyle.Font = typeface(titleSize)
 	p.Title.Padding = vg.Points(6)
 	axis(&p.X, s.f.X, s.fr.XMin, s.fr.XMax, 12)
-	linear := s.f.Y
-	linear.Log = false // frames are fitted to linear rows
-	axis(&p.Y, linear, s.fr.YMin, s.fr.YMax, 10)
+	axis(&p.Y, s.f.Y, s.fr.YMin, s.fr.YMax, 10)
 	p.Add(frame{zero: s.fr.YMin < 0 && s.fr.YMax > 0})
 	for _, l := range s.lines {
 		p.Add(l)
 	}
-	p.Add(marks{s})
+	p.Add(points{s}, marks{s})
 	return p
 }

@@ -197,7 +197,7 @@ func TestSameFrameAsTheScreen(t *testing.T) {
 func TestTicksOfALogarithmicAxis(t *testing.T) {
 	var major []string
 	small := 0
-	for _, tick := range (ticker{log: true, most: 12}).Ticks(0.06, 6) {
+	for _, tick := range (ticker{axis: figure.Axis{Log: true}, most: 12}).Ticks(0.06, 6) {
 		if tick.Label == "" {
 			small++
 		} else {

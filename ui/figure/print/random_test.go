@@ -24,10 +24,15 @@ func TestRandomFiguresAreDrawn(t *testing.T) {
 			return v
 		}
 	}
-	for range 60 {
-		f := figure.Figure{X: figure.Axis{Log: r.IntN(2) == 0}}
+	for range 200 {
+		f := figure.Figure{X: figure.Axis{Log: r.IntN(2) == 0}, Y: figure.Axis{Log: r.IntN(2) == 0}}
+		f.X.Time = !f.X.Log && r.IntN(2) == 0
 		for range r.IntN(9) {
-			l := figure.Line{Dash: figure.Dash(r.IntN(4)), Crest: r.IntN(2) == 0}
+			f.Points = append(f.Points, figure.Point{X: number(), Y: number(), XLow: number(), XHigh: number(), YLow: number(), YHigh: number(),
+				Letter: []rune{0, 'A'}[r.IntN(2)]})
+		}
+		for range r.IntN(9) {
+			l := figure.Line{Dash: figure.Dash(r.IntN(4)), Crest: r.IntN(2) == 0, AtEnd: r.IntN(2) == 0, Says: "name"}
 			if r.IntN(2) == 0 {
 				l.Letter = 'A' + rune(r.IntN(6))
 			}
