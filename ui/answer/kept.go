@@ -83,5 +83,8 @@ func onlyMatter(s scenario.Scenario) scenario.Scenario {
 	s.Partitioning, s.TolmanLength, s.Kelvin = "", 0, ""
 	s.RelativeHumidity, s.HumidityHistory = 0, ""
 	s.Points, s.FromRadius, s.ToRadius = 0, scenario.Measure{}, scenario.Measure{}
+	s.Population, s.Bins, s.Modes, s.Data, s.Map = "", "", nil, nil, nil
+	s.Record, s.Every, s.Average, s.Composition = scenario.Measure{}, scenario.Measure{}, "", ""
+	s.Mixing, s.KappaSpread, s.Supersaturations, s.Fit, s.Axes = "", 0, nil, "", ""
 	return s
 }

@@ -40,14 +40,18 @@ func askSpectrum(ctx context.Context, env Env, s scenario.Scenario) (Answer, err
 	if err := a.solve(); err != nil {
 		return Answer{}, err
 	}
-	return a.answer(env)
+	return a.answer()
 }
 
 // newActivated makes the population of a scenario with what was counted of it.
 func newActivated(ctx context.Context, env Env, s scenario.Scenario) (*activated, error) {
-	switch {
-	case s.Population == "modes":
-		return ofModes(env, s)
+	switch s.Population {
+	case "modes":
+		a, err := ofModes(env, s)
+		if err == nil {
+			a.vary = func(s scenario.Scenario) (*activated, error) { return ofModes(env, s) }
+		}
+		return a, err
 	}
 	return nil, &InputError{"population", "not yet"}
 }
@@ -75,7 +79,7 @@ func (a *activated) limit() {
 	a.notes = distinct(append(a.notes, spectrum.BinNotes(a.bins, cuts)...))
 }
 
-func (a *activated) answer(env Env) (Answer, error) {
+func (a *activated) answer() (Answer, error) {
 	pictures, err := a.figures()
 	if err != nil {
 		return Answer{}, err
@@ -85,7 +89,7 @@ func (a *activated) answer(env Env) (Answer, error) {
 			pictures[i].Notes = append(pictures[i].Notes, n.Text)
 		}
 	}
-	others, err := a.others(env)
+	others, err := a.others()
 	if err != nil {
 		return Answer{}, err
 	}
@@ -95,5 +99,60 @@ func (a *activated) answer(env Env) (Answer, error) {
 	}, nil
 }
 
-// others are the counts of the same particles mixed in another way.
-func (a *activated) others(Env) ([]figure.Line, error) { return nil, nil }
+// otherSpread is the geometric standard deviation of κ that is shown on demand:
+// about what separates particles of the same size in continental air (own choice).
+const (
+	otherSpread = 1.5
+	otherPoints = 40 // of a line: a spread takes long
+)
+
+// others are the counts of the same particles if they were mixed in another way.
+func (a *activated) others() ([]figure.Line, error) {
+	if a.vary == nil || a.sizes == nil {
+		return nil, nil
+	}
+	s := a.asked.Clone()
+	says := "mixed externally"
+	if s.Mixing == "external" {
+		s.Mixing, says = "internal", "mixed internally"
+	} else {
+		s.Mixing = "external"
+	}
+	spread, saysSpread := a.asked.Clone(), "spread of κ "+shortest(otherSpread)
+	if spread.KappaSpread = otherSpread; a.asked.KappaSpread > 1 {
+		spread.KappaSpread, saysSpread = 1, "without spread of κ"
+	}
+	var out []figure.Line
+	for _, other := range []struct {
+		says string
+		of   scenario.Scenario
+	}{{says, s}, {saysSpread, spread}} {
+		b, err := a.vary(other.of)
+		if err != nil {
+			continue // cannot be mixed that way
+		}
+		if b.isAsMixed(a) {
+			continue
+		}
+		low, high := a.reach()
+		line, err := a.line(spaced(low, high, otherPoints), b.population)
+		if err != nil {
+			return nil, err
+		}
+		line.Says, line.Dash = other.says, figure.Dotted
+		out = append(out, line)
+	}
+	return out, nil
+}
+
+// isAsMixed reports whether both are populations of the same particles.
+func (a *activated) isAsMixed(b *activated) bool {
+	for i := range a.groups {
+		_, external := a.groups[i].of.(spectrum.External)
+		_, both := b.groups[i].of.(spectrum.External)
+		if external != both || a.groups[i].isOne != b.groups[i].isOne {
+			return false
+		}
+	}
+	return true
+}

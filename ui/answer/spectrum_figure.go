@@ -45,7 +45,10 @@ func (a *activated) countsFigure() (figure.Figure, error) {
 	}
 	low, high := a.reach()
 	s := spaced(low, high, linePoints)
-	if a.sizes != nil {
+	switch {
+	case a.mean.X != nil:
+		f.Lines = append(f.Lines, a.mean)
+	case a.population != nil:
 		line, err := a.line(s, a.population)
 		if err != nil {
 			return f, err

@@ -11,6 +11,7 @@ import (
 	"dropcrest/atmos/aerosol"
 	"dropcrest/koehler"
 	"dropcrest/koehler/spectrum"
+	"dropcrest/ui/figure"
 	"dropcrest/ui/scenario"
 )
 
@@ -25,12 +26,17 @@ type activated struct {
 	isAlike    bool           // all groups have the same composition
 	noSizes    string         // why there is nothing to predict from
 
+	vary func(scenario.Scenario) (*activated, error) // the same sizes with particles mixed in another way; nil: not known
+
 	kappaFrom  string // what κ follows from, in words; "" where the question gives it
 	start, end time.Time
 	number     int // of the record, 0: no data
 	records    int
 
-	times     *timeline    // closure over time; nil: of one record
+	times  *timeline   // closure over time; nil: of one record
+	mean   figure.Line // of the predictions of all records
+	meanAt []float64   // its supersaturations
+
 	predicted []prediction // at the supersaturations that were asked for
 	measured  []measurement
 	closures  spectrum.Closures
@@ -50,6 +56,7 @@ type measurement struct {
 	s, count, uncertainty float64 // 1/m³; NaN: not known
 	flag                  string  // "" : none
 	predicted             float64 // NaN: nothing to compare with
+	critical              float64 // m, of the prediction
 	kappa                 spectrum.CountKappa
 	noKappa               error // why the count implies no κ
 	records               int   // that it is a mean of
@@ -190,7 +197,7 @@ func (a *activated) predict() error {
 	}
 	for i := range a.measured {
 		m := &a.measured[i]
-		m.predicted = n[i]
+		m.predicted, m.critical = n[i], a.critical(m.s, n[i])
 		m.kappa, m.noKappa = a.kappaOf(*m)
 		a.closures.Add(m.s, m.predicted, m.count)
 	}

@@ -37,8 +37,7 @@ func populationClauses(s scenario.Scenario) []string {
 		return []string{"Particles {population} {bins},", "of {component}, {mixing} mixed,"}
 	}
 	lines := []string{"Particles {population} {data},", "record {record}, {mixing} mixed, composition {composition},"}
-	if s.Every.Word == "" {
-		lines[0] = "Particles {population} {data},"
+	if s.Every.Word == "" || s.Average != "mean" {
 		lines = slices.Insert(lines, 1, "{average} over {every},")
 	}
 	if len(s.Map) > 0 {

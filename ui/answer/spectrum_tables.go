@@ -9,9 +9,6 @@ import (
 // tables are the numbers behind picture and finding.
 func (a *activated) tables() []Table {
 	out := []Table{a.spectrumTable()}
-	if len(a.measured) > 0 {
-		out = append(out, a.measuredTable())
-	}
 	if a.closures.All.Agreement().Pairs > 0 {
 		out = append(out, a.closureTable())
 	}
@@ -27,42 +24,71 @@ func (a *activated) tables() []Table {
 	return out
 }
 
+// countColumns are those of predicted and measured counts.
+var countColumns = []Column{
+	{"supersaturation_percent", "supersaturation, %"},
+	{"ccn_per_m3", "predicted CCN, 1/m³"},
+	{"critical_dry_diameter_m", "critical dry diameter, m"},
+	{"measured_ccn_per_m3", "measured CCN, 1/m³"},
+	{"uncertainty", "its standard uncertainty, 1/m³"},
+	{"flag", "flag"},
+	{"ratio", "predicted over measured"},
+	{"kappa", "κ of the particles"},
+	{"kappa_by_count", "κ by count"},
+	{"kappa_by_count_uncertainty", "its standard uncertainty by counting"},
+	{"critical_dry_diameter_by_count_m", "critical dry diameter by count, m"},
+	{"no_kappa", "why there is no κ by count"},
+}
+
 func (a *activated) spectrumTable() Table {
-	t := Table{Key: "spectrum", Title: "Predicted", Columns: []Column{
-		{"supersaturation_percent", "supersaturation, %"},
-		{"ccn_per_m3", "CCN, 1/m³"},
-		{"critical_dry_diameter_m", "critical dry diameter, m"},
-	}}
-	for _, p := range a.predicted {
-		t.Rows = append(t.Rows, []any{cell(100 * p.s), cell(p.count), cell(p.critical)})
-	}
+	t := Table{Key: "spectrum", Title: "Predicted and measured", Columns: countColumns}
+	a.countRows(func(row []any) error {
+		t.Rows = append(t.Rows, row)
+		return nil
+	})
 	return t
 }
 
-func (a *activated) measuredTable() Table {
-	t := Table{Key: "measured", Title: "Measured", Columns: []Column{
-		{"supersaturation_percent", "supersaturation, %"},
-		{"ccn_per_m3", "CCN, 1/m³"},
-		{"uncertainty", "standard uncertainty, 1/m³"},
-		{"flag", "flag"},
-		{"predicted_ccn_per_m3", "predicted, 1/m³"},
-		{"ratio", "predicted over measured"},
-		{"kappa", "κ by count"},
-		{"kappa_uncertainty", "its standard uncertainty by counting"},
-		{"critical_dry_diameter_m", "critical dry diameter by count, m"},
-		{"no_kappa", "why there is no κ"},
-		{"records", "records"},
-	}}
-	for _, m := range a.measured {
-		row := []any{cell(100 * m.s), cell(m.count), cell(m.uncertainty), word(m.flag), cell(m.predicted), cell(m.ratio())}
-		if m.noKappa == nil {
-			row = append(row, cell(m.kappa.Kappa), cell(m.kappaUncertainty()), cell(m.kappa.CriticalDiameter), nil)
-		} else {
-			row = append(row, nil, nil, nil, noKappaKey(m.noKappa))
+// countRows are the rows of the table of counts: at the supersaturations that were
+// asked for and at those where something was measured, ascending.
+func (a *activated) countRows(each func(row []any) error, lead ...any) error {
+	i, j := 0, 0
+	for i < len(a.predicted) || j < len(a.measured) {
+		var row []any
+		switch {
+		case j == len(a.measured) || i < len(a.predicted) && a.predicted[i].s < a.measured[j].s && !sameLevel(a.predicted[i].s, a.measured[j].s):
+			row = a.countRow(lead, a.predicted[i], nil)
+			i++
+		default:
+			m := &a.measured[j]
+			if i < len(a.predicted) && sameLevel(a.predicted[i].s, m.s) && (j+1 == len(a.measured) || !sameLevel(a.predicted[i].s, a.measured[j+1].s)) {
+				i++
+			}
+			row = a.countRow(lead, prediction{m.s, m.predicted, m.critical}, m)
+			j++
 		}
-		t.Rows = append(t.Rows, append(row, float64(m.records)))
+		if err := each(row); err != nil {
+			return err
+		}
 	}
-	return t
+	return nil
+}
+
+// sameLevel tells whether two supersaturations are the same set point: they agree
+// within half a per mille.
+func sameLevel(a, b float64) bool { return math.Abs(a-b) <= 5e-4*math.Max(a, b) }
+
+func (a *activated) countRow(lead []any, p prediction, m *measurement) []any {
+	row := append(make([]any, 0, len(lead)+len(countColumns)), lead...)
+	row = append(row, cell(100*p.s), cell(p.count), cell(p.critical))
+	if m == nil {
+		return append(row, nil, nil, nil, nil, cell(a.kappa()), nil, nil, nil, nil)
+	}
+	row = append(row, cell(m.count), cell(m.uncertainty), word(m.flag), cell(m.ratio()), cell(a.kappa()))
+	if m.noKappa != nil {
+		return append(row, nil, nil, nil, noKappaKey(m.noKappa))
+	}
+	return append(row, cell(m.kappa.Kappa), cell(m.kappaUncertainty()), cell(m.kappa.CriticalDiameter), nil)
 }
 
 // word is a text in a table, nil when it is absent.
