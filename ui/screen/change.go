@@ -60,7 +60,7 @@ func (m *model) change(p scenario.Path, step bool, f func(*scenario.Scenario) er
 	}
 	before := m.scenario
 	if err := m.take(next); err != nil {
-		return err
+		return lackOf(err, next, f)
 	}
 	m.history.Add(p, before, next, step)
 	m.say(m.whatChanged(before, next))
@@ -98,6 +98,7 @@ func (m *model) take(next scenario.Scenario) error {
 // accept makes a the answer of the scenario.
 func (m *model) accept(a answer.Answer) {
 	m.answer, m.unsolved = a, ""
+	m.offerKeys()
 	m.redraw()
 }
 
@@ -112,16 +113,17 @@ func (m *model) changed() {
 // to: a scenario without an answer is shown with the reason.
 func (m *model) answerFirst() {
 	m.scenario.Use(m.env.Substances) // that of a session knows none of the user's
+	m.offerKeys()
+	m.redraw()
 	if !m.question.IsLive(m.scenario) {
 		m.begin()
 		return
 	}
 	a, err := m.ask(m.scenario)
+	m.accept(a)
 	if err != nil {
 		m.unsolved = err.Error()
 	}
-	m.answer = a
-	m.redraw()
 }
 
 // undo takes the last change back, redo does it again.

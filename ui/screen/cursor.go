@@ -10,15 +10,17 @@ import (
 
 // slots are the places of the cursor: the slots of the statement in their order,
 // then the finding.
-func (m *model) slots() []scenario.Path {
-	var out []scenario.Path
-	for _, clause := range m.question.Statement(m.scenario) {
+func (m *model) slots() []scenario.Path { return append(slotsOf(m.question, m.scenario), finding) }
+
+// slotsOf are the slots of the statement of a scenario.
+func slotsOf(q answer.Question, s scenario.Scenario) (out []scenario.Path) {
+	for _, clause := range q.Statement(s) {
 		answer.Fill(clause, func(slot string) string {
 			out = append(out, scenario.Path(slot))
 			return ""
 		})
 	}
-	return append(out, finding)
+	return out
 }
 
 // place is the cursor's place among the slots, 0 if its slot is gone.

@@ -13,11 +13,15 @@ import (
 // entry is a value being typed, with its unit.
 type entry struct {
 	path  scenario.Path
+	kind  scenario.Kind
 	says  string // what is typed: "dry size"
 	right string // what would be right: "1 to 10000 nm"
 	field field
-	wrong error // why the last Enter was refused
-	back  panel // what is open afterwards
+	start string                            // what stood there at first, to be edited
+	found []string                          // names of files that go on from what is typed
+	take  func(m *model, text string) error // nil: set the input
+	wrong error                             // why the last Enter was refused
+	back  panel                             // what is open afterwards
 }
 
 // newEntry starts an entry with the first character typed, or, when that is 0,
@@ -27,10 +31,30 @@ func newEntry(in scenario.Input, first rune, kept string) panel {
 }
 
 func openEntry(in scenario.Input, first rune, kept string, back panel) *entry {
-	if first != 0 {
+	e := &entry{path: in.Path(), kind: in.Kind(), says: in.Says(), right: accepts(in), back: back}
+	switch {
+	case first != 0:
 		kept = string(first)
+	case kept == "":
+		kept = editable(in)
+		e.start = kept
 	}
-	return &entry{path: in.Path(), says: in.Says(), right: accepts(in), field: newField(kept), back: back}
+	e.field = newField(kept)
+	return e
+}
+
+// editable is the value of an input as a text that is worth changing: a series of
+// numbers, a file name. A single number is sooner typed anew.
+func editable(in scenario.Input) string {
+	switch in.Kind() {
+	case scenario.Numbers:
+		return in.Show(scenario.Style{ASCII: true})
+	case scenario.Text, scenario.File:
+		_, value := in.SI()
+		text, _ := value.(string)
+		return text
+	}
+	return ""
 }
 
 // accepts says what an input takes: its range, and the words that stand for a
@@ -51,22 +75,46 @@ func accepts(in scenario.Input) string {
 // press edits the text; Enter takes it, Esc leaves it for the next Enter.
 func (e *entry) press(k tea.KeyMsg, m *model) (panel, tea.Cmd) {
 	switch text := e.field.String(); {
-	case hits(k, m.keys.Take) && text == "":
+	case hits(k, m.keys.Take) && text == e.start:
 		return e.back, nil
 	case hits(k, m.keys.Take):
-		if e.wrong = m.set(e.path, text); e.wrong != nil {
+		if e.wrong = e.give(m, text); e.wrong != nil {
+			if next := m.lacking(e.wrong, e.back); next != nil {
+				return next, nil
+			}
 			return e, nil
 		}
+		delete(m.left, e.path)
+		return e.back, nil
+	case hits(k, m.keys.Leave) && text == e.start:
 		delete(m.left, e.path)
 		return e.back, nil
 	case hits(k, m.keys.Leave):
 		m.leave(e.path, text, m.keys.Open)
 		return e.back, nil
+	case hits(k, m.keys.Complete) && e.kind == scenario.File:
+		e.complete()
+		return e, nil
 	}
 	if e.field.press(k, m.keys) {
-		e.wrong = nil
+		e.wrong, e.found = nil, nil
 	}
 	return e, nil
+}
+
+// give hands over what was typed. The name of a file is made whole first.
+func (e *entry) give(m *model, text string) error {
+	if e.kind == scenario.File {
+		name, err := fileName(text)
+		if err != nil {
+			return err
+		}
+		text = name
+	}
+	if e.take != nil {
+		return e.take(m, text)
+	}
+	return m.set(e.path, text)
 }
 
 // leave keeps a text that was typed and not taken, for the key that offers it
@@ -89,14 +137,21 @@ func (e *entry) lines(w, h int, m *model) []string {
 	return fit(append([]string{label + m.marked(typed)}, e.hint(w, m)...), w, h)
 }
 
-// hint is what stands below the text: what would be right, or why it is not.
+// hint is what stands below the text: what would be right, or why it is not; of
+// files those that go on from what is typed.
 func (e *entry) hint(w int, m *model) []string {
-	if e.wrong != nil {
+	switch {
+	case e.wrong != nil:
 		return m.refused(e.wrong, w)
+	case len(e.found) > 0:
+		return []string{m.dim(" " + cut(m.text(strings.Join(e.found, "  ")), w-1))}
 	}
 	return []string{m.dim(" " + m.text(e.right))}
 }
 
 func (e *entry) keys(k keyMap) []key.Binding {
+	if e.kind == scenario.File {
+		return append([]key.Binding{k.Complete}, typing(k)...)
+	}
 	return []key.Binding{k.Take, k.FieldLeft, k.FieldRight, k.EraseBefore, k.EraseUnder, k.Leave}
 }

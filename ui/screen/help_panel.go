@@ -1,6 +1,10 @@
 package screen
 
-import "strings"
+import (
+	"strings"
+
+	"dropcrest/ui/scenario"
+)
 
 // newHelp is the list of keys, made from the bindings themselves.
 func newHelp(m *model) panel {
@@ -10,10 +14,12 @@ func newHelp(m *model) panel {
 		panel panel
 	}{
 		{"while typing", &entry{}},
+		{"while typing the name of a file", &entry{kind: scenario.File}},
 		{"in a list of words", &list{}},
 		{"in rows", &rows{list: "component"}},
 		{"in a text", &reader{}},
 		{"in a table", &table{}},
+		{"where a file is written", &writer{}},
 	} {
 		text = append(text, "", p.title)
 		text = append(text, keyTable(helpItems(p.panel.keys(m.keys)))...)

@@ -1,9 +1,12 @@
 package screen
 
 import (
+	"context"
 	"fmt"
+	"slices"
 	"strings"
 
+	tea "github.com/charmbracelet/bubbletea"
 	"github.com/charmbracelet/x/ansi"
 
 	"dropcrest/ui/answer"
@@ -19,8 +22,14 @@ const mostHeld = 6
 type held struct {
 	letter   rune
 	scenario scenario.Scenario
-	line     figure.Line
-	marks    []figure.Mark
+	parts    map[string]part // by the key of the figure
+	says     string          // its barrier
+}
+
+// part is what a held curve is in one figure.
+type part struct {
+	line  figure.Line
+	marks []figure.Mark
 }
 
 // hold keeps the curve of the answer in the picture.
@@ -43,8 +52,16 @@ func (m *model) hold() {
 }
 
 func newHeld(letter rune, s scenario.Scenario, a answer.Answer) held {
-	h := held{letter: letter, scenario: s}
-	h.line, h.marks = answer.HeldLine(letter, a)
+	h := held{letter: letter, scenario: s, parts: map[string]part{}}
+	for i, f := range a.Figures {
+		line, marks := answer.HeldLine(letter, answer.Answer{Figures: []figure.Figure{f}})
+		if len(line.X) > 0 {
+			h.parts[f.Key] = part{line, marks}
+		}
+		if i == 0 && len(marks) > 0 {
+			h.says = marks[0].Text
+		}
+	}
 	return h
 }
 
@@ -53,6 +70,9 @@ func (m *model) freeLetter() rune {
 	used := ""
 	for _, h := range m.held {
 		used += string(h.letter)
+	}
+	for _, h := range m.waiting[m.question.Key] {
+		used += string(h.Letter)
 	}
 	for letter := 'A'; ; letter++ {
 		if !strings.ContainsRune(used, letter) {
@@ -74,16 +94,45 @@ func (m *model) release() {
 	m.keep()
 }
 
-// holdAgain takes up the held curves of a session. What has no answer any more
-// is left out.
-func (m *model) holdAgain(kept []session.Held) {
-	m.held = nil
+// holdAgain takes up the held curves that a session has for the page. What has no
+// answer any more is left out; what takes its time is asked for beside the keys.
+func (m *model) holdAgain() {
+	kept := m.waiting[m.question.Key]
+	delete(m.waiting, m.question.Key)
 	for _, k := range kept {
-		a, err := m.ask(k.Scenario)
-		if err != nil || len(m.held) == mostHeld || len(a.Figures) == 0 {
+		if !m.question.IsLive(k.Scenario) {
+			m.waiting[m.question.Key] = append(m.waiting[m.question.Key], k)
+			m.holdLater(k)
 			continue
 		}
+		if a, err := m.ask(k.Scenario); err == nil {
+			m.addHeld(k, a)
+		}
+	}
+}
+
+// holdLater asks for a held curve of a session outside of Update.
+func (m *model) holdLater(k session.Held) {
+	env, ask := m.env, m.question.Ask
+	m.do(safely(func() tea.Msg {
+		a, err := ask(context.Background(), env, k.Scenario)
+		return report(func(m *model) {
+			if m.question.Key != k.Page {
+				return // it waits until the page is opened again
+			}
+			m.waiting[k.Page] = slices.DeleteFunc(slices.Clone(m.waiting[k.Page]), func(h session.Held) bool { return h.Letter == k.Letter })
+			if err == nil {
+				m.addHeld(k, a)
+			}
+		})
+	}))
+}
+
+// addHeld adds a held curve of a session.
+func (m *model) addHeld(k session.Held, a answer.Answer) {
+	if len(a.Figures) > 0 && len(m.held) < mostHeld {
 		m.held = append(m.held, newHeld(k.Letter, k.Scenario, a))
+		m.redraw()
 	}
 }
 
@@ -111,22 +160,69 @@ func (m *model) heldLine(w int) string {
 func (m *model) heldWords(n int, long bool) string {
 	var words []string
 	for _, h := range m.held[:n] {
-		says := []string{string(h.letter)}
-		s := h.scenario
-		if in, ok := scenario.Find(&s, "dry-diameter"); ok {
-			says = append(says, in.Show(m.style()))
-		}
-		for _, l := range m.question.Lists(&s) {
-			if long && l.Len() > 0 {
-				says = append(says, l.Show(m.style()))
-			}
-		}
-		for _, mark := range h.marks {
-			says = append(says, mark.Text)
+		says := append([]string{string(h.letter)}, m.heldValues(h, long)...)
+		if h.says != "" {
+			says = append(says, h.says)
 		}
 		words = append(words, strings.Join(says, " "))
 	}
 	return m.text("held: " + strings.Join(words, ", "))
+}
+
+// heldValues are the size and, where there is room, the matter of a held curve; of
+// a population what sets it apart.
+func (m *model) heldValues(h held, long bool) (values []string) {
+	s := h.scenario
+	if !m.question.LooksAt("dry-diameter") {
+		return m.heldDifferences(h, long)
+	}
+	if in, ok := scenario.Find(&s, "dry-diameter"); ok {
+		values = append(values, in.Show(m.style()))
+	}
+	for _, l := range m.question.Lists(&s) {
+		if long && l.Len() > 0 {
+			values = append(values, l.Show(m.style()))
+		}
+	}
+	return values
+}
+
+// heldDifferences are the slots of the statement in which a held scenario differs
+// from the present one or from another held one; the first of them where there is
+// little room.
+func (m *model) heldDifferences(h held, long bool) (values []string) {
+	s := h.scenario
+	for _, slot := range slotsOf(m.question, s) {
+		own, _ := shownAt(&s, slot, m.style())
+		differs := false
+		for _, other := range append([]held{{scenario: m.scenario}}, m.held...) {
+			text, there := shownAt(&other.scenario, slot, m.style())
+			differs = differs || there && text != own
+		}
+		if !differs {
+			continue
+		}
+		if in, ok := scenario.Find(&s, slot); ok && in.Kind() == scenario.Number {
+			own = in.Says() + " " + own
+		}
+		if values = append(values, own); !long {
+			return values
+		}
+	}
+	return values
+}
+
+// shownAt is the value of a slot.
+func shownAt(s *scenario.Scenario, slot scenario.Path, st scenario.Style) (string, bool) {
+	if in, ok := scenario.Find(s, slot); ok {
+		return in.Show(st), true
+	}
+	for _, l := range scenario.Lists(s) {
+		if l.Key() == string(slot) {
+			return l.Show(st), true
+		}
+	}
+	return "", false
 }
 
 // cycleOthers shows all other lines, each alone, none.

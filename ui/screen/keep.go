@@ -5,6 +5,7 @@ import (
 
 	tea "github.com/charmbracelet/bubbletea"
 
+	"dropcrest/ui/answer"
 	"dropcrest/ui/session"
 )
 
@@ -68,8 +69,15 @@ func (m *model) state(at time.Time) session.State {
 	s := session.State{
 		Page: m.question.Key, Cursor: m.cursor, Scenario: m.scenario, History: m.history, Saved: at,
 	}
-	for _, h := range m.held {
-		s.Held = append(s.Held, session.Held{Letter: h.letter, Scenario: h.scenario})
+	for _, q := range m.questions {
+		held := m.leaves[q.Key].held
+		if q.Key == m.question.Key {
+			held = m.held
+		}
+		for _, h := range held {
+			s.Held = append(s.Held, session.Held{Page: q.Key, Letter: h.letter, Scenario: h.scenario})
+		}
+		s.Held = append(s.Held, m.waiting[q.Key]...)
 	}
 	return s
 }
@@ -97,9 +105,18 @@ func (m *model) resume() {
 			m.question = q
 		}
 	}
-	m.scenario, m.history, m.cursor = s.Scenario.Clone(), s.History, s.Cursor
+	m.stopWork()
+	m.scenario, m.history = s.Scenario.Clone(), s.History
+	m.leaf, m.leaves, m.waiting = newLeaf(), map[string]leaf{}, map[string][]session.Held{}
+	m.cursor, m.answer = s.Cursor, answer.Answer{}
+	for _, h := range s.Held {
+		if h.Page == "" {
+			h.Page = m.question.Key
+		}
+		m.waiting[h.Page] = append(m.waiting[h.Page], h)
+	}
 	m.answerFirst()
-	m.holdAgain(s.Held)
+	m.holdAgain()
 	m.settle(0)
 	m.keeper.touched = true
 	m.redraw()

@@ -8,7 +8,11 @@ type Key struct{ Name, Does string }
 // Keys lists the keys of the pages, those that do the same in one line.
 func Keys() []Key {
 	const several = 2 // pages, so that the keys that turn them are named
-	names, does := helpItems(newKeyMap(false, several).page())
+	k := newKeyMap(false, several)
+	for _, b := range []*key.Binding{&k.Picture, &k.NextRecord, &k.RecordBefore} {
+		b.SetEnabled(true)
+	}
+	names, does := helpItems(k.page())
 	out := make([]Key, len(names))
 	for i := range names {
 		out[i] = Key{names[i], inFull(does[i])}
@@ -23,6 +27,8 @@ var meanings = map[string]string{
 	"type":        "type a value with its unit, such as 0.25 um; so do . - +",
 	"open":        "open what lies behind the slot: an entry, a list of words, rows",
 	"page":        "next page",
+	"record":      "next and previous record of the data",
+	"view":        "another picture of the answer, where there are several",
 	"hold":        "hold this curve, with a letter, to compare others with it",
 	"other lines": "other lines behind the curve, such as Kelvin only: all, each alone, none",
 	"table":       "table of the numbers behind the picture",

@@ -15,6 +15,8 @@ type keyMap struct {
 	Type, Open               key.Binding
 	NextPage, PageBefore     key.Binding
 	Hold, Release, Others    key.Binding
+	Picture                  key.Binding // where an answer has several
+	NextRecord, RecordBefore key.Binding // of data
 	Table, Write, About      key.Binding
 	Undo, Redo, Help, Quit   key.Binding
 	Stop                     key.Binding // Esc while something is worked out
@@ -28,6 +30,8 @@ type keyMap struct {
 	TopLine, BottomLine     key.Binding
 	FieldLeft, FieldRight   key.Binding
 	EraseBefore, EraseUnder key.Binding
+	Complete                key.Binding // Tab in the name of a file
+	OtherTable              key.Binding // Tab where a file is written
 }
 
 // newKeyMap binds the keys. In ASCII the arrows are named in words. Pages can be
@@ -49,19 +53,22 @@ func newKeyMap(ascii bool, pages int) keyMap {
 		Type:    bind("0-9", "type", "0", "1", "2", "3", "4", "5", "6", "7", "8", "9", ".", "-", "+"),
 		Open:    bind("Enter", "open", "enter"),
 
-		NextPage:   bind("Tab", "page", "tab"),
-		PageBefore: bind("Shift-Tab", "page", "shift+tab"),
-		Hold:       bind("Space", "hold", " "),
-		Release:    bind("x", "release the last held curve", "x"),
-		Others:     bind("o", "other lines", "o"),
-		Table:      bind("t", "table", "t"),
-		Write:      bind("w", "write to a file", "w"),
-		About:      bind("i", "about", "i"),
-		Undo:       bind("u", "undo", "u"),
-		Redo:       bind("U", "redo", "U"),
-		Help:       bind("?", "keys", "?"),
-		Quit:       bind("q", "leave", "q", "ctrl+c"),
-		Stop:       bind("Esc", "stop the work", "esc"),
+		NextPage:     bind("Tab", "page", "tab"),
+		PageBefore:   bind("Shift-Tab", "page", "shift+tab"),
+		Hold:         bind("Space", "hold", " "),
+		Release:      bind("x", "release the last held curve", "x"),
+		Others:       bind("o", "other lines", "o"),
+		Picture:      bind("v", "view", "v"),
+		NextRecord:   bind("n", "record", "n"),
+		RecordBefore: bind("p", "record", "p"),
+		Table:        bind("t", "table", "t"),
+		Write:        bind("w", "write to a file", "w"),
+		About:        bind("i", "about", "i"),
+		Undo:         bind("u", "undo", "u"),
+		Redo:         bind("U", "redo", "U"),
+		Help:         bind("?", "keys", "?"),
+		Quit:         bind("q", "leave", "q", "ctrl+c"),
+		Stop:         bind("Esc", "stop the work", "esc"),
 
 		Take:        bind("Enter", "take", "enter"),
 		Leave:       bind("Esc", "leave", "esc"),
@@ -79,10 +86,14 @@ func newKeyMap(ascii bool, pages int) keyMap {
 		FieldRight:  bind(right, "move", "right"),
 		EraseBefore: bind("Backspace", "erase", "backspace"),
 		EraseUnder:  bind("Del", "erase", "delete"),
+		OtherTable:  bind("Tab", "other table", "tab"),
+		Complete:    bind("Tab", "complete", "tab"),
 	}
 	k.NextPage.SetEnabled(pages > 1)
 	k.PageBefore.SetEnabled(pages > 1)
-	k.Stop.SetEnabled(false)
+	for _, b := range []*key.Binding{&k.Stop, &k.Picture, &k.NextRecord, &k.RecordBefore} {
+		b.SetEnabled(false)
+	}
 	return k
 }
 
@@ -94,7 +105,7 @@ func bind(name, does string, keys ...string) key.Binding {
 func (k keyMap) page() []key.Binding {
 	return []key.Binding{
 		k.Left, k.Right, k.First, k.Last, k.Up, k.Down, k.BigUp, k.BigDown, k.Type, k.Open,
-		k.NextPage, k.PageBefore, k.Hold, k.Release, k.Others, k.Table, k.Write, k.About,
+		k.NextPage, k.PageBefore, k.NextRecord, k.RecordBefore, k.Picture, k.Hold, k.Release, k.Others, k.Table, k.Write, k.About,
 		k.Undo, k.Redo, k.Stop, k.Help, k.Quit,
 	}
 }
@@ -103,7 +114,7 @@ func (k keyMap) page() []key.Binding {
 // others last.
 func (k keyMap) short() []key.Binding {
 	return []key.Binding{
-		k.Stop, k.Left, k.Right, k.Up, k.Down, k.Type, k.Open, k.Hold, k.NextPage,
+		k.Stop, k.Left, k.Right, k.Up, k.Down, k.NextRecord, k.RecordBefore, k.Picture, k.Type, k.Open, k.Hold, k.NextPage,
 		k.Undo, k.Quit, k.Table, k.Write, k.About, k.Others, k.Help,
 	}
 }

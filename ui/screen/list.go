@@ -134,6 +134,9 @@ func (l *list) take(m *model) panel {
 		return l
 	}
 	if l.wrong = m.set(l.path, word); l.wrong != nil {
+		if e := m.lacking(l.wrong, l.back); e != nil {
+			return e
+		}
 		return l
 	}
 	return l.back

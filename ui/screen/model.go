@@ -18,11 +18,11 @@ type model struct {
 	question  answer.Question
 	scenario  scenario.Scenario
 	answer    answer.Answer
-	unsolved  string        // why the scenario has no answer; only at the start
-	cursor    scenario.Path // the chosen slot: an input, a list, or finding
+	unsolved  string // why the scenario has no answer; only at the start
+	leaf             // of the open page
+	leaves    map[string]leaf
+	waiting   map[string][]session.Held // of a session, for pages that were not open yet
 	history   scenario.History
-	held      []held
-	others    int                      // which of Answer.Others are shown
 	left      map[scenario.Path]string // what Esc left behind in an entry
 
 	panel   panel
@@ -32,7 +32,6 @@ type model struct {
 	ascii   bool
 
 	width, height int
-	frame         figure.Frame
 	drawn         drawing
 	work          work
 	keeper        keeper
@@ -40,6 +39,22 @@ type model struct {
 	offer         string         // in words, on the message line while nothing else is said
 	todo          []tea.Cmd      // what Update hands to Bubble Tea at its end
 	fatal         error          // why the program ends, nil for a wish
+}
+
+// leaf is what a page keeps while another one is open.
+type leaf struct {
+	cursor scenario.Path // the chosen slot: an input, a list, or finding
+	held   []held
+	others int                     // which of Answer.Others are shown
+	shown  int                     // which of Answer.Figures is shown
+	frames map[string]figure.Frame // by the key of the figure
+	reply  *reply                  // the answer that was there when the page was left
+}
+
+// reply is an answer with what it answers.
+type reply struct {
+	scenario scenario.Scenario
+	answer   answer.Answer
 }
 
 // finding is the place of the cursor behind the last slot.
@@ -51,7 +66,7 @@ func newModel(o Options) *model {
 	questions := answer.Questions()
 	m := &model{
 		env: o.Env, questions: questions, question: questions[0], scenario: o.Scenario.Clone(),
-		left: map[scenario.Path]string{}, keys: newKeyMap(ascii, len(questions)),
+		leaf: newLeaf(), leaves: map[string]leaf{}, waiting: map[string][]session.Held{}, left: map[scenario.Path]string{}, keys: newKeyMap(ascii, len(questions)),
 		styles: newStyles(coloured(o)), ascii: ascii, keeper: keeper{store: o.Store},
 	}
 	m.env.Kept = &answer.Kept{}

@@ -1,6 +1,7 @@
 package screen
 
 import (
+	"fmt"
 	"slices"
 	"strings"
 	"unicode/utf8"
@@ -43,27 +44,34 @@ func (m *model) draw(w, h int) []string {
 		}
 		return lines[:min(len(lines), h)]
 	}
-	m.frame, _ = m.question.FrameOf(m.scenario, f, m.frame, h-1)
+	frame, _ := m.question.FrameOf(m.scenario, f, m.frames[f.Key], h-1)
+	m.frames[f.Key] = frame
 	lines := []string{m.title(f, w)}
-	for _, row := range figure.Text(f, m.frame, w-1, h-1, figure.Style{ASCII: m.ascii}) {
+	for _, row := range figure.Text(f, frame, w-1, h-1, figure.Style{ASCII: m.ascii}) {
 		lines = append(lines, m.row(row))
 	}
 	return lines
 }
 
-// figure is the figure of the answer with the held curves and the other lines.
+// figure is the figure that is shown with the held curves and the other lines.
 func (m *model) figure() figure.Figure {
-	f := m.answer.Figures[0]
+	at := m.shownFigure()
+	f := m.answer.Figures[at]
 	f.Lines, f.Marks = slices.Clone(f.Lines), slices.Clone(f.Marks)
 	for _, h := range m.held {
-		f.Lines = append(f.Lines, h.line)
-		f.Marks = append(f.Marks, h.marks...)
+		if part, ok := h.parts[f.Key]; ok {
+			f.Lines = append(f.Lines, part.line)
+			f.Marks = append(f.Marks, part.marks...)
+		}
 	}
-	f.Lines = append(f.Lines, m.shownOthers()...)
+	if at == 0 { // the others belong to the first figure
+		f.Lines = append(f.Lines, m.shownOthers()...)
+	}
 	return f
 }
 
-// title names both axes and, at the right, the glyph of the crest.
+// title names both axes and, at the right, what the glyphs of marks and points
+// stand for, and which picture this is of several.
 func (m *model) title(f figure.Figure, w int) string {
 	title := " " + m.text(f.Title)
 	legend := ""
@@ -71,6 +79,12 @@ func (m *model) title(f figure.Figure, w int) string {
 		if k.Kind == figure.CrestMark {
 			legend = m.text("◆ crest")
 		}
+	}
+	if slices.ContainsFunc(f.Points, func(p figure.Point) bool { return p.Letter == 0 }) {
+		legend = m.text("■ measured")
+	}
+	if n := len(m.answer.Figures); n > 1 {
+		legend = strings.TrimSpace(fmt.Sprintf("%s  %d/%d", legend, m.shownFigure()+1, n))
 	}
 	gap := w - 2 - utf8.RuneCountInString(title) - utf8.RuneCountInString(legend)
 	if legend == "" || gap < 2 {

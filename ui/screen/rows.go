@@ -2,7 +2,6 @@ package screen
 
 import (
 	"slices"
-	"strings"
 
 	"github.com/charmbracelet/bubbles/key"
 	tea "github.com/charmbracelet/bubbletea"
@@ -28,7 +27,7 @@ type rows struct {
 // that is all there is to say.
 func newRows(l scenario.RowList) panel {
 	r := &rows{list: l.Key(), row: 1}
-	if l.Len() == 1 {
+	if l.Key() == "component" && l.Len() == 1 {
 		r.slot = 1
 	}
 	return r
@@ -51,39 +50,6 @@ func (r *rows) sharesPicture() {}
 
 // settings reports whether the rows are settings and no list.
 func (r *rows) settings() bool { return r.list == "" }
-
-// rowForm is how a list of rows reads. Slots that its row does not name stand
-// below the chosen row.
-type rowForm struct {
-	head   string   // the line above; {key} is an input of the scenario
-	above  []string // the inputs in head
-	row    string   // {key} is an input of the row
-	first  []string // the inputs in row
-	shares bool     // the rows are parts of a particle, with their kappa and sums
-}
-
-// formOf is the form of a list. One that has no sentence of its own names its
-// first inputs.
-func formOf(l scenario.RowList) rowForm {
-	if l == nil {
-		return rowForm{head: "All else in this question:"}
-	}
-	if l.Key() != "component" {
-		f := rowForm{head: "Rows of " + l.Says() + ":"}
-		if l.Len() > 0 {
-			for _, in := range l.Row(0)[:min(len(l.Row(0)), 2)] {
-				f.first = append(f.first, in.Key())
-			}
-			f.row = "{" + strings.Join(f.first, "}, {") + "}"
-		}
-		return f
-	}
-	f := rowForm{head: "The particle is made of:", row: "{share} of {substance}", first: []string{"share", "substance"}, shares: true}
-	if l.Len() > 1 { // of one component the share means nothing
-		f.head, f.above = "The particle is made of, by {shares-by}:", []string{"shares-by"}
-	}
-	return f
-}
 
 // grid is every slot of the panel in the order of the keys: the line above, then
 // the rows.
@@ -159,8 +125,11 @@ func (r *rows) press(k tea.KeyMsg, m *model) (panel, tea.Cmd) {
 	}
 	r.settle(grid)
 	if r.entry != nil {
-		if back, _ := r.entry.press(k, m); back == r {
+		switch next, _ := r.entry.press(k, m); next := next.(type) {
+		case *rows:
 			r.entry = nil
+		case *entry:
+			r.entry = next
 		}
 		return r, nil
 	}
@@ -217,7 +186,7 @@ func (r *rows) move(by int, grid [][]scenario.Input) {
 
 // change takes a key that changes the chosen slot or opens it.
 func (r *rows) change(k tea.KeyMsg, in scenario.Input, m *model) (panel, bool) {
-	number := in.Kind() == scenario.Number
+	number := isNumeric(in)
 	kept := m.left[in.Path()]
 	switch {
 	case hits(k, m.keys.Up):
@@ -262,10 +231,7 @@ func (r *rows) whole(k tea.KeyMsg, l scenario.RowList, m *model) {
 	switch {
 	case r.settings() && (hits(k, m.keys.AddRow) || hits(k, m.keys.DropRow)):
 	case hits(k, m.keys.AddRow):
-		r.wrong = r.edit(m, scenario.RowList.Add)
-		if r.wrong == nil {
-			r.row, r.slot = l.Len()+1, 1
-		}
+		r.add(l, m)
 	case hits(k, m.keys.DropRow) && r.row > 0:
 		r.wrong = r.edit(m, func(l scenario.RowList) error { return l.Drop(r.row - 1) })
 	case hits(k, m.keys.Undo):
@@ -273,6 +239,61 @@ func (r *rows) whole(k tea.KeyMsg, l scenario.RowList, m *model) {
 	case hits(k, m.keys.Redo):
 		m.redo()
 	}
+}
+
+// add adds a row and chooses it. One that is nothing without its text, such as
+// the name of a file, is there once that is typed.
+func (r *rows) add(l scenario.RowList, m *model) {
+	form := formOf(l)
+	if form.typed {
+		r.entry = r.typed(l, m)
+		return
+	}
+	if r.wrong = r.edit(m, scenario.RowList.Add); r.wrong == nil {
+		r.row, r.slot = l.Len()+1, 0
+		if form.shares {
+			r.slot = 1
+		}
+	}
+}
+
+// typed is an entry for the first text of a new row.
+func (r *rows) typed(l scenario.RowList, m *model) *entry {
+	next := m.scenario.Clone()
+	first := scenario.Path("")
+	blank := func(s *scenario.Scenario) (scenario.Input, error) {
+		for _, of := range scenario.Lists(s) {
+			if of.Key() != l.Key() {
+				continue
+			}
+			if err := of.Add(); err != nil {
+				return nil, err
+			}
+			return of.Row(of.Len() - 1)[0], nil
+		}
+		return nil, nil
+	}
+	in, err := blank(&next)
+	if err != nil || in == nil {
+		r.wrong = err
+		return nil
+	}
+	first = in.Path()
+	e := openEntry(in, 0, m.left[first], r)
+	e.take = func(m *model, text string) error {
+		err := m.edit(scenario.Path(r.list), func(s *scenario.Scenario) error {
+			in, err := blank(s)
+			if err != nil {
+				return err
+			}
+			return in.Set(text)
+		})
+		if err == nil {
+			r.row, r.slot = l.Len()+1, 0
+		}
+		return err
+	}
+	return e
 }
 
 // edit changes the rows of the next scenario.

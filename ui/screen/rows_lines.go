@@ -99,7 +99,7 @@ func (r *rows) fill(sentence string, row int, inputs []scenario.Input, m *model)
 
 // slotText is a value as a slot, or the text being typed in its place.
 func (r *rows) slotText(row, slot int, in scenario.Input, m *model) string {
-	text := in.Show(m.style())
+	text := m.brief(in, shownTyped)
 	if row != r.row || slot != r.slot {
 		return m.value("[" + text + "]")
 	}
@@ -108,6 +108,25 @@ func (r *rows) slotText(row, slot int, in scenario.Input, m *model) string {
 	}
 	return m.marked("<" + text + ">")
 }
+
+// brief is the value of an input in at most w columns. Of the name of a file the
+// end says most.
+func (m *model) brief(in scenario.Input, w int) string {
+	text := m.text(in.Show(m.style()))
+	if in.Kind() == scenario.Name && text == noSubstance && strings.HasPrefix(string(in.Path()), "mode[") {
+		text = "that of the question"
+	}
+	switch wide := ansi.StringWidth(text); {
+	case in.Kind() == scenario.File && wide > w:
+		return ansi.TruncateLeft(text, wide-w+3, "...")
+	case in.Kind() == scenario.Text || in.Kind() == scenario.Numbers:
+		return cut(text, 2*w)
+	}
+	return text
+}
+
+// noSubstance is what stands for a substance that is not named.
+const noSubstance = "values of its own"
 
 // shownTyped is how much of a text being typed is seen in its slot.
 const shownTyped = 30

@@ -116,7 +116,7 @@ func TestRowsWithoutASentence(t *testing.T) {
 	d := mixture(t)
 	l, _ := d.listOf("component")
 	f := formOf(otherList{l})
-	if f.head != "Rows of modes:" || f.row != "{substance}, {share}" || f.shares {
+	if f.head != "Rows of layers:" || f.row != "{substance}, {share}" || f.shares {
 		t.Errorf("the form is %+v", f)
 	}
 }
@@ -124,5 +124,5 @@ func TestRowsWithoutASentence(t *testing.T) {
 // otherList is the composition under another name.
 type otherList struct{ scenario.RowList }
 
-func (otherList) Key() string  { return "mode" }
-func (otherList) Says() string { return "modes" }
+func (otherList) Key() string  { return "layer" }
+func (otherList) Says() string { return "layers" }

@@ -55,7 +55,7 @@ func (m *model) tokens(clause string, w int) []token {
 // slotValue is the value of an input, or a list in words.
 func (m *model) slotValue(p scenario.Path) string {
 	if in, ok := scenario.Find(&m.scenario, p); ok {
-		return m.text(in.Show(m.style()))
+		return m.brief(in, shownTyped)
 	}
 	if l, ok := m.listOf(string(p)); ok {
 		return m.text(l.Show(m.style()))

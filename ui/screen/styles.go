@@ -54,6 +54,8 @@ func newStyles(colour bool) styles {
 	s.roles[figure.OtherRole] = newPaint(of("5"))
 	s.roles[figure.CrestRole] = newPaint(of("13").Bold(true))
 	s.roles[figure.HazeRole] = newPaint(of("12"))
+	s.roles[figure.PointRole] = newPaint(of("14").Bold(true))
+	s.roles[figure.BarRole] = newPaint(of("14"))
 	return s
 }
 

@@ -8,7 +8,6 @@ import (
 	tea "github.com/charmbracelet/bubbletea"
 
 	"dropcrest/ui/answer"
-	"dropcrest/ui/figure"
 	"dropcrest/ui/scenario"
 )
 
@@ -160,6 +159,12 @@ func (m *model) pressOther(k tea.KeyMsg) bool {
 		m.turn(1)
 	case key.Matches(k, m.keys.PageBefore):
 		m.turn(-1)
+	case key.Matches(k, m.keys.Picture):
+		m.nextPicture()
+	case key.Matches(k, m.keys.NextRecord):
+		m.goToRecord(1)
+	case key.Matches(k, m.keys.RecordBefore):
+		m.goToRecord(-1)
 	case key.Matches(k, m.keys.Hold):
 		m.hold()
 	case key.Matches(k, m.keys.Release):
@@ -196,7 +201,12 @@ func (m *model) stepSlot(dir int, big bool) {
 	if !ok {
 		return // the line of ranges says what Enter does here
 	}
-	if err := m.step(in.Path(), dir, big); err != nil {
+	err := m.step(in.Path(), dir, big)
+	if e := m.lacking(err, nil); e != nil {
+		m.panel = e
+		return
+	}
+	if err != nil {
 		m.say(stopped(err))
 	}
 }
@@ -211,27 +221,34 @@ func stopped(err error) string {
 	return refusal(err)
 }
 
-// paste opens an entry with a number pasted on a slot that takes one. Other text
-// would drive the page.
+// paste opens an entry with text pasted on a slot that takes text, or with a
+// number on a slot for one. Other text would drive the page.
 func (m *model) paste(k tea.KeyMsg) {
 	text := strings.TrimSpace(string(k.Runes))
 	in, ok := m.input()
 	first := tea.KeyMsg{Type: tea.KeyRunes, Runes: []rune(text)[:min(1, len(text))]}
-	if ok && in.Kind() == scenario.Number && key.Matches(first, m.keys.Type) {
+	switch {
+	case ok && text != "" && (in.Kind() == scenario.File || in.Kind() == scenario.Text),
+		ok && isNumeric(in) && key.Matches(first, m.keys.Type):
 		m.panel = newEntry(in, 0, text)
-		return
+	default:
+		m.say("pasted text is taken by an entry, or when it is a number on a slot for one")
 	}
-	m.say("pasted text is taken by an entry, or when it is a number on a slot for one")
 }
 
 // startEntry starts an entry with the first character typed.
 func (m *model) startEntry(first rune) {
 	in, ok := m.input()
-	if !ok || in.Kind() != scenario.Number {
+	if !ok || !isNumeric(in) {
 		m.say("this is no number: Enter opens it")
 		return
 	}
 	m.panel = newEntry(in, first, "")
+}
+
+// isNumeric reports whether an input takes what digits begin.
+func isNumeric(in scenario.Input) bool {
+	return in.Kind() == scenario.Number || in.Kind() == scenario.Numbers
 }
 
 // open opens what lies behind the chosen slot.
@@ -255,20 +272,4 @@ func (m *model) open() {
 	default:
 		m.panel = newList(in)
 	}
-}
-
-// turn goes to another page; the scenario is one for all of them.
-func (m *model) turn(by int) {
-	n := len(m.questions)
-	for i, q := range m.questions {
-		if q.Key == m.question.Key {
-			m.question = m.questions[(i+by+n)%n]
-			break
-		}
-	}
-	m.stopWork()
-	m.answer, m.unsolved, m.work.old = answer.Answer{}, "", false
-	m.frame, m.others = figure.Frame{}, 0
-	m.answerFirst()
-	m.settle(0)
 }

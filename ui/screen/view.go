@@ -192,10 +192,13 @@ func (m *model) unsaid() int {
 func (m *model) rangeLine() string {
 	w := min(m.width, textWidth) - 2
 	message := m.text(m.message)
+	if message == "" && m.panel == nil {
+		message = m.recordWords()
+	}
 	if working := m.work.words(); working != "" {
 		message = working
 	}
-	if message == "" && m.offered != nil && m.panel == nil {
+	if m.message == "" && m.offered != nil && m.panel == nil {
 		message = m.text(m.offer)
 	}
 	says := m.rangeWords()

@@ -32,7 +32,7 @@ func sizes(_ context.Context, _ answer.Env, s scenario.Scenario) (answer.Answer,
 func onSlow(t *testing.T, q answer.Question) *model {
 	t.Helper()
 	m := opened(onTerminal("plain"), 80, 24)
-	m.questions = append(m.questions, q)
+	m.questions = []answer.Question{m.questions[0], q}
 	m.keys = newKeyMap(false, len(m.questions))
 	_, cmd := m.Update(keyOf("tab"))
 	m.Update(answerOf(t, cmd))

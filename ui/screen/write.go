@@ -14,6 +14,7 @@ import (
 	tea "github.com/charmbracelet/bubbletea"
 	"github.com/charmbracelet/x/ansi"
 
+	"dropcrest/ui/figure"
 	"dropcrest/ui/form"
 	"dropcrest/ui/scenario"
 	"dropcrest/ui/whole"
@@ -23,6 +24,7 @@ import (
 // of the name decides the form.
 type writer struct {
 	field  field
+	table  int    // which of several tables goes into .csv
 	exists string // the file that a second Enter overwrites
 	busy   bool
 	wrong  error
@@ -46,7 +48,16 @@ func endings() map[string]string {
 }
 
 // wanted names the endings with what they stand for.
-const wanted = ".toml the question, .csv the table, .json all numbers, .txt text, .svg .png .pdf the picture"
+func (m *model) wanted(table int) string {
+	csv, picture := "the table", "the picture"
+	if n := len(m.answer.Tables); n > 1 {
+		csv = fmt.Sprintf("the table %q (Tab: another one)", m.answer.Tables[min(table, n-1)].Title)
+	}
+	if len(m.answer.Figures) > 1 {
+		picture = "the picture shown"
+	}
+	return ".toml the question, .csv " + csv + ", .json all numbers, .txt text, .svg .png .pdf " + picture
+}
 
 func (f *writer) press(k tea.KeyMsg, m *model) (panel, tea.Cmd) {
 	switch {
@@ -60,6 +71,8 @@ func (f *writer) press(k tea.KeyMsg, m *model) (panel, tea.Cmd) {
 	case f.busy:
 	case hits(k, m.keys.Take):
 		return f.take(m)
+	case hits(k, m.keys.OtherTable) && len(m.answer.Tables) > 1:
+		f.table = (f.table + 1) % len(m.answer.Tables)
 	case f.field.press(k, m.keys):
 		f.wrong, f.exists = nil, ""
 	}
@@ -75,7 +88,7 @@ func (f *writer) take(m *model) (panel, tea.Cmd) {
 	}
 	format, ok := endings()[strings.ToLower(filepath.Ext(typed))]
 	if !ok {
-		f.wrong = fmt.Errorf("the ending of %q says no form: want %s", filepath.Base(typed), wanted)
+		f.wrong = fmt.Errorf("the ending of %q says no form: want %s", filepath.Base(typed), m.wanted(f.table))
 		return f, nil
 	}
 	if m.work.old {
@@ -92,7 +105,7 @@ func (f *writer) take(m *model) (panel, tea.Cmd) {
 		return f, nil
 	}
 	f.exists, f.busy, f.wrong = "", true, nil
-	return f, f.write(name, format, m.sheet())
+	return f, f.write(name, format, m.sheet(f.table))
 }
 
 // there reports whether there is something at that name that would be lost. What
@@ -104,7 +117,7 @@ func there(name string) bool {
 
 // full is the path that a name means; ~ is the home folder as in a shell.
 func full(typed string) (string, error) {
-	rest, ok := strings.CutPrefix(typed, "~"+string(filepath.Separator))
+	rest, ok := strings.CutPrefix(typed+string(filepath.Separator), "~"+string(filepath.Separator))
 	if !ok {
 		return typed, nil
 	}
@@ -115,13 +128,19 @@ func full(typed string) (string, error) {
 	return filepath.Join(home, rest), nil
 }
 
-// sheet is what is on the screen, ready to be written.
-func (m *model) sheet() form.Sheet {
+// sheet is what is on the screen, ready to be written: the figure that is shown
+// first, and of the tables the one of that place.
+func (m *model) sheet(table int) form.Sheet {
 	s := form.Sheet{Question: m.question, Scenario: m.scenario, Answer: m.answer,
-		Frame: m.frame, Version: m.env.Version, Width: paperWidth, ASCII: m.ascii}
+		Version: m.env.Version, Width: paperWidth, ASCII: m.ascii}
 	if len(m.answer.Figures) > 0 {
-		s.Answer.Figures = slices.Clone(m.answer.Figures)
-		s.Answer.Figures[0] = m.figure()
+		at := m.shownFigure()
+		s.Frame = m.frames[m.answer.Figures[at].Key]
+		s.Answer.Figures = slices.Concat([]figure.Figure{m.figure()}, m.answer.Figures[:at], m.answer.Figures[at+1:])
+	}
+	if table > 0 && table < len(m.answer.Tables) {
+		all := m.answer.Tables
+		s.Answer.Tables = slices.Concat(all[table:table+1], all[:table], all[table+1:])
 	}
 	return s
 }
@@ -207,11 +226,13 @@ func (f *writer) lines(w, h int, m *model) []string {
 	case f.wrong != nil:
 		out = append(out, m.refused(f.wrong, w)...)
 	default:
-		for _, l := range folded("The ending says the form: "+wanted, w, " ") {
+		for _, l := range folded(m.text("The ending says the form: "+m.wanted(f.table)), w, " ") {
 			out = append(out, m.dim(l))
 		}
 	}
 	return fit(out, w, h)
 }
 
-func (f *writer) keys(k keyMap) []key.Binding { return typing(k) }
+func (f *writer) keys(k keyMap) []key.Binding {
+	return append([]key.Binding{k.OtherTable}, typing(k)...)
+}

@@ -167,7 +167,7 @@ func TestWriteLeaves(t *testing.T) {
 // A fault in making a form is an error of this file, not the end of the program.
 func TestWriteSurvivesAFault(t *testing.T) {
 	d := newDesk(t)
-	s := d.sheet()
+	s := d.sheet(0)
 	s.Question.Statement = func(scenario.Scenario) []string { panic("a fault") }
 	name := filepath.Join(t.TempDir(), "a.txt")
 	if _, err := writeSheet(name, "text", s); err == nil || !strings.Contains(err.Error(), "a fault") {

@@ -261,7 +261,7 @@ func TestHistoryIsBounded(t *testing.T) {
 func TestNothingIsShared(t *testing.T) {
 	dir := t.TempDir()
 	state := full()
-	state.Held = []Held{{'A', sized(140)}}
+	state.Held = []Held{{"", 'A', sized(140)}}
 	save(t, dir, state)
 	_, got, _ := open(t, dir)
 	if len(got.Scenario.Components) == 0 {

@@ -36,6 +36,7 @@ type record struct {
 }
 
 type heldRecord struct {
+	Page     string `json:"page,omitempty"`
 	Letter   string `json:"letter"`
 	Scenario int    `json:"scenario"`
 }
@@ -60,7 +61,7 @@ func encode(state State) (question, around []byte, err error) {
 		Future:   b.entries(state.History.Future),
 	}
 	for _, h := range state.Held {
-		rec.Held = append(rec.Held, heldRecord{string(h.Letter), b.put(h.Scenario)})
+		rec.Held = append(rec.Held, heldRecord{h.Page, string(h.Letter), b.put(h.Scenario)})
 	}
 	if b.err != nil {
 		return nil, nil, b.err
@@ -142,7 +143,7 @@ func (rec record) state() (State, error) {
 		if len(h.Letter) != 1 || h.Letter < "A" || h.Letter > "Z" {
 			return State{}, fmt.Errorf("held curve %q: a letter from A to Z is expected", h.Letter)
 		}
-		state.Held = append(state.Held, Held{rune(h.Letter[0]), l.get(h.Scenario)})
+		state.Held = append(state.Held, Held{plain.Clean(h.Page), rune(h.Letter[0]), l.get(h.Scenario)})
 	}
 	return state, l.err
 }

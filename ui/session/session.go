@@ -43,6 +43,7 @@ type State struct {
 
 // Held is one held curve.
 type Held struct {
-	Letter   rune // 'A' to 'Z'
+	Page     string // key of the question; "" for the one on the screen
+	Letter   rune   // 'A' to 'Z', once a page
 	Scenario scenario.Scenario
 }

@@ -27,7 +27,7 @@ func sized(nm float64) scenario.Scenario {
 func full() State {
 	return State{
 		Page: "curve", Cursor: "dry-diameter", Scenario: sized(140),
-		Held: []Held{{'A', sized(100)}, {'C', sized(55.5)}},
+		Held: []Held{{"", 'A', sized(100)}, {"", 'C', sized(55.5)}},
 		History: scenario.History{
 			Past:   []scenario.Entry{{Path: "dry-diameter", Says: "dry size 100 nm → 140 nm", Before: sized(100), After: sized(140)}},
 			Future: []scenario.Entry{{Path: "temperature", Says: "temperature 20 °C → 25 °C", Before: sized(140), After: sized(141)}},
