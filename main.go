@@ -12,13 +12,17 @@ import (
 
 // The files are embedded here because no folder can embed what is in another one.
 //
-//go:embed testdata/published
+//go:embed testdata/published testdata/demo
 var testdata embed.FS
 
 func main() {
-	published, err := fs.Sub(testdata, "testdata/published")
+	os.Exit(command.Main(os.Args[1:], folder("testdata/published"), folder("testdata/demo")))
+}
+
+func folder(name string) fs.FS {
+	files, err := fs.Sub(testdata, name)
 	if err != nil {
 		panic(err) // the folder is part of this program
 	}
-	os.Exit(command.Main(os.Args[1:], published))
+	return files
 }

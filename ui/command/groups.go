@@ -8,16 +8,21 @@ import (
 
 // placeholder stands for the value in the help text.
 func placeholder(in scenario.Input) string {
-	if in.Kind() != scenario.Choice {
-		return "VALUE"
+	switch in.Kind() {
+	case scenario.Choice:
+		return "WORD"
+	case scenario.File:
+		return "FILE"
+	case scenario.Numbers:
+		return "VALUE,..."
 	}
-	return "WORD"
+	return "VALUE"
 }
 
 // inputHelp is the help text of an option, made of the declaration of its input.
 func inputHelp(in scenario.Input) string {
 	text := sentence(in.Help())
-	if r := in.Range(); r != "" {
+	if r := in.Range(); r != "" && in.Kind() != scenario.File {
 		text += " " + sentence("Range: "+r)
 	}
 	if in.Kind() == scenario.Choice {

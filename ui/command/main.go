@@ -27,10 +27,10 @@ const (
 
 // Main runs dropcrest with these arguments (without the program's name) on the
 // process's own files and returns the exit code. published holds the files of
-// published values that verify recomputes.
-func Main(args []string, published fs.FS) int {
+// published values that verify recomputes, demo those of the invented station.
+func Main(args []string, published, demo fs.FS) int {
 	return run(context.Background(), args, world{
-		in: os.Stdin, out: os.Stdout, err: os.Stderr, env: os.Getenv, published: published,
+		in: os.Stdin, out: os.Stdout, err: os.Stderr, env: os.Getenv, published: published, demo: demo,
 	})
 }
 
@@ -40,11 +40,16 @@ type world struct {
 	out, err  io.Writer
 	env       func(string) string
 	published fs.FS
+	demo      fs.FS
 	model     func(tea.Model) tea.Model // nil: the screen as it is; for tests
 }
 
 func run(ctx context.Context, args []string, w world) int {
-	root := newRoot(w)
+	return w.execute(ctx, newRoot(w), args)
+}
+
+// execute runs a tree of commands and says what went wrong.
+func (w world) execute(ctx context.Context, root *cobra.Command, args []string) int {
 	root.SetArgs(args)
 	root.SetIn(w.in)
 	root.SetOut(w.out)

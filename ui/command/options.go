@@ -14,6 +14,8 @@ import (
 	"dropcrest/atmos"
 	"dropcrest/solutes"
 	"dropcrest/ui/answer"
+	"dropcrest/ui/figure/print"
+	"dropcrest/ui/form"
 	"dropcrest/ui/scenario"
 )
 
@@ -29,6 +31,8 @@ type options struct {
 
 	isPlain bool
 	as, out string
+
+	table, picture string // keys of the parts that are written
 
 	set      *pflag.FlagSet
 	question answer.Question
@@ -69,14 +73,33 @@ func (o *options) form(cmd *cobra.Command, formats ...string) {
 	o.set.StringVar(&o.out, "out", "", "`FILE` to write, whole or not at all; - is standard output.")
 	o.group("out", outputGroup)
 	_ = cmd.RegisterFlagCompletionFunc("as", cobra.FixedCompletions(formats, cobra.ShellCompDirectiveNoFileComp))
-	check := func(*cobra.Command, []string) (err error) {
+	cmd.PreRunE = func(*cobra.Command, []string) (err error) {
 		if o.set.Changed("out") && o.out == "" {
 			return misused("--out needs the name of a file, or - for standard output")
 		}
-		o.as, err = chooseForm(o.as, o.out, formats)
-		return err
+		if o.as, err = chooseForm(o.as, o.out, formats); err != nil {
+			return err
+		}
+		return o.checkParts()
 	}
-	cmd.PreRunE = check
+}
+
+// parts adds the options that choose one table or picture of several.
+func (o *options) parts() {
+	o.set.StringVar(&o.table, "table", "", "`KEY` of the table that csv and jsonl write; a key that is none lists them. Default: the main one.")
+	o.group("table", outputGroup)
+	o.set.StringVar(&o.picture, "picture", "", "`KEY` of the picture that svg, png and pdf write; a key that is none lists them. Default: the main one.")
+	o.group("picture", outputGroup)
+}
+
+func (o *options) checkParts() error {
+	switch {
+	case o.table != "" && !form.OneTable(o.as):
+		return misused("--table and --as %s contradict each other: one table is written as csv or jsonl", o.as)
+	case o.picture != "" && !form.OnePicture(o.as):
+		return misused("--picture and --as %s contradict each other: one picture is written as %s", o.as, strings.Join(print.Formats(), ", "))
+	}
+	return nil
 }
 
 // chooseForm checks --as, or takes the form from the ending of the file. An
@@ -88,15 +111,19 @@ func chooseForm(as, out string, formats []string) (string, error) {
 		}
 		return as, nil
 	}
-	ending := strings.TrimPrefix(strings.ToLower(filepath.Ext(out)), ".")
-	switch {
-	case ending == "" || ending == "txt":
+	ending := strings.ToLower(filepath.Ext(out))
+	if ending == "" {
 		return formats[0], nil
-	case slices.Contains(formats, ending):
-		return ending, nil
 	}
-	return "", misused("--out %s: the ending .%s names no form: want one of .txt, .%s, or say which form by --as",
-		out, ending, strings.Join(formats[1:], ", ."))
+	var endings []string
+	for _, f := range formats {
+		if form.Ending(f) == ending {
+			return f, nil
+		}
+		endings = append(endings, form.Ending(f))
+	}
+	return "", misused("--out %s: the ending %s names no form: want one of %s, or say which form by --as",
+		out, ending, strings.Join(endings, ", "))
 }
 
 // inputs adds every input of a question as an option.
@@ -122,6 +149,9 @@ func (o *options) input(cmd *cobra.Command, group string, in scenario.Input) {
 	key := in.Key()
 	o.set.Var(&late{o, key, placeholder(in)}, key, inputHelp(in))
 	o.group(key, group)
+	if isFile(in) {
+		return // the shell knows files
+	}
 	var words []string
 	for _, c := range in.Choices() {
 		words = append(words, c.Word+"\t"+c.Says)
@@ -133,6 +163,9 @@ func (o *options) list(cmd *cobra.Command, group string, l scenario.RowList) {
 	key := l.Key()
 	o.set.Var(&late{o, key, "ROW"}, key, l.Help()+" May be given several times. Default: "+l.Show(scenario.Style{})+".")
 	o.group(key, group)
+	if l.Len() > 0 && isFile(l.Row(0)...) {
+		return
+	}
 	complete := cobra.NoFileCompletions
 	if l.Len() > 0 && slices.ContainsFunc(l.Row(0), func(in scenario.Input) bool { return in.Kind() == scenario.Name }) {
 		complete = o.names()
@@ -177,6 +210,9 @@ func (o *options) scenario(w world) (scenario.Scenario, []atmos.Note, error) {
 		}
 		fresh[g.key] = true
 	}
+	if err := o.implied(&s, fresh); err != nil {
+		return s, nil, err
+	}
 	if s.WaterActivity == "kappa" && fresh["kappa"] && s.Kappa.Word == "" && !fresh["component"] && o.fromFile == "" {
 		s.Components = nil // kappa alone says what the particle is made of
 	}
@@ -199,25 +235,25 @@ func (o *options) unused(s *scenario.Scenario) []atmos.Note {
 	said := map[string]bool{}
 	for _, g := range o.given {
 		in, ok := scenario.Find(s, scenario.Path(g.key))
-		if !ok || in.Used() || said[g.key] {
+		if said[g.key] || ok && in.Used() || !ok && countsIn(g.key, s) {
 			continue
 		}
 		said[g.key] = true
-		notes = append(notes, unusedNote(in, "The option --"+g.key))
+		notes = append(notes, unusedNote(scenario.Path(g.key), "The option --"+g.key))
 	}
 	if o.fromFile == "" {
 		return notes
 	}
 	for _, in := range o.question.Inputs(s) {
 		if !in.Used() && !in.IsDefault() && !said[string(in.Path())] {
-			notes = append(notes, unusedNote(in, "The value of "+string(in.Path())+" in the scenario file"))
+			notes = append(notes, unusedNote(in.Path(), "The value of "+string(in.Path())+" in the scenario file"))
 		}
 	}
 	return notes
 }
 
-func unusedNote(in scenario.Input, what string) atmos.Note {
-	return atmos.Note{Code: "input-unused", Input: string(in.Path()),
+func unusedNote(at scenario.Path, what string) atmos.Note {
+	return atmos.Note{Code: "input-unused", Input: string(at),
 		Text: what + " is not used: with the other values as they are, nothing depends on it."}
 }
 

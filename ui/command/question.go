@@ -1,10 +1,9 @@
 package command
 
 import (
-	"bytes"
 	"context"
 	"errors"
-	"fmt"
+	"time"
 
 	"github.com/spf13/cobra"
 
@@ -28,7 +27,8 @@ func (w world) newQuestion(q answer.Question) *cobra.Command {
 	o.inputs(cmd, q)
 	o.from(cmd)
 	o.substances(w)
-	o.form(cmd, form.Formats()...)
+	o.form(cmd, form.FormatsOf(q)...)
+	o.parts()
 	o.plain(cmd)
 	cmd.RunE = func(cmd *cobra.Command, _ []string) error {
 		s, notes, err := o.scenario(w)
@@ -41,7 +41,13 @@ func (w world) newQuestion(q answer.Question) *cobra.Command {
 }
 
 func questionHelp(q answer.Question) string {
-	return q.Says + "\n\nValues are written with their unit, such as 100nm, 20C, 293.15K, 72mN/m, 95%. " +
+	chosen := ""
+	if q.LooksAt("population") {
+		chosen = "\n\n--mode, --bins or --data choose the population, and --kappa the kappa model. " +
+			"--record all takes the records of measured files one after the other: csv and jsonl hold a row for each record and supersaturation, " +
+			"json the same under records, icartt a column for each supersaturation."
+	}
+	return q.Says + chosen + "\n\nValues are written with their unit, such as 100nm, 20C, 293.15K, 72mN/m, 95%. " +
 		"Humidity and supersaturation are in per cent everywhere, also in CSV and JSON; all else is in SI units there."
 }
 
@@ -49,13 +55,14 @@ func questionHelp(q answer.Question) string {
 func examples() map[string]string {
 	return map[string]string{
 		"curve":      "dropcrest curve --dry-diameter 50nm --component \"sodium chloride\"",
+		"spectrum":   "dropcrest spectrum --mode \"N=850/cm3 Dg=45nm gsd=1.6 kappa=0.3\" --supersaturation 0.1%,0.2%,0.5%",
 		"substances": "dropcrest substances \"ammonium sulfate\"",
 		"verify":     "dropcrest verify --as csv --out verify.csv",
 	}
 }
 
 // ask answers a question and writes the answer in the form that was asked for.
-func (w world) ask(ctx context.Context, q answer.Question, s scenario.Scenario, notes []atmos.Note, o *options) error {
+func (w world) ask(ctx context.Context, q answer.Question, s scenario.Scenario, notes []atmos.Note, o *options) (err error) {
 	as := o.as
 	if as == "" {
 		as = "text"
@@ -63,24 +70,43 @@ func (w world) ask(ctx context.Context, q answer.Question, s scenario.Scenario, 
 	if err := w.refuseBinary(as, o.out); err != nil {
 		return err
 	}
-	env, err := o.environment()
+	env, err := o.environment(w)
 	if err != nil {
 		return err
 	}
-	a, err := q.Ask(ctx, env, s)
+	ctx, stop := terminal.Context(ctx)
+	defer stop()
+	out, err := w.open(o.out)
 	if err != nil {
-		return questionError(err)
+		return err
 	}
-	a.Notes = append(notes, a.Notes...)
-	for i := range a.Figures {
-		for _, n := range notes {
-			a.Figures[i].Notes = append(a.Figures[i].Notes, n.Text)
+	defer func() {
+		if err != nil {
+			out.drop()
 		}
+	}()
+	stream := form.NewStream(out, as)
+	env.Columns, env.Row = o.rows(stream, as)
+	meter := w.newMeter(o.out, form.Streams(as))
+	env.Progress = meter.tell
+	a, err := q.Ask(ctx, env, s)
+	meter.end()
+	if err := interrupted(ctx); err != nil {
+		return err
 	}
-	var b bytes.Buffer
-	sheet := form.Sheet{Question: q, Scenario: s, Answer: a, Version: version(),
+	if out.err != nil {
+		return out.problem(out.err)
+	}
+	if err != nil {
+		return questionError(err, s)
+	}
+	a = withNotes(a, notes)
+	sheet := form.Sheet{Question: q, Scenario: s, Answer: a, Version: version(), Table: o.table, Picture: o.picture, Made: time.Now(),
 		Width: w.width(), ASCII: o.isPlain || !terminal.UTF8(w.env)}
-	if err := sheet.Write(&b, as); err != nil {
+	if err := stream.Close(sheet); err != nil && out.err == nil {
+		return formError(err)
+	}
+	if err := interrupted(ctx); err != nil {
 		return err
 	}
 	if !form.TellsNotes(as) {
@@ -88,14 +114,47 @@ func (w world) ask(ctx context.Context, q answer.Question, s scenario.Scenario, 
 			w.complain("note", n.Text)
 		}
 	}
-	return w.deliver(o.out, b.Bytes())
+	return out.commit()
 }
 
-// questionError names the option that an error of the question belongs to.
-func questionError(err error) error {
-	var in *answer.InputError
-	if errors.As(err, &in) && in.Input != "" {
-		return fmt.Errorf("--%s: %w", in.Input, err)
+// rows are where rows of records go that are found one after the other: into the
+// stream, or nowhere when the form does not hold them, so that nobody keeps them.
+func (o *options) rows(stream *form.Stream, as string) (columns func(string, []answer.Column) error, row func(string, []any) error) {
+	if form.Streams(as) && (o.table == "" || o.table == form.RecordsTable) {
+		return stream.Columns, stream.Row
+	}
+	return nil, func(string, []any) error { return nil }
+}
+
+// interrupted is the error of a context that has ended.
+func interrupted(ctx context.Context) error {
+	cause := context.Cause(ctx)
+	var signal terminal.Signal
+	if errors.As(cause, &signal) {
+		return exitError{code: terminal.ExitCode(signal)}
+	}
+	return cause
+}
+
+// withNotes adds notes to an answer and to its pictures, which carry their own.
+func withNotes(a answer.Answer, notes []atmos.Note) answer.Answer {
+	a.Notes = append(notes, a.Notes...)
+	for i := range a.Figures {
+		for _, n := range notes {
+			a.Figures[i].Notes = append(a.Figures[i].Notes, n.Text)
+		}
+	}
+	return a
+}
+
+// formError names the option that an answer cannot follow.
+func formError(err error) error {
+	var part *form.PartError
+	switch {
+	case errors.As(err, &part):
+		return misused("--%s: %v", part.What, err)
+	case errors.Is(err, form.ErrNoRecords):
+		return misused("--as icartt: %v: add --record all", err)
 	}
 	return err
 }

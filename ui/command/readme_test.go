@@ -3,6 +3,7 @@ package command
 import (
 	"fmt"
 	"os"
+	"slices"
 	"strings"
 	"testing"
 
@@ -74,20 +75,43 @@ func questionRows() []string {
 	return rows
 }
 
+// optionRows are the options of all questions, each once, in their order.
 func optionRows() []string {
-	rows := []string{"| option | what it is | default |", "|---|---|---|"}
+	rows := []string{"| option | what it is | default | command |", "|---|---|---|---|"}
 	s := scenario.Default()
-	for _, g := range answer.Questions()[0].Groups {
-		for _, key := range g.Keys {
-			if in, ok := scenario.Find(&s, scenario.Path(key)); ok {
-				rows = append(rows, fmt.Sprintf("| `--%s` | %s: %s | %s |", key, in.Says(), in.Range(), in.Show(scenario.Style{})))
-			}
-			for _, l := range scenario.Lists(&s) {
-				if l.Key() == key {
-					rows = append(rows, fmt.Sprintf("| `--%s` | %s, may be given several times | %s |", key, l.Says(), l.Show(scenario.Style{})))
+	var said []string
+	for _, q := range answer.Questions() {
+		for _, g := range q.Groups {
+			for _, key := range g.Keys {
+				if !slices.Contains(said, key) {
+					said = append(said, key)
+					rows = append(rows, optionRow(&s, key))
 				}
 			}
 		}
 	}
 	return rows
+}
+
+func optionRow(s *scenario.Scenario, key string) string {
+	var of []string
+	for _, q := range answer.Questions() {
+		if q.LooksAt(key) {
+			of = append(of, q.Key)
+		}
+	}
+	row := func(what, shown string) string {
+		return fmt.Sprintf("| `--%s` | %s | %s | %s |", key, what, shown, strings.Join(of, ", "))
+	}
+	for _, l := range scenario.Lists(s) {
+		if l.Key() == key {
+			return row(l.Says()+", may be given several times", l.Show(scenario.Style{}))
+		}
+	}
+	in, _ := scenario.Find(s, scenario.Path(key))
+	what := in.Says()
+	if r := in.Range(); r != "" {
+		what += ": " + r
+	}
+	return row(what, in.Show(scenario.Style{}))
 }

@@ -36,7 +36,7 @@ func (w world) addScreen(root *cobra.Command) {
 // openScreen shows the screen on a scenario; without --from it offers the session
 // that was kept. The program's exit code is that of the signal that has ended it.
 func (w world) openScreen(ctx context.Context, o *options, s scenario.Scenario) error {
-	env, err := o.environment()
+	env, err := o.environment(w)
 	if err != nil {
 		return err
 	}

@@ -7,7 +7,6 @@ import (
 	"github.com/spf13/cobra"
 
 	"dropcrest/solutes"
-	"dropcrest/ui/answer"
 	"dropcrest/ui/scenario"
 	"dropcrest/ui/substancefile"
 )
@@ -39,12 +38,6 @@ func (o *options) catalogue() (*solutes.Catalogue, error) {
 		o.known, err = substancefile.OpenDefault(solutes.Standard(), o.env)
 	}
 	return o.known, err
-}
-
-// environment is what an answer may use.
-func (o *options) environment() (answer.Env, error) {
-	c, err := o.catalogue()
-	return answer.Env{Substances: c, Version: version()}, err
 }
 
 // names completes names of substances. A file that cannot be read is no reason to

@@ -3,29 +3,53 @@ package form
 import (
 	"bytes"
 	"encoding/csv"
+	"io"
 	"strconv"
 
 	"dropcrest/ui/answer"
 )
 
-// CSV writes a table by RFC 4180: a line of column names, lines that end
-// with CR LF, a field that is empty where a value is absent.
+// CSV writes a table by RFC 4180.
 func CSV(b *bytes.Buffer, t answer.Table) {
-	names := make([]string, len(t.Columns))
-	for i, c := range t.Columns {
-		names[i] = c.Key
-	}
-	out := csv.NewWriter(b) // a buffer takes everything: no errors
-	out.UseCRLF = true
-	_ = out.Write(names)
-	record := make([]string, len(names))
+	rows := newCSVRows(b) // a buffer takes everything: no errors
+	_ = rows.columns(t.Columns)
 	for _, row := range t.Rows {
-		for i, v := range row {
-			record[i] = csvField(v)
-		}
-		_ = out.Write(record)
+		_ = rows.row(row)
 	}
-	out.Flush()
+	_ = rows.close(Sheet{})
+}
+
+// csvRows writes by RFC 4180: a line of column names, lines that end with CR LF, a
+// field that is empty where a value is absent.
+type csvRows struct {
+	out    *csv.Writer
+	record []string
+}
+
+func newCSVRows(w io.Writer) *csvRows {
+	out := csv.NewWriter(w)
+	out.UseCRLF = true
+	return &csvRows{out: out}
+}
+
+func (c *csvRows) columns(columns []answer.Column) error {
+	c.record = make([]string, len(columns))
+	for i, column := range columns {
+		c.record[i] = column.Key
+	}
+	return c.out.Write(c.record)
+}
+
+func (c *csvRows) row(row []any) error {
+	for i, v := range row {
+		c.record[i] = csvField(v)
+	}
+	return c.out.Write(c.record)
+}
+
+func (c *csvRows) close(Sheet) error {
+	c.out.Flush()
+	return c.out.Error()
 }
 
 // csvField writes a number with the digits that read back as the same number.

@@ -8,6 +8,7 @@ import (
 	"fmt"
 	"slices"
 	"strings"
+	"time"
 
 	"dropcrest/ui/answer"
 	"dropcrest/ui/figure"
@@ -25,15 +26,42 @@ type Sheet struct {
 	Version  string
 	Width    int  // of text, in columns
 	ASCII    bool // of text
+
+	Table, Picture string    // keys of those that are written where only one is; "": the first
+	Made           time.Time // when; zero: not said
 }
 
-// Formats are the forms that Write knows.
-func Formats() []string { return append([]string{"text", "csv", "json"}, print.Formats()...) }
+// Formats are the forms that every answer has.
+func Formats() []string { return FormatsOf(answer.Question{}) }
+
+// FormatsOf are the forms of the answer to a question.
+func FormatsOf(q answer.Question) []string {
+	return slices.Concat([]string{"text", "csv", "json"}, q.Formats, print.Formats())
+}
+
+// Ending is the ending of the name of a file of that form.
+func Ending(format string) string {
+	switch format {
+	case "text":
+		return ".txt"
+	case "icartt":
+		return ".ict"
+	}
+	return "." + format
+}
+
+// OnePicture reports whether a file of that form holds one picture, OneTable
+// whether it holds one table.
+func OnePicture(format string) bool { return slices.Contains(print.Formats(), format) }
+
+// OneTable: see OnePicture.
+func OneTable(format string) bool { return format == "csv" || format == "jsonl" }
 
 // TellsNotes reports whether a reader of that form is sure to see the notes.
 func TellsNotes(format string) bool { return format == "text" || format == "json" }
 
-// Write writes the answer in one of Formats. After an error nothing of use is in b.
+// Write writes the answer in one of FormatsOf its question. After an error nothing
+// of use is in b.
 func (s Sheet) Write(b *bytes.Buffer, format string) error {
 	switch {
 	case format == "text":
@@ -41,17 +69,94 @@ func (s Sheet) Write(b *bytes.Buffer, format string) error {
 		return nil
 	case format == "json":
 		return writeJSON(b, s.Question, s.Scenario, s.Answer, s.Version)
-	case format == "csv" && len(s.Answer.Tables) == 0:
-		return errors.New("this answer has no table")
-	case format == "csv":
-		CSV(b, s.Answer.Tables[0])
-		return nil
-	case !slices.Contains(print.Formats(), format):
-		return fmt.Errorf("no form %q: want %s", format, strings.Join(Formats(), ", "))
-	case len(s.Answer.Figures) == 0:
-		return errors.New("this answer has no picture")
+	case OneTable(format):
+		t, err := s.table()
+		if err != nil {
+			return err
+		}
+		return s.writeRows(b, format, t)
+	case format == "icartt":
+		t, err := s.records()
+		if err != nil {
+			return err
+		}
+		return s.writeRows(b, format, t)
+	case !OnePicture(format):
+		return fmt.Errorf("no form %q: want %s", format, strings.Join(FormatsOf(s.Question), ", "))
 	}
-	return print.Write(b, s.Answer.Figures[0], s.frame(0), format)
+	i, err := s.picture()
+	if err != nil {
+		return err
+	}
+	return print.Write(b, s.Answer.Figures[i], s.frame(i), format)
+}
+
+// table is the one that is written where only one is.
+func (s Sheet) table() (answer.Table, error) {
+	keys := make([]string, len(s.Answer.Tables))
+	for i, t := range s.Answer.Tables {
+		if keys[i] = t.Key; t.Key == s.Table || s.Table == "" {
+			return t, nil
+		}
+	}
+	if len(keys) == 0 {
+		return answer.Table{}, errors.New("this answer has no table")
+	}
+	return answer.Table{}, &PartError{"table", s.Table, keys}
+}
+
+// picture is the number of the one that is written where only one is.
+func (s Sheet) picture() (int, error) {
+	keys := make([]string, len(s.Answer.Figures))
+	for i, f := range s.Answer.Figures {
+		if keys[i] = f.Key; f.Key == s.Picture || s.Picture == "" {
+			return i, nil
+		}
+	}
+	if len(keys) == 0 {
+		return 0, errors.New("this answer has no picture")
+	}
+	return 0, &PartError{"picture", s.Picture, keys}
+}
+
+// PartError says that an answer has no table or picture of that key.
+type PartError struct {
+	What, Key string
+	There     []string
+}
+
+func (e *PartError) Error() string {
+	return fmt.Sprintf("this answer has no %s %q: want %s", e.What, e.Key, strings.Join(e.There, ", "))
+}
+
+// ErrNoRecords: ICARTT has nothing to hold.
+var ErrNoRecords = errors.New("ICARTT holds the records of measured data over time, and this answer is of one population")
+
+// RecordsTable is the key of the table of all records.
+const RecordsTable = "records"
+
+// records is the table of all records.
+func (s Sheet) records() (answer.Table, error) {
+	for _, t := range s.Answer.Tables {
+		if t.Key == RecordsTable {
+			return t, nil
+		}
+	}
+	return answer.Table{}, ErrNoRecords
+}
+
+// writeRows writes a table as it would stream.
+func (s Sheet) writeRows(b *bytes.Buffer, format string, t answer.Table) error {
+	out := NewStream(b, format)
+	if err := out.Columns(t.Key, t.Columns); err != nil {
+		return err
+	}
+	for _, row := range t.Rows {
+		if err := out.Row(t.Key, row); err != nil {
+			return err
+		}
+	}
+	return out.Close(s)
 }
 
 // pictureHeight is the height of the picture in text, axis included.

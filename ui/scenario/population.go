@@ -29,6 +29,29 @@ type MapLine struct{ Text string }
 // ofData reports whether the population is that of measured files.
 func ofData(s *Scenario) bool { return s.Population == "data" }
 
+// populations are the kinds of population and the keys that give each.
+var populations = []struct{ key, kind string }{{"mode", "modes"}, {"bins", "bins"}, {"data", "data"}}
+
+// PopulationKeys are the keys of inputs and lists that give a population each.
+func PopulationKeys() []string {
+	var keys []string
+	for _, p := range populations {
+		keys = append(keys, p.key)
+	}
+	return keys
+}
+
+// PopulationOf is the kind of population that the input or list of that key gives,
+// "" when it gives none.
+func PopulationOf(key string) string {
+	for _, p := range populations {
+		if p.key == key {
+			return p.kind
+		}
+	}
+	return ""
+}
+
 // populationFields declares the quantities of a population.
 var populationFields = []field[Scenario]{
 	{key: "population", says: "population",

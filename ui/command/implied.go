@@ -1,0 +1,50 @@
+package command
+
+import (
+	"slices"
+
+	"dropcrest/ui/scenario"
+)
+
+// implied lets an option that says something of one kind only choose that kind: --mode a
+// population of modes, and --kappa the kappa model where a population is asked for.
+// What contradicts each other is an error.
+func (o *options) implied(s *scenario.Scenario, given map[string]bool) error {
+	if !o.question.LooksAt("population") {
+		return nil
+	}
+	var by []string
+	for _, key := range scenario.PopulationKeys() {
+		if given[key] {
+			by = append(by, key)
+		}
+	}
+	if len(by) > 1 {
+		return misused("--%s and --%s contradict each other: they give different populations, want one of them", by[0], by[1])
+	}
+	if len(by) == 1 {
+		kind := scenario.PopulationOf(by[0])
+		if given["population"] && s.Population != kind {
+			return misused("--population %s and --%s contradict each other: want --population %s, or no --%s", s.Population, by[0], kind, by[0])
+		}
+		s.Population = kind
+	}
+	if given["kappa"] && !given["water-activity"] && s.Kappa.Word == "" {
+		s.WaterActivity = "kappa"
+	}
+	return nil
+}
+
+// countsIn reports whether a list of rows counts in the scenario as it stands.
+func countsIn(key string, s *scenario.Scenario) bool {
+	kind := scenario.PopulationOf(key)
+	if key == "map" {
+		kind = "data"
+	}
+	return kind == "" || kind == s.Population
+}
+
+// isFile reports whether one of the inputs is the name of a file.
+func isFile(inputs ...scenario.Input) bool {
+	return slices.ContainsFunc(inputs, func(in scenario.Input) bool { return in.Kind() == scenario.File })
+}
