@@ -154,7 +154,7 @@ func formError(err error) error {
 	case errors.As(err, &part):
 		return misused("--%s: %v", part.What, err)
 	case errors.Is(err, form.ErrNoRecords):
-		return misused("--as icartt: %v: add --record all", err)
+		return misused("--as icartt: %v: want --record all, of measured data", err)
 	}
 	return err
 }

@@ -173,13 +173,7 @@ func (s Sheet) frame(i int) figure.Frame {
 // writeText is the answer for a reader: the question in words, the picture, the
 // finding, the notes.
 func (s Sheet) writeText(b *bytes.Buffer) {
-	say := func(text string) {
-		text = plain.Clean(text)
-		if s.ASCII {
-			text = plain.ASCII(text)
-		}
-		b.WriteString(plain.Wrap(text, s.Width, "") + "\n")
-	}
+	say := func(text string) { b.WriteString(plain.Wrap(s.text(text), s.Width, "") + "\n") }
 	say(s.statement())
 	b.WriteByte('\n')
 	for i, f := range s.Answer.Figures {
@@ -188,6 +182,14 @@ func (s Sheet) writeText(b *bytes.Buffer) {
 		b.WriteString(strings.Join(figure.Lines(cells), "\n") + "\n\n")
 	}
 	say(strings.Join(s.Answer.Finding, " "))
+	for _, t := range s.Answer.Tables {
+		if slices.Contains(s.Question.Tabled, t.Key) {
+			b.WriteByte('\n')
+			say(t.Title)
+			heads, rows := Tabulate(filled(t), s.Width, s.text)
+			b.WriteString(strings.Join(slices.Concat(heads, rows), "\n") + "\n")
+		}
+	}
 	gap := "\n"
 	for _, n := range s.Answer.Notes {
 		if !slices.Contains(s.Answer.Finding, n.Text) { // once is enough
@@ -196,6 +198,29 @@ func (s Sheet) writeText(b *bytes.Buffer) {
 			gap = ""
 		}
 	}
+}
+
+// text is a text as the text form shows it.
+func (s Sheet) text(t string) string {
+	t = plain.Clean(t)
+	if s.ASCII {
+		return plain.ASCII(t)
+	}
+	return t
+}
+
+// filled is a table without the columns that hold nothing.
+func filled(t answer.Table) answer.Table {
+	out := answer.Table{Key: t.Key, Title: t.Title, Rows: make([][]any, len(t.Rows))}
+	for i, c := range t.Columns {
+		if slices.ContainsFunc(t.Rows, func(row []any) bool { return row[i] != nil }) {
+			out.Columns = append(out.Columns, c)
+			for r, row := range t.Rows {
+				out.Rows[r] = append(out.Rows[r], row[i])
+			}
+		}
+	}
+	return out
 }
 
 // statement is the question in prose with its values.

@@ -9,6 +9,7 @@ import (
 	"github.com/charmbracelet/x/exp/golden"
 
 	"dropcrest/ui/answer"
+	"dropcrest/ui/form"
 	"dropcrest/ui/scenario"
 )
 
@@ -131,7 +132,7 @@ func TestTabulate(t *testing.T) {
 			"maximum  1.500e-07  ...",
 			"x                -  ..."}},
 	} {
-		heads, body := tabulate(tab, c.w, d.model)
+		heads, body := form.Tabulate(tab, c.w, d.model.text)
 		if got := append(heads, body...); !slices.Equal(got, c.want) {
 			t.Errorf("%s:\n%s\nwant\n%s", name, strings.Join(got, "\n"), strings.Join(c.want, "\n"))
 		}
