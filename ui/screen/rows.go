@@ -20,6 +20,7 @@ type rows struct {
 	slot   int             // the chosen slot in it
 	scroll scroll
 	entry  *entry // a value being typed in its slot
+	adding bool   // it is the first text of a row to come
 	wrong  error  // why the last key was refused
 }
 
@@ -127,7 +128,7 @@ func (r *rows) press(k tea.KeyMsg, m *model) (panel, tea.Cmd) {
 	if r.entry != nil {
 		switch next, _ := r.entry.press(k, m); next := next.(type) {
 		case *rows:
-			r.entry = nil
+			r.entry, r.adding = nil, false
 		case *entry:
 			r.entry = next
 		}
@@ -247,6 +248,7 @@ func (r *rows) add(l scenario.RowList, m *model) {
 	form := formOf(l)
 	if form.typed {
 		r.entry = r.typed(l, m)
+		r.adding = r.entry != nil
 		return
 	}
 	if r.wrong = r.edit(m, scenario.RowList.Add); r.wrong == nil {

@@ -71,7 +71,11 @@ func (r *rows) body(l scenario.RowList, grid [][]scenario.Input, form rowForm, w
 			body = append(body, more...)
 		}
 	}
-	if l != nil && l.Len() == 0 {
+	switch {
+	case r.adding:
+		at = len(body)
+		body = append(body, fmt.Sprintf("  %2d  ", len(grid))+m.marked("<"+m.text(r.entry.field.show(w-10))+">"))
+	case l != nil && l.Len() == 0:
 		body = append(body, "      none: a adds one")
 	}
 	if form.shares && l.Len() > 1 {
@@ -100,7 +104,7 @@ func (r *rows) fill(sentence string, row int, inputs []scenario.Input, m *model)
 // slotText is a value as a slot, or the text being typed in its place.
 func (r *rows) slotText(row, slot int, in scenario.Input, m *model) string {
 	text := m.brief(in, shownTyped)
-	if row != r.row || slot != r.slot {
+	if row != r.row || slot != r.slot || r.adding {
 		return m.value("[" + text + "]")
 	}
 	if r.entry != nil {
