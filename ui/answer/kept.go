@@ -16,6 +16,7 @@ import (
 type Kept struct {
 	mu      sync.Mutex
 	matters []*matter // the last one used first
+	data    *keptData // nil: none
 }
 
 // mostKept is enough to go back and forth between neighbouring values.

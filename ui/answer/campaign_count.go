@@ -1,0 +1,110 @@
+package answer
+
+import (
+	"math"
+	"strings"
+
+	"dropcrest/atmos/aerosol"
+	"dropcrest/koehler/spectrum"
+	"dropcrest/ui/fieldfile"
+)
+
+// count is what was counted at each supersaturation, judged by the rules of quality.
+func (r *recorder) count(o *observation, s *fieldfile.Sample, air aerosol.Air) {
+	all := s.Values[fieldfile.CN].Or(math.NaN())
+	if !math.IsNaN(all) {
+		all *= r.standard(o, s.Basis[fieldfile.CN], air)
+	}
+	sized := math.NaN()
+	if o.sizes != nil {
+		sized = o.sizes.Number()
+	}
+	var points []spectrum.Observed
+	for _, c := range s.Counts {
+		if !c.N.OK() || !(c.At() > 0) {
+			continue
+		}
+		factor := r.standard(o, c.Basis, air)
+		if math.IsNaN(factor) {
+			continue
+		}
+		p := spectrum.Unknown()
+		p.Supersaturation, p.Activated = c.At(), c.N.X*factor
+		p.Uncertainty = countUncertainty(c) * factor
+		p.All, p.Sized = all, sized
+		p.AllUncertainty = s.Values[fieldfile.CNUncertainty].Or(math.NaN())
+		p.Drops = c.Counted.Or(math.NaN())
+		verdict := r.judge.Look(p)
+		if verdict.Rejected != "" {
+			o.reject(r.says(verdict.Rejected))
+			continue
+		}
+		points = append(points, p)
+		o.counts = append(o.counts, measurement{s: p.Supersaturation, count: p.Activated, uncertainty: p.Uncertainty,
+			flag: strings.Join(verdict.Flags, " "), predicted: math.NaN()})
+	}
+	r.cycle(o, points)
+}
+
+// countUncertainty is that of the file, else that of counting, 1/m³.
+func countUncertainty(c fieldfile.Count) float64 {
+	if c.Uncertainty.OK() {
+		return c.Uncertainty.X
+	}
+	if c.Counted.OK() && c.Counted.X > 0 {
+		return c.N.X / math.Sqrt(c.Counted.X)
+	}
+	return math.NaN()
+}
+
+// cycle applies the rule that counts must rise with supersaturation.
+func (r *recorder) cycle(o *observation, points []spectrum.Observed) {
+	flagged, rejected := r.judge.LookAtCycle(points)
+	for _, i := range flagged {
+		o.counts[i].flag = strings.TrimSpace(o.counts[i].flag + " " + spectrum.Monotonic)
+	}
+	out := map[int]bool{}
+	for _, i := range rejected {
+		out[i] = true
+		o.reject(r.says(spectrum.Monotonic))
+	}
+	kept := o.counts[:0]
+	for i, m := range o.counts {
+		if !out[i] {
+			kept = append(kept, m)
+		}
+	}
+	o.counts = kept
+}
+
+// reject counts a point that is left out.
+func (o *observation) reject(why string) {
+	for i := range o.rejected {
+		if o.rejected[i].Reason == why {
+			o.rejected[i].Count++
+			return
+		}
+	}
+	o.rejected = append(o.rejected, rejection{why, 1})
+}
+
+// says is a rule in words.
+func (r *recorder) says(key string) string {
+	for _, rule := range spectrum.Defaults() {
+		if rule.Key == key {
+			return rule.Says
+		}
+	}
+	return key
+}
+
+// rejected is what each rule has left out of all records.
+func (r *recorder) rejected() []rejection {
+	var out []rejection
+	for _, t := range r.judge.Tallies() {
+		if t.Rejected > 0 {
+			out = append(out, rejection{t.Rule.Says, t.Rejected})
+		}
+	}
+	return out
+}

@@ -1,0 +1,207 @@
+package answer
+
+import (
+	"math"
+	"slices"
+
+	"dropcrest/atmos"
+	"dropcrest/atmos/aerosol"
+	"dropcrest/koehler/spectrum"
+	"dropcrest/ui/fieldfile"
+	"dropcrest/ui/scenario"
+)
+
+// recorder makes observations of samples: one state of air, points judged, κ of the
+// composition that was measured.
+type recorder struct {
+	environment scenario.Scenario
+	judge       *spectrum.Judge
+	number      int
+	notes       []atmos.Note
+
+	grids []sizedGrid // of the bins so far
+}
+
+// sizedGrid is the grid of bins that samples share.
+type sizedGrid struct {
+	of   []fieldfile.Bin
+	low  *aerosol.Grid // of all, or of the smaller sizes where two instruments overlap
+	high *aerosol.Grid // nil: one instrument
+	cut  int           // first bin of the second one
+	err  error
+}
+
+// observe is the observation of a sample. Nothing of it is used again.
+func (r *recorder) observe(s *fieldfile.Sample) *observation {
+	r.number++
+	o := &observation{number: r.number, start: s.Start, end: s.End, kappa: math.NaN()}
+	air := aerosol.Air{Temperature: s.Values[fieldfile.Temperature].Or(math.NaN()), Pressure: s.Values[fieldfile.Pressure].Or(math.NaN())}
+	r.size(o, s, air)
+	r.count(o, s, air)
+	r.compose(o, s)
+	return o
+}
+
+func (r *recorder) note(o *observation, code, input, text string) {
+	n := atmos.Note{Code: code, Input: input, Text: text}
+	o.notes = append(o.notes, n)
+	if !slices.Contains(r.notes, n) {
+		r.notes = append(r.notes, n)
+	}
+}
+
+// standard is the factor that brings a concentration to 273.15 K and 1013.25 hPa,
+// NaN where the state of the air would have to be known and is not.
+func (r *recorder) standard(o *observation, basis fieldfile.Basis, air aerosol.Air) float64 {
+	switch basis {
+	case fieldfile.Standard:
+		return 1
+	case fieldfile.Unstated:
+		r.note(o, "air-not-stated", "data", "The data do not say at which state of air a number concentration is: 273.15 K and 1013.25 hPa are taken. "+
+			"A line of the mapping with \"at ambient\" says otherwise.")
+		return 1
+	}
+	if air.Check() != nil {
+		r.note(o, "air-not-known", "data", "Concentrations at ambient air cannot be brought to standard air where temperature or pressure is missing: those are left out.")
+		return math.NaN()
+	}
+	return air.To(aerosol.StandardAir())
+}
+
+// widestGap is the number of neighbouring sizes without a value that is bridged.
+const widestGap = 2
+
+// size is the size distribution of a sample.
+func (r *recorder) size(o *observation, s *fieldfile.Sample, air aerosol.Air) {
+	if len(s.Bins) < 2 {
+		o.noSizes = "no sizes were measured"
+		return
+	}
+	g := r.grid(s.Bins)
+	if g.err != nil {
+		o.noSizes = g.err.Error()
+		return
+	}
+	values := make([]float64, len(s.Sizes))
+	for i, c := range s.Sizes {
+		b := s.Bins[i]
+		switch {
+		case c.State == fieldfile.Below:
+			values[i] = 0
+		default:
+			values[i] = c.Or(math.NaN()) * r.standard(o, b.Basis, air)
+		}
+	}
+	low, err := r.bins(o, g.low, values[:g.cut], s.Bins[:g.cut])
+	if err != nil {
+		o.noSizes = err.Error()
+		return
+	}
+	o.sizes = low
+	if g.high == nil {
+		return
+	}
+	high, err := r.bins(o, g.high, values[g.cut:], s.Bins[g.cut:])
+	if err == nil {
+		o.sizes, err = aerosol.Join(low, high, joint(g.low, g.high))
+	}
+	if err != nil {
+		o.sizes, o.noSizes = nil, err.Error()
+	}
+}
+
+// bins is a row of values on its grid, small gaps bridged.
+func (r *recorder) bins(o *observation, g *aerosol.Grid, values []float64, of []fieldfile.Bin) (*aerosol.Bins, error) {
+	as := aerosol.PerLog10
+	if of[0].PerBin {
+		as = aerosol.Counts
+	}
+	gaps, err := aerosol.Fill(g, values, widestGap)
+	if err != nil {
+		return nil, err
+	}
+	if len(gaps.Trimmed) > 0 {
+		r.note(o, "sizes-missing-at-ends", "data", "Where sizes are missing at the ends of a distribution, no particles are taken to be there.")
+	}
+	return aerosol.NewBins(g, values, as)
+}
+
+// grid is the grid of the bins, made once for all samples that share them.
+func (r *recorder) grid(bins []fieldfile.Bin) *sizedGrid {
+	for i := range r.grids {
+		if g := &r.grids[i]; len(g.of) == len(bins) && (&g.of[0] == &bins[0] || slices.Equal(g.of, bins)) {
+			return g
+		}
+	}
+	g := sizedGrid{of: slices.Clone(bins), cut: len(bins)}
+	for i := 1; i < len(bins); i++ {
+		if bins[i].Diameter <= bins[i-1].Diameter {
+			g.cut = i // a second instrument begins
+			break
+		}
+	}
+	if g.low, g.err = gridOf(bins[:g.cut]); g.err == nil && g.cut < len(bins) {
+		g.high, g.err = gridOf(bins[g.cut:])
+	}
+	r.grids = append(r.grids, g)
+	return &r.grids[len(r.grids)-1]
+}
+
+// gridOf takes the limits that the file gives, else the geometric middle between
+// neighbours.
+func gridOf(bins []fieldfile.Bin) (*aerosol.Grid, error) {
+	edges := make([]float64, 0, len(bins)+1)
+	middles := make([]float64, 0, len(bins))
+	for i, b := range bins {
+		middles = append(middles, b.Diameter)
+		const same = 1e-3 // relative: limits are printed with few digits
+		if b.Lower > 0 && b.Upper > b.Lower && (i == 0 || len(edges) == i+1 && math.Abs(edges[i]/b.Lower-1) < same) {
+			if i == 0 {
+				edges = append(edges, b.Lower)
+			}
+			edges = append(edges, b.Upper)
+		}
+	}
+	if len(edges) == len(bins)+1 {
+		return aerosol.NewGrid(edges)
+	}
+	return aerosol.GridAround(middles)
+}
+
+// joint is where one instrument hands over to the other: the middle of what both
+// measure, or of the gap between them.
+func joint(low, high *aerosol.Grid) float64 {
+	a, b := low.Edges(), high.Edges()
+	return math.Sqrt(a[len(a)-1] * b[0])
+}
+
+// compose is κ of what was measured of the composition.
+func (r *recorder) compose(o *observation, s *fieldfile.Sample) {
+	if k := s.Values[fieldfile.Kappa]; k.OK() {
+		o.kappa, o.kappaFrom = k.X, "kappa of the data"
+		return
+	}
+	known := false
+	mass := func(q fieldfile.Quantity) float64 {
+		c := s.Values[q]
+		if c.State == fieldfile.Below {
+			return 0
+		}
+		known = known || c.OK() && q != fieldfile.BlackCarbon
+		return max(c.Or(0), 0) // noise about zero is no mass
+	}
+	ions := spectrum.Ions{Organic: mass(fieldfile.Organic), Sulfate: mass(fieldfile.Sulfate), Nitrate: mass(fieldfile.Nitrate),
+		Ammonium: mass(fieldfile.Ammonium), Chloride: mass(fieldfile.Chloride), BlackCarbon: mass(fieldfile.BlackCarbon)}
+	if !known {
+		return
+	}
+	mixed, err := spectrum.Mix(ions, spectrum.CommonSpecies())
+	if err != nil {
+		r.note(o, "composition-not-usable", "data", "The composition of a record cannot be used: "+reason(err)+".")
+		return
+	}
+	o.kappa, o.kappaFrom, o.species = mixed.Kappa, "the composition that was measured, ions paired and mixed by volume", mixed.Parts
+	for _, n := range mixed.Notes {
+		r.note(o, n.Code, "data", n.Text)
+	}
+}

@@ -1,0 +1,187 @@
+package answer
+
+import (
+	"context"
+	"encoding/csv"
+	"errors"
+	"io"
+	"math"
+	"os"
+	"path/filepath"
+	"strconv"
+	"strings"
+	"testing"
+	"time"
+
+	"dropcrest/ui/scenario"
+)
+
+const stationFolder = "../../testdata/demo"
+
+func stationEnv() Env {
+	return Env{Demo: os.DirFS(stationFolder), Version: "test", Open: func(name string) (io.ReadCloser, error) { return os.Open(name) }}
+}
+
+// truthRow is what is behind the demo in half an hour.
+type truthRow struct {
+	start, end time.Time
+	number     float64 // 1/m³
+	kappa      float64
+	ccn        []float64 // 1/m³, at 0.1, 0.2, 0.4, 0.6, 1.0 %
+}
+
+func truthOfDemo(t *testing.T) []truthRow {
+	t.Helper()
+	f, err := os.Open(filepath.Join(stationFolder, "truth.csv"))
+	if err != nil {
+		t.Fatal(err)
+	}
+	defer f.Close()
+	lines, err := csv.NewReader(f).ReadAll()
+	if err != nil {
+		t.Fatal(err)
+	}
+	number := func(text string) float64 {
+		x, err := strconv.ParseFloat(text, 64)
+		if err != nil {
+			t.Fatal(err)
+		}
+		return x
+	}
+	var out []truthRow
+	for _, l := range lines[1:] {
+		var r truthRow
+		if r.start, err = time.Parse(time.RFC3339, l[0]); err != nil {
+			t.Fatal(err)
+		}
+		if r.end, err = time.Parse(time.RFC3339, l[1]); err != nil {
+			t.Fatal(err)
+		}
+		r.number, r.kappa = (number(l[2])+number(l[5]))*1e6, number(l[8])
+		for _, x := range l[9:14] {
+			r.ccn = append(r.ccn, number(x)*1e6)
+		}
+		out = append(out, r)
+	}
+	return out
+}
+
+// The records of the demo are what its truth says, within the noise of counting.
+func TestCampaignOfDemo(t *testing.T) {
+	truth := truthOfDemo(t)
+	s := scenario.Default()
+	s.Every = scenario.Measure{Number: 1800}
+	chi, counts, sized, composed := 0.0, 0, 0, 0
+	facts, err := campaign(context.Background(), stationEnv(), s, func(o *observation) error {
+		for _, w := range truth {
+			if !w.start.Equal(o.start) {
+				continue
+			}
+			if o.sizes != nil {
+				sized++
+				if ratio := o.sizes.Number() / w.number; math.Abs(ratio-1) > 0.06 && !strings.HasPrefix(w.start.Format(time.RFC3339), "2026-03-15T10") {
+					t.Errorf("%v: %.4g particles, the truth is %.4g", o.start, o.sizes.Number(), w.number)
+				}
+			}
+			if !math.IsNaN(o.kappa) {
+				composed++
+				if math.Abs(o.kappa-w.kappa) > 0.03 {
+					t.Errorf("%v: kappa %.3f, the truth is %.3f", o.start, o.kappa, w.kappa)
+				}
+			}
+			for _, c := range o.counts {
+				for i, level := range []float64{0.001, 0.002, 0.004, 0.006, 0.01} {
+					if math.Abs(c.s/level-1) < 0.01 && c.uncertainty > 0 {
+						counts++
+						chi += math.Pow((c.count-w.ccn[i])/c.uncertainty, 2)
+					}
+				}
+			}
+		}
+		return nil
+	})
+	if err != nil {
+		t.Fatal(err)
+	}
+	if facts.records != 96 || sized < 90 || composed < 90 || counts < 440 {
+		t.Errorf("%d records, %d sized, %d composed, %d counts", facts.records, sized, composed, counts)
+	}
+	if reduced := chi / float64(counts); reduced < 0.7 || reduced > 1.4 {
+		t.Errorf("reduced χ² of the counts against the truth is %.2f", reduced)
+	}
+	if len(facts.mapping) < 20 {
+		t.Errorf("the mapping has %d lines", len(facts.mapping))
+	}
+}
+
+// A record by its number is the one that streaming hands out, and is kept.
+func TestOneRecord(t *testing.T) {
+	env := stationEnv()
+	env.Kept = &Kept{}
+	s := scenario.Default()
+	var tenth observation
+	if _, err := campaign(context.Background(), env, s, func(o *observation) error {
+		if o.number == 10 {
+			tenth = *o
+		}
+		return nil
+	}); err != nil {
+		t.Fatal(err)
+	}
+	for range 2 {
+		o, facts, err := oneRecord(context.Background(), env, s, 10)
+		if err != nil {
+			t.Fatal(err)
+		}
+		if !o.start.Equal(tenth.start) || o.sizes.Number() != tenth.sizes.Number() || facts.records < 100 {
+			t.Errorf("record 10 begins %v of %d records, want %v", o.start, facts.records, tenth.start)
+		}
+	}
+	_, _, err := oneRecord(context.Background(), env, s, 100000)
+	var in *InputError
+	if !errors.As(err, &in) || in.Input != "record" {
+		t.Errorf("a record that is not there: %v", err)
+	}
+}
+
+// Files that cannot be read say which, where, and what would be right.
+func TestDataErrors(t *testing.T) {
+	dir := t.TempDir()
+	write := func(name, text string) string {
+		file := filepath.Join(dir, name)
+		if err := os.WriteFile(file, []byte(text), 0o644); err != nil {
+			t.Fatal(err)
+		}
+		return file
+	}
+	for name, c := range map[string]struct {
+		file  string
+		line  string
+		input string
+		says  string
+	}{
+		"missing": {filepath.Join(dir, "none.csv"), "", "data", "no such file"},
+		"empty":   {write("empty.csv", ""), "", "data", "empty"},
+		"no name": {"", "", "data", "no name"},
+		"map":     {write("a.csv", "time,ccn (cm-3)\n2026-03-14T00:00:00Z,5\n"), "none=ccn @0.3%", "map", "none"},
+		"comma":   {write("b.csv", "time;ccn at 0.3% (cm-3)\n2026-03-14T00:00:00Z;5,5\n"), "", "data", "b.csv"},
+	} {
+		t.Run(name, func(t *testing.T) {
+			s := scenario.Default()
+			s.Data = []scenario.DataFile{{Name: c.file}}
+			if c.line != "" {
+				s.Map = []scenario.MapLine{{Text: c.line}}
+			}
+			_, err := campaign(context.Background(), stationEnv(), s, func(*observation) error { return nil })
+			var in *InputError
+			if !errors.As(err, &in) || in.Input != c.input || !strings.Contains(err.Error(), c.says) {
+				t.Errorf("error %v, want one on %s that says %q", err, c.input, c.says)
+			}
+		})
+	}
+	ctx, cancel := context.WithCancel(context.Background())
+	cancel()
+	if _, err := campaign(ctx, stationEnv(), scenario.Default(), func(*observation) error { return nil }); !errors.Is(err, context.Canceled) {
+		t.Errorf("stopped: %v", err)
+	}
+}
