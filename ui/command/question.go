@@ -89,7 +89,7 @@ func (w world) ask(ctx context.Context, q answer.Question, s scenario.Scenario, 
 	env.Columns, env.Row = o.rows(stream, as)
 	meter := w.newMeter(o.out, form.Streams(as))
 	env.Progress = meter.tell
-	a, err := q.Ask(ctx, env, s)
+	a, err := untilStopped(ctx, func() (answer.Answer, error) { return q.Ask(ctx, env, s) })
 	meter.end()
 	if err := interrupted(ctx); err != nil {
 		return err
@@ -115,6 +115,30 @@ func (w world) ask(ctx context.Context, q answer.Question, s scenario.Scenario, 
 		}
 	}
 	return out.commit()
+}
+
+// grace is how long a question that is to be stopped may take to notice it.
+const grace = time.Second
+
+// untilStopped asks, and does not wait for long once the context has ended: a
+// question may be waiting for a file that does not come.
+func untilStopped(ctx context.Context, ask func() (answer.Answer, error)) (a answer.Answer, err error) {
+	answered := make(chan struct{})
+	go func() {
+		defer close(answered)
+		a, err = ask()
+	}()
+	select {
+	case <-answered:
+		return a, err
+	case <-ctx.Done():
+	}
+	select {
+	case <-answered:
+		return a, err
+	case <-time.After(grace):
+		return answer.Answer{}, ctx.Err()
+	}
 }
 
 // rows are where rows of records go that are found one after the other: into the
