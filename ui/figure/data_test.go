@@ -65,6 +65,12 @@ func closure() Figure {
 	return f
 }
 
+// free is a figure that need not show zero.
+func free(f Figure) Figure {
+	f.Y.Free = true
+	return f
+}
+
 func dataPictures() map[string]Figure {
 	held := invented(400, true)
 	other := invented(900, true)
@@ -78,7 +84,8 @@ func dataPictures() map[string]Figure {
 	linear.X.Log, linear.Y.Log = false, false
 	return map[string]Figure{
 		"spectrum": invented(400, true), "spectrum linear": linear, "spectrum held": held, "isolines": isolines(), "closure": closure(),
-		"decades": {Y: Axis{Log: true}, Points: []Point{{X: 1, Y: 1e-5, XLow: 1, XHigh: 1}, {X: 2, Y: 1e12, XLow: 2, XHigh: 2, YLow: -1, YHigh: 1e13}}},
+		"closure free": free(closure()),
+		"decades":      {Y: Axis{Log: true}, Points: []Point{{X: 1, Y: 1e-5, XLow: 1, XHigh: 1}, {X: 2, Y: 1e12, XLow: 2, XHigh: 2, YLow: -1, YHigh: 1e13}}},
 	}
 }
 
@@ -153,6 +160,29 @@ func TestDataFrameStaysStill(t *testing.T) {
 		}
 		if kept < 350 {
 			t.Errorf("log %t: kept %d times of 400", log, kept)
+		}
+	}
+}
+
+// Data that need not show zero fill the height, and zero may still be among them.
+func TestFreeRows(t *testing.T) {
+	r := rand.New(rand.NewPCG(11, 12))
+	for range 5000 {
+		at := (2*r.Float64() - 1) * math.Pow(10, 12*r.Float64()-6)
+		width := math.Abs(at) * math.Pow(10, 6*r.Float64()-5)
+		rows := 2 + r.IntN(60)
+		lo, hi, step := freeRows(at, at+width, rows)
+		fr := Frame{XMax: 1, YMin: lo, YMax: hi, YStep: step}
+		if fr.rows() != rows || lo > at+1e-6*step || hi < at+width-1e-6*step || !isRound(step, 1, 2, 2.5, 5) {
+			t.Fatalf("%g and %g more in %d rows: %+v", at, width, rows, fr)
+		}
+		if rows > 6 && hi-lo > 4*width {
+			t.Fatalf("%g and %g more in %d rows use a part of %+v only", at, width, rows, fr)
+		}
+	}
+	for _, v := range []float64{1, 0, -3, 1e9} {
+		if lo, hi, step := freeRows(v, v, 10); !(lo <= v && v <= hi && lo < hi && step > 0) {
+			t.Errorf("%g alone: %g to %g by %g", v, lo, hi, step)
 		}
 	}
 }
@@ -290,7 +320,7 @@ func TestEveryDataFigureAtEverySize(t *testing.T) {
 	for range 800 {
 		f := anyFigure(r)
 		f.X.Time = !f.X.Log && r.IntN(2) == 0
-		f.Y.Log = r.IntN(2) == 0
+		f.Y.Log, f.Y.Free = r.IntN(2) == 0, r.IntN(2) == 0
 		for range r.IntN(20) {
 			p := Point{X: number(), Y: number(), XLow: number(), XHigh: number(), YLow: number(), YHigh: number()}
 			if r.IntN(3) == 0 {

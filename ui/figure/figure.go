@@ -18,6 +18,7 @@ type Axis struct {
 	Says string // "wet radius"
 	Unit string // "µm"
 	Log  bool
+	Free bool // of Y: data need not show zero, such as ratios about 1
 	// Time says that values are moments, in seconds since 1970-01-01 UTC; ticks are
 	// at round times of UTC. Only for X, and not with Log.
 	Time bool

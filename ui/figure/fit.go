@@ -82,6 +82,8 @@ func (fr Frame) withRows(rows int) Frame {
 	case fr.rows() == rows:
 	case fr.YLog:
 		fr.YMin, fr.YMax, fr.YStep = logRows(fr.YMin, fr.YMax, rows)
+	case fr.YMin > 0 || fr.YMax < 0:
+		fr.YMin, fr.YMax, fr.YStep = freeRows(fr.YMin, fr.YMax, rows)
 	default:
 		fr.YMin, fr.YMax, fr.YStep = roundRows(fr.YMin, fr.YMax, rows)
 	}
@@ -91,6 +93,7 @@ func (fr Frame) withRows(rows int) Frame {
 // needs is what a figure asks of its frame.
 type needs struct {
 	log, ylog   bool
+	free        bool    // zero need not be seen
 	crested     bool    // there are lines with Crest set
 	low, high   float64 // all extrema, each line from -0.5 times its crest
 	deepest     float64 // the lowest that an old frame must still show
@@ -153,6 +156,10 @@ func (n needs) frame(rows int) Frame {
 	fr.XMin, fr.XMax = n.across()
 	if fr.YLog = n.ylog; n.ylog {
 		fr.YMin, fr.YMax, fr.YStep = logRows(n.low, n.high, rows)
+		return fr
+	}
+	if n.free {
+		fr.YMin, fr.YMax, fr.YStep = freeRows(n.low, n.high, rows)
 		return fr
 	}
 	low, high := math.Min(n.low, 0), math.Max(n.high, 0)

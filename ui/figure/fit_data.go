@@ -65,7 +65,7 @@ func needsOfAll(f Figure) needs {
 
 // dataNeeds makes needs of the extents of lines and points.
 func dataNeeds(f Figure, x, lines, points extent) needs {
-	n := needs{log: f.X.Log, ylog: f.Y.Log}
+	n := needs{log: f.X.Log, ylog: f.Y.Log, free: f.Y.Free && !f.Y.Log}
 	switch {
 	case !x.some && f.X.Time:
 		x = extent{0, hour, true}
@@ -103,6 +103,9 @@ func (n needs) keepsData(fr Frame) bool {
 		return n.low >= fr.YMin*(1-least) && n.high <= fr.YMax*(1+least) && used >= leastUse*math.Log10(fr.YMax/fr.YMin)-least
 	}
 	used := math.Max(n.high, 0) - math.Min(n.low, 0)
+	if n.free {
+		used = n.high - n.low
+	}
 	return n.low >= fr.YMin && n.high <= fr.YMax && used >= leastUse*(fr.YMax-fr.YMin)*(1-least)
 }
 

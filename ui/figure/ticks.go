@@ -52,6 +52,24 @@ func roundRows(low, high float64, rows int) (lo, hi, step float64) {
 	return tidy(-float64(steps)*step, step), 0, step
 }
 
+// freeRows is roundRows without the need to show zero.
+func freeRows(low, high float64, rows int) (lo, hi, step float64) {
+	if least := 1e-6 * math.Max(math.Abs(low), math.Abs(high)); !(high-low > least) {
+		room := math.Max(math.Abs(low)/10, 1e-90) // one value: a tenth of it on both sides
+		low, high = low-room, high+room
+	}
+	steps := float64(rows - 1)
+	step = (high - low) / steps
+	for {
+		step = roundUp(step, 1, 2, 2.5, 5, 10)
+		first := math.Floor(low/step + 1e-9)
+		if first+steps >= high/step-1e-9 {
+			return tidy(first*step, step), tidy((first+steps)*step, step), step
+		}
+		step *= 1.01
+	}
+}
+
 // twoDigits rounds a positive v to two significant digits by floor or ceil.
 func twoDigits(v float64, round func(float64) float64) float64 {
 	n := int(math.Floor(math.Log10(v))) - 1

@@ -59,7 +59,7 @@ func (m *model) change(p scenario.Path, step bool, f func(*scenario.Scenario) er
 		return errs[0]
 	}
 	before := m.scenario
-	if err := m.take(next); err != nil {
+	if err := m.take(next, m.unsolved != ""); err != nil {
 		return lackOf(err, next, f)
 	}
 	m.history.Add(p, before, next, step)
@@ -76,8 +76,10 @@ func (m *model) whatChanged(before, now scenario.Scenario) string {
 }
 
 // take makes next the scenario, with its answer if that is there within a frame,
-// else with work that will bring it. After an error nothing has changed.
-func (m *model) take(next scenario.Scenario) error {
+// else with work that will bring it. After an error nothing has changed. A
+// scenario without an answer is taken only with anyway: when there is no answer
+// now, so that it can be put right in several steps, and when it was there before.
+func (m *model) take(next scenario.Scenario, anyway bool) error {
 	next.Use(m.env.Substances)
 	if !m.question.IsLive(next) {
 		m.scenario = next
@@ -86,11 +88,15 @@ func (m *model) take(next scenario.Scenario) error {
 		return nil
 	}
 	a, err := m.ask(next)
-	if err != nil {
+	if err != nil && !anyway {
 		return err
 	}
-	m.scenario = next
+	m.stopWork()
+	m.scenario, m.work.old = next, false
 	m.accept(a)
+	if err != nil {
+		m.unsolved = err.Error()
+	}
 	m.changed()
 	return nil
 }
@@ -134,17 +140,12 @@ func before(e scenario.Entry) scenario.Scenario { return e.Before }
 func after(e scenario.Entry) scenario.Scenario  { return e.After }
 
 func (m *model) travel(did, nothing string, move func() (scenario.Entry, bool), to func(scenario.Entry) scenario.Scenario) {
-	past, future := m.history.Past, m.history.Future
 	e, ok := move()
 	if !ok {
 		m.say(nothing)
 		return
 	}
-	if err := m.take(to(e).Clone()); err != nil {
-		m.history.Past, m.history.Future = past, future
-		m.say(err.Error())
-		return
-	}
+	_ = m.take(to(e).Clone(), true) // it was there before, with an answer or without
 	if e.Path != "" {
 		m.jump(e.Path)
 	}

@@ -49,7 +49,7 @@ func (m *model) jump(p scenario.Path) {
 			return
 		}
 	}
-	if slices.Contains(m.slots(), answer.Further) {
+	if m.question.LooksAt(list) && slices.Contains(m.slots(), answer.Further) {
 		m.cursor = answer.Further
 	}
 }

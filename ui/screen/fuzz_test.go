@@ -12,7 +12,7 @@ import (
 // random hand types must stay in the folder of the test.
 var alphabet = []string{
 	"left", "right", "up", "down", "home", "end", "pgup", "pgdown", "enter", "esc", "tab", "shift+tab", "space", "backspace", "delete",
-	"0", "1", "5", "9", ".", "-", "+", "n", "m", "k", "e", "a", "d", "o", "x", "t", "w", "i", "?", "u", "U", "l", "p", "z", "%", "µ", "é", "世",
+	"0", "1", "5", "9", ".", "-", "+", "n", "m", "k", "e", "a", "d", "o", "x", "t", "w", "i", "?", "u", "U", "l", "p", "z", "v", "s", ",", "~", "%", "µ", "é", "世",
 	"[B", "[", "OB", "50", "paste:0.25 um", "paste:\x1b[31mred\x07", "paste:one\ntwo\ttabs\u202e", "uu", "aaaa", "paste:", "resize", "alt",
 }
 

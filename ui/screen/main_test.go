@@ -1,7 +1,9 @@
 package screen
 
 import (
+	"io/fs"
 	"os"
+	"path/filepath"
 	"strings"
 	"testing"
 
@@ -31,10 +33,19 @@ var terminals = map[string]map[string]string{
 func onTerminal(name string) Options {
 	return Options{
 		Scenario: scenario.Default(),
-		Env:      answer.Env{Substances: solutes.Standard()},
+		Env:      answer.Env{Substances: solutes.Standard(), Demo: demo},
 		Getenv:   func(key string) string { return terminals[name][key] },
 	}
 }
+
+// demo are the files of the invented station, wherever a test works.
+var demo = func() fs.FS {
+	dir, err := filepath.Abs("../../testdata/demo")
+	if err != nil {
+		panic(err)
+	}
+	return os.DirFS(dir)
+}()
 
 // opened is the screen in a window.
 func opened(o Options, w, h int) *model {

@@ -13,6 +13,10 @@ import (
 // statement contains it.
 const slotMark = "\x00"
 
+// mostClauses is the number of lines that clauses may have for themselves while
+// the window is low.
+const mostClauses = 5
+
 // statement is the question in prose in lines of at most w columns. A clause
 // begins a new line where there is room for that; the chosen slot is <value>, the others are [value].
 func (m *model) statement(w int) []string {
@@ -23,7 +27,7 @@ func (m *model) statement(w int) []string {
 		tokens := m.tokens(clause, w)
 		lines, all = append(lines, flow(tokens, w)...), append(all, tokens...)
 	}
-	if !m.roomy() {
+	if !m.roomy() || !m.airy() && len(lines) > mostClauses {
 		lines = flow(all, w)
 	}
 	return indented(lines)

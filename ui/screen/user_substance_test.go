@@ -75,7 +75,11 @@ func TestSessionOfLostSubstance(t *testing.T) {
 		t.Errorf("another substance: %v, %s", err, m.unsolved)
 	}
 	press(m, "u")
-	if m.scenario.Components[0].Substance != "sodium chloride" || !strings.Contains(m.View(), "my acid") {
-		t.Errorf("undo leads to %v, which has no answer, or does not say why:\n%s", m.scenario.Components, m.View())
+	if m.scenario.Components[0].Substance != "my acid" || !strings.Contains(m.View(), `no substance "my acid" in the catalogue`) {
+		t.Errorf("undo leads to %v, or does not say why there is no answer:\n%s", m.scenario.Components, m.View())
+	}
+	press(m, "U")
+	if m.scenario.Components[0].Substance != "sodium chloride" || m.unsolved != "" {
+		t.Errorf("redo leads to %v: %s", m.scenario.Components, m.unsolved)
 	}
 }

@@ -119,7 +119,7 @@ const leastShared = 6
 
 // under is picture, finding and held curves in h lines.
 func (m *model) under(h int) []string {
-	foot := m.finding(m.width)
+	foot := m.finding(m.width, max(h-leastPicture, leastFinding))
 	if m.roomy() {
 		if line := m.heldLine(min(m.width, textWidth) - 2); line != "" {
 			foot = append(foot, " "+line)
@@ -144,21 +144,33 @@ func padTo(lines []string, h int) []string {
 // screen: the picture must not change its height with every word.
 const leastFinding = 3
 
+// leastPicture is the number of lines that the picture has on a roomy screen, its
+// title included, whatever there is to say.
+const leastPicture = 8
+
 // finding is the answer in words in lines of at most w columns. When the cursor
-// is on it, it stands in <>.
-func (m *model) finding(w int) []string {
-	sentences := m.answer.Finding
+// is on it, it stands in <>. Sentences that do not fit into most lines are left to
+// i; the first one always stands.
+func (m *model) finding(w, most int) []string {
+	n := len(m.answer.Finding)
+	lines := m.findingOf(n, w)
+	for n > 1 && len(lines) > most {
+		n--
+		lines = m.findingOf(n, w)
+	}
+	return lines
+}
+
+// findingOf is the finding with its first n sentences.
+func (m *model) findingOf(n, w int) []string {
+	sentences := m.answer.Finding[:n]
 	if m.unsolved != "" {
 		sentences = []string{"There is no answer: " + m.unsolved}
 	}
 	if !m.roomy() {
 		sentences = sentences[:min(len(sentences), 1)]
 	}
-	if n := m.unsaid(); n > 0 && m.roomy() && m.unsolved == "" {
-		says := "1 more note"
-		if n > 1 {
-			says = fmt.Sprintf("%d more notes", n)
-		}
+	if says := m.moreToSay(n); says != "" && m.roomy() && m.unsolved == "" {
 		sentences = append(slices.Clone(sentences), "("+says+": End, i)")
 	}
 	text := m.text(strings.Join(sentences, " "))
@@ -174,6 +186,19 @@ func (m *model) finding(w int) []string {
 		lines = padTo(lines, leastFinding)
 	}
 	return lines
+}
+
+// moreToSay names what the finding leaves to i when it has n sentences.
+func (m *model) moreToSay(n int) string {
+	switch notes := m.unsaid(); {
+	case n < len(m.answer.Finding):
+		return "more"
+	case notes > 1:
+		return fmt.Sprintf("%d more notes", notes)
+	case notes == 1:
+		return "1 more note"
+	}
+	return ""
 }
 
 // unsaid is the number of notes that the finding leaves to i.

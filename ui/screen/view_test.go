@@ -69,6 +69,7 @@ func states() map[string]struct {
 		s.Components = append(s.Components, scenario.Component{Substance: "sodium chloride", Share: 0.25, Kappa: scenario.Measure{Word: "catalogue"},
 			Density: scenario.Measure{Word: "catalogue"}, MolarMass: scenario.Measure{Word: "catalogue"}, Ions: scenario.Measure{Word: "catalogue"}})
 	}
+	modes := func(s *scenario.Scenario) { s.Population, s.Fit = "modes", "erf2" }
 	giant := func(s *scenario.Scenario) { s.DryDiameter, s.Temperature, s.RelativeHumidity = 9e-6, 240, 0.3 }
 	return map[string]state{
 		"start":      {"", nil},
@@ -89,6 +90,18 @@ func states() map[string]struct {
 		"help":       {"?", nil},
 		"long":       {"", long},
 		"long held":  {"space end", long},
+
+		"spectrum":         {"tab", nil},
+		"spectrum held":    {"tab space n space v tab space tab end", nil},
+		"spectrum sizes":   {"tab v v n", nil},
+		"spectrum files":   {"tab right enter a m tab", nil},
+		"spectrum columns": {"tab end left enter tab tab enter", nil},
+		"spectrum series":  {"tab end left left left enter", nil},
+		"spectrum write":   {"tab v w tab", nil},
+		"spectrum table":   {"tab t right", nil},
+		"modes":            {"tab", modes},
+		"mode rows":        {"tab right enter a right right", modes},
+		"modes held":       {"tab right right right space down v o end i", modes},
 		"giant":      {"", giant},
 	}
 }
@@ -120,6 +133,9 @@ func everyWindow(t *testing.T, widths, heights []int) {
 					t.Fatalf("no answer: %s", m.unsolved)
 				}
 				press(m, s.keys)
+				if m.unsolved != "" {
+					t.Fatalf("no answer after %s: %s", s.keys, m.unsolved)
+				}
 				for _, w := range widths {
 					for _, h := range heights {
 						m.Update(tea.WindowSizeMsg{Width: w, Height: h})
@@ -216,11 +232,11 @@ func TestUnsaidNotesAreCounted(t *testing.T) {
 	o := onTerminal("plain")
 	o.Scenario.Temperature = 243.15
 	m := opened(o, 80, 24)
-	text := strings.Join(m.finding(200), " ")
+	text := strings.Join(m.finding(200, 99), " ")
 	if n := len(m.answer.Notes) - 1; n < 2 || !strings.HasSuffix(text, fmt.Sprintf("(%d more notes: End, i)", n)) {
 		t.Errorf("%d notes, finding %q", len(m.answer.Notes), text)
 	}
-	if start := strings.Join(opened(onTerminal("plain"), 80, 24).finding(80), " "); strings.Contains(start, "more note") {
+	if start := strings.Join(opened(onTerminal("plain"), 80, 24).finding(80, 99), " "); strings.Contains(start, "more note") {
 		t.Errorf("notes of a particle that has none: %q", start)
 	}
 }
