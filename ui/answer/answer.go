@@ -52,8 +52,8 @@ type Question struct {
 	Frame func(s scenario.Scenario, f figure.Figure, last figure.Frame, h int) (figure.Frame, bool)
 	// Formats are the forms besides text, csv, json and figure files.
 	Formats []string
-	// Tabled are the keys of the tables that the text form shows.
-	Tabled []string
+	// Tabled are the keys of the tables that the text form shows; nil: none.
+	Tabled func(Answer) []string
 }
 
 // IsLive reports whether the question is answered at once for that scenario.

@@ -118,7 +118,7 @@ func (w world) ask(ctx context.Context, q answer.Question, s scenario.Scenario, 
 }
 
 // grace is how long a question that is to be stopped may take to notice it.
-const grace = time.Second
+const grace = 500 * time.Millisecond
 
 // untilStopped asks, and does not wait for long once the context has ended: a
 // question may be waiting for a file that does not come.

@@ -182,8 +182,12 @@ func (s Sheet) writeText(b *bytes.Buffer) {
 		b.WriteString(strings.Join(figure.Lines(cells), "\n") + "\n\n")
 	}
 	say(strings.Join(s.Answer.Finding, " "))
+	var tabled []string
+	if s.Question.Tabled != nil {
+		tabled = s.Question.Tabled(s.Answer)
+	}
 	for _, t := range s.Answer.Tables {
-		if slices.Contains(s.Question.Tabled, t.Key) {
+		if slices.Contains(tabled, t.Key) {
 			b.WriteByte('\n')
 			say(t.Title)
 			heads, rows := Tabulate(filled(t), s.Width, s.text)

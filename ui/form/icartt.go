@@ -37,11 +37,11 @@ type wideRecord struct {
 // measured stands before what is predicted, so that a reader that looks for counts
 // finds those.
 var leveled = []struct {
-	key, name, long string // name: the start of the column's; "": as the quantity is called
+	key, name, long string // name: the start of the column's; long: "": as the quantity is called
 	quantity        fieldfile.Quantity
 }{
-	{"measured_ccn_per_m3", "", "", fieldfile.CCN},
-	{"uncertainty", "", "", fieldfile.CCNUncertainty},
+	{"measured_ccn_per_m3", "ccn", "", fieldfile.CCN},
+	{"uncertainty", "ccn_uncertainty", "", fieldfile.CCNUncertainty},
 	{"ccn_per_m3", "predicted_ccn", "predicted number concentration of cloud condensation nuclei", fieldfile.CCN},
 	{"ratio", "ratio", "predicted over measured CCN", fieldfile.Number},
 	{"kappa_by_count", "kappa_by_count", "hygroscopicity that the count implies", fieldfile.Number},
@@ -76,7 +76,7 @@ func (w *icarttRows) row(row []any) error {
 		return err
 	}
 	if n := len(w.records); n == 0 || !w.records[n-1].start.Equal(start) {
-		w.records = append(w.records, wideRecord{start: start, end: end, kappa: w.number(row, "kappa")})
+		w.records = append(w.records, wideRecord{start, end, w.number(row, "kappa"), make([]float64, 0, len(w.levels)*len(leveled))})
 	}
 	s := w.number(row, "supersaturation_percent")
 	if math.IsNaN(s) {
@@ -160,8 +160,9 @@ func (w *icarttRows) outputs(order []int) []fieldfile.Output {
 		s := strconv.FormatFloat(w.levels[level], 'g', 6, 64)
 		for _, q := range leveled {
 			o := fieldfile.Output{Role: fieldfile.Role{Quantity: q.quantity, At: w.levels[level] / 100}}
-			if q.name != "" { // short: a name of ICARTT has 31 signs at most
-				o.Name, o.Long = q.name+"_at_"+s+"_percent", q.long+" at "+s+" % supersaturation"
+			o.Name = q.name + "_at_" + s + "_percent" // a name of ICARTT has 31 signs at most
+			if q.long != "" {
+				o.Long = q.long + " at " + s + " % supersaturation"
 			}
 			if q.quantity != fieldfile.Number {
 				o.Role.Basis = fieldfile.Standard

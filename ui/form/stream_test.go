@@ -87,7 +87,7 @@ func TestICARTTRefuses(t *testing.T) {
 // The text form shows the tables that the question names, without empty columns.
 func TestTextShowsTables(t *testing.T) {
 	s := sheet(t)
-	s.Question.Tabled = []string{"counts"}
+	s.Question.Tabled = func(answer.Answer) []string { return []string{"counts"} }
 	s.Answer.Tables = append(s.Answer.Tables, answer.Table{Key: "counts", Title: "Counts", Columns: []answer.Column{{Says: "κ"}, {Says: "flag"}, {Says: "none"}},
 		Rows: [][]any{{0.25, nil, nil}, {0.5, "low", nil}}})
 	s.ASCII = true
