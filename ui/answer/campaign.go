@@ -14,9 +14,9 @@ import (
 	"dropcrest/ui/scenario"
 )
 
-// demoFiles are the files of the invented station, the one with the sizes first:
-// its records are the windows.
-var demoFiles = []string{"sizes.nas", "ccn-counts_demo-station_20260314_R0.ict", "station.csv"}
+// demoFiles are the files of the invented station, the one with the counts first: its
+// records, the longest ones, are the windows, so that no count counts twice.
+var demoFiles = []string{"ccn-counts_demo-station_20260314_R0.ict", "sizes.nas", "station.csv"}
 
 // mostKeptRecords is up to how many records of data are kept between two answers,
 // so that stepping from one to the next is done within a frame.

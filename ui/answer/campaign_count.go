@@ -2,6 +2,7 @@ package answer
 
 import (
 	"math"
+	"slices"
 	"strings"
 
 	"dropcrest/atmos/aerosol"
@@ -21,7 +22,9 @@ func (r *recorder) count(o *observation, s *fieldfile.Sample, air aerosol.Air) {
 	}
 	var points []spectrum.Observed
 	for _, c := range s.Counts {
-		if !c.N.OK() || !(c.At() > 0) {
+		if why := notCounted(c); why != "" {
+			o.reject(why)
+			r.leave(why)
 			continue
 		}
 		factor := r.standard(o, c.Basis, air)
@@ -44,6 +47,32 @@ func (r *recorder) count(o *observation, s *fieldfile.Sample, air aerosol.Air) {
 			flag: strings.Join(verdict.Flags, " "), predicted: math.NaN()})
 	}
 	r.cycle(o, points)
+}
+
+// notCounted says why there is no number to compare, "" where there is one.
+func notCounted(c fieldfile.Count) string {
+	switch {
+	case c.N.State == fieldfile.Below:
+		return "below the limit of detection"
+	case c.N.State == fieldfile.Above:
+		return "above the upper limit of the instrument"
+	case !c.N.OK():
+		return "missing in the data"
+	case !(c.At() > 0):
+		return "of no known supersaturation"
+	}
+	return ""
+}
+
+// leave counts a point that no rule has looked at.
+func (r *recorder) leave(why string) {
+	for i := range r.left {
+		if r.left[i].Reason == why {
+			r.left[i].Count++
+			return
+		}
+	}
+	r.left = append(r.left, rejection{why, 1})
 }
 
 // countUncertainty is that of the file, else that of counting, 1/m³.
@@ -98,9 +127,9 @@ func (r *recorder) says(key string) string {
 	return key
 }
 
-// rejected is what each rule has left out of all records.
+// rejected is what was left out of all records, and by which rule.
 func (r *recorder) rejected() []rejection {
-	var out []rejection
+	out := slices.Clone(r.left)
 	for _, t := range r.judge.Tallies() {
 		if t.Rejected > 0 {
 			out = append(out, rejection{t.Rule.Says, t.Rejected})

@@ -20,6 +20,7 @@ type recorder struct {
 	notes       []atmos.Note
 
 	grids []sizedGrid // of the bins so far
+	left  []rejection // points that are no numbers
 }
 
 // sizedGrid is the grid of bins that samples share.
@@ -91,6 +92,10 @@ func (r *recorder) size(o *observation, s *fieldfile.Sample, air aerosol.Air) {
 		default:
 			values[i] = c.Or(math.NaN()) * r.standard(o, b.Basis, air)
 		}
+	}
+	if !slices.ContainsFunc(values, func(x float64) bool { return !math.IsNaN(x) }) {
+		o.noSizes = "all sizes of this record are missing"
+		return
 	}
 	low, err := r.bins(o, g.low, values[:g.cut], s.Bins[:g.cut])
 	if err != nil {

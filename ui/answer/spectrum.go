@@ -16,10 +16,20 @@ func spectrumQuestion() Question {
 		Says:      "How many particles of this population activate at each supersaturation, and does that agree with what was counted?",
 		Groups:    spectrumGroups,
 		Live:      spectrumLive,
+		Frame:     spectrumFrame,
 		Statement: spectrumStatement,
 		Ask:       askSpectrum,
 		Formats:   []string{"jsonl", "icartt"},
+		Tabled:    spectrumTabled,
 	}
+}
+
+// spectrumTabled are the tables to read: of one record the closure says nothing more.
+func spectrumTabled(a Answer) []string {
+	if a.Record == 0 && a.Records > 0 {
+		return []string{"spectrum", "closure"}
+	}
+	return []string{"spectrum"}
 }
 
 // spectrumLive tells whether the answer takes no longer than a frame: measured
@@ -37,23 +47,39 @@ func askSpectrum(ctx context.Context, env Env, s scenario.Scenario) (Answer, err
 	if err != nil {
 		return Answer{}, err
 	}
-	if err := a.solve(); err != nil {
-		return Answer{}, err
-	}
 	return a.answer()
 }
 
-// newActivated makes the population of a scenario with what was counted of it.
+// newActivated makes the population of a scenario, with what was counted of it, and
+// solves it.
 func newActivated(ctx context.Context, env Env, s scenario.Scenario) (*activated, error) {
+	var mixed func(scenario.Scenario) (*activated, error)
 	switch s.Population {
 	case "modes":
-		a, err := ofModes(env, s)
-		if err == nil {
-			a.vary = func(s scenario.Scenario) (*activated, error) { return ofModes(env, s) }
+		mixed = func(s scenario.Scenario) (*activated, error) { return ofModes(env, s) }
+	case "bins":
+		bins, notes, err := oneBins(ctx, env, s)
+		if err != nil {
+			return nil, err
 		}
-		return a, err
+		mixed = func(s scenario.Scenario) (*activated, error) {
+			of, err := env.compose(s)
+			if err != nil {
+				return nil, err
+			}
+			a := ofBins(s, bins, of)
+			a.notes = distinct(append(a.notes, notes...))
+			return a, nil
+		}
+	default:
+		return ofRecords(ctx, env, s)
 	}
-	return nil, &InputError{"population", "not yet"}
+	a, err := mixed(s)
+	if err != nil {
+		return nil, err
+	}
+	a.vary = mixed
+	return a, a.solve()
 }
 
 // solve predicts, compares, fits, and finds what limits that.

@@ -17,6 +17,7 @@ type SpectrumFacts struct {
 	Measured  []MeasuredRow `json:"measured"`
 	Closure   *ClosureFacts `json:"closure"` // null where nothing can be compared
 	Fits      []FitRow      `json:"fits"`
+	Modes     []ModeRow     `json:"modes"` // fitted to measured sizes beside error functions
 	Rejected  []RejectedRow `json:"rejected"`
 }
 
@@ -117,6 +118,16 @@ type ParameterRow struct {
 	IsHeld      bool   `json:"held"`
 }
 
+// ModeRow is a lognormal mode fitted to measured sizes, with standard uncertainties.
+type ModeRow struct {
+	Count             Number `json:"count_per_m3"`
+	CountUncertainty  Number `json:"count_uncertainty_per_m3"`
+	Median            Number `json:"median_dry_diameter_m"`
+	MedianUncertainty Number `json:"median_dry_diameter_uncertainty_m"`
+	GSD               Number `json:"gsd"`
+	GSDUncertainty    Number `json:"gsd_uncertainty"`
+}
+
 // RejectedRow is how many measured points one rule has left out.
 type RejectedRow struct {
 	Reason string `json:"reason"`
@@ -147,6 +158,13 @@ func (a *activated) facts() SpectrumFacts {
 	f.Closure = a.closureFacts()
 	for _, x := range a.fits {
 		f.Fits = append(f.Fits, x.row())
+	}
+	f.Modes = []ModeRow{}
+	if a.modes != nil {
+		for i, m := range a.modes.Modes {
+			u := func(k int) Number { return Number(a.modeUncertainty(i, k)) }
+			f.Modes = append(f.Modes, ModeRow{Number(m.Concentration), u(0), Number(m.Median), u(1), Number(m.GSD), u(2)})
+		}
 	}
 	for _, r := range a.rejected {
 		f.Rejected = append(f.Rejected, RejectedRow(r))

@@ -44,7 +44,11 @@ func (a *activated) countsFigure() (figure.Figure, error) {
 		Y: figure.Axis{Says: "CCN", Unit: "1/cm³", Log: log},
 	}
 	low, high := a.reach()
-	s := spaced(low, high, linePoints)
+	n := linePoints
+	if a.isSpread() {
+		n = otherPoints
+	}
+	s := spaced(low, high, n)
 	switch {
 	case a.mean.X != nil:
 		f.Lines = append(f.Lines, a.mean)
@@ -66,6 +70,11 @@ func (a *activated) countsFigure() (figure.Figure, error) {
 		}
 	}
 	return f, nil
+}
+
+// isSpread reports whether each count is an integral over κ, which takes long.
+func (a *activated) isSpread() bool {
+	return a.asked.KappaSpread > 1 && slices.ContainsFunc(a.groups, func(g composed) bool { return !g.isOne })
 }
 
 // reach is what is shown of the supersaturations: all that were asked for or

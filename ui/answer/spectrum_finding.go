@@ -42,7 +42,7 @@ const mostListed = 6
 
 // countSentence is what is predicted.
 func (a *activated) countSentence() string {
-	if a.sizes == nil {
+	if a.sizes == nil && a.mean.X == nil {
 		return fmt.Sprintf("Nothing can be predicted: %s.", a.noSizes)
 	}
 	var at, counts, wide []string
@@ -52,16 +52,18 @@ func (a *activated) countSentence() string {
 		}
 		at, counts, wide = append(at, shortest(100*p.s)), append(counts, cubic(p.count)), append(wide, nanometres(p.critical))
 	}
-	which := ""
-	if a.number == 0 && a.records > 0 {
-		which = "On average "
+	says := fmt.Sprintf("%s activate at %s %% supersaturation", list(counts), list(at))
+	if a.sizes != nil {
+		says = fmt.Sprintf("of %s particles per cm³ %s", cubic(a.sizes.Number()), says)
 	}
-	says := fmt.Sprintf("%sof %s particles per cm³ %s activate at %s %% supersaturation", which, cubic(a.sizes.Number()), list(counts), list(at))
-	if a.number == 0 && a.records > 0 {
-		return says + "." // critical diameters differ from record to record
+	if a.isSeason() { // critical diameters differ from record to record
+		return fmt.Sprintf("On average over %d records, %s.", a.records, says)
 	}
 	return capital(says) + fmt.Sprintf(", those wider than %s nm.", list(wide))
 }
+
+// isSeason reports whether these are all records of the data.
+func (a *activated) isSeason() bool { return a.number == 0 && a.records > 0 }
 
 // list joins words with commas and an and.
 func list(words []string) string {
@@ -96,7 +98,7 @@ func (a *activated) closureSentence() string {
 		return "No count can be compared with the prediction."
 	case g.Pairs == 0:
 		return ""
-	case a.number > 0 && g.Pairs <= mostListed:
+	case !a.isSeason() && g.Pairs <= mostListed:
 		var ratios []string
 		for _, m := range a.measured {
 			if r := m.ratio(); !math.IsNaN(r) {
@@ -122,14 +124,22 @@ func wholePercent(x float64) string { return fmt.Sprintf("%.0f %%", 100*x) }
 
 // kappaSentence is κ by count and by composition.
 func (a *activated) kappaSentence() string {
-	var at, kappas []string
-	var without []string
+	if a.bins == nil && !a.isSeason() || len(a.measured) == 0 {
+		return ""
+	}
+	says := a.countedKappas()
+	if k := a.kappa(); !math.IsNaN(k) {
+		says += fmt.Sprintf("; the prediction takes %s", digits(k, 3))
+	}
+	return says + "."
+}
+
+// countedKappas are the κ by count, and why there is none.
+func (a *activated) countedKappas() string {
+	var at, kappas, without []string
 	for _, m := range a.measured {
-		if a.bins == nil {
-			break
-		}
 		if m.noKappa != nil {
-			without = append(without, fmt.Sprintf("none at %s %%: %s", shortest(100*m.s), noKappaWords(m.noKappa)))
+			without = append(without, fmt.Sprintf("at %s %%: %s", shortest(100*m.s), noKappaWords(m.noKappa)))
 			continue
 		}
 		text := digits(m.kappa.Kappa, 3)
@@ -138,40 +148,20 @@ func (a *activated) kappaSentence() string {
 		}
 		at, kappas = append(at, shortest(100*m.s)), append(kappas, text)
 	}
-	says := ""
+	of := "of"
+	if a.isSeason() {
+		of = "with a median of"
+	}
+	n := len(kappas)
 	switch {
-	case len(kappas) > 0 && len(kappas) <= mostListed:
-		says = fmt.Sprintf("The counts imply κ of %s at %s %%", list(kappas), list(at))
-		if a.number == 0 {
-			says = fmt.Sprintf("The counts imply a median κ of %s at %s %%", list(kappas), list(at))
-		}
-	case len(kappas) > 0:
-		says = fmt.Sprintf("The counts imply κ from %s at %s %% to %s at %s %%", kappas[0], at[0], kappas[len(kappas)-1], at[len(at)-1])
+	case n == 0:
+		return "The counts imply no κ (" + without[0] + ")"
+	case n > mostListed:
+		return fmt.Sprintf("The counts imply κ %s %s at %s %% to %s at %s %%", of, kappas[0], at[0], kappas[n-1], at[n-1])
 	case len(without) > 0:
-		says = "The counts imply no κ"
-		without = without[:1]
-		without[0] = strings.TrimPrefix(without[0], "none ")
+		return fmt.Sprintf("The counts imply κ %s %s at %s %% (none %s)", of, list(kappas), list(at), strings.Join(without, "; "))
 	}
-	if len(without) > 0 {
-		says += " (" + strings.Join(without, "; ") + ")"
-	}
-	if k := a.kappa(); !math.IsNaN(k) {
-		if says == "" {
-			return ""
-		}
-		return says + fmt.Sprintf("; the prediction takes %s%s.", digits(k, 3), a.fromWords())
-	}
-	if says != "" {
-		says += "."
-	}
-	return says
-}
-
-func (a *activated) fromWords() string {
-	if a.kappaFrom == "" {
-		return ", as given"
-	}
-	return ", " + a.kappaFrom
+	return fmt.Sprintf("The counts imply κ %s %s at %s %%", of, list(kappas), list(at))
 }
 
 // roundedPair writes a value and its standard uncertainty with as many decimals as
@@ -215,7 +205,7 @@ func (a *activated) fitSentence() string {
 	}
 	says := fmt.Sprintf("The %s that %s the %s counts from %s to %s %%: %s", formWords(f.form), fit, f.of,
 		shortest(100*f.Low), shortest(100*f.High), f.numberWords())
-	if f.Deviation > 0 {
+	if f.DegreesOfFreedom > 0 {
 		says += fmt.Sprintf("; root mean square deviation %s", wholeOrOne(f.Deviation))
 	}
 	return says + "."
@@ -224,18 +214,21 @@ func (a *activated) fitSentence() string {
 // wholeOrOne writes a share in per cent with two digits.
 func wholeOrOne(x float64) string { return digits(100*x, 2) + " %" }
 
-// rejectedSentence is what was left out, the most frequent reason first.
+// rejectedSentence is what was left out.
 func (a *activated) rejectedSentence() string {
 	if len(a.rejected) == 0 {
 		return ""
 	}
-	total := 0
+	var parts []string
 	for _, r := range a.rejected {
-		total += r.Count
+		parts = append(parts, fmt.Sprintf("%s (%s)", counts(r.Count), r.Reason))
 	}
-	counts := "1 count was"
-	if total != 1 {
-		counts = strconv.Itoa(total) + " counts were"
+	return "Left out: " + list(parts) + "."
+}
+
+func counts(n int) string {
+	if n == 1 {
+		return "1 count"
 	}
-	return fmt.Sprintf("%s left out: %s.", counts, a.rejected[0].Reason)
+	return strconv.Itoa(n) + " counts"
 }

@@ -6,6 +6,7 @@ import (
 	"math"
 	"slices"
 
+	"dropcrest/atmos"
 	"dropcrest/atmos/aerosol"
 	"dropcrest/atmos/fit"
 	"dropcrest/koehler/spectrum"
@@ -39,6 +40,30 @@ func (a *activated) fit() {
 		f.Fitted, f.noFit = spectrum.FitErrorFunctions(points, 2, a.total(len(points)))
 	}
 	a.fits = append(a.fits, f)
+	a.fitSizes()
+}
+
+// fitSizes lays as many modes through measured sizes as error functions were laid
+// through the counts, so that both can be compared. It takes longer than all else.
+func (a *activated) fitSizes() {
+	n := map[string]int{"erf": 1, "erf2": 2}[a.asked.Fit]
+	if a.bins == nil || n == 0 {
+		return
+	}
+	modes, err := aerosol.FitModes(a.bins, n, nil)
+	if err != nil {
+		a.notes = append(a.notes, atmos.Note{Code: "sizes-not-fitted", Input: "fit", Text: fmt.Sprintf("%d modes cannot be fitted to the sizes: %s.", n, reason(err))})
+		return
+	}
+	a.modes = &modes
+}
+
+// modeUncertainty is that of number k (N, D_g, σ_g) of mode i; NaN: not known.
+func (a *activated) modeUncertainty(i, k int) float64 {
+	if a.modes.Covariance == nil {
+		return math.NaN()
+	}
+	return math.Sqrt(a.modes.Covariance.At(3*i+k, 3*i+k))
 }
 
 // total is the number of all particles where five counts need it to determine two
@@ -90,11 +115,10 @@ func formWords(form string) string {
 func (f fitted) numberWords() string {
 	value := func(i int, scale float64, n int) string {
 		p := f.Form.Parameters()[i]
-		text := digits(p.Value*scale, n)
 		if u := f.Uncertainty(i) * scale; u > 0 && !math.IsInf(u, 1) {
-			text += " ± " + digits(u, 1)
+			return roundedPair(p.Value*scale, u)
 		}
-		return text
+		return digits(p.Value*scale, n)
 	}
 	const perCubicCentimetre = 1e-6
 	switch form := f.Form.(type) {

@@ -32,6 +32,8 @@ type activated struct {
 	start, end time.Time
 	number     int // of the record, 0: no data
 	records    int
+	mapping    []string    // what the columns of the data hold, as it was understood
+	rows       *recordRows // of all records; nil: of one record
 
 	times  *timeline   // closure over time; nil: of one record
 	mean   figure.Line // of the predictions of all records
@@ -41,6 +43,7 @@ type activated struct {
 	measured  []measurement
 	closures  spectrum.Closures
 	fits      []fitted
+	modes     *aerosol.ModeFit // of measured sizes; nil: not fitted
 	rejected  []rejection
 	notes     []atmos.Note
 }

@@ -198,10 +198,16 @@ func (q *season) close() (*activated, error) {
 		kappa = at[0]
 	}
 	w.groups = []composed{{kappa: kappa, kelvin: q.kelvin}}
+	w.kappaFrom = "the median of the records"
 	if len(q.times.cells) > 0 {
 		w.times = &q.times
 	}
 	w.fit()
+	w.limit()
+	if n := q.rows.missed; n > 0 {
+		w.notes = append(w.notes, atmos.Note{Code: "rows-not-kept", Input: "record",
+			Text: fmt.Sprintf("The table of all records holds the first %d rows; written to a file by the command line it has %d more.", mostRows, n)})
+	}
 	return w, nil
 }
 

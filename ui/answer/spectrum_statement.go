@@ -34,7 +34,11 @@ func populationClauses(s scenario.Scenario) []string {
 		}
 		return append(lines, "each of its own matter,")
 	case "bins":
-		return []string{"Particles {population} {bins},", "of {component}, {mixing} mixed,"}
+		lines := []string{"Particles {population} {bins},", "of {component}, {mixing} mixed,"}
+		if len(s.Map) > 0 {
+			lines = slices.Insert(lines, 1, "columns {map},")
+		}
+		return lines
 	}
 	lines := []string{"Particles {population} {data},", "record {record}, {mixing} mixed, composition {composition},"}
 	if s.Every.Word == "" || s.Average != "mean" {

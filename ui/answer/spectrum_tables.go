@@ -8,12 +8,19 @@ import (
 
 // tables are the numbers behind picture and finding.
 func (a *activated) tables() []Table {
-	out := []Table{a.spectrumTable()}
+	var out []Table
+	if a.rows != nil && a.rows.env.Row == nil {
+		out = append(out, a.rows.kept)
+	}
+	out = append(out, a.spectrumTable())
 	if a.closures.All.Agreement().Pairs > 0 {
 		out = append(out, a.closureTable())
 	}
 	if len(a.fits) > 0 {
 		out = append(out, a.fitTable())
+	}
+	if a.modes != nil {
+		out = append(out, a.modeTable())
 	}
 	if a.sizes != nil {
 		out = append(out, a.sizesTable())
@@ -21,7 +28,19 @@ func (a *activated) tables() []Table {
 	if len(a.rejected) > 0 {
 		out = append(out, a.rejectedTable())
 	}
+	if len(a.mapping) > 0 {
+		out = append(out, a.mappingTable())
+	}
 	return out
+}
+
+// mappingTable is what the columns of the data hold, as it was understood.
+func (a *activated) mappingTable() Table {
+	t := Table{Key: "columns", Title: "Columns of the data", Columns: []Column{{"column", "file: column=quantity"}}}
+	for _, line := range a.mapping {
+		t.Rows = append(t.Rows, []any{line})
+	}
+	return t
 }
 
 // countColumns are those of predicted and measured counts.
@@ -150,6 +169,22 @@ func (a *activated) fitTable() Table {
 		for i, p := range f.Form.Parameters() {
 			t.Rows = append(t.Rows, []any{f.form, f.of, p.Key, cell(p.Value), cell(f.Uncertainty(i)), cell(100 * f.Low), cell(100 * f.High), nil})
 		}
+	}
+	return t
+}
+
+func (a *activated) modeTable() Table {
+	t := Table{Key: "modes", Title: "Modes of the sizes", Columns: []Column{
+		{"count_per_m3", "number, 1/m³"},
+		{"count_uncertainty_per_m3", "its standard uncertainty, 1/m³"},
+		{"median_dry_diameter_m", "median dry diameter, m"},
+		{"median_dry_diameter_uncertainty_m", "its standard uncertainty, m"},
+		{"gsd", "geometric standard deviation"},
+		{"gsd_uncertainty", "its standard uncertainty"},
+	}}
+	for i, m := range a.modes.Modes {
+		u := func(k int) any { return cell(a.modeUncertainty(i, k)) }
+		t.Rows = append(t.Rows, []any{cell(m.Concentration), u(0), cell(m.Median), u(1), cell(m.GSD), u(2)})
 	}
 	return t
 }

@@ -3,6 +3,7 @@ package answer
 import (
 	"fmt"
 	"math"
+	"strings"
 
 	"dropcrest/atmos"
 	"dropcrest/koehler/spectrum"
@@ -28,6 +29,13 @@ func (a *activated) why() []string {
 				models[m] = true
 			}
 		}
+		if k := a.kappa(); !math.IsNaN(k) {
+			from := "as given"
+			if a.kappaFrom != "" {
+				from = "from " + a.kappaFrom
+			}
+			out = append(out, fmt.Sprintf("κ of the particles: %s, %s.", digits(k, 4), from))
+		}
 		out = append(out, fmt.Sprintf("Kelvin length A = 4 σ M_w/(R T ρ_w) = %s nm with the surface tension of a dilute drop, at %s.",
 			digits(a.kelvin()*nano, 5), celsius(a.asked.Temperature)))
 	}
@@ -35,8 +43,12 @@ func (a *activated) why() []string {
 		out = append(out, a.comparedWords()...)
 	}
 	out = append(out, a.fitWords()...)
+	out = append(out, a.sizedModes()...)
 	out = append(out, fmt.Sprintf("Constants: R = %v J/(mol K), molar mass of water %v kg/mol (%s).",
 		atmos.GasConstant, atmos.WaterMolarMass, "CODATA 2018; IUPAC"))
+	if len(a.mapping) > 0 {
+		out = append(out, "Columns of the data, as understood: "+strings.Join(a.mapping, "; ")+".")
+	}
 	for _, n := range a.notes {
 		out = append(out, "Note: "+n.Text)
 	}
@@ -103,6 +115,25 @@ func (f fitted) rangeWords() string {
 		says += " k is held: these counts fit the better the larger it is."
 	}
 	return says
+}
+
+// sizedModes are the modes fitted to measured sizes.
+func (a *activated) sizedModes() []string {
+	if a.modes == nil {
+		return nil
+	}
+	var out []string
+	for i, m := range a.modes.Modes {
+		pair := func(x float64, k int, scale float64) string {
+			if u := a.modeUncertainty(i, k); u > 0 {
+				return roundedPair(x*scale, u*scale)
+			}
+			return digits(x*scale, 4)
+		}
+		out = append(out, fmt.Sprintf("The sizes themselves, fitted by least squares, have a mode of %s per cm³, D_g %s nm, σ_g %s.",
+			pair(m.Concentration, 0, perCubic), pair(m.Median, 1, nano), pair(m.GSD, 2, 1)))
+	}
+	return out
 }
 
 // modeWords are the lognormal modes of fitted error functions.
