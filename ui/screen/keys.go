@@ -128,7 +128,7 @@ func helpItems(bindings []key.Binding) (names, does []string) {
 		}
 		h := b.Help()
 		if n := len(does) - 1; n >= 0 && does[n] == h.Desc {
-			if utf8.RuneCountInString(h.Key) > 1 {
+			if utf8.RuneCountInString(h.Key) > 1 || isLetter(names[n]) {
 				names[n] += "/"
 			}
 			names[n] += h.Key
@@ -137,6 +137,13 @@ func helpItems(bindings []key.Binding) (names, does []string) {
 		names, does = append(names, h.Key), append(does, h.Desc)
 	}
 	return names, does
+}
+
+// isLetter reports whether a name ends with a letter, which would run together with
+// the next one.
+func isLetter(name string) bool {
+	last := name[len(name)-1]
+	return 'a' <= last && last <= 'z' || 'A' <= last && last <= 'Z'
 }
 
 // helpLine is one line of at most w columns that names the bindings. What does

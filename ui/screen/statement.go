@@ -1,6 +1,7 @@
 package screen
 
 import (
+	"fmt"
 	"strings"
 
 	"github.com/charmbracelet/x/ansi"
@@ -73,7 +74,11 @@ func (m *model) slotValue(p scenario.Path) string {
 // rangeWords say what the chosen slot takes.
 func (m *model) rangeWords() string {
 	if in, ok := m.input(); ok {
-		return m.text(in.Says() + ": " + in.Range())
+		span := in.Range()
+		if n := m.answer.Records; in.Path() == recordPath && n > 0 {
+			span = fmt.Sprintf("1 to %d, or all", n)
+		}
+		return m.text(in.Says() + ": " + span)
 	}
 	if l, ok := m.list(); ok {
 		return m.text(l.Says() + ": Enter opens its rows")
