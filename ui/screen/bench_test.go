@@ -34,3 +34,18 @@ func BenchmarkMove(b *testing.B) {
 		n++
 	}
 }
+
+// A key that goes to the next record of the demo, from the key to the finished
+// screen.
+func BenchmarkRecord(b *testing.B) {
+	m := opened(onTerminal("colour"), 80, 24)
+	press(m, "tab")
+	keys := []string{"n", "p"}
+	n := 0
+	b.ReportAllocs()
+	for b.Loop() {
+		m.Update(keyOf(keys[n%2]))
+		m.View()
+		n++
+	}
+}

@@ -8,7 +8,6 @@ import (
 	"strings"
 	"testing"
 
-	tea "github.com/charmbracelet/bubbletea"
 	"github.com/charmbracelet/x/exp/golden"
 
 	"dropcrest/ui/scenario"
@@ -68,14 +67,11 @@ func TestFromFilesToClosure(t *testing.T) {
 	t.Chdir(dir)
 	m := opened(o, 80, 24)
 	press(m, "tab right enter")
-	var work tea.Cmd
 	for _, begin := range []string{"c", "s i", "s t"} {
-		press(m, "a "+begin+" tab")
-		work = press(m, "enter")
+		press(m, "a "+begin+" tab enter")
 	}
 	press(m, "shift+tab shift+tab shift+tab")
-	work = press(m, "d")
-	m.Update(answerOf(t, work))
+	m.Update(answerOf(t, press(m, "d")))
 	press(m, "esc")
 	if m.work.old || len(m.scenario.Data) != 3 || m.answer.Records != demo.answer.Records {
 		t.Fatalf("%v give %d records:\n%s", m.scenario.Data, m.answer.Records, m.View())

@@ -102,7 +102,7 @@ func states() map[string]struct {
 		"modes":            {"tab", modes},
 		"mode rows":        {"tab right enter a right right", modes},
 		"modes held":       {"tab right right right space down v o end i", modes},
-		"giant":      {"", giant},
+		"giant":            {"", giant},
 	}
 }
 

@@ -9,6 +9,7 @@ import (
 	"path/filepath"
 	"slices"
 	"strings"
+	"time"
 
 	"github.com/charmbracelet/bubbles/key"
 	tea "github.com/charmbracelet/bubbletea"
@@ -37,12 +38,10 @@ const nameLeft scenario.Path = "write"
 func newWrite(m *model) panel { return &writer{field: newField(m.left[nameLeft])} }
 
 // endings are the forms that a file can have, by the ending of its name.
-func endings() map[string]string {
-	of := map[string]string{".toml": "toml", ".txt": "text"}
-	for _, f := range form.Formats() {
-		if f != "text" {
-			of["."+f] = f
-		}
+func (m *model) endings() map[string]string {
+	of := map[string]string{".toml": "toml"}
+	for _, f := range form.FormatsOf(m.question) {
+		of[form.Ending(f)] = f
 	}
 	return of
 }
@@ -55,6 +54,12 @@ func (m *model) wanted(table int) string {
 	}
 	if len(m.answer.Figures) > 1 {
 		picture = "the picture shown"
+	}
+	for _, f := range m.question.Formats {
+		csv += ", " + form.Ending(f)
+		if !form.OneTable(f) {
+			csv += " all records"
+		}
 	}
 	return ".toml the question, .csv " + csv + ", .json all numbers, .txt text, .svg .png .pdf " + picture
 }
@@ -86,7 +91,7 @@ func (f *writer) take(m *model) (panel, tea.Cmd) {
 	if typed == "" {
 		return nil, nil
 	}
-	format, ok := endings()[strings.ToLower(filepath.Ext(typed))]
+	format, ok := m.endings()[strings.ToLower(filepath.Ext(typed))]
 	if !ok {
 		f.wrong = fmt.Errorf("the ending of %q says no form: want %s", filepath.Base(typed), m.wanted(f.table))
 		return f, nil
@@ -129,18 +134,17 @@ func full(typed string) (string, error) {
 }
 
 // sheet is what is on the screen, ready to be written: the figure that is shown
-// first, and of the tables the one of that place.
+// first, and which of the tables a file holds that has one.
 func (m *model) sheet(table int) form.Sheet {
 	s := form.Sheet{Question: m.question, Scenario: m.scenario, Answer: m.answer,
-		Version: m.env.Version, Width: paperWidth, ASCII: m.ascii}
+		Version: m.env.Version, Width: paperWidth, ASCII: m.ascii, Made: time.Now()}
 	if len(m.answer.Figures) > 0 {
 		at := m.shownFigure()
 		s.Frame = m.frames[m.answer.Figures[at].Key]
 		s.Answer.Figures = slices.Concat([]figure.Figure{m.figure()}, m.answer.Figures[:at], m.answer.Figures[at+1:])
 	}
-	if table > 0 && table < len(m.answer.Tables) {
-		all := m.answer.Tables
-		s.Answer.Tables = slices.Concat(all[table:table+1], all[:table], all[table+1:])
+	if table < len(m.answer.Tables) {
+		s.Table = m.answer.Tables[table].Key
 	}
 	return s
 }
