@@ -16,7 +16,6 @@ func spectrumQuestion() Question {
 		Says:      "How many particles of this population activate at each supersaturation, and does that agree with what was counted?",
 		Groups:    spectrumGroups,
 		Live:      spectrumLive,
-		Frame:     spectrumFrame,
 		Statement: spectrumStatement,
 		Ask:       askSpectrum,
 		Formats:   []string{"jsonl", "icartt"},

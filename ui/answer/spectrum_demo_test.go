@@ -125,6 +125,25 @@ func TestSpectrumOfDemoInOtherWords(t *testing.T) {
 	}
 }
 
+// A count that was asked for between measured ones is interpolated, said to be, and
+// no pair of the closure.
+func TestSpectrumBetweenLevels(t *testing.T) {
+	for _, record := range []string{"1", "all"} {
+		_, usual := askedDemo(t, "record="+record)
+		_, f := askedDemo(t, "record="+record, "supersaturation=0.05, 0.2, 0.7, 1.5")
+		if f.Closure.AgreementFacts != usual.Closure.AgreementFacts || len(f.Measured) != 6 || len(f.Spectrum) != 4 {
+			t.Errorf("record %s: %d measured, %d predicted, closure %+v, want %+v", record, len(f.Measured), len(f.Spectrum), f.Closure, usual.Closure)
+		}
+		m := f.Measured[4]
+		if m.Supersaturation != 0.7 || m.Flag == nil || *m.Flag != "interpolated" || !(m.Count > f.Measured[3].Count && m.Count < f.Measured[5].Count) {
+			t.Errorf("record %s: at 0.7 %%: %+v", record, m)
+		}
+		if !(math.Abs(float64(m.Ratio)-1) < 0.03) { // by the bend of the spectrum
+			t.Errorf("record %s: predicted over interpolated is %g", record, m.Ratio)
+		}
+	}
+}
+
 // A file of bins gives the same spectrum whatever its numbers are called.
 func TestSpectrumOfBinFiles(t *testing.T) {
 	grid := inventedObservation(t, scene(t), 40, 0.3).sizes.Grid()

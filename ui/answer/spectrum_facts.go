@@ -150,7 +150,7 @@ func (a *activated) facts() SpectrumFacts {
 		}
 	}
 	for _, p := range a.predicted {
-		f.Spectrum = append(f.Spectrum, SpectrumRow{percentNumber(p.s), Number(p.count), Number(p.critical)})
+		f.Spectrum = append(f.Spectrum, SpectrumRow{Number(inPercent(p.s)), Number(p.count), Number(p.critical)})
 	}
 	for _, m := range a.measured {
 		f.Measured = append(f.Measured, m.row())
@@ -176,7 +176,7 @@ func (a *activated) facts() SpectrumFacts {
 func clock(t time.Time) string { return t.UTC().Format(time.RFC3339) }
 
 func (m measurement) row() MeasuredRow {
-	r := MeasuredRow{Supersaturation: percentNumber(m.s), Count: Number(m.count), Uncertainty: Number(m.uncertainty),
+	r := MeasuredRow{Supersaturation: Number(inPercent(m.s)), Count: Number(m.count), Uncertainty: Number(m.uncertainty),
 		Predicted: Number(m.predicted), Ratio: Number(m.ratio()), Kappa: Number(math.NaN()), KappaUncertainty: Number(m.kappaUncertainty()),
 		Critical: Number(math.NaN()), Records: m.records}
 	if m.flag != "" {
@@ -207,7 +207,7 @@ func (a *activated) closureFacts() *ClosureFacts {
 	}
 	f := &ClosureFacts{AgreementFacts: agreementFacts(all), By: []LevelFacts{}}
 	for _, s := range a.closures.Levels() {
-		f.By = append(f.By, LevelFacts{percentNumber(s), agreementFacts(a.closures.At(s).Agreement())})
+		f.By = append(f.By, LevelFacts{Number(inPercent(s)), agreementFacts(a.closures.At(s).Agreement())})
 	}
 	return f
 }
@@ -246,7 +246,7 @@ func (f fitted) row() FitRow {
 			r.Covariance = append(r.Covariance, row)
 		}
 	}
-	r.From, r.To, r.Points, r.DegreesOfFreedom = percentNumber(f.Low), percentNumber(f.High), f.Points, f.DegreesOfFreedom
+	r.From, r.To, r.Points, r.DegreesOfFreedom = Number(inPercent(f.Low)), Number(inPercent(f.High)), f.Points, f.DegreesOfFreedom
 	r.ReducedChiSquare, r.Deviation = Number(f.ReducedChiSquare), Number(f.Deviation)
 	return r
 }

@@ -65,7 +65,7 @@ func (a *activated) countsFigure() (figure.Figure, error) {
 		}
 	}
 	for _, m := range a.measured {
-		if m.count >= 0 {
+		if m.count >= 0 && !m.isBetween {
 			f.Points = append(f.Points, m.point())
 		}
 	}

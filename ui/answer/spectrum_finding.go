@@ -101,7 +101,7 @@ func (a *activated) closureSentence() string {
 	case !a.isSeason() && g.Pairs <= mostListed:
 		var ratios []string
 		for _, m := range a.measured {
-			if r := m.ratio(); !math.IsNaN(r) {
+			if r := m.ratio(); !math.IsNaN(r) && !m.isBetween {
 				ratios = append(ratios, digits(r, 3))
 			}
 		}
@@ -138,6 +138,9 @@ func (a *activated) kappaSentence() string {
 func (a *activated) countedKappas() string {
 	var at, kappas, without []string
 	for _, m := range a.measured {
+		if m.isBetween {
+			continue
+		}
 		if m.noKappa != nil {
 			without = append(without, fmt.Sprintf("at %s %%: %s", shortest(100*m.s), noKappaWords(m.noKappa)))
 			continue

@@ -77,17 +77,7 @@ func (a *activated) total(points int) float64 {
 
 // points are what is fitted.
 func (a *activated) points() (points []spectrum.Point, of string) {
-	for _, m := range a.measured {
-		if !(m.count >= 0) {
-			continue
-		}
-		p := spectrum.Point{Supersaturation: m.s, Count: m.count}
-		if m.uncertainty > 0 {
-			p.Uncertainty = m.uncertainty
-		}
-		points = append(points, p)
-	}
-	if len(points) > 0 {
+	if points, ok := a.measuredPoints(); ok {
 		return points, "measured"
 	}
 	for _, p := range a.predicted {
@@ -96,6 +86,22 @@ func (a *activated) points() (points []spectrum.Point, of string) {
 		}
 	}
 	return points, "predicted"
+}
+
+// measuredPoints are the counts, and whether there are any.
+func (a *activated) measuredPoints() ([]spectrum.Point, bool) {
+	var points []spectrum.Point
+	for _, m := range a.measured {
+		if !(m.count >= 0) || m.isBetween {
+			continue
+		}
+		p := spectrum.Point{Supersaturation: m.s, Count: m.count}
+		if m.uncertainty > 0 {
+			p.Uncertainty = m.uncertainty
+		}
+		points = append(points, p)
+	}
+	return points, len(points) > 0
 }
 
 // formWords names a form in running text.

@@ -54,39 +54,6 @@ type prediction struct {
 	critical float64 // m, dry diameter; NaN: there is none
 }
 
-// measurement is what was counted at a supersaturation, with what it says.
-type measurement struct {
-	s, count, uncertainty float64 // 1/m³; NaN: not known
-	flag                  string  // "" : none
-	predicted             float64 // NaN: nothing to compare with
-	critical              float64 // m, of the prediction
-	kappa                 spectrum.CountKappa
-	noKappa               error // why the count implies no κ
-	records               int   // that it is a mean of
-}
-
-// ratio is predicted over measured, NaN where one is not known.
-func (m measurement) ratio() float64 {
-	if !(m.count > 0) {
-		return math.NaN()
-	}
-	return m.predicted / m.count
-}
-
-// kappaUncertainty is that of κ from the uncertainty of the count alone, 1/m³ or NaN.
-func (m measurement) kappaUncertainty() float64 {
-	if m.noKappa != nil || !(m.uncertainty >= 0) {
-		return math.NaN()
-	}
-	return math.Abs(m.kappa.Kappa * m.kappa.ByCount * m.uncertainty / m.count)
-}
-
-// rejection is why measured points are left out, and how many.
-type rejection struct {
-	Reason string
-	Count  int
-}
-
 // ofModes is the population of lognormal modes.
 func ofModes(env Env, s scenario.Scenario) (*activated, error) {
 	a := &activated{asked: s, isAlike: true}
@@ -191,6 +158,7 @@ func (a *activated) predict() error {
 	for i, s := range asked {
 		a.predicted = append(a.predicted, prediction{s, n[i], a.critical(s, n[i])})
 	}
+	a.interpolate()
 	levels := make([]float64, len(a.measured))
 	for i, m := range a.measured {
 		levels[i] = m.s
@@ -202,7 +170,9 @@ func (a *activated) predict() error {
 		m := &a.measured[i]
 		m.predicted, m.critical = n[i], a.critical(m.s, n[i])
 		m.kappa, m.noKappa = a.kappaOf(*m)
-		a.closures.Add(m.s, m.predicted, m.count)
+		if !m.isBetween {
+			a.closures.Add(m.s, m.predicted, m.count)
+		}
 	}
 	return nil
 }

@@ -36,6 +36,7 @@ type averages struct {
 type level struct {
 	s                             float64
 	paired                        bool // some are compared: only those count then
+	isMeasured                    bool // not only interpolated
 	n                             int
 	predicted, measured, variance float64 // sums
 	kappas, diameters             spectrum.Quantiles
@@ -89,11 +90,11 @@ func (q *season) add(a *activated) error {
 
 // count takes what was counted at one supersaturation.
 func (q *season) count(a *activated, m measurement) {
-	w := q.whole
-	ratio := m.ratio()
-	w.closures.Add(m.s, m.predicted, m.count)
-	q.times.add(a.start, a.end.Sub(a.start), ratio)
 	l := q.level(m.s)
+	if !m.isBetween {
+		q.whole.closures.Add(m.s, m.predicted, m.count)
+		q.times.add(a.start, a.end.Sub(a.start), m.ratio())
+	}
 	if l == nil || math.IsNaN(m.count) {
 		return
 	}
@@ -111,6 +112,7 @@ func (q *season) count(a *activated, m measurement) {
 		return
 	}
 	l.n++
+	l.isMeasured = l.isMeasured || !m.isBetween
 	l.predicted += m.predicted
 	l.measured += m.count
 	l.variance += m.uncertainty * m.uncertainty
@@ -241,58 +243,12 @@ func (l *level) mean() measurement {
 	n := float64(l.n)
 	m := measurement{s: l.s, count: l.measured / n, uncertainty: math.Sqrt(l.variance) / n, predicted: l.predicted / n,
 		critical: math.NaN(), records: l.n, noKappa: l.noKappa}
+	if !l.isMeasured {
+		m.flag, m.isBetween = betweenFlag, true
+	}
 	if k := l.kappas.At(0.5); !math.IsNaN(k[0]) {
 		m.noKappa = nil
 		m.kappa = spectrum.CountKappa{Kappa: k[0], CriticalDiameter: l.diameters.At(0.5)[0], ByCount: math.NaN()}
 	}
 	return m
-}
-
-// recordRows are the rows of all records: handed on as they come, or collected
-// where nobody takes them.
-type recordRows struct {
-	env    Env
-	begun  bool
-	kept   Table
-	missed int
-}
-
-// mostRows are as many rows as are collected; more are for a file.
-const mostRows = 20000
-
-func newRecordRows(env Env) *recordRows {
-	return &recordRows{env: env, kept: Table{Key: "records", Title: "All records", Columns: slices.Concat([]Column{
-		{"record", "record"},
-		{"start_time", "start, UTC"},
-		{"end_time", "end, UTC"},
-	}, countColumns, []Column{{"rejected", "what was left out"}})}}
-}
-
-func (r *recordRows) add(a *activated) error {
-	take := r.env.Row
-	if take != nil && !r.begun && r.env.Columns != nil {
-		if err := r.env.Columns(r.kept.Key, r.kept.Columns); err != nil {
-			return err
-		}
-	}
-	r.begun = true
-	reasons := ""
-	for i, x := range a.rejected {
-		if i > 0 {
-			reasons += "; "
-		}
-		reasons += x.Reason
-	}
-	return a.countRows(func(row []any) error {
-		row = append(row, word(reasons))
-		switch {
-		case take != nil:
-			return take(r.kept.Key, row)
-		case len(r.kept.Rows) < mostRows:
-			r.kept.Rows = append(r.kept.Rows, row)
-		default:
-			r.missed++
-		}
-		return nil
-	}, a.number, clock(a.start), clock(a.end))
 }

@@ -99,7 +99,7 @@ func sameLevel(a, b float64) bool { return math.Abs(a-b) <= 5e-4*math.Max(a, b) 
 
 func (a *activated) countRow(lead []any, p prediction, m *measurement) []any {
 	row := append(make([]any, 0, len(lead)+len(countColumns)), lead...)
-	row = append(row, cell(100*p.s), cell(p.count), cell(p.critical))
+	row = append(row, cell(inPercent(p.s)), cell(p.count), cell(p.critical))
 	if m == nil {
 		return append(row, nil, nil, nil, nil, cell(a.kappa()), nil, nil, nil, nil)
 	}
@@ -139,7 +139,7 @@ func (a *activated) closureTable() Table {
 		{"within_factor_2", "within a factor of 2"},
 	}}
 	add := func(s float64, g spectrum.Agreement) {
-		t.Rows = append(t.Rows, []any{cell(100 * s), float64(g.Pairs), cell(g.P05), cell(g.P25), cell(g.Median), cell(g.P75), cell(g.P95),
+		t.Rows = append(t.Rows, []any{cell(inPercent(s)), float64(g.Pairs), cell(g.P05), cell(g.P25), cell(g.Median), cell(g.P75), cell(g.P95),
 			cell(g.ThroughOrigin), cell(g.Ordinary.Slope), cell(g.Ordinary.Intercept), cell(g.RSquared), cell(g.MeanBias),
 			cell(g.RootMeanSquare), cell(g.Within10), cell(g.Within20), cell(g.Within30), cell(g.WithinFactor2)})
 	}
@@ -167,7 +167,7 @@ func (a *activated) fitTable() Table {
 			continue
 		}
 		for i, p := range f.Form.Parameters() {
-			t.Rows = append(t.Rows, []any{f.form, f.of, p.Key, cell(p.Value), cell(f.Uncertainty(i)), cell(100 * f.Low), cell(100 * f.High), nil})
+			t.Rows = append(t.Rows, []any{f.form, f.of, p.Key, cell(p.Value), cell(f.Uncertainty(i)), cell(inPercent(f.Low)), cell(inPercent(f.High)), nil})
 		}
 	}
 	return t

@@ -2,11 +2,9 @@ package answer
 
 import (
 	"math"
-	"slices"
 	"time"
 
 	"dropcrest/ui/figure"
-	"dropcrest/ui/scenario"
 )
 
 // mostTimes is how many points a closure over time has at most: more than columns
@@ -81,9 +79,9 @@ func (t *timeline) middle(i int) float64 {
 func (a *activated) timesFigure() figure.Figure {
 	t := a.times
 	f := figure.Figure{
-		Key: closurePicture, Title: "predicted over measured against time, UTC",
+		Key: "closure", Title: "predicted over measured against time, UTC",
 		X: figure.Axis{Says: "time", Unit: "UTC", Time: true},
-		Y: figure.Axis{Says: "predicted over measured"},
+		Y: figure.Axis{Says: "predicted over measured", Free: true},
 	}
 	line, one := figure.Line{}, figure.Line{Says: "1", Dash: figure.Dotted}
 	for i, c := range t.cells {
@@ -94,26 +92,3 @@ func (a *activated) timesFigure() figure.Figure {
 	f.Lines = []figure.Line{line, one}
 	return f
 }
-
-// spectrumFrame is the frame of a picture: that of a closure over time is laid
-// about 1, which is to a ratio what 0 is to other numbers.
-func spectrumFrame(_ scenario.Scenario, f figure.Figure, last figure.Frame, h int) (figure.Frame, bool) {
-	if f.Key != closurePicture {
-		return figure.Fit(f, last, h)
-	}
-	f.Lines = slices.Clone(f.Lines)
-	for i := range f.Lines {
-		y := make([]float64, len(f.Lines[i].Y))
-		for j, v := range f.Lines[i].Y {
-			y[j] = v - 1
-		}
-		f.Lines[i].Y = y
-	}
-	last.YMin, last.YMax = last.YMin-1, last.YMax-1
-	fr, refitted := figure.Fit(f, last, h)
-	fr.YMin, fr.YMax = fr.YMin+1, fr.YMax+1
-	return fr, refitted
-}
-
-// closurePicture is the key of the closure over time.
-const closurePicture = "closure"

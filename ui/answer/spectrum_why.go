@@ -3,6 +3,7 @@ package answer
 import (
 	"fmt"
 	"math"
+	"slices"
 	"strings"
 
 	"dropcrest/atmos"
@@ -76,6 +77,10 @@ func (a *activated) mixingWords() string {
 func (a *activated) comparedWords() []string {
 	out := []string{"Closure is predicted over measured. The normalised mean bias is Σ(p - m)/Σm; slopes have the predicted count as ordinate, R² hides any bias. " +
 		"Agreement within 20 % is good, and lowest supersaturations agree worst (published closure studies, as remembered)."}
+	if slices.ContainsFunc(a.measured, func(m measurement) bool { return m.isBetween }) {
+		out = append(out, "A count marked as interpolated lies on the straight line between its measured neighbours in the logarithms of both; where the spectrum bends "+
+			"that is off by several per cent. It is left out of closure and fits.")
+	}
 	if a.bins != nil {
 		out = append(out, "κ by count: sizes are summed from the largest down until they hold the count; that is the critical dry diameter, and κ that of particles "+
 			"whose crest lies at the supersaturation there. It presumes that all wider particles activate. Its uncertainty is that of the count alone; "+
