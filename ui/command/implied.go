@@ -44,6 +44,29 @@ func countsIn(key string, s *scenario.Scenario) bool {
 	return kind == "" || kind == s.Population
 }
 
+// hasDefaultRows reports whether a list is as it is in a scenario that nobody has
+// touched.
+func hasDefaultRows(l scenario.RowList) bool {
+	untouched := scenario.Default()
+	for _, d := range scenario.Lists(&untouched) {
+		if d.Key() == l.Key() {
+			return slices.EqualFunc(shown(d), shown(l), slices.Equal)
+		}
+	}
+	return false
+}
+
+// shown are the values of all rows as they are shown.
+func shown(l scenario.RowList) [][]string {
+	rows := make([][]string, l.Len())
+	for i := range rows {
+		for _, in := range l.Row(i) {
+			rows[i] = append(rows[i], in.Show(scenario.Style{}))
+		}
+	}
+	return rows
+}
+
 // isFile reports whether one of the inputs is the name of a file.
 func isFile(inputs ...scenario.Input) bool {
 	return slices.ContainsFunc(inputs, func(in scenario.Input) bool { return in.Kind() == scenario.File })

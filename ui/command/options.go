@@ -85,11 +85,14 @@ func (o *options) form(cmd *cobra.Command, formats ...string) {
 }
 
 // parts adds the options that choose one table or picture of several.
-func (o *options) parts() {
+func (o *options) parts(cmd *cobra.Command) {
 	o.set.StringVar(&o.table, "table", "", "`KEY` of the table that csv and jsonl write; a key that is none lists them. Default: the main one.")
 	o.group("table", outputGroup)
 	o.set.StringVar(&o.picture, "picture", "", "`KEY` of the picture that svg, png and pdf write; a key that is none lists them. Default: the main one.")
 	o.group("picture", outputGroup)
+	for _, name := range []string{"table", "picture"} {
+		_ = cmd.RegisterFlagCompletionFunc(name, cobra.NoFileCompletions)
+	}
 }
 
 func (o *options) checkParts() error {
@@ -247,6 +250,11 @@ func (o *options) unused(s *scenario.Scenario) []atmos.Note {
 	for _, in := range o.question.Inputs(s) {
 		if !in.Used() && !in.IsDefault() && !said[string(in.Path())] {
 			notes = append(notes, unusedNote(in.Path(), "The value of "+string(in.Path())+" in the scenario file"))
+		}
+	}
+	for _, l := range o.question.Lists(s) {
+		if !countsIn(l.Key(), s) && !said[l.Key()] && !hasDefaultRows(l) {
+			notes = append(notes, unusedNote(scenario.Path(l.Key()), "What the scenario file says of "+l.Key()))
 		}
 	}
 	return notes

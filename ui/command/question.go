@@ -28,7 +28,7 @@ func (w world) newQuestion(q answer.Question) *cobra.Command {
 	o.from(cmd)
 	o.substances(w)
 	o.form(cmd, form.FormatsOf(q)...)
-	o.parts()
+	o.parts(cmd)
 	o.plain(cmd)
 	cmd.RunE = func(cmd *cobra.Command, _ []string) error {
 		s, notes, err := o.scenario(w)
