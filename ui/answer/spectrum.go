@@ -32,10 +32,11 @@ func spectrumTabled(a Answer) []string {
 }
 
 // spectrumLive tells whether the answer takes no longer than a frame: measured
-// files may be of any length, the demo is short.
+// files may be of any length, the demo is short; particles with a film take a
+// millisecond for each supersaturation.
 func spectrumLive(s scenario.Scenario) bool {
-	return s.Population != "data" ||
-		!slices.ContainsFunc(s.Data, func(d scenario.DataFile) bool { return d.Name != scenario.DemoData })
+	return len(s.Szyszkowski) == 0 && (s.Population != "data" ||
+		!slices.ContainsFunc(s.Data, func(d scenario.DataFile) bool { return d.Name != scenario.DemoData }))
 }
 
 func askSpectrum(ctx context.Context, env Env, s scenario.Scenario) (Answer, error) {

@@ -45,7 +45,7 @@ func (a *activated) countsFigure() (figure.Figure, error) {
 	}
 	low, high := a.reach()
 	n := linePoints
-	if a.isSpread() {
+	if a.isSlow() {
 		n = otherPoints
 	}
 	s := spaced(low, high, n)
@@ -72,9 +72,9 @@ func (a *activated) countsFigure() (figure.Figure, error) {
 	return f, nil
 }
 
-// isSpread reports whether each count is an integral over κ, which takes long.
-func (a *activated) isSpread() bool {
-	return a.asked.KappaSpread > 1 && slices.ContainsFunc(a.groups, func(g composed) bool { return !g.isOne })
+// isSlow reports whether each count takes long: an integral over κ, or a film.
+func (a *activated) isSlow() bool {
+	return len(a.asked.Szyszkowski) > 0 || a.asked.KappaSpread > 1 && slices.ContainsFunc(a.groups, func(g composed) bool { return !g.isOne })
 }
 
 // reach is what is shown of the supersaturations: all that were asked for or

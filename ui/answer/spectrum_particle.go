@@ -72,8 +72,45 @@ func (env Env) composeOne(s scenario.Scenario) (composed, error) {
 	if _, closed := out.of.(spectrum.Kappa); !closed {
 		out.kappa = math.NaN() // the model in use has none
 	}
+	if m, ok := out.of.(*spectrum.Matter); ok {
+		out.of = &held{m, map[float64]float64{}}
+	}
 	out.of, out.isOne = spreadOf(out.of, s.KappaSpread, out.kelvin)
 	return out, nil
+}
+
+// held is matter that holds its critical diameters: many records ask for the same
+// ones. It belongs to one answer.
+type held struct {
+	of    *spectrum.Matter
+	known map[float64]float64 // m, by supersaturation
+}
+
+// mostHeld bounds what is held, where each record has supersaturations of its own.
+const mostHeld = 4096
+
+// Critical returns that of the matter.
+func (h *held) Critical(s float64) (float64, error) {
+	if d, ok := h.known[s]; ok {
+		return d, nil
+	}
+	d, err := h.of.Critical(s)
+	if err == nil && len(h.known) < mostHeld {
+		h.known[s] = d
+	}
+	return d, err
+}
+
+// AddCounts implements spectrum.Composition.
+func (h *held) AddCounts(dst, s []float64, sizes spectrum.Sizes, share float64) error {
+	for i, x := range s {
+		d, err := h.Critical(x)
+		if err != nil {
+			return err
+		}
+		dst[i] += share * sizes.Above(d)
+	}
+	return nil
 }
 
 // composeKappa makes the composition of particles of which nothing but κ is known,
