@@ -9,7 +9,6 @@ import (
 	"time"
 
 	"dropcrest/atmos"
-	"dropcrest/koehler/spectrum"
 	"dropcrest/ui/fieldfile"
 	"dropcrest/ui/scenario"
 )
@@ -39,11 +38,10 @@ func campaign(ctx context.Context, env Env, s scenario.Scenario, each func(*obse
 		return campaignFacts{}, err
 	}
 	defer files.close()
-	judge, err := spectrum.NewJudge(spectrum.Defaults())
+	r, err := newRecorder(env, s)
 	if err != nil {
 		return campaignFacts{}, err
 	}
-	r := recorder{judge: judge, environment: s}
 	var sample fieldfile.Sample
 	for {
 		if err := ctx.Err(); err != nil {

@@ -8,7 +8,6 @@ import (
 
 	"dropcrest/atmos"
 	"dropcrest/atmos/aerosol"
-	"dropcrest/koehler/spectrum"
 	"dropcrest/ui/fieldfile"
 	"dropcrest/ui/scenario"
 )
@@ -46,11 +45,11 @@ func oneBins(ctx context.Context, env Env, s scenario.Scenario) (*aerosol.Bins, 
 		}
 		return fail(err)
 	}
-	judge, err := spectrum.NewJudge(spectrum.Defaults())
+	r, err := newRecorder(env, s)
 	if err != nil {
-		return nil, nil, err
+		return fail(err)
 	}
-	o := (&recorder{judge: judge}).observe(&sample)
+	o := r.observe(&sample)
 	if o.sizes == nil {
 		return fail(fmt.Errorf("%s: %s", s.Bins, o.noSizes))
 	}

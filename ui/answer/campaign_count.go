@@ -119,7 +119,7 @@ func (o *observation) reject(why string) {
 
 // says is a rule in words.
 func (r *recorder) says(key string) string {
-	for _, rule := range spectrum.Defaults() {
+	for _, rule := range r.rules {
 		if rule.Key == key {
 			return rule.Says
 		}

@@ -14,10 +14,11 @@ import (
 // recorder makes observations of samples: one state of air, points judged, κ of the
 // composition that was measured.
 type recorder struct {
-	environment scenario.Scenario
-	judge       *spectrum.Judge
-	number      int
-	notes       []atmos.Note
+	rules  []spectrum.Rule
+	judge  *spectrum.Judge
+	sizing sizing
+	number int
+	notes  []atmos.Note
 
 	grids []sizedGrid // of the bins so far
 	left  []rejection // points that are no numbers
@@ -32,12 +33,30 @@ type sizedGrid struct {
 	err  error
 }
 
+// newRecorder is a recorder for a scenario.
+func newRecorder(env Env, s scenario.Scenario) (*recorder, error) {
+	r := &recorder{rules: s.QualityRules()}
+	var err error
+	if r.judge, err = spectrum.NewJudge(r.rules); err != nil {
+		return nil, &InputError{Input: "rule", Text: reason(err)}
+	}
+	r.sizing, err = sizingOf(env, s)
+	return r, err
+}
+
 // observe is the observation of a sample. Nothing of it is used again.
 func (r *recorder) observe(s *fieldfile.Sample) *observation {
 	r.number++
 	o := &observation{number: r.number, start: s.Start, end: s.End, kappa: math.NaN()}
 	air := aerosol.Air{Temperature: s.Values[fieldfile.Temperature].Or(math.NaN()), Pressure: s.Values[fieldfile.Pressure].Or(math.NaN())}
 	r.size(o, s, air)
+	if o.sizes != nil {
+		sized, err := r.sizing.apply(o.sizes)
+		if err != nil {
+			o.noSizes = reason(err)
+		}
+		o.sizes = sized
+	}
 	r.count(o, s, air)
 	r.compose(o, s)
 	return o

@@ -14,6 +14,7 @@ import (
 	"time"
 
 	"dropcrest/atmos/aerosol"
+	"dropcrest/koehler/spectrum"
 	"dropcrest/ui/scenario"
 )
 
@@ -188,5 +189,57 @@ func TestDataErrors(t *testing.T) {
 	cancel()
 	if _, err := campaign(ctx, stationEnv(), scenario.Default(), func(*observation) error { return nil }); !errors.Is(err, context.Canceled) {
 		t.Errorf("stopped: %v", err)
+	}
+}
+
+// Losses are divided out, mobility sizes become smaller volumes, and a rule with
+// another bound leaves other points out.
+func TestSizingAndRules(t *testing.T) {
+	first := func(change func(*scenario.Scenario)) (observation, campaignFacts) {
+		t.Helper()
+		s := scenario.Default()
+		change(&s)
+		o, facts, err := oneRecord(context.Background(), stationEnv(), s, 3)
+		if err != nil {
+			t.Fatal(err)
+		}
+		return o, facts
+	}
+	plainOne, facts := first(func(*scenario.Scenario) {})
+	half, _ := first(func(s *scenario.Scenario) { s.Penetration = "0.5" })
+	if ratio := half.sizes.Number() / plainOne.sizes.Number(); math.Abs(ratio-2) > 1e-12 {
+		t.Errorf("half of the particles counted: %v times as many in the air", ratio)
+	}
+	file := filepath.Join(t.TempDir(), "losses.csv")
+	if err := os.WriteFile(file, []byte("diameter (nm),share\n5,0.25\n2000,0.25\n"), 0o644); err != nil {
+		t.Fatal(err)
+	}
+	quarter, _ := first(func(s *scenario.Scenario) { s.Penetration = file })
+	if ratio := quarter.sizes.Number() / plainOne.sizes.Number(); math.Abs(ratio-4) > 1e-9 {
+		t.Errorf("a quarter of the particles counted: %v times as many in the air", ratio)
+	}
+	cubes, _ := first(func(s *scenario.Scenario) { s.DrySizeIs, s.ShapeFactor = "mobility", 1.1 })
+	if cubes.sizes.Above(100e-9) >= plainOne.sizes.Above(100e-9) || math.Abs(cubes.sizes.Number()/plainOne.sizes.Number()-1) > 1e-12 {
+		t.Error("particles with a shape factor above 1 have no smaller volume, or another number")
+	}
+	strict, strictFacts := first(func(s *scenario.Scenario) {
+		s.Rules = []scenario.Rule{{Key: spectrum.Fraction, Flag: scenario.Measure{Word: "usual"}, Reject: scenario.Measure{Number: 0.5}}}
+	})
+	if len(strict.counts) >= len(plainOne.counts) || len(strictFacts.rejected) <= len(facts.rejected) {
+		t.Errorf("%d counts are left by a strict rule, %d by the usual one; rejected %v", len(strict.counts), len(plainOne.counts), strictFacts.rejected)
+	}
+	s := scenario.Default()
+	s.Rules = []scenario.Rule{{Key: spectrum.Fraction, Flag: scenario.Measure{Word: "never"}, Reject: scenario.Measure{Number: 50}}}
+	_, _, err := oneRecord(context.Background(), stationEnv(), s, 1)
+	var in *InputError
+	if !errors.As(err, &in) || in.Input != "rule" {
+		t.Errorf("a bound that makes no sense: %v", err)
+	}
+	for text, want := range map[string]string{"1.5": "at most 1", "missing.csv": "no such file"} {
+		s := scenario.Default()
+		s.Penetration = text
+		if _, _, err := oneRecord(context.Background(), stationEnv(), s, 1); err == nil || !strings.Contains(err.Error(), want) {
+			t.Errorf("penetration %s: %v, want %q", text, err, want)
+		}
 	}
 }

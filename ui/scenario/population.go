@@ -99,6 +99,12 @@ var populationFields = []field[Scenario]{
 			"error functions in ln s, which belong to lognormal modes.",
 		origin: "none",
 		at:     func(s *Scenario) any { return &s.Fit }},
+	{key: "penetration", says: "share that is counted", form: File,
+		help: "The share of particles that reach and are counted by the instrument that sizes them: a number such as 0.95, or a CSV file with diameters in nm and shares. " +
+			"Sizes are divided by it.",
+		origin: "all of them, or what the data have corrected already",
+		at:     func(s *Scenario) any { return &s.Penetration },
+		used:   func(s *Scenario) bool { return s.Population != "modes" }},
 	{key: "axes", says: "axes", words: []Option{{"log", "logarithmic"}, {"linear", "linear"}},
 		help:   "The axes of the picture of counts against supersaturation.",
 		origin: "spectra span decades",

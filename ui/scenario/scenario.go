@@ -50,6 +50,8 @@ type Scenario struct {
 	Supersaturations []float64  // fractions
 	Fit              string     // none | power | cohard | erf | erf2
 	Axes             string     // log | linear
+	Rules            []Rule     // of quality, whose bounds are not the usual ones
+	Penetration      string     // share of particles that reach the instrument: a number or a file, "": all
 
 	substances *solutes.Catalogue // nil: the standard one
 	anyName    bool               // names of substances are not looked up
@@ -140,19 +142,20 @@ func (s Scenario) Clone() Scenario {
 	s.Adsorption = slices.Clone(s.Adsorption)
 	s.Modes, s.Data, s.Map = slices.Clone(s.Modes), slices.Clone(s.Data), slices.Clone(s.Map)
 	s.Supersaturations = slices.Clone(s.Supersaturations)
+	s.Rules = slices.Clone(s.Rules)
 	return s
 }
 
 // Equal reports whether both ask the same.
 func (s Scenario) Equal(other Scenario) bool {
-	return slices.Equal(s.Modes, other.Modes) && slices.Equal(s.Data, other.Data) && slices.Equal(s.Map, other.Map) &&
+	return slices.Equal(s.Rules, other.Rules) && slices.Equal(s.Modes, other.Modes) && slices.Equal(s.Data, other.Data) && slices.Equal(s.Map, other.Map) &&
 		slices.Equal(s.Components, other.Components) && slices.Equal(s.Szyszkowski, other.Szyszkowski) &&
 		slices.Equal(s.Adsorption, other.Adsorption) && reflect.DeepEqual(s.plain(), other.plain())
 }
 
 // plain is the scenario without its rows and without where names are looked up.
 func (s Scenario) plain() Scenario {
-	s.Modes, s.Data, s.Map = nil, nil, nil
+	s.Modes, s.Data, s.Map, s.Rules = nil, nil, nil, nil
 	s.Components, s.Szyszkowski, s.Adsorption, s.substances, s.anyName = nil, nil, nil, nil, false
 	return s
 }
