@@ -99,13 +99,13 @@ func (a *activated) closureSentence() string {
 	case g.Pairs == 0:
 		return ""
 	case !a.isSeason() && g.Pairs <= mostListed:
-		var ratios []string
+		low, high := math.Inf(1), 0.0
 		for _, m := range a.measured {
 			if r := m.ratio(); !math.IsNaN(r) && !m.isBetween {
-				ratios = append(ratios, digits(r, 3))
+				low, high = math.Min(low, r), math.Max(high, r)
 			}
 		}
-		return fmt.Sprintf("Predicted over measured is %s, median %s; normalised mean bias %s.", list(ratios), digits(g.Median, 3), signedPercent(g.MeanBias))
+		return fmt.Sprintf("Predicted over measured is %s to %s, median %s; normalised mean bias %s.", digits(low, 3), digits(high, 3), digits(g.Median, 3), signedPercent(g.MeanBias))
 	}
 	return fmt.Sprintf("Predicted over measured is %s in the median of %s (5 to 95 %%: %s to %s), normalised mean bias %s; %s lie within 10 %%.",
 		digits(g.Median, 3), pairs(g.Pairs), digits(g.P05, 3), digits(g.P95, 3), signedPercent(g.MeanBias), wholePercent(g.Within10))
@@ -118,7 +118,12 @@ func pairs(n int) string {
 	return strconv.Itoa(n) + " pairs"
 }
 
-func signedPercent(x float64) string { return fmt.Sprintf("%+.1f %%", 100*x) }
+func signedPercent(x float64) string {
+	if math.Abs(x) < 0.0005 {
+		return "0.0 %"
+	}
+	return fmt.Sprintf("%+.1f %%", 100*x)
+}
 
 func wholePercent(x float64) string { return fmt.Sprintf("%.0f %%", 100*x) }
 
@@ -164,7 +169,24 @@ func (a *activated) countedKappas() string {
 	case len(without) > 0:
 		return fmt.Sprintf("The counts imply κ %s %s at %s %% (none %s)", of, list(kappas), list(at), strings.Join(without, "; "))
 	}
+	if a.asksAt(at) {
+		return fmt.Sprintf("The counts imply κ %s %s there", of, list(kappas))
+	}
 	return fmt.Sprintf("The counts imply κ %s %s at %s %%", of, list(kappas), list(at))
+}
+
+// asksAt reports whether these are the supersaturations that the first sentence
+// names.
+func (a *activated) asksAt(at []string) bool {
+	if len(at) != len(a.predicted) || len(at) > mostListed {
+		return false
+	}
+	for i, p := range a.predicted {
+		if at[i] != shortest(100*p.s) {
+			return false
+		}
+	}
+	return true
 }
 
 // roundedPair writes a value and its standard uncertainty with as many decimals as

@@ -18,7 +18,11 @@ func spectrumStatement(s scenario.Scenario) []string {
 	} else {
 		lines = append(lines, solutionClauses(s)...)
 	}
-	return append(lines, "in air of {temperature}, counted at", "{supersaturation}, fitted by {fit}, all else {further}.")
+	lines = append(lines, "in air of {temperature}, counted at {supersaturation},")
+	if s.Fit != "none" {
+		return append(lines, "fitted by {fit}, all else {further}.")
+	}
+	return append(lines, "all else {further}.")
 }
 
 // populationClauses name the particles and what they are of.
