@@ -39,6 +39,7 @@ func Dissolve(r Recipe) (Dissolved, []atmos.Note, error) {
 	d.out.WaterDensity = d.waterDensity
 	d.out.Kappa = d.mixedKappa()
 	d.out.MolesPerVolume, d.out.DryDensity = d.amounts()
+	d.out.CrystalWater = d.crystalWater()
 	return d.out, d.notes, nil
 }
 
@@ -114,11 +115,7 @@ func (d *dissolving) amounts() (moles, density float64) {
 	for _, p := range d.Parts {
 		s := p.Substance
 		if !s.Insoluble() {
-			mol := p.Volume * s.molality(d.waterDensity) * d.waterDensity
-			moles += mol
-			if s.Hydration.Value > 0 {
-				d.out.CrystalWater += mol * s.Hydration.Value * waterMolarMass / d.waterDensity
-			}
+			moles += p.Volume * s.molality(d.waterDensity) * d.waterDensity
 		}
 		if s.Density.Known() {
 			density += p.Volume * s.Density.Value
@@ -127,6 +124,18 @@ func (d *dissolving) amounts() (moles, density float64) {
 		}
 	}
 	return moles, density
+}
+
+// crystalWater is the volume of crystal water per volume of dry particle, as far as
+// it is known.
+func (d *dissolving) crystalWater() float64 {
+	sum := 0.0
+	for _, p := range d.Parts {
+		if s := p.Substance; s.Hydration.Value > 0 && !s.Insoluble() && missing(s) == nil {
+			sum += p.Volume * s.molality(d.waterDensity) * s.Hydration.Value * waterMolarMass
+		}
+	}
+	return sum
 }
 
 // activationKappa returns κ and whether it is a value of its own: else it is that

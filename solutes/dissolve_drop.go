@@ -97,6 +97,7 @@ func (d *dissolving) solutionTension(water float64) error {
 		}
 		t.PerDry += p.Volume * s.TensionIncrement.Value * s.molality(d.waterDensity)
 	}
+	t.Crystal = d.crystalWater()
 	d.out.Tension = t
 	return nil
 }

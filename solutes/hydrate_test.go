@@ -66,6 +66,32 @@ func TestDissolvedHydrate(t *testing.T) {
 	near(t, "molality", d.Molality(2), salt.Molality(2), 1e-12)
 }
 
+// The surface tension of a hydrate's solution is that of the salt at the same
+// molality: the crystal water is water of the solution.
+func TestTensionOfHydrates(t *testing.T) {
+	for _, c := range []struct{ hydrate, dry string }{{"MgCl2.6H2O", "MgCl2"}, {"CaCl2.2H2O", "CaCl2"}} {
+		made := func(name string) Dissolved {
+			r := recipe(t, IonInteraction, name, 1.)
+			r.TensionRule = SolutionRule
+			d, _, err := Dissolve(r)
+			if err != nil {
+				t.Fatal(err)
+			}
+			return d
+		}
+		wet, salt := made(c.hydrate), made(c.dry)
+		for _, u := range []float64{0.1, 1, 2, 10, 1e4} {
+			got, slope := wet.Tension.SurfaceTension(u)
+			want, _ := salt.Tension.SurfaceTension(salt.Solution.(*Salt).Water(wet.Molality(u)))
+			near(t, c.hydrate+" σ", got, want, 1e-13)
+			const h = 1e-5
+			up, _ := wet.Tension.SurfaceTension(u * math.Exp(h))
+			down, _ := wet.Tension.SurfaceTension(u * math.Exp(-h))
+			near(t, c.hydrate+" slope", slope, (up-down)/(2*h), 1e-6)
+		}
+	}
+}
+
 // With anhydrous parts, a mixture holds a hydrate's water down to where that is
 // used up.
 func TestMixtureWithAHydrate(t *testing.T) {
