@@ -128,13 +128,24 @@ func (c *curve) hazeWords(h hazeState) string {
 	case "partly_dissolved":
 		return "it is partly dissolved, of a size that is not known"
 	case "metastable":
-		return fmt.Sprintf("it is a supersaturated drop of %s radius (growth factor %s), down to %s", radius, times, humidity(roundTo(c.phase.Over.Efflorescence, 3)))
+		return fmt.Sprintf("it is a supersaturated drop of %s radius (growth factor %s)%s", radius, times, c.dryingWords())
 	}
 	says := fmt.Sprintf("it is haze of %s radius (growth factor %s)", radius, times)
 	if c.isDoubtful && h.branch == "stable" {
 		says += " if it is dissolved"
 	}
 	return says
+}
+
+// dryingWords say how far a supersaturated drop can be dried.
+func (c *curve) dryingWords() string {
+	switch over := c.phase.Over.Efflorescence; {
+	case c.flat.Efflorescence == 0:
+		return ", which is not seen to crystallise"
+	case over > 0:
+		return ", down to " + humidity(roundTo(over, 3))
+	}
+	return ", unless it has crystallised: at which humidity is not known"
 }
 
 // otherHistory is the history that was not asked for.

@@ -202,15 +202,15 @@ func (c *curve) partsAt(activity float64) (crystals, solutions int) {
 	return crystals, solutions
 }
 
-// branched names the state of a particle on its branch. A drop below the humidity
-// at which a dry particle would dissolve is metastable.
+// branched names the state of a particle on its branch. A drop of a lower water
+// activity than that at which a dry particle dissolves is metastable.
 func (c *curve) branched(b koehler.Branched) hazeState {
 	switch {
 	case b.Branch == solutes.CrystalBranch:
 		return hazeState{"dry", b.State}
 	case b.Branch == solutes.PartlyDissolved:
 		return hazeState{"partly_dissolved", b.State}
-	case c.asked.RelativeHumidity < c.phase.Over.Dissolved:
+	case b.WaterActivity < c.flat.Dissolved:
 		return hazeState{"metastable", b.State}
 	}
 	return hazeState{"stable", b.State}

@@ -64,8 +64,11 @@ func (c *curve) adsorptionWords() string {
 }
 
 func (c *curve) phaseWords() string {
-	says := fmt.Sprintf("Phases: a crystal dissolves where its drop would have the water activity of the saturated solution, at %s over a flat surface and at %s over this particle",
-		humidity(roundTo(c.flat.Dissolved, 4)), humidity(roundTo(c.phase.Over.Dissolved, 4)))
+	says := "Phases: a crystal dissolves where its drop would have the water activity of the saturated solution, at " +
+		humidity(roundTo(c.flat.Dissolved, 4)) + " over a flat surface"
+	if over := c.phase.Over.Dissolved; over > 0 {
+		says += " and at " + humidity(roundTo(over, 4)) + " over this particle"
+	}
 	switch flat, over := c.flat.Efflorescence, c.phase.Over.Efflorescence; {
 	case flat == 0:
 		says += "; no crystallisation is seen when it dries"

@@ -21,6 +21,10 @@ func TestWordsOfTheFinding(t *testing.T) {
 		"supercooled":           {[]string{"temperature=-20C"}, "", "", "freeze"},
 		"above the crest, once": {[]string{"relative-humidity=101%"}, "humidity-above-crest", "it has no equilibrium size", "is not below the crest"},
 		"no molar mass":         {[]string{"component=mineral dust"}, "", "water activity 0.99564, 182 layers of adsorbed water)", "mol/kg"},
+		"crystallises at":       {[]string{"relative-humidity=60%", "humidity-history=falling"}, "", "growth factor 1.27), down to 35.7 %;", ""},
+		"when is not known":     {[]string{"component=sodium nitrate", "relative-humidity=50%"}, "", "unless it has crystallised: at which humidity is not known", "NaN"},
+		"never crystallises":    {[]string{"component=ammonium nitrate", "relative-humidity=50%"}, "", "which is not seen to crystallise", "down to"},
+		"no humidity dissolves": {[]string{"component=potassium nitrate", "temperature=-15C", "relative-humidity=50%", "humidity-history=falling"}, "", "it is a supersaturated drop", "NaN"},
 		"crest once dissolved":  {[]string{"component=succinic acid", "water-activity=kappa"}, "", "Already dissolved it activates", "There is no crest in solution"},
 	} {
 		t.Run(name, func(t *testing.T) {
@@ -28,6 +32,9 @@ func TestWordsOfTheFinding(t *testing.T) {
 			all := strings.Join(a.Finding, " ")
 			if !strings.Contains(all, c.says) || c.hush != "" && strings.Contains(all, c.hush) {
 				t.Errorf("finding %q, want %q in it and not %q", all, c.says, c.hush)
+			}
+			if strings.Contains(all+strings.Join(a.Why, " "), "NaN") {
+				t.Errorf("a number that is none in %q, %q", all, a.Why)
 			}
 			if c.code != "" && !slices.Contains(codes(a), c.code) {
 				t.Errorf("notes %q, want %q among them", codes(a), c.code)
