@@ -156,11 +156,12 @@ func (c *curve) solveTwin() {
 }
 
 // branches puts the particle on the branch that its history gives it: a crystal,
-// or a solution. Above 100 % every salt is dissolved.
+// or a solution. Over a drop of some nanometres a salt may dissolve above 100 %
+// only.
 func (c *curve) branches() {
 	flat, notes := solutes.PhasesOf(c.parts, c.asked.Temperature)
 	c.flat = flat
-	if c.asked.RelativeHumidity >= 1 || c.noHaze != nil || c.hasTwin || c.dissolved.Film != nil {
+	if c.noHaze != nil || c.hasTwin || c.dissolved.Film != nil {
 		return
 	}
 	history := solutes.Rising
@@ -173,6 +174,9 @@ func (c *curve) branches() {
 			Text: "A dry crystal of this size would dissolve only beyond its crest: whether it is dry or a drop at this humidity is not said."})
 		return
 	}
+	if c.asked.RelativeHumidity >= 1 && !h.Several {
+		return // dissolved, as far as is known
+	}
 	c.phase, c.hasPhase = h, true
 	crystals, solutions := c.partsAt(h.Now.WaterActivity)
 	c.isDoubtful = h.Now.Branch == solutes.BranchUnknown && crystals > 0
@@ -180,11 +184,12 @@ func (c *curve) branches() {
 	if h.Several || !isSolution {
 		c.notes = distinct(append(c.notes, notes...))
 	}
-	c.haze = c.haze[:0]
-	c.haze = append(c.haze, c.branched(h.Now))
+	unstable := slices.DeleteFunc(c.haze, func(h hazeState) bool { return h.branch != "unstable" })
+	c.haze = []hazeState{c.branched(h.Now)}
 	if h.Several {
 		c.haze = append(c.haze, c.branched(h.Other))
 	}
+	c.haze = append(c.haze, unstable...)
 }
 
 // partsAt counts the parts that would be crystals by themselves at that water

@@ -25,6 +25,9 @@ func TestWordsOfTheFinding(t *testing.T) {
 		"when is not known":     {[]string{"component=sodium nitrate", "relative-humidity=50%"}, "", "unless it has crystallised: at which humidity is not known", "NaN"},
 		"never crystallises":    {[]string{"component=ammonium nitrate", "relative-humidity=50%"}, "", "which is not seen to crystallise", "down to"},
 		"no humidity dissolves": {[]string{"component=potassium nitrate", "temperature=-15C", "relative-humidity=50%", "humidity-history=falling"}, "", "it is a supersaturated drop", "NaN"},
+		"dry in a cloud":        {[]string{"component=potassium sulfate", "dry-diameter=10nm", "relative-humidity=100.5%"}, "", "At 100.5 % humidity it is dry and takes up water from 105.0 % on (97.3 % over a flat surface); after falling humidity it is a supersaturated drop", "a drop larger than 0.00"},
+		"never dissolves":       {[]string{"component=potassium nitrate", "dry-diameter=5nm", "relative-humidity=101%"}, "no-phase-branch", "", ""},
+		"dissolved in a cloud":  {[]string{"relative-humidity=100.1%"}, "", "it is haze of", "dry and"},
 		"crest once dissolved":  {[]string{"component=succinic acid", "water-activity=kappa"}, "", "Already dissolved it activates", "There is no crest in solution"},
 	} {
 		t.Run(name, func(t *testing.T) {
