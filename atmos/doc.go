@@ -10,8 +10,8 @@
 // AirViscosity, MeanFreePath. Particles in air: SlipCorrection, Mobility and
 // its inverse DiameterFromMobility, VolumeEquivalent and its inverse
 // MobilityDiameter. Relations lists ranges, qualities and sources, WaterNotes
-// says what a result must say about its temperature, Constants lists the
-// constants.
+// and NotesOf say what a result must say about its temperature, Constants lists
+// the constants.
 //
 // Where an independent reference equation is known, the stated accuracy is the
 // deviation from it, and the tests of this package recompute it.

@@ -17,6 +17,18 @@ func WaterNotes(T float64) []Note {
 	return notes
 }
 
+// NotesOf returns what must be said when the property of that key, one of
+// Relations, is used at the temperature T (K): its note outside its range, none
+// inside. An unknown key has none.
+func NotesOf(key string, T float64) []Note {
+	for _, r := range Relations() {
+		if note, outside := r.Note(T); r.Key == key && outside {
+			return []Note{note}
+		}
+	}
+	return nil
+}
+
 // Note returns the note that this property is used at a temperature T (K)
 // outside its range, and whether that is so.
 func (r Relation) Note(T float64) (note Note, outside bool) {

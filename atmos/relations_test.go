@@ -77,6 +77,19 @@ func TestWaterNotes(t *testing.T) {
 	}
 }
 
+func TestNotesOf(t *testing.T) {
+	for _, c := range []struct {
+		key  string
+		T    float64
+		want string
+	}{{"compressibility", 243.15, ""}, {"compressibility", 243.1, "compressibility-extrapolated"}, {"air-viscosity", 200, "air-viscosity-extrapolated"}, {"no such property", 1, ""}} {
+		notes := NotesOf(c.key, c.T)
+		if len(notes) > 1 || (len(notes) == 1) != (c.want != "") || len(notes) == 1 && notes[0].Code != c.want {
+			t.Errorf("%s at %v K: %+v, want %q", c.key, c.T, notes, c.want)
+		}
+	}
+}
+
 func TestRangeContains(t *testing.T) {
 	r := Range{1, 2}
 	for x, want := range map[float64]bool{1: true, 2: true, 1.5: true, 0.99: false, 2.01: false, math.Inf(1): false} {

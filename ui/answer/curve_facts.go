@@ -110,10 +110,10 @@ func (c *curve) molality() float64 {
 	return c.dissolved.Molality(c.crest.Water)
 }
 
-// kindWord is the kind of an extremum as scripts see it.
 // percentNumber writes a fraction in per cent.
 func percentNumber(fraction float64) Number { return Number(100 * fraction) }
 
+// kindWord is the kind of an extremum as scripts see it.
 func kindWord(k koehler.Kind) string {
 	switch k {
 	case koehler.Minimum:

@@ -166,14 +166,21 @@ func TestWhyNamesTheModel(t *testing.T) {
 		values     []string
 		says, hush string
 	}{
-		"sparing":      {adipicAcid, "adipic acid (C 0.0183) is wholly dissolved from 3.82 times the dry diameter on", "Adsorption"},
-		"film":         {[]string{sulfate, organic, film}, "missing in the bulk", "Surface tension: pure water"},
-		"whole film":   {[]string{sulfate, organic, film, "partitioning=off"}, "counts it twice", "missing in the bulk"},
-		"dust":         {[]string{"component=illite"}, "θ^(-B_F)", "soluble share ε"},
-		"coated dust":  {[]string{"component=illite share=0.9", "component=ammonium sulfate share=0.1"}, "ln(1 + ε κ", "ion interaction (Pitzer"},
-		"the old form": {[]string{"component=illite share=0.9", "component=ammonium sulfate share=0.1", "adsorption=A=1 B=1.1 form=exponential"}, "less ε κ Dd³/(D³", "ln(1 + ε κ"},
-		"salt":         {nil, "at 79.89 % over a flat surface and at 81.02 % over this particle", "Film:"},
-		"Tolman":       {[]string{"tolman=0.1nm"}, "Tolman's length δ of 0.1 nm", "Film:"},
+		"sparing":       {adipicAcid, "adipic acid (C 0.0183) is wholly dissolved from 3.82 times the dry diameter on", "Adsorption"},
+		"film":          {[]string{sulfate, organic, film}, "missing in the bulk", "Surface tension: pure water"},
+		"whole film":    {[]string{sulfate, organic, film, "partitioning=off"}, "counts it twice", "missing in the bulk"},
+		"dust":          {[]string{"component=illite"}, "θ^(-B_F)", "soluble share ε"},
+		"coated dust":   {[]string{"component=illite share=0.9", "component=ammonium sulfate share=0.1"}, "ln(1 + ε κ", "ion interaction (Pitzer"},
+		"the old form":  {[]string{"component=illite share=0.9", "component=ammonium sulfate share=0.1", "adsorption=A=1 B=1.1 form=exponential"}, "less ε κ Dd³/(D³", "ln(1 + ε κ"},
+		"salt":          {nil, "at 79.89 % over a flat surface and at 81.02 % over this particle", "Film:"},
+		"given tension": {[]string{"surface-tension=60mN/m"}, "as very dilute, its surface tension as that of pure water and", "NaN"},
+		"water's":       {nil, "as very dilute and exp(x)", "as that of pure water"},
+		"κ unused":      {nil, "mixed by volume, is 0.610; it stands here for comparison", "NaN"},
+		"κ used":        {[]string{"water-activity=kappa"}, "mixed by volume, is 0.610.", "for comparison"},
+		"classifier":    {[]string{"dry-size-is=mobility", "shape-factor=1.1", "temperature=10C"}, "at 1013.25 hPa and 10 °C", "NaN"},
+		"cold, pressed": {[]string{"kelvin=compressible", "temperature=-35C"}, "isothermal compressibility of water is extrapolated: Kell 1975 holds from -30 °C", "NaN"},
+		"cold":          {[]string{"temperature=-35C"}, "surface tension of water is extrapolated", "compressib"},
+		"Tolman":        {[]string{"tolman=0.1nm"}, "Tolman's length δ of 0.1 nm", "Film:"},
 	} {
 		why := strings.Join(asked(t, c.values...).Why, "\n")
 		if !strings.Contains(why, c.says) || strings.Contains(why, c.hush) {

@@ -20,8 +20,6 @@ const (
 	// freezing is the temperature (K), -38 °C, below which cloud drops freeze
 	// homogeneously. From memory.
 	freezing = 235.15
-	// avogadro is the number of molecules per mol (CODATA 2018, exact).
-	avogadro = 6.02214076e23
 )
 
 // molecules is how many molecules of water the drop has at its crest; endless
@@ -31,7 +29,7 @@ func (c *curve) molecules() float64 {
 		return math.Inf(1)
 	}
 	dry := math.Pi / 6 * math.Pow(c.particle.DryDiameter, 3)
-	return c.crest.Water * dry * c.dissolved.WaterDensity / atmos.WaterMolarMass * avogadro
+	return c.crest.Water * dry * c.dissolved.WaterDensity / atmos.WaterMolarMass * atmos.Avogadro
 }
 
 // worthSaying is the growth, relative to the dry size, below which nobody looks at
@@ -58,7 +56,7 @@ func (c *curve) limits(from, to float64) []atmos.Note {
 		add("crest-outside-model", "water-activity", "The crest lies where the water activity model is outside its range: it is extrapolated.")
 	}
 	if c.particle.Giant() {
-		add("giant-nucleus", "dry-diameter", "This is a giant nucleus: growth to its crest%s takes longer than a cloud lasts, so kinetics decide and not equilibrium.", c.crestRadius())
+		add("giant-nucleus", "dry-diameter", "This is a giant nucleus: growth to its crest%s takes many minutes, the longer the larger it is, so kinetics decide and not equilibrium.", c.crestRadius())
 	}
 	if n := c.molecules(); n < fewMolecules {
 		add("few-molecules", "dry-diameter", "The drop at its crest has about %s molecules of water: whether so few have the surface tension and the activity of bulk water is not known.", digits(n, 2))
@@ -93,7 +91,11 @@ func (c *curve) limits(from, to float64) []atmos.Note {
 // waterNotes are what must be said of the properties of water that the question
 // uses at its temperature.
 func waterNotes(s scenario.Scenario) []atmos.Note {
-	return slices.DeleteFunc(atmos.WaterNotes(s.Temperature), func(n atmos.Note) bool {
+	notes := atmos.WaterNotes(s.Temperature)
+	if s.Kelvin == "compressible" {
+		notes = append(notes, atmos.NotesOf("compressibility", s.Temperature)...)
+	}
+	return slices.DeleteFunc(notes, func(n atmos.Note) bool {
 		switch n.Code {
 		case "vapour-pressure-extrapolated":
 			return s.Kelvin != "pure-vapour" // S needs no vapour pressure otherwise

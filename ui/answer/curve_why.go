@@ -6,6 +6,7 @@ import (
 
 	"dropcrest/atmos"
 	"dropcrest/koehler"
+	"dropcrest/solutes"
 )
 
 // why is what stands behind the finding: definitions, formulas, models,
@@ -23,11 +24,11 @@ func (c *curve) why() []string {
 	out = append(out, c.kindWords()...)
 	out = append(out, c.tensionWords(), c.volumeWords())
 	if c.asked.DrySizeIs == "mobility" {
-		out = append(out, fmt.Sprintf("The mobility diameter of %s nm with shape factor %s is a volume-equivalent diameter of %s nm, by slip correction at 1013.25 hPa (ISO 15900).",
-			shortest(c.asked.DryDiameter*1e9), shortest(c.asked.ShapeFactor), digits(c.particle.DryDiameter*1e9, 4)))
+		out = append(out, fmt.Sprintf("The mobility diameter of %s nm with shape factor %s is a volume-equivalent diameter of %s nm, by slip correction at 1013.25 hPa and %s (ISO 15900).",
+			shortest(c.asked.DryDiameter*1e9), shortest(c.asked.ShapeFactor), digits(c.particle.DryDiameter*1e9, 4), celsius(c.asked.Temperature)))
 	}
 	if !math.IsNaN(c.dissolved.Kappa) {
-		out = append(out, fmt.Sprintf("The particle's κ, mixed by volume, is %s.", digits(c.dissolved.Kappa, 3)))
+		out = append(out, fmt.Sprintf("The particle's κ, mixed by volume, is %s%s.", digits(c.dissolved.Kappa, 3), c.kappaUse()))
 	}
 	if c.noCubic == nil {
 		out = append(out, fmt.Sprintf("The textbook form s = A/D - B/D³, which takes the drop as very dilute%s and exp(x) as 1 + x, puts the crest at %s and %s.",
@@ -46,6 +47,15 @@ func (c *curve) why() []string {
 		out = append(out, "Note: "+n.Text)
 	}
 	return out
+}
+
+// kappaUse says where the water activity does not follow from κ.
+func (c *curve) kappaUse() string {
+	switch c.particle.Solution.(type) {
+	case *solutes.Salt, *solutes.OsmoticSolution, *solutes.Mixture:
+		return "; it stands here for comparison, the curve does not use it"
+	}
+	return ""
 }
 
 func (c *curve) kelvinWords() string {

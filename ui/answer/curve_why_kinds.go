@@ -85,14 +85,15 @@ func (c *curve) phaseWords() string {
 
 // textbookLeavesOut names what the textbook form does not know of this particle.
 func (c *curve) textbookLeavesOut() string {
-	_, limited := c.dissolved.Solution.(*solutes.Limited)
-	switch {
+	says := ""
+	switch _, limited := c.dissolved.Solution.(*solutes.Limited); {
 	case limited:
-		return ", all of it as dissolved"
-	case c.dissolved.Film != nil:
-		return ", the surface as that of water"
-	case c.dissolved.Core != nil:
-		return ", nothing as adsorbed"
+		says = ", all of it as dissolved"
+	case c.dissolved.Film == nil && c.dissolved.Core != nil:
+		says = ", nothing as adsorbed"
 	}
-	return ""
+	if c.dissolved.Film != nil || !c.asked.SurfaceTension.Is("water") || c.particle.TolmanLength != 0 {
+		says += ", its surface tension as that of pure water"
+	}
+	return says
 }
