@@ -5,7 +5,8 @@ import "math"
 // Ion holds the ion-interaction parameters of one salt at 25 °C (Pitzer &
 // Mayorga, J. Phys. Chem. 77, 2300, 1973), β⁰ and β¹ in kg/mol, Cφ in kg²/mol².
 // For 2-1 salts that paper prints 4/3 β⁰, 4/3 β¹ and (2^5/2)/3 Cφ; the factors
-// are divided out here.
+// are divided out here. One of the two charges is 1: salts of type 2-2 have a third
+// parameter β² and the exponents 1.4 and 12 instead of 2 (Brine knows them).
 type Ion struct {
 	CationCharge int             `json:"cation_charge"`
 	AnionCharge  int             `json:"anion_charge"` // without its sign

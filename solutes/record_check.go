@@ -13,6 +13,9 @@ func (s *Substance) consistent(in *recordReader) {
 			in.fail("ion.anions", fmt.Sprint(i.Anions), fmt.Sprintf("such that charges balance: %d of charge %d against %d of charge %d do not",
 				i.Cations, i.CationCharge, i.Anions, i.AnionCharge))
 		}
+		if i.CationCharge > 1 && i.AnionCharge > 1 {
+			in.fail("ion.anion_charge", fmt.Sprint(i.AnionCharge), fmt.Sprintf("1 beside a cation of charge %d: salts of two ions of higher charge pair up and need the third parameter β² and other exponents, which single salts do not have here", i.CationCharge))
+		}
 		if s.Ions.Value != float64(i.Number()) {
 			in.fail("ions", fmt.Sprint(s.Ions.Value), fmt.Sprintf("%d, as the ion parameters say", i.Number()))
 		}

@@ -130,6 +130,10 @@ func TestRecordErrors(t *testing.T) {
 		{"gap in a table", inside("ion", "beta0", nil), RecordError{"salt", "ion.beta0", "nothing", "-10 to 100 kg/mol"}},
 		{"half an ion", inside("ion", "cations", 1.5), RecordError{"salt", "ion.cations", "1.5", "a whole number from 1 to 4"}},
 		{"charges", inside("ion", "anions", int64(2)), RecordError{"salt", "ion.anions", "2", "such that charges balance: 2 of charge 1 against 2 of charge 2 do not"}},
+		{"2-2 salt", func(r map[string]any) {
+			ion := r["ion"].(map[string]any)
+			ion["cation_charge"], ion["cations"], r["ions"] = int64(2), int64(1), 2.
+		}, RecordError{"salt", "ion.anion_charge", "2", "1 beside a cation of charge 2"}},
 		{"ions", inside("", "ions", 2.), RecordError{"salt", "ions", "2", "3, as the ion parameters say"}},
 		{"no table", inside("", "ion", 3.), RecordError{"salt", "ion", "3", "a table"}},
 		{"five coefficients", inside("concentrated", "activity", []any{1., 1., 1., 1., 1.}), RecordError{"salt", "concentrated.activity", "[1 1 1 1 1]", "a list of 1 to 4 numbers"}},
