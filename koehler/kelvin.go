@@ -26,6 +26,10 @@ func KelvinLength(sigma, temperature float64) float64 {
 // with the Laplace pressure Δp = 4σ/D, the molar volume v of liquid water
 // (Kell 1975), its compressibility c (Kell 1975) and e_s of Murphy & Koop 2005.
 //
+// c is that of 1 atm, though water stiffens under pressure: against IAPWS G12-15 at
+// 0 °C Compressible takes 0.45 % too much from ln S for a drop of 2 nm, 0.02 % for one
+// of 10 nm, out of the 3.3 and 0.75 % that compression is worth.
+//
 // PureVapour is a drop in nothing but its own vapour. In air at a fixed total
 // pressure the vapour's pressure change is exactly zero, as the flat surface
 // stands under the same pressure, so PureVapour is never the model for air.
