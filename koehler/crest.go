@@ -127,12 +127,17 @@ func (c *curve) only() (s State, ok bool) {
 	return here.state(t * (3 + t*(3+t))), true
 }
 
-// Giant reports whether the particle is a giant nucleus: one whose crest lies
-// at a wet size that growth cannot reach within minutes, so that equilibrium is
-// not the question. The threshold is a dry diameter of 1 µm (common practice):
-// a soluble particle of 1 µm has its crest at some 25 µm and below 0.01 %, and
-// growing a drop from haze to there by vapour at such supersaturations takes
-// many minutes, longer than it spends near cloud base.
+// Giant reports whether the particle is a giant nucleus by its dry size: above
+// 1 µm (common practice). Whether equilibrium is the question is a matter of its
+// crest, see Slow: an insoluble particle of that size has it near the dry size.
 func (p Particle) Giant() bool { return p.DryDiameter > giantDry }
 
 const giantDry = 1e-6
+
+// Slow reports whether the crest lies at a wet size that growth cannot reach
+// within minutes, so that equilibrium is not the question: above 10 µm in radius.
+// Growth by vapour to r takes r²/(2 G s), with G some 1e-10 m²/s (10 °C, 900 hPa; from
+// memory): 8 minutes at 0.1 %, longer than a drop spends near cloud base.
+func (c Crest) Slow() bool { return c.WetDiameter > slowWet }
+
+const slowWet = 20e-6

@@ -117,11 +117,29 @@ func TestGiant(t *testing.T) {
 			t.Errorf("%v m: giant %t", c.dry, got)
 		}
 	}
-	// what the threshold is about: sizes and supersaturations that the comment states
-	p := Particle{DryDiameter: 1e-6, Temperature: 298.15, Solution: solutes.Kappa(0.6)}
-	crest, err := p.Crest()
-	if err != nil || math.Abs(crest.WetDiameter-29e-6) > 1e-6 || crest.Supersaturation > 1e-4 {
-		t.Errorf("crest of 1 µm at %v m and %v: %v", crest.WetDiameter, crest.Supersaturation, err)
+}
+
+// A soluble giant nucleus has its crest where growth does not get in time, an
+// insoluble one has it beside its dry size.
+func TestSlow(t *testing.T) {
+	dust := Adsorption{A: 2.25, B: 1.2}.On(2e-6)
+	for _, c := range []struct {
+		name     string
+		dry      float64
+		solution solutes.Solution
+		wet, tol float64 // m
+		want     bool
+	}{
+		{"salt of 1 µm", 1e-6, solutes.Kappa(0.6), 29e-6, 1e-6, true}, // √(3κDd³/A), A 2.1 nm
+		{"salt of 0.5 µm", 0.5e-6, solutes.Kappa(0.6), 10.3e-6, 0.2e-6, false},
+		{"hardly soluble", 1.5e-6, solutes.Kappa(0.005), 5e-6, 0.2e-6, false},
+		{"soot", 2e-6, solutes.Kappa(0), 2e-6, 0, false},
+		{"dust", 2e-6, dust, 3e-6, 0.5e-6, false},
+	} {
+		crest, err := Particle{DryDiameter: c.dry, Temperature: 298.15, Solution: c.solution}.Crest()
+		if err != nil || crest.Slow() != c.want || math.Abs(crest.WetDiameter-c.wet) > c.tol {
+			t.Errorf("%s: crest at %v m, slow %t, %v; want %v m, %t", c.name, crest.WetDiameter, crest.Slow(), err, c.wet, c.want)
+		}
 	}
 }
 

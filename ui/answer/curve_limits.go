@@ -55,8 +55,8 @@ func (c *curve) limits(from, to float64) []atmos.Note {
 	if c.noCrest == nil && c.crest.Kind != koehler.BoundaryMaximum && c.crest.Extrapolated {
 		add("crest-outside-model", "water-activity", "The crest lies where the water activity model is outside its range: it is extrapolated.")
 	}
-	if c.particle.Giant() {
-		add("giant-nucleus", "dry-diameter", "This is a giant nucleus: growth to its crest%s takes many minutes, the longer the larger it is, so kinetics decide and not equilibrium.", c.crestRadius())
+	if c.particle.Giant() && c.noCrest == nil && c.crest.Slow() {
+		add("giant-nucleus", "dry-diameter", "This is a giant nucleus: growth to its crest at %s takes many minutes, the longer the larger it is, so kinetics decide and not equilibrium.", micrometres(c.crest.WetDiameter/2))
 	}
 	if n := c.molecules(); n < fewMolecules {
 		add("few-molecules", "dry-diameter", "The drop at its crest has about %s molecules of water: whether so few have the surface tension and the activity of bulk water is not known.", digits(n, 2))
@@ -127,11 +127,4 @@ func (c *curve) ranges() []atmos.Note {
 		at(h.State)
 	}
 	return distinct(notes)
-}
-
-func (c *curve) crestRadius() string {
-	if c.noCrest != nil {
-		return ""
-	}
-	return " at " + micrometres(c.crest.WetDiameter/2)
 }

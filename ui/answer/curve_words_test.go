@@ -28,6 +28,8 @@ func TestWordsOfTheFinding(t *testing.T) {
 		"dry in a cloud":        {[]string{"component=potassium sulfate", "dry-diameter=10nm", "relative-humidity=100.5%"}, "", "At 100.5 % humidity it is dry and takes up water from 105.0 % on (97.3 % over a flat surface); after falling humidity it is a supersaturated drop", "a drop larger than 0.00"},
 		"never dissolves":       {[]string{"component=potassium nitrate", "dry-diameter=5nm", "relative-humidity=101%"}, "no-phase-branch", "", ""},
 		"dissolved in a cloud":  {[]string{"relative-humidity=100.1%"}, "", "it is haze of", "dry and"},
+		"large soot":            {[]string{"component=black carbon", "dry-diameter=2000nm"}, "", "must be wetted", "giant"},
+		"large dust":            {[]string{"component=quartz", "dry-diameter=2000nm"}, "", "layers", "kinetics"},
 		"crest once dissolved":  {[]string{"component=succinic acid", "water-activity=kappa"}, "", "Already dissolved it activates", "There is no crest in solution"},
 	} {
 		t.Run(name, func(t *testing.T) {
