@@ -74,7 +74,10 @@ func TestLimitedRecipe(t *testing.T) {
 			Components []component
 		}
 		Output struct {
-			Barrier struct{ D, S, Small float64 }
+			Barrier struct {
+				D, S  float64
+				Small float64 `json:"s"` // keeps it from being read as S
+			}
 			Extrema []struct {
 				Kind     string
 				D, Small float64
