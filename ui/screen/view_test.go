@@ -112,12 +112,13 @@ func TestEveryWindowFits(t *testing.T) {
 	everyWindow(t, []int{60, 61, 79, 80, 99, 100, 101, 102, 200}, []int{18, 19, 20, 21, 22, 23, 24, 29, 30, 60})
 }
 
-// The same for every single size.
+// The same for every single width and every single height.
 func TestEveryWindowFitsLong(t *testing.T) {
 	if os.Getenv("DROPCREST_LONG") == "" {
 		t.Skip("DROPCREST_LONG is not set")
 	}
-	everyWindow(t, through(60, 200), through(18, 60))
+	everyWindow(t, through(60, 200), []int{18, 22, 24, 48})
+	everyWindow(t, []int{60, 80, 100, 160, 200}, through(18, 60))
 }
 
 func everyWindow(t *testing.T, widths, heights []int) {
