@@ -159,7 +159,11 @@ func (l rowsOf[R]) missing(given func(key string) bool) *ValueError {
 		}
 		for _, f := range l.fields {
 			if f.key == key {
-				return &ValueError{Path: Path(l.key), Problem: l.says + " has no " + key, Right: key + "= " + f.quantity.right()}
+				right := (slot[R]{field: &f}).Range()
+				if f.quantity != nil {
+					right = f.quantity.right()
+				}
+				return &ValueError{Path: Path(l.key), Problem: l.says + " has no " + key, Right: key + "= " + right}
 			}
 		}
 	}
@@ -234,7 +238,8 @@ func (l rowsOf[R]) entries(i int) []entry {
 	var out []entry
 	for f := range l.fields {
 		in := slot[R]{field: &l.fields[f], r: &(*l.rows(l.s))[i]}
-		if in.value().Is("catalogue") || in.isText() && in.value().Word == "" {
+		empty := in.isText() && in.value().Word == "" && !slices.Contains(l.required, in.key)
+		if in.value().Is("catalogue") || empty {
 			continue
 		}
 		out = append(out, in.entry())
