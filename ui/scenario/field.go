@@ -18,8 +18,11 @@ type field[R any] struct {
 	several  bool      // several numbers of that quantity
 	words    []Option  // of a choice; of a number: words that may stand for it
 	form     Kind      // of a text: Text, Name or File
-	at       func(*R) any
-	used     func(*Scenario) bool // nil: always
+	// check says what is wrong with a text; nil: nothing can be.
+	check   func(text string) *ValueError
+	endings map[string]func(*R) // what a text may end in and what that says of the record
+	at      func(*R) any
+	used    func(*Scenario) bool // nil: always
 }
 
 // slot is a field of one record of one scenario; it implements Input.
@@ -189,10 +192,7 @@ func (i slot[R]) word(w string) (Option, bool) {
 }
 
 func (i slot[R]) SI() (key string, si any) {
-	key = strings.ReplaceAll(i.key, "-", "_")
-	if i.quantity != nil && i.quantity.si != "" {
-		key += "_" + i.quantity.si
-	}
+	key = siKey(i.key, i.quantity)
 	m := i.value()
 	switch {
 	case i.uncertain() != nil:
@@ -232,12 +232,16 @@ func (i slot[R]) set(text string, bare bool) error {
 		*u = next
 		return nil
 	}
+	text, says := i.ending(text)
 	m, problem := i.read(text, bare)
 	if problem != nil {
 		problem.Path = i.path
 		return problem
 	}
 	i.assign(m)
+	if says != nil {
+		says(i.r)
+	}
 	return nil
 }
 
@@ -250,7 +254,11 @@ func (i slot[R]) read(text string, bare bool) (Measure, *ValueError) {
 	case Name:
 		return i.readName(text)
 	case File, Text:
-		return i.readText(text)
+		m, problem := i.readText(text)
+		if problem == nil && m.Word != "" && i.check != nil {
+			problem = i.check(m.Word)
+		}
+		return m, problem
 	}
 	if w, ok := i.word(text); ok && text != "" {
 		return Measure{Word: w.Word}, nil
@@ -266,69 +274,6 @@ func (i slot[R]) read(text string, bare bool) (Measure, *ValueError) {
 		return Measure{}, problem
 	}
 	return Measure{Number: x}, nil
-}
-
-// longestWords is more than any file name or line of a mapping needs.
-const longestWords = 1000
-
-// readText reads a free text; "none" takes it away.
-func (i slot[R]) readText(text string) (Measure, *ValueError) {
-	if text == "none" {
-		text = ""
-	}
-	if len(text) > longestWords {
-		return Measure{}, &ValueError{Given: shortened(text), Problem: "a text that long", Right: fmt.Sprintf("at most %d bytes", longestWords)}
-	}
-	return Measure{Word: text}, nil
-}
-
-// mostNumbers keeps a series from filling the memory.
-const mostNumbers = 1000
-
-// setAll reads several numbers. One without a unit has that of the last one.
-func (i slot[R]) setAll(text string, bare bool) error {
-	parts := strings.Split(text, ",")
-	if len(parts) > mostNumbers {
-		return &ValueError{Path: i.path, Given: shortened(text), Problem: fmt.Sprintf("%d numbers", len(parts)), Right: fmt.Sprintf("at most %d", mostNumbers)}
-	}
-	last := strings.TrimSpace(parts[len(parts)-1])
-	unit := last[numberLength(last):]
-	var out []float64
-	for _, p := range parts {
-		p = strings.TrimSpace(p)
-		if p != "" && numberLength(p) == len(p) {
-			p += unit
-		}
-		x, problem := i.quantity.read(plain.Clean(p), bare)
-		if problem != nil {
-			problem.Path = i.path
-			return problem
-		}
-		out = append(out, x)
-	}
-	*i.at(i.r).(*[]float64) = out
-	return nil
-}
-
-// readName reads the name of a substance and writes it as the catalogue does.
-func (i slot[R]) readName(text string) (Measure, *ValueError) {
-	fail := func(problem, right string) (Measure, *ValueError) {
-		return Measure{}, &ValueError{Given: text, Problem: problem, Right: right}
-	}
-	if text == "" {
-		return fail("no name", i.Range())
-	}
-	if i.s.anyName {
-		return Measure{Word: text}, nil
-	}
-	if found, ok := i.s.catalogue().Find(text); ok {
-		return Measure{Word: found.Name}, nil
-	}
-	problem := fmt.Sprintf("no substance %q in the catalogue", shortened(text))
-	if near := i.s.catalogue().Near(text, 3); len(near) > 0 {
-		return fail(problem, strings.Join(near, ", ")+"?")
-	}
-	return fail(problem, "a name that dropcrest substances lists")
 }
 
 func (i slot[R]) Step(dir int, big bool) error {

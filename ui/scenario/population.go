@@ -15,7 +15,11 @@ type Mode struct {
 	Median float64 // m
 	GSD    float64
 	Matter Component // what it is of; without substance and kappa: the composition of the question
+	Air    string    // start | stp: the air that Number is in a cubic metre of
 }
+
+// standardAir is the word for air of 273.15 K and 1013.25 hPa.
+const standardAir = "stp"
 
 // DataFile is one file of measured data.
 type DataFile struct {
@@ -128,20 +132,28 @@ func lifted[R, Part any](fields []field[Part], part func(*R) *Part, keys ...stri
 var modeList = list[Mode]{
 	key: "mode", says: "modes",
 	help: "A lognormal mode: N= number, Dg= median diameter, gsd= geometric standard deviation, and what it is of: kappa=, or the keys of a component; " +
-		"without them the composition of the question.",
+		"without them the composition of the question. N=850/cm3stp is a number in air of 273.15 K and 1013.25 hPa.",
 	rows: func(s *Scenario) *[]Mode { return &s.Modes },
 	fields: append([]field[Mode]{
 		{key: "N", says: "number", quantity: numberConcentration,
-			help: "How many particles the mode has.", origin: "an invented example",
-			at: func(m *Mode) any { return &m.Number }},
+			help:   "How many particles the mode has, in a volume of the air at hand; with /cm3stp in air of 273.15 K and 1013.25 hPa.",
+			origin: "an invented example",
+			at:     func(m *Mode) any { return &m.Number },
+			endings: map[string]func(*Mode){
+				"stp": func(m *Mode) { m.Air = standardAir }, "STP": func(m *Mode) { m.Air = standardAir }}},
 		{key: "Dg", says: "median diameter", quantity: drySize,
 			help: "The number median diameter of the mode.", origin: "an invented example",
 			at: func(m *Mode) any { return &m.Median }},
 		{key: "gsd", says: "geometric standard deviation", quantity: geometricDeviation,
 			help: "The geometric standard deviation of the mode.", origin: "an invented example",
 			at: func(m *Mode) any { return &m.GSD }},
+		{key: "air", says: "air of the number", words: []Option{{"start", "at hand"}, {standardAir, "standard air"}},
+			help: "In a volume of which air the number is: of that at hand (of an ascent: where it starts), or of air of 273.15 K and 1013.25 hPa. " +
+				"N=850/cm3stp chooses the second.",
+			origin: "numbers of models are of the air at hand",
+			at:     func(m *Mode) any { return &m.Air }},
 	}, lifted(componentFields, func(m *Mode) *Component { return &m.Matter }, "substance", "kappa", "density", "molar-mass", "ions")...),
-	standard: func() Mode { return Mode{1e9, 100e-9, 1.6, defaultComponent("")} },
+	standard: func() Mode { return Mode{1e9, 100e-9, 1.6, defaultComponent(""), "start"} },
 	required: []string{"N", "Dg", "gsd"},
 	least:    1,
 	most:     8,
@@ -150,13 +162,17 @@ var modeList = list[Mode]{
 
 // defaultModes are an invented population of two modes.
 func defaultModes() []Mode {
-	return []Mode{{850e6, 45e-9, 1.6, defaultComponent("")}, {400e6, 150e-9, 1.6, defaultComponent("")}}
+	return []Mode{{850e6, 45e-9, 1.6, defaultComponent(""), "start"}, {400e6, 150e-9, 1.6, defaultComponent(""), "start"}}
 }
 
 func showModes(s *Scenario) string {
 	var parts []string
 	for _, m := range s.Modes {
-		parts = append(parts, numberConcentration.show(m.Number)+" at "+drySize.show(m.Median))
+		number := numberConcentration.show(m.Number)
+		if m.Air == standardAir {
+			number += " STP"
+		}
+		parts = append(parts, number+" at "+drySize.show(m.Median))
 	}
 	if text := strings.Join(parts, ", "); len([]rune(text)) <= 50 {
 		return text

@@ -68,6 +68,22 @@ type Scenario struct {
 	DoubleCharged Measure // share of doubly charged particles, or "fitted"
 	Bootstrap     int     // replicates, 0: none
 
+	Updraft              float64 // m/s
+	UpdraftSpread        float64 // m/s, 0: one updraft
+	UpdraftWeighting     string  // number | flux
+	Pressure             float64 // Pa, where the air starts to rise
+	StartHumidity        float64 // fraction
+	MassAccommodation    float64
+	ThermalAccommodation float64
+	Transition           string // fuchs-sutugin | flux-matching | continuum
+	MoistHeat            string // on | off
+	AscentBins           int    // of each mode
+	Tolerance            float64
+	Height               float64   // m
+	Follow               []float64 // m, dry diameters
+	Sweep                string    // "": none
+	Cases                string    // file of one ascent a row, "": none
+
 	// Standard uncertainties that all measurements share.
 	TemperatureUncertainty float64 // K
 	TensionUncertainty     float64 // N/m
@@ -156,6 +172,19 @@ func Default() Scenario {
 		Plateau:          Measure{Word: "fitted"},
 		DoubleCharged:    Measure{Word: "fitted"},
 		Bootstrap:        1000,
+
+		Updraft:              0.5,
+		UpdraftWeighting:     "number",
+		Pressure:             90000,
+		StartHumidity:        0.95,
+		MassAccommodation:    1,
+		ThermalAccommodation: 0.96,
+		Transition:           "fuchs-sutugin",
+		MoistHeat:            "off",
+		AscentBins:           200,
+		Tolerance:            1e-5,
+		Height:               300,
+		Follow:               []float64{30e-9, 50e-9, 80e-9, 120e-9, 200e-9},
 	}
 }
 
@@ -171,7 +200,7 @@ func (s Scenario) Clone() Scenario {
 	s.Szyszkowski = slices.Clone(s.Szyszkowski)
 	s.Adsorption = slices.Clone(s.Adsorption)
 	s.Modes, s.Data, s.Map = slices.Clone(s.Modes), slices.Clone(s.Data), slices.Clone(s.Map)
-	s.Supersaturations = slices.Clone(s.Supersaturations)
+	s.Supersaturations, s.Follow = slices.Clone(s.Supersaturations), slices.Clone(s.Follow)
 	s.Rules = slices.Clone(s.Rules)
 	s.Measurements, s.Scans, s.ScansMap = slices.Clone(s.Measurements), slices.Clone(s.Scans), slices.Clone(s.ScansMap)
 	return s
