@@ -4,9 +4,9 @@ package ascent
 type Regime int
 
 const (
-	UpdraftLimited Regime = iota // more particles make few more droplets
+	UpdraftLimited Regime = iota // more updraft makes more droplets
 	Transitional                 // both count
-	AerosolLimited               // nearly all particles activate
+	AerosolLimited               // more particles make more droplets
 )
 
 // String returns the word that scripts see.
