@@ -25,6 +25,11 @@ type Env struct {
 	Open func(name string) (io.ReadCloser, error) // measured files; nil: there are none
 	Demo fs.FS                                    // files of the invented station; nil: none
 
+	// Load and Save keep what takes long to be made under a key, from one session to the
+	// next; nil: nothing is kept. Load returns nil where there is nothing.
+	Load func(key string) []byte
+	Save func(key string, data []byte) error
+
 	// Row takes the rows of a table as they are found, so that a campaign of any
 	// length streams through; nil: rows are collected in the answer. Columns comes
 	// before the first row.

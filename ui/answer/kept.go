@@ -17,6 +17,7 @@ type Kept struct {
 	mu      sync.Mutex
 	matters []*matter // the last one used first
 	data    *keptData // nil: none
+	rising  keptAscent
 }
 
 // mostKept is enough to go back and forth between neighbouring values.
@@ -87,5 +88,5 @@ func onlyMatter(s scenario.Scenario) scenario.Scenario {
 	s.Population, s.Bins, s.Modes, s.Data, s.Map = "", "", nil, nil, nil
 	s.Record, s.Every, s.Average, s.Composition = scenario.Measure{}, scenario.Measure{}, "", ""
 	s.Mixing, s.KappaSpread, s.Supersaturations, s.Fit, s.Axes = "", 0, nil, "", ""
-	return s
+	return withoutAscent(s)
 }

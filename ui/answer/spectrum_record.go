@@ -71,6 +71,11 @@ func ofModes(env Env, s scenario.Scenario) (*activated, error) {
 		a.add(all[i], group)
 	}
 	a.sizes = all
+	isStandard := func(m scenario.Mode) bool { return m.Air == "stp" }
+	if n := len(slices.DeleteFunc(slices.Clone(s.Modes), isStandard)); n > 0 && n < len(s.Modes) {
+		a.notes = append(a.notes, atmos.Note{Code: "modes-of-several-airs", Input: "mode",
+			Text: "Some modes give their number in standard air and some do not: counts of both are added as they are."})
+	}
 	return a, nil
 }
 
