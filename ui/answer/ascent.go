@@ -153,10 +153,19 @@ func quick(o ascent.Options) ascent.Options {
 	return o
 }
 
+// Slopes need fewer bins, as the errors of two ascents are much the same, and a
+// tolerance below the change that is looked at, some 5 %: both are checked by
+// TestQuickSensitivities.
+const (
+	mostSlopeBins  = 24
+	slopeTolerance = 1e-5
+)
+
 // sensitivities are of the number of droplets; where there are none it is no error.
 func (r *risen) sensitivities(ctx context.Context, workers int, o ascent.Options) error {
 	o = quick(o)
-	o.Tolerance = 0 // its own: noise is divided by a small step
+	o.Bins = min(o.Bins, mostSlopeBins)
+	o.Tolerance = slopeTolerance
 	if !r.HasPeak || !(r.Droplets > 0) {
 		return nil
 	}

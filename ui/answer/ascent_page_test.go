@@ -3,11 +3,13 @@ package answer
 import (
 	"context"
 	"encoding/json"
+	"math"
 	"slices"
 	"strings"
 	"testing"
 	"unicode/utf8"
 
+	"dropcrest/koehler/ascent"
 	"dropcrest/ui/scenario"
 )
 
@@ -181,16 +183,19 @@ func TestAscentIsLive(t *testing.T) {
 		s    scenario.Scenario
 		want bool
 	}{
-		"demo":     {scenario.Default(), true},
-		"kappa":    {scene(t, "population=modes", "water-activity=kappa"), true},
-		"salt":     {scene(t, "population=modes"), false},
-		"few bins": {scene(t, "population=modes", "ascent-bins=50"), true},
-		"bins":     {scene(t, "population=modes", "water-activity=kappa", "ascent-bins=2000"), false},
-		"spread":   {scene(t, "population=modes", "water-activity=kappa", "kappa-spread=2"), false},
-		"updrafts": {scene(t, "updraft-spread=0.3m/s"), false},
-		"sweep":    {scene(t, "sweep=updraft=1..2m/s:2 number=1..2/cm3:2"), false},
-		"cases":    {scene(t, "cases=x.csv"), false},
-		"file":     {withRows(t, scenario.Default(), "data", "x.csv"), false},
+		"demo":      {scenario.Default(), true},
+		"kappa":     {scene(t, "population=modes", "water-activity=kappa"), true},
+		"salt":      {scene(t, "population=modes"), false},
+		"few bins":  {scene(t, "population=modes", "ascent-bins=10"), false},
+		"own kappa": {modesOfKappa(t), true},
+		"given":     {scene(t, "composition=given"), false},
+		"Tolman":    {scene(t, "population=modes", "water-activity=kappa", "tolman=0.1nm"), false},
+		"bins":      {scene(t, "population=modes", "water-activity=kappa", "ascent-bins=2000"), false},
+		"spread":    {scene(t, "population=modes", "water-activity=kappa", "kappa-spread=2"), false},
+		"updrafts":  {scene(t, "updraft-spread=0.3m/s"), false},
+		"sweep":     {scene(t, "sweep=updraft=1..2m/s:2 number=1..2/cm3:2"), false},
+		"cases":     {scene(t, "cases=x.csv"), false},
+		"file":      {withRows(t, scenario.Default(), "data", "x.csv"), false},
 	} {
 		if got := q.IsLive(c.s); got != c.want {
 			t.Errorf("%s: live %v, want %v", name, got, c.want)
@@ -213,5 +218,26 @@ func TestAscentProgress(t *testing.T) {
 	}
 	if last != end || end == 0 {
 		t.Errorf("it ends at %d of %d", last, end)
+	}
+}
+
+// The quick sensitivities are those of many bins and a sharp tolerance.
+func TestQuickSensitivities(t *testing.T) {
+	s := modesOfKappa(t, "ascent-bins=200")
+	_, f := rises(t, s)
+	of, err := stationEnv().rising(context.Background(), s)
+	if err != nil {
+		t.Fatal(err)
+	}
+	want, err := ascent.Sensitivities(context.Background(), 2, of.parcel(s), ascent.Options{Bins: 150, Tolerance: 1e-7})
+	if err != nil {
+		t.Fatal(err)
+	}
+	got := f.Sensitivities
+	for what, pair := range map[string][2]float64{"number": {float64(got.Number), want.Number}, "updraft": {float64(got.Updraft), want.Updraft},
+		"kappa": {float64(got.Kappa), want.Kappa}, "size": {float64(got.Size), want.Size}, "temperature": {float64(got.Temperature), want.Temperature}} {
+		if !(math.Abs(pair[0]-pair[1]) < 0.01) { // finding shows the first decimal of 10 % of it
+			t.Errorf("%s %g, want %g", what, pair[0], pair[1])
+		}
 	}
 }

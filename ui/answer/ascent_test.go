@@ -21,6 +21,17 @@ func modesOfKappa(t testing.TB, values ...string) scenario.Scenario {
 	return withRows(t, s, "mode", "N=850/cm3 Dg=45nm gsd=1.6 kappa=0.3", "N=400/cm3 Dg=150nm gsd=1.6 kappa=0.5")
 }
 
+func setInput(t testing.TB, s *scenario.Scenario, key, text string) {
+	t.Helper()
+	in, ok := scenario.Find(s, scenario.Path(key))
+	if !ok {
+		t.Fatalf("no input %q", key)
+	}
+	if err := in.Set(text); err != nil {
+		t.Fatal(err)
+	}
+}
+
 func rises(t testing.TB, s scenario.Scenario) (Answer, AscentFacts) {
 	t.Helper()
 	env := stationEnv()
@@ -88,13 +99,7 @@ func TestAscentIsWhatIsAsked(t *testing.T) {
 			s := modesOfKappa(t)
 			for _, v := range c.values {
 				key, text, _ := strings.Cut(v, "=")
-				in, ok := scenario.Find(&s, scenario.Path(key))
-				if !ok {
-					t.Fatal(key)
-				}
-				if err := in.Set(text); err != nil {
-					t.Fatal(err)
-				}
+				setInput(t, &s, key, text)
 			}
 			_, f := rises(t, s)
 			want := direct(t, c.change)

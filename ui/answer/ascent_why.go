@@ -74,7 +74,7 @@ func sensitivityWords(s ascent.Sensitivity) string {
 	if !math.IsNaN(s.Size) {
 		says += ", dry size " + digits(s.Size, 2)
 	}
-	return says + fmt.Sprintf("; by temperature %s %% per K. Central differences of ascents of at most %d bins a mode.", digits(100*s.Temperature, 2), mostQuickBins)
+	return says + fmt.Sprintf("; by temperature %s %% per K. Central differences of ascents of at most %d bins a mode.", digits(100*s.Temperature, 2), mostSlopeBins)
 }
 
 // sourcesOfAscent are the relations that an ascent needs, with their range.
