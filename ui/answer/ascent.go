@@ -62,7 +62,11 @@ func askAscent(ctx context.Context, env Env, s scenario.Scenario) (Answer, error
 	if s.Sweep != "" && env.Kept == nil {
 		env.Kept = &Kept{} // cells share their matter and their data
 	}
-	r, err := env.rise(ctx, s)
+	alone := env
+	if s.Sweep != "" {
+		alone.Progress = nil // that of the sweep is told
+	}
+	r, err := alone.rise(ctx, s)
 	if err != nil {
 		return Answer{}, err
 	}

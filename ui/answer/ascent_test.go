@@ -3,7 +3,6 @@ package answer
 import (
 	"context"
 	"encoding/json"
-	"errors"
 	"math"
 	"slices"
 	"strings"
@@ -265,51 +264,38 @@ func TestAscentOfUpdrafts(t *testing.T) {
 	}
 }
 
-// What cannot rise names the input that is wrong.
-func TestAscentErrors(t *testing.T) {
-	for name, c := range map[string]struct {
-		values      []string
-		input, says string
-	}{
-		"no updraft":     {[]string{"population=modes", "updraft=0"}, "updraft", "an updraft of 0 does not rise"},
-		"all records":    {[]string{"record=all"}, "record", "give its number"},
-		"no such record": {[]string{"record=100000"}, "record", "no record 100000"},
-		"no bins":        {[]string{"population=bins"}, "bins", "no file of bins"},
-		"spread of salt": {[]string{"population=modes", "kappa-spread=1.5"}, "kappa-spread", "water activity by kappa only"},
-		"kink":           {[]string{"population=modes", "water-activity=kappa", "component=ammonium sulfate", "component=succinic acid"}, "mode", "mode 1: the particle must have a smooth equilibrium curve"},
-		"what is right":  {[]string{"population=modes", "water-activity=kappa", "component=ammonium sulfate", "component=succinic acid"}, "mode", "want solubility complete"},
-		"no mode":        {[]string{"population=modes", "water-activity=kappa", "sweep=updraft=1..2m/s:2 mode[5].Dg=50..80nm:2"}, "sweep", "no mode[5].Dg"},
-		"no cases":       {[]string{"cases=nowhere.csv"}, "cases", "nowhere.csv"},
-		"no component":   {[]string{"population=modes", "water-activity=kappa", "component=density=1.5g/cm3"}, "component", "mode 1"},
-	} {
-		_, err := askAscent(context.Background(), stationEnv(), scene(t, c.values...))
-		var in *InputError
-		if !errors.As(err, &in) || in.Input != c.input || !strings.Contains(in.Text, c.says) {
-			t.Errorf("%s: %v, want one of %s that says %q", name, err, c.input, c.says)
+// Particles that take up no water are counted; nothing grows on them.
+func TestAscentOfDryParticles(t *testing.T) {
+	s := withRows(t, modesOfKappa(t, "follow=80nm"), "mode", "N=850/cm3 Dg=45nm gsd=1.6 kappa=0", "N=1/cm3 Dg=150nm gsd=1.6 kappa=0")
+	a, f := rises(t, s)
+	if len(f.Followed) != 0 || !slices.Contains(codes(a), "follow-outside") || !slices.Contains(codes(a), "stays-dry") {
+		t.Errorf("%d sizes are followed, notes %q", len(f.Followed), codes(a))
+	}
+	for _, c := range f.ClosedForms {
+		if c.Problem == nil || !math.IsNaN(float64(c.Droplets)) {
+			t.Errorf("%s says %g", c.Method, c.Droplets)
 		}
 	}
-	ctx, cancel := context.WithCancel(context.Background())
-	cancel()
-	if _, err := askAscent(ctx, stationEnv(), scenario.Default()); !errors.Is(err, context.Canceled) {
-		t.Errorf("stopped: %v", err)
+	if says := strings.Join(a.Finding, " "); !strings.Contains(says, "The closed forms say nothing") {
+		t.Errorf("finding %q", says)
 	}
+	texts(t, a.Facts)
 }
 
-// What limits an answer is said.
-func TestAscentLimitsAreSaid(t *testing.T) {
-	for name, c := range map[string]struct {
-		values        []string
-		code, finding string
-	}{
-		"no peak":    {[]string{"height=50m"}, "no-peak", "still rises at 50.0 m"},
-		"cold":       {[]string{"temperature=-35C"}, "surface-tension-extrapolated", "extrapolated"},
-		"not there":  {[]string{"follow=1nm, 80nm"}, "", ""},
-		"giant ones": {[]string{"updraft=0.02m/s"}, "", "have grown past their critical size"},
-	} {
-		a, _ := rises(t, modesOfKappa(t, c.values...))
-		if says := strings.Join(a.Finding, " "); c.code != "" && !slices.Contains(codes(a), c.code) || !strings.Contains(says, c.finding) {
-			t.Errorf("%s: notes %q, finding %q", name, codes(a), says)
+// Counts of modes of several airs cannot be added, and that is said.
+func TestModesOfSeveralAirs(t *testing.T) {
+	for air, want := range map[string]bool{"start": false, "stp": true} {
+		s := modesOfKappa(t)
+		s.Modes[0].Air = air
+		a, err := askSpectrum(context.Background(), Env{}, s)
+		if err != nil {
+			t.Fatal(err)
 		}
-		explained(t, a)
+		if got := slices.Contains(codes(a), "modes-of-several-airs"); got != want {
+			t.Errorf("%s: notes %q", air, codes(a))
+		}
+		if b, _ := rises(t, s); slices.Contains(codes(b), "modes-of-several-airs") {
+			t.Error("the ascent brings them to one air and says that it does not")
+		}
 	}
 }
