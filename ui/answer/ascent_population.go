@@ -5,12 +5,14 @@ import (
 	"errors"
 	"fmt"
 	"math"
+	"slices"
 	"strings"
 
 	"dropcrest/atmos"
 	"dropcrest/atmos/aerosol"
 	"dropcrest/koehler"
 	"dropcrest/koehler/ascent"
+	"dropcrest/koehler/spectrum"
 	"dropcrest/solutes"
 	"dropcrest/ui/scenario"
 )
@@ -49,7 +51,7 @@ func (env Env) rising(ctx context.Context, s scenario.Scenario) (*rising, error)
 		return nil, &InputError{Input: "data", Text: "nothing can rise: " + a.noSizes}
 	}
 	of := &rising{activated: a}
-	if of.air, of.partOf, err = ascent.FromSpectrum(a.population); err != nil {
+	if of.air, of.partOf, err = ascent.FromSpectrum(unheld(a.population)); err != nil {
 		return nil, of.cannotRise(err)
 	}
 	for i := range of.air {
@@ -197,4 +199,27 @@ func (of *rising) tracers(sizes []float64) []ascent.Tracer {
 		}
 	}
 	return out
+}
+
+// unheld is a population of the matter itself, whose curve an ascent follows.
+func unheld(p spectrum.Population) spectrum.Population {
+	out := slices.Clone(p)
+	for i := range out {
+		out[i].Of = unheldOf(out[i].Of)
+	}
+	return out
+}
+
+func unheldOf(c spectrum.Composition) spectrum.Composition {
+	switch c := c.(type) {
+	case *held:
+		return c.of
+	case spectrum.External:
+		parts := slices.Clone(c)
+		for i := range parts {
+			parts[i].Of = unheldOf(parts[i].Of)
+		}
+		return parts
+	}
+	return c
 }

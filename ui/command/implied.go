@@ -14,16 +14,18 @@ func (o *options) implied(s *scenario.Scenario, given map[string]bool) error {
 		return nil
 	}
 	var by []string
+	kinds := map[string]string{} // of populations, by option
 	for _, key := range scenario.PopulationKeys() {
-		if given[key] {
-			by = append(by, key)
+		if option := o.option(scenario.Path(key)); given[option] {
+			by = append(by, option)
+			kinds[option] = scenario.PopulationOf(key)
 		}
 	}
 	if len(by) > 1 {
 		return misused("--%s and --%s contradict each other: they give different populations, want one of them", by[0], by[1])
 	}
 	if len(by) == 1 {
-		kind := scenario.PopulationOf(by[0])
+		kind := kinds[by[0]]
 		if given["population"] && s.Population != kind {
 			return misused("--population %s and --%s contradict each other: want --population %s, or no --%s", s.Population, by[0], kind, by[0])
 		}

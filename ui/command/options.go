@@ -255,7 +255,7 @@ func (o *options) unused(s *scenario.Scenario) []atmos.Note {
 	said := map[string]bool{}
 	for _, g := range o.given {
 		in, ok := scenario.Find(s, o.path(g.key))
-		if said[g.key] || ok && o.question.Uses(in) || !ok && countsIn(g.key, s) {
+		if said[g.key] || ok && o.question.Uses(in) || !ok && countsIn(string(o.path(g.key)), s) {
 			continue
 		}
 		said[g.key] = true
