@@ -57,7 +57,7 @@ type Scenario struct {
 	Calibration   string  // file of a calibration of the counter, "": none
 	Measurements  []Point // that imply a kappa
 	PointsFile    string  // file of such points, "": none
-	Trials        int     // of Monte Carlo; 0: linear propagation alone
+	Trials        Measure // of Monte Carlo, 0: linear propagation alone; or "adaptive"
 	Seed          int
 	Coverage      float64    // fraction
 	Scans         []DataFile // salt scans of the counter; "demo" is the invented station
@@ -83,6 +83,9 @@ type Scenario struct {
 	Follow               []float64 // m, dry diameters
 	Sweep                string    // "": none
 	Cases                string    // file of one ascent a row, "": none
+	PublishedKappa       Measure   // that the measurements are compared with, or "none"
+	PublishedTemperature float64   // K, and
+	PublishedTension     float64   // N/m: of the water that it was computed with
 
 	// Standard uncertainties that all measurements share.
 	TemperatureUncertainty float64 // K
@@ -163,7 +166,7 @@ func Default() Scenario {
 		Fit:              "none",
 		Axes:             "log",
 		Measurements:     []Point{defaultPoint()},
-		Trials:           100000,
+		Trials:           Measure{Number: 100000},
 		Seed:             1,
 		Coverage:         0.95,
 		Scans:            []DataFile{{Name: DemoData}},
@@ -185,6 +188,9 @@ func Default() Scenario {
 		Tolerance:            1e-5,
 		Height:               300,
 		Follow:               []float64{30e-9, 50e-9, 80e-9, 120e-9, 200e-9},
+		PublishedKappa:       Measure{Word: "none"},
+		PublishedTemperature: 298.15,
+		PublishedTension:     0.072,
 	}
 }
 
