@@ -97,6 +97,7 @@ type Answer struct {
 	Others  []figure.Line // lines of the first figure that are shown on demand
 	Tables  []Table
 	Notes   []atmos.Note
+	Account []string // paragraphs that a written answer needs to stand alone; text and figure files print them
 
 	// Record is the record that was looked at, of Records in the data; 0 without data.
 	Record, Records int

@@ -16,6 +16,7 @@ func ascentQuestion() Question {
 		Says:      "How many droplets form when this air rises at this speed, and at which peak supersaturation?",
 		Groups:    ascentGroups,
 		Live:      ascentIsLive,
+		Frame:     ascentFrame,
 		Statement: ascentStatement,
 		Ask:       askAscent,
 	}

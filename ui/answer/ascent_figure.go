@@ -5,6 +5,7 @@ import (
 
 	"dropcrest/koehler/ascent"
 	"dropcrest/ui/figure"
+	"dropcrest/ui/scenario"
 )
 
 // figures are the supersaturation, the wet radii of single sizes, the droplets over
@@ -103,4 +104,14 @@ func (r *risen) updraftFigure() figure.Figure {
 		f.Marks = []figure.Mark{{Kind: figure.PointMark, X: r.parcel.Updraft, Y: n, Text: cubic(r.Droplets) + " at " + r.updraftWords()}}
 	}
 	return f
+}
+
+// ascentFrame shows the whole ascent: the usual frame would end soon after the peak,
+// because that of a curve has a long tail.
+func ascentFrame(s scenario.Scenario, f figure.Figure, last figure.Frame, h int) (figure.Frame, bool) {
+	fr, refitted := figure.Fit(f, last, h)
+	if f.Key == "supersaturation" && s.Height > 0 {
+		fr.XMin, fr.XMax = 0, s.Height
+	}
+	return fr, refitted
 }

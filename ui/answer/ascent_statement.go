@@ -18,9 +18,9 @@ func ascentStatement(s scenario.Scenario) []string {
 	}
 	lines = append(lines, risingClauses(s)...)
 	if s.Sweep != "" {
-		return append(lines, "followed {follow}, swept over", "{sweep},", "all else {further}.")
+		return append(lines, "swept over", "{sweep},", "all else {further}.")
 	}
-	return append(lines, "followed {follow}, sweep {sweep}, all else {further}.")
+	return append(lines, "all else {further}.")
 }
 
 // risingClauses name the particles as on the Spectrum page.

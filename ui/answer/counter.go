@@ -19,6 +19,7 @@ func counterQuestion() Question {
 		Groups:    counterGroups,
 		Live:      counterIsLive,
 		Always:    []string{"shape-factor"},
+		Tabled:    func(Answer) []string { return []string{"left_out"} },
 		Statement: counterStatement,
 		Ask:       askCounter,
 	}
@@ -89,13 +90,16 @@ func askCounter(ctx context.Context, env Env, s scenario.Scenario) (Answer, erro
 		return Answer{}, &InputError{Input: "scans", Text: reason(err)}
 	}
 	c.notes = distinct(slices.Concat(notes, log.notes, more, c.Calibration.Notes, waterNotes(s)))
+	line := c.lineFigure()
+	line.Notes = append(c.finding(), c.account(env.Version)...)
 	return Answer{
 		Finding: c.finding(),
 		Why:     c.why(),
 		Facts:   c.facts(),
-		Figures: []figure.Figure{c.lineFigure(), c.curvesFigure(), c.residualFigure()},
+		Figures: []figure.Figure{line, c.curvesFigure(), c.residualFigure()},
 		Tables:  c.tables(),
 		Notes:   c.notes,
+		Account: c.account(env.Version),
 	}, nil
 }
 

@@ -30,11 +30,11 @@ func (c *calibrated) lineFigure() figure.Figure {
 		return f
 	}
 	line := figure.Line{Says: "calibration"}
-	low, high := figure.Line{Dash: figure.Dotted}, figure.Line{Says: "95 % of further scans", Dash: figure.Dotted}
+	low, high := figure.Line{Says: "95 % of further scans lie above", Dash: figure.Dotted}, figure.Line{Says: "95 % of further scans lie below", Dash: figure.Dotted}
 	from, to := 0.8*c.Line.Lowest, 1.1*c.Line.Highest
 	for i := range bandSteps + 1 {
 		x := from + (to-from)*float64(i)/bandSteps
-		band := c.Line.Band(x, 0.95)
+		band := c.Line.Band(x, 0.9) // 5 % beyond either line
 		line.X, line.Y = append(line.X, x), append(line.Y, 100*c.Line.At(x))
 		low.X, low.Y = append(low.X, x), append(low.Y, 100*(c.Line.At(x)-band.Prediction))
 		high.X, high.Y = append(high.X, x), append(high.Y, 100*(c.Line.At(x)+band.Prediction))

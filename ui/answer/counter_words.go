@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"strings"
 
+	"dropcrest/atmos"
 	"dropcrest/koehler/counter"
 )
 
@@ -146,4 +147,27 @@ func (c *calibrated) why() []string {
 		out = append(out, "Note: "+n.Text)
 	}
 	return out
+}
+
+// account is the record of the calibration beside its finding: every scan, what was
+// left out, models and constants, and the version of the program.
+func (c *calibrated) account(version string) []string {
+	out := []string{"Calibration record."}
+	for _, s := range c.Scans {
+		if s.Fault != "" {
+			out = append(out, sentenceOf(capital(s.Fault)))
+			continue
+		}
+		out = append(out, fmt.Sprintf("Scan at %s K (± %s K): D50 %s ± %s nm, plateau %s, doubly charged %s, width %s, χ² %s of %d; supersaturation %s ± %s %%.",
+			digits(s.TemperatureDifference, 4), digits(s.DifferenceUncertainty, 2), digits(s.MobilityDiameter*1e9, 4), digits(s.DiameterUncertainty*1e9, 2),
+			digits(s.Plateau.Value, 3), digits(s.Double.Value, 2), digits(s.Width.Value, 2), digits(s.ChiSquare, 3), s.Freedom,
+			digits(100*s.Supersaturation, 4), digits(100*s.SupersaturationUncertainty, 2)))
+	}
+	if len(c.LeftOut) == 0 {
+		out = append(out, "No point was left out.")
+	}
+	out = append(out, c.why()...)
+	out = append(out, fmt.Sprintf("Constants: R = %v J/(mol K), molar mass of water %v kg/mol.", atmos.GasConstant, atmos.WaterMolarMass))
+	out = append(out, sourcesOfWater()...)
+	return append(out, "dropcrest "+version+".")
 }

@@ -188,11 +188,20 @@ func (s Sheet) writeText(b *bytes.Buffer) {
 	}
 	for _, t := range s.Answer.Tables {
 		if slices.Contains(tabled, t.Key) {
+			if len(t.Rows) == 0 {
+				continue
+			}
 			b.WriteByte('\n')
 			say(t.Title)
 			heads, rows := Tabulate(filled(t), s.Width, s.text)
 			b.WriteString(strings.Join(slices.Concat(heads, rows), "\n") + "\n")
 		}
+	}
+	for i, p := range s.Answer.Account {
+		if i == 0 {
+			b.WriteByte('\n')
+		}
+		say(p)
 	}
 	gap := "\n"
 	for _, n := range s.Answer.Notes {
