@@ -32,7 +32,7 @@ var ascentGroups = []Group{
 	curveGroups[1],
 	{"Growth", []string{"mass-accommodation", "thermal-accommodation", "transition", "moist-heat", "bins=ascent-bins", "tolerance"}},
 	{"Picture", []string{"follow"}},
-	{"Several ascents", []string{"sweep", "cases"}},
+	{"Several ascents", []string{"sweep", "cases", "part"}},
 }
 
 // risen is an ascent with all that stands beside it, before it is put into words,
@@ -58,7 +58,11 @@ func askAscent(ctx context.Context, env Env, s scenario.Scenario) (Answer, error
 		return Answer{}, err
 	}
 	if s.Cases != "" {
-		return AscentCases(ctx, env, s, Part{})
+		part, err := readPart(s.Part)
+		if err != nil {
+			return Answer{}, err
+		}
+		return AscentCases(ctx, env, s, part)
 	}
 	if s.Sweep != "" && env.Kept == nil {
 		env.Kept = &Kept{} // cells share their matter and their data
@@ -191,8 +195,13 @@ func (r *risen) answer() Answer {
 			pictures[i].Notes = append(pictures[i].Notes, n.Text)
 		}
 	}
-	return Answer{Finding: r.finding(), Why: r.why(), Facts: r.facts(), Figures: pictures, Tables: r.tables(), Notes: r.notes,
+	a := Answer{Finding: r.finding(), Why: r.why(), Facts: r.facts(), Figures: pictures, Tables: r.tables(), Notes: r.notes,
 		Record: r.of.number, Records: r.of.records}
+	if f := r.facts().Sweep; f != nil {
+		const width, rows = 78, 24
+		a.Account = f.Map(width, rows, false)
+	}
+	return a
 }
 
 // problem names the input that an ascent fails by.

@@ -7,6 +7,8 @@ import (
 	"fmt"
 	"io"
 	"math"
+	"strconv"
+	"strings"
 
 	"dropcrest/koehler/ascent"
 	"dropcrest/ui/plain"
@@ -23,6 +25,21 @@ func (p Part) Check() error {
 		return nil
 	}
 	return fmt.Errorf("part %d of %d: want k/n with k from 1 to n", p.At, p.Of)
+}
+
+// readPart reads "3/64"; nothing is all.
+func readPart(text string) (Part, error) {
+	if text == "" {
+		return Part{}, nil
+	}
+	at, of, _ := strings.Cut(text, "/")
+	k, err := strconv.Atoi(strings.TrimSpace(at))
+	n, also := strconv.Atoi(strings.TrimSpace(of))
+	p := Part{k, n}
+	if err != nil || also != nil || p == (Part{}) || p.Check() != nil {
+		return Part{}, &InputError{Input: "part", Text: fmt.Sprintf("%q is no part: want one such as 3/64, the third of 64", text)}
+	}
+	return p, nil
 }
 
 // holds tells whether the row with that number, from 0, belongs to the part.

@@ -142,3 +142,17 @@ func TestAscentCasesErrors(t *testing.T) {
 		t.Errorf("stopped: %v", err)
 	}
 }
+
+func TestPartOfCases(t *testing.T) {
+	for text, want := range map[string]Part{"": {}, "3/64": {3, 64}, " 1 / 1 ": {1, 1}} {
+		if got, err := readPart(text); err != nil || got != want {
+			t.Errorf("%q is %v, %v", text, got, err)
+		}
+	}
+	for _, text := range []string{"3", "0/4", "5/4", "a/b", "1/0", "/"} {
+		var in *InputError
+		if _, err := readPart(text); !errors.As(err, &in) || in.Input != "part" {
+			t.Errorf("%q: %v", text, err)
+		}
+	}
+}

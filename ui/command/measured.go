@@ -10,12 +10,18 @@ import (
 	"dropcrest/ui/fieldfile"
 	"dropcrest/ui/plain"
 	"dropcrest/ui/scenario"
+	"dropcrest/ui/session"
 )
 
 // environment is what an answer may use.
 func (o *options) environment(w world) (answer.Env, error) {
 	c, err := o.catalogue()
-	return answer.Env{Substances: c, Version: version(), Open: openMeasured, Demo: w.demo}, err
+	env := answer.Env{Substances: c, Version: version(), Open: openMeasured, Demo: w.demo}
+	if dir, err := session.Dir(w.env); err == nil {
+		shelf := session.NewShelf(dir)
+		env.Load, env.Save = shelf.Load, shelf.Save
+	}
+	return env, err
 }
 
 // openError is a measured file that cannot be opened.

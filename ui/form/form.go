@@ -10,6 +10,8 @@ import (
 	"strings"
 	"time"
 
+	"github.com/charmbracelet/x/ansi"
+
 	"dropcrest/ui/answer"
 	"dropcrest/ui/figure"
 	"dropcrest/ui/figure/print"
@@ -201,7 +203,11 @@ func (s Sheet) writeText(b *bytes.Buffer) {
 		if i == 0 {
 			b.WriteByte('\n')
 		}
-		say(p)
+		if ansi.StringWidth(p) > s.Width {
+			say(p)
+			continue
+		}
+		b.WriteString(s.text(p) + "\n") // as it is laid out
 	}
 	gap := "\n"
 	for _, n := range s.Answer.Notes {

@@ -101,4 +101,9 @@ var severalFields = []field[Scenario]{
 			"(updraft_m_per_s) and hold numbers. An empty cell leaves what is asked otherwise.",
 		origin: "none",
 		at:     func(s *Scenario) any { return &s.Cases }},
+	{key: "part", says: "part of the cases",
+		help:   "Which part of the cases to make, as 3/64: every 64th row from the 3rd on, so that the jobs of a cluster can share a file.",
+		origin: "all of them",
+		at:     func(s *Scenario) any { return &s.Part },
+		used:   func(s *Scenario) bool { return s.Cases != "" }},
 }

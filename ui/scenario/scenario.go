@@ -84,6 +84,7 @@ type Scenario struct {
 	Follow               []float64 // m, dry diameters
 	Sweep                string    // "": none
 	Cases                string    // file of one ascent a row, "": none
+	Part                 string    // of the cases, "3/64"; "": all
 	PublishedKappa       Measure   // that the measurements are compared with, or "none"
 	PublishedTemperature float64   // K, and
 	PublishedTension     float64   // N/m: of the water that it was computed with
