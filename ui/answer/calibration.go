@@ -14,19 +14,40 @@ import (
 // largestCalibration is far more than any calibration.
 const largestCalibration = 8 << 20
 
-// readCalibration reads what the Counter question has written as JSON; nil: the
-// scenario names none.
-func readCalibration(env Env, s scenario.Scenario) (*counter.Calibration, error) {
-	if s.Calibration == "" {
+// calibrations are those of a scenario: one that serves all, or two between which it
+// is interpolated in time.
+type calibrations struct{ first, after *counter.Calibration }
+
+func readCalibrations(env Env, s scenario.Scenario) (c calibrations, err error) {
+	if c.first, err = readCalibration(env, "calibration", s.Calibration); err != nil || c.first == nil {
+		return c, err
+	}
+	c.after, err = readCalibration(env, "calibration-after", s.CalibrationAfter)
+	return c, err
+}
+
+// at is the calibration at a time, in s of the clock of the scans.
+func (c calibrations) at(time float64) (*counter.Calibration, error) {
+	if c.after == nil {
+		return c.first, nil
+	}
+	between, err := counter.Between(*c.first, *c.after, time)
+	return &between, err
+}
+
+// readCalibration reads what the Counter question has written as JSON; nil: no
+// file is named.
+func readCalibration(env Env, input, name string) (*counter.Calibration, error) {
+	if name == "" {
 		return nil, nil
 	}
 	fail := func(problem string) (*counter.Calibration, error) {
-		return nil, &InputError{Input: "calibration", Text: fmt.Sprintf("%s: %s: want a file that dropcrest counter --as json has written", s.Calibration, problem)}
+		return nil, &InputError{Input: input, Text: fmt.Sprintf("%s: %s: want a file that dropcrest counter --as json has written", name, problem)}
 	}
 	if env.Open == nil {
 		return fail("files cannot be opened here")
 	}
-	in, err := env.Open(s.Calibration)
+	in, err := env.Open(name)
 	if err != nil {
 		return nil, err
 	}

@@ -68,7 +68,7 @@ func notCounted(c fieldfile.Count, level float64) string {
 // level is the supersaturation that a count belongs to: by the calibration of the
 // scenario where there is a temperature difference, else as the data have it.
 func (r *recorder) level(o *observation, s *fieldfile.Sample, c fieldfile.Count) float64 {
-	if r.calibration == nil {
+	if r.calibrations.first == nil {
 		return c.At()
 	}
 	difference := s.Values[fieldfile.TemperatureDifference]
@@ -76,7 +76,12 @@ func (r *recorder) level(o *observation, s *fieldfile.Sample, c fieldfile.Count)
 		r.note(o, "calibration-not-applied", "calibration", "The data have no temperature difference of the counter: the calibration cannot be applied, supersaturations are as the data have them.")
 		return c.At()
 	}
-	level, _, notes, err := recalibrated(r.calibration, difference.X, s.Values[fieldfile.Pressure].Or(0), s.Values[fieldfile.SampleFlow].Or(0))
+	calibration, err := r.calibrations.at(float64(s.Start.UnixNano()) / 1e9)
+	if err != nil {
+		r.note(o, "calibration-does-not-apply", "calibration-after", capital(sentenceOf(reason(err))))
+		return math.NaN()
+	}
+	level, _, notes, err := recalibrated(calibration, difference.X, s.Values[fieldfile.Pressure].Or(0), s.Values[fieldfile.SampleFlow].Or(0))
 	if err != nil {
 		r.note(o, "calibration-does-not-apply", "calibration", capital(sentenceOf(reason(err))))
 		return math.NaN()

@@ -6,7 +6,6 @@ import (
 
 	"dropcrest/atmos"
 	"dropcrest/atmos/aerosol"
-	"dropcrest/koehler/counter"
 	"dropcrest/koehler/spectrum"
 	"dropcrest/ui/fieldfile"
 	"dropcrest/ui/scenario"
@@ -20,8 +19,8 @@ type recorder struct {
 	sizing sizing
 	number int
 
-	calibration *counter.Calibration // nil: supersaturations as the data have them
-	notes       []atmos.Note
+	calibrations calibrations // none: supersaturations as the data have them
+	notes        []atmos.Note
 
 	grids []sizedGrid // of the bins so far
 	left  []rejection // points that are no numbers
@@ -43,7 +42,7 @@ func newRecorder(env Env, s scenario.Scenario) (*recorder, error) {
 	if r.judge, err = spectrum.NewJudge(r.rules); err != nil {
 		return nil, &InputError{Input: "rule", Text: reason(err)}
 	}
-	if r.calibration, err = readCalibration(env, s); err != nil {
+	if r.calibrations, err = readCalibrations(env, s); err != nil {
 		return nil, err
 	}
 	r.sizing, err = sizingOf(env, s)

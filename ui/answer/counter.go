@@ -18,7 +18,7 @@ func counterQuestion() Question {
 		Says:      "Which supersaturation did the CCN counter really have?",
 		Groups:    counterGroups,
 		Live:      counterIsLive,
-		Always:    []string{"shape-factor"},
+		Always:    []string{"shape-factor", "bins"},
 		Tabled:    func(Answer) []string { return []string{"left_out"} },
 		Statement: counterStatement,
 		Ask:       askCounter,
@@ -27,7 +27,8 @@ func counterQuestion() Question {
 
 // counterGroups are the inputs of the Counter question.
 var counterGroups = []Group{
-	{"The scans", []string{"data=scans", "map=scans-map", "activation-curve", "plateau", "double-charged", "polarity"}},
+	{"The scans", []string{"data=scans", "map=scans-map", "activation-curve", "plateau", "double-charged", "polarity",
+		"cn-delay", "settling", "cn-cut-off", "bins"}},
 	{"The salt", []string{"component", "shares-by", "shape-factor", "water-activity", "kappa", "vant-hoff-factor", "temperature", "surface-tension"}},
 	{"The uncertainty", []string{"bootstrap", "seed"}},
 }
@@ -75,6 +76,20 @@ func askCounter(ctx context.Context, env Env, s scenario.Scenario) (Answer, erro
 	if err != nil {
 		return Answer{}, err
 	}
+	if s.Settling > 0 {
+		log.rows = counter.Settle(log.rows, s.Settling, counter.Tolerances{})
+	}
+	if s.CNDelay > 0 {
+		if slices.ContainsFunc(log.rows, func(r counter.Row) bool { return !(r.Duration > 0) }) {
+			return Answer{}, &InputError{Input: "cn-delay", Text: "counts can be moved in time only where the length of each sample is known: want a column of sampling time, or of start and end"}
+		}
+		log.rows = counter.Delay(log.rows, s.CNDelay)
+	}
+	options, sized, err := fitOptions(ctx, env, s)
+	if err != nil {
+		return Answer{}, err
+	}
+	log.notes = append(log.notes, sized...)
 	axis := counter.DetectAxis(log.rows, counter.Tolerances{})
 	scans, salts := counter.Gather(log.rows, axis, counter.Tolerances{})
 	standards, scans, more, err := standardsOf(env, s, standard, scans, salts)
@@ -83,7 +98,7 @@ func askCounter(ctx context.Context, env Env, s scenario.Scenario) (Answer, erro
 	}
 	c := &calibrated{asked: s, rows: len(log.rows), mapping: log.mapping}
 	c.Calibration, err = counter.Calibrate(ctx, counter.Request{
-		Scans: scans, Standards: standards, Options: fitOptions(s),
+		Scans: scans, Standards: standards, Options: options,
 		Bootstrap: s.Bootstrap, Seed: uint64(s.Seed), Workers: env.Workers, Progress: env.Progress,
 	})
 	if err != nil {
@@ -163,7 +178,10 @@ func standardsOf(env Env, s scenario.Scenario, own counter.Standard, scans []cou
 var catalogueWord = scenario.Measure{Word: "catalogue"}
 
 // fitOptions are the options of the fits; what is fitted is 0 there.
-func fitOptions(s scenario.Scenario) counter.Options {
+//
+// A file of bins gives the size distribution, and so the share of multiply charged
+// particles at every size.
+func fitOptions(ctx context.Context, env Env, s scenario.Scenario) (counter.Options, []atmos.Note, error) {
 	o := counter.Options{Curve: counter.TwoStep, Charges: counter.Charges{Classifier: classifier(s)}}
 	switch s.Activation {
 	case "gaussian":
@@ -177,5 +195,17 @@ func fitOptions(s scenario.Scenario) counter.Options {
 	if s.DoubleCharged.Word == "" {
 		o.Charges.Double = s.DoubleCharged.Number
 	}
-	return o
+	if s.CNCutOff.Word == "" {
+		half := s.CNCutOff.Number
+		o.CNEfficiency = counter.CutOff{Half: half, Scale: half / 10}.Efficiency
+	}
+	if s.Bins == "" {
+		return o, nil, nil
+	}
+	bins, notes, err := oneBins(ctx, env, s)
+	if err != nil {
+		return o, nil, err
+	}
+	o.Charges.Sizes = bins.Density
+	return o, notes, nil
 }

@@ -257,7 +257,7 @@ func TestCalibrationFile(t *testing.T) {
 		}
 		return s
 	}
-	c, err := readCalibration(counterEnv(), write("a.json", string(text)))
+	c, err := readCalibration(counterEnv(), "calibration", write("a.json", string(text)).Calibration)
 	if err != nil {
 		t.Fatal(err)
 	}
@@ -272,7 +272,7 @@ func TestCalibrationFile(t *testing.T) {
 		"{\"calibration_file\": {}}":  "has no line",
 		"[1]":                         "no calibration",
 	} {
-		_, err := readCalibration(counterEnv(), write("b.json", text))
+		_, err := readCalibration(counterEnv(), "calibration", write("b.json", text).Calibration)
 		var in *InputError
 		if !errors.As(err, &in) || in.Input != "calibration" || !strings.Contains(err.Error(), want) {
 			t.Errorf("%q: %v, want %q", text, err, want)

@@ -54,20 +54,24 @@ type Scenario struct {
 	Rules            []Rule     // of quality, whose bounds are not the usual ones
 	Penetration      string     // share of particles that reach the instrument: a number or a file, "": all
 
-	Calibration   string  // file of a calibration of the counter, "": none
-	Measurements  []Point // that imply a kappa
-	PointsFile    string  // file of such points, "": none
-	GrowthFactors string  // file of a distribution of growth factors, "": none
-	Trials        Measure // of Monte Carlo, 0: linear propagation alone; or "adaptive"
-	Seed          int
-	Coverage      float64    // fraction
-	Scans         []DataFile // salt scans of the counter; "demo" is the invented station
-	ScansMap      []MapLine
-	Activation    string  // two-step | gaussian | sigmoid
-	Polarity      string  // positive | negative, of the classifier
-	Plateau       Measure // efficiency of the counter, or "fitted"
-	DoubleCharged Measure // share of doubly charged particles, or "fitted"
-	Bootstrap     int     // replicates, 0: none
+	Calibration      string  // file of a calibration of the counter, "": none
+	CalibrationAfter string  // file of a later one, "": none
+	CNDelay          float64 // s
+	Settling         float64 // s
+	CNCutOff         Measure // m, or "none"
+	Measurements     []Point // that imply a kappa
+	PointsFile       string  // file of such points, "": none
+	GrowthFactors    string  // file of a distribution of growth factors, "": none
+	Trials           Measure // of Monte Carlo, 0: linear propagation alone; or "adaptive"
+	Seed             int
+	Coverage         float64    // fraction
+	Scans            []DataFile // salt scans of the counter; "demo" is the invented station
+	ScansMap         []MapLine
+	Activation       string  // two-step | gaussian | sigmoid
+	Polarity         string  // positive | negative, of the classifier
+	Plateau          Measure // efficiency of the counter, or "fitted"
+	DoubleCharged    Measure // share of doubly charged particles, or "fitted"
+	Bootstrap        int     // replicates, 0: none
 
 	Updraft              float64 // m/s
 	UpdraftSpread        float64 // m/s, 0: one updraft
@@ -175,6 +179,7 @@ func Default() Scenario {
 		Activation:       "two-step",
 		Polarity:         "positive",
 		Plateau:          Measure{Word: "fitted"},
+		CNCutOff:         Measure{Word: "none"},
 		DoubleCharged:    Measure{Word: "fitted"},
 		Bootstrap:        1000,
 

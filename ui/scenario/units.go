@@ -90,6 +90,8 @@ var (
 	seedNumber   = &quantity{says: "number", units: []unit{bare}, min: 0, max: 1e9, whole: true, start: 1, step: stepper{small: 1, big: 10}}
 	coverage     = &quantity{says: "share", units: []unit{perCent}, si: "percent", min: 0.5, max: 0.999, start: 0.95, step: stepper{small: 1, big: 5}}
 	efficiency   = &quantity{says: "share", units: []unit{bare}, min: 0, open: true, max: 1.5, start: 1, step: stepper{small: 0.01, big: 0.1, decimals: 2}}
+	delay        = &quantity{says: "time", units: []unit{second, minute}, si: "s", min: 0, max: 3600, start: 60, step: stepper{small: 1, big: 30}}
+	cutOff       = &quantity{says: "length", units: []unit{nanometre, micrometre}, si: "m", min: 1e-9, max: 1e-7, start: 1e-8, step: stepper{ladder: true}}
 	ionCount     = &quantity{says: "number of ions", units: []unit{bare}, min: 0, max: 10, start: 2,
 		step: stepper{small: 1, big: 1}}
 )

@@ -1,0 +1,116 @@
+package answer
+
+import (
+	"context"
+	"encoding/json"
+	"errors"
+	"fmt"
+	"math"
+	"os"
+	"path/filepath"
+	"strings"
+	"testing"
+
+	"dropcrest/ui/scenario"
+)
+
+// What a log needs before it is fitted: rows while the column settles left out, small
+// particles that are not counted corrected for, charges by the size distribution.
+func TestCounterPreparation(t *testing.T) {
+	dir := t.TempDir()
+	sizes := filepath.Join(dir, "sizes.csv")
+	var b strings.Builder
+	b.WriteString("diameter (nm),dN/dlog10D (cm-3)\n")
+	for d := 8.0; d < 900; d *= 1.12 {
+		x := math.Log(d/60) / math.Log(1.7)
+		fmt.Fprintf(&b, "%.2f,%.3f\n", d, 2000*math.Exp(-x*x/2))
+	}
+	if err := os.WriteFile(sizes, []byte(b.String()), 0o644); err != nil {
+		t.Fatal(err)
+	}
+	plain, err := calibrate(t, nil)
+	if err != nil {
+		t.Fatal(err)
+	}
+	want := counterFacts(t, plain)
+	for name, c := range map[string]struct {
+		change  func(*scenario.Scenario)
+		leftOut int // at least
+		moves   float64
+	}{
+		"settling": {func(s *scenario.Scenario) { s.Settling = 100 }, 10, 0.02},
+		"cut-off":  {func(s *scenario.Scenario) { s.CNCutOff = scenario.Measure{Number: 5e-9} }, 0, 0.02},
+		"sizes":    {func(s *scenario.Scenario) { s.Bins = sizes }, 0, 0.02},
+	} {
+		a, err := calibrate(t, c.change)
+		if err != nil {
+			t.Errorf("%s: %v", name, err)
+			continue
+		}
+		f := counterFacts(t, a)
+		if f.Line == nil || math.Abs(float64(f.Line.Slope/want.Line.Slope)-1) > c.moves {
+			t.Errorf("%s: line %+v, want about %v", name, f.Line, want.Line.Slope)
+		}
+		if len(f.LeftOut) < c.leftOut {
+			t.Errorf("%s: %d points left out, want %d or more", name, len(f.LeftOut), c.leftOut)
+		}
+		constant := strings.Contains(strings.Join(codes(a), " "), "constant") || strings.Contains(strings.Join(a.Why, " "), "for want of a size distribution")
+		if (name == "sizes") == constant {
+			t.Errorf("%s: notes %q", name, codes(a))
+		}
+	}
+}
+
+// A delay moves counts between samples, so their lengths must be known.
+func TestDelayNeedsDurations(t *testing.T) {
+	_, err := calibrate(t, func(s *scenario.Scenario) { s.CNDelay = 3 })
+	var in *InputError
+	if !errors.As(err, &in) || in.Input != "cn-delay" || !strings.Contains(err.Error(), "sampling time") {
+		t.Errorf("error %v", err)
+	}
+}
+
+// Between two calibrations the supersaturation is interpolated in time.
+func TestBetweenCalibrations(t *testing.T) {
+	dir := t.TempDir()
+	write := func(name string, slope, time float64) string {
+		a, err := calibrate(t, nil)
+		if err != nil {
+			t.Fatal(err)
+		}
+		f := counterFacts(t, a)
+		f.File.Line.Slope *= slope
+		f.File.Time = time
+		text, err := json.Marshal(f)
+		if err != nil {
+			t.Fatal(err)
+		}
+		file := filepath.Join(dir, name)
+		if err := os.WriteFile(file, text, 0o644); err != nil {
+			t.Fatal(err)
+		}
+		return file
+	}
+	const midnight = 1773446400 // 2026-03-14T00:00:00Z
+	s := scenario.Default()
+	s.Calibration = write("before.json", 1, midnight-43200)
+	s.CalibrationAfter = write("after.json", 1.1, midnight+43200)
+	data := filepath.Join(dir, "ccn.csv")
+	if err := os.WriteFile(data, []byte("start_time,end_time,temperature difference (K),ccn (cm-3),supersaturation set (%)\n"+
+		"2026-03-14T00:00:00Z,2026-03-14T00:05:00Z,10.0,500,0.5\n"), 0o644); err != nil {
+		t.Fatal(err)
+	}
+	s.Data = []scenario.DataFile{{Name: data}}
+	var got float64
+	if _, err := campaign(context.Background(), counterEnv(), s, func(o *observation) error {
+		for _, c := range o.counts {
+			got = c.s
+		}
+		return nil
+	}); err != nil {
+		t.Fatal(err)
+	}
+	if want := (1.05*demoSlope*10 + demoIntercept) / 100; math.Abs(got/want-1) > 0.01 {
+		t.Errorf("half way between slopes 1 and 1.1 it is %v, want %v within 1 %%", got, want)
+	}
+}
