@@ -72,8 +72,11 @@ func (r *recorder) level(o *observation, s *fieldfile.Sample, c fieldfile.Count)
 		return c.At()
 	}
 	difference := s.Values[fieldfile.TemperatureDifference]
+	if set := c.Set.Or(c.At()); !difference.OK() && r.setSlope > 0 && set > 0 {
+		difference = fieldfile.Measured((set - r.setIntercept) / r.setSlope)
+	}
 	if !difference.OK() {
-		r.note(o, "calibration-not-applied", "calibration", "The data have no temperature difference of the counter: the calibration cannot be applied, supersaturations are as the data have them.")
+		r.note(o, "calibration-not-applied", "calibration", "The data have no temperature difference of the counter: the calibration cannot be applied, supersaturations are as the data have them. With the line that the counter itself takes (set-slope) it can.")
 		return c.At()
 	}
 	calibration, err := r.calibrations.at(float64(s.Start.UnixNano()) / 1e9)
@@ -81,7 +84,15 @@ func (r *recorder) level(o *observation, s *fieldfile.Sample, c fieldfile.Count)
 		r.note(o, "calibration-does-not-apply", "calibration-after", capital(sentenceOf(reason(err))))
 		return math.NaN()
 	}
-	level, _, notes, err := recalibrated(calibration, difference.X, s.Values[fieldfile.Pressure].Or(0), s.Values[fieldfile.SampleFlow].Or(0))
+	pressure, flow := s.Values[fieldfile.Pressure].Or(0), s.Values[fieldfile.SampleFlow].Or(0)
+	if pressure > 0 && calibration.Pressure == 0 {
+		r.note(o, "calibration-without-pressure", "calibration", "The pressure of the calibration is not known: supersaturations are not corrected for that of the data.")
+		pressure = 0
+	}
+	if calibration.Flow == 0 {
+		flow = 0
+	}
+	level, _, notes, err := recalibrated(calibration, difference.X, pressure, flow)
 	if err != nil {
 		r.note(o, "calibration-does-not-apply", "calibration", capital(sentenceOf(reason(err))))
 		return math.NaN()

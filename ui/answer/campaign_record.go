@@ -19,6 +19,8 @@ type recorder struct {
 	sizing sizing
 	number int
 
+	setSlope, setIntercept float64 // of the line that the counter itself takes; 0: not known
+
 	calibrations calibrations // none: supersaturations as the data have them
 	notes        []atmos.Note
 
@@ -41,6 +43,9 @@ func newRecorder(env Env, s scenario.Scenario) (*recorder, error) {
 	var err error
 	if r.judge, err = spectrum.NewJudge(r.rules); err != nil {
 		return nil, &InputError{Input: "rule", Text: reason(err)}
+	}
+	if s.SetSlope.Word == "" {
+		r.setSlope, r.setIntercept = s.SetSlope.Number, s.SetIntercept
 	}
 	if r.calibrations, err = readCalibrations(env, s); err != nil {
 		return nil, err

@@ -114,3 +114,39 @@ func TestBetweenCalibrations(t *testing.T) {
 		t.Errorf("half way between slopes 1 and 1.1 it is %v, want %v within 1 %%", got, want)
 	}
 }
+
+// Counts at supersaturations as set go through the counter's own line back to
+// temperature differences: the demo's counts move by what its calibration says.
+func TestCalibrationOfSetCounts(t *testing.T) {
+	a, err := calibrate(t, nil)
+	if err != nil {
+		t.Fatal(err)
+	}
+	text, err := json.Marshal(a.Facts)
+	if err != nil {
+		t.Fatal(err)
+	}
+	s := scenario.Default()
+	s.Calibration = filepath.Join(t.TempDir(), "cal.json")
+	if err := os.WriteFile(s.Calibration, text, 0o644); err != nil {
+		t.Fatal(err)
+	}
+	s.SetSlope, s.SetIntercept = scenario.Measure{Number: 0.0006}, -0.0004
+	var got []float64
+	if _, err := campaign(context.Background(), counterEnv(), s, func(o *observation) error {
+		if o.number == 1 {
+			for _, c := range o.counts {
+				got = append(got, c.s)
+			}
+		}
+		return nil
+	}); err != nil {
+		t.Fatal(err)
+	}
+	for i, set := range []float64{0.001, 0.002, 0.004, 0.006, 0.01} {
+		want := (demoSlope*(set+0.0004)/0.0006 + demoIntercept) / 100
+		if i >= len(got) || math.Abs(got[i]/want-1) > 0.01 {
+			t.Fatalf("supersaturations %v, want %v for the one set as %v", got, want, set)
+		}
+	}
+}

@@ -200,7 +200,7 @@ func (i slot[R]) SI() (key string, si any) {
 	case i.several:
 		out := make([]float64, 0, len(i.numbers()))
 		for _, x := range i.numbers() {
-			if i.quantity.si == "percent" {
+			if strings.HasPrefix(i.quantity.si, "percent") {
 				x = i.quantity.units[0].fromSI(x)
 			}
 			out = append(out, x)
@@ -210,7 +210,7 @@ func (i slot[R]) SI() (key string, si any) {
 		return key, nil
 	case i.isWord():
 		return key, m.Word
-	case i.quantity.si == "percent":
+	case strings.HasPrefix(i.quantity.si, "percent"):
 		return key, i.quantity.units[0].fromSI(m.Number)
 	}
 	return key, m.Number
@@ -330,7 +330,7 @@ func (i slot[R]) uncertainSI() any {
 		return nil
 	}
 	scale := 1.0
-	if i.quantity.si == "percent" {
+	if strings.HasPrefix(i.quantity.si, "percent") {
 		scale = 100
 	}
 	return map[string]float64{"value": scale * u.Value, "standard_uncertainty": scale * u.Own, "common_standard_uncertainty": scale * u.Common}

@@ -132,6 +132,17 @@ var counterFields = []field[Scenario]{
 		origin: "none: one calibration serves all",
 		at:     func(s *Scenario) any { return &s.CalibrationAfter },
 		used:   func(s *Scenario) bool { return s.Calibration != "" }},
+	{key: "set-slope", says: "slope of the set line", quantity: setSlope, words: []Option{{"none", "none"}},
+		help: "What the counter itself takes as supersaturation a kelvin of temperature difference: with it supersaturations as set go back to temperature differences, " +
+			"to which the calibration is applied where the data have none.",
+		origin: "none: the data have the temperature difference",
+		at:     func(s *Scenario) any { return &s.SetSlope },
+		used:   func(s *Scenario) bool { return s.Calibration != "" }},
+	{key: "set-intercept", says: "intercept of the set line", quantity: setIntercept,
+		help:   "What the counter itself takes as supersaturation at no temperature difference.",
+		origin: "a line through nothing",
+		at:     func(s *Scenario) any { return &s.SetIntercept },
+		used:   func(s *Scenario) bool { return s.Calibration != "" && s.SetSlope.Word == "" }},
 	{key: "activation-curve", says: "activation curve",
 		words: []Option{{"two-step", "two steps"}, {"gaussian", "cumulative Gaussian"}, {"sigmoid", "sigmoid"}},
 		help: "The form of the activated fraction: two steps, the lower one of doubly charged particles of equal mobility; or one step as a cumulative Gaussian in " +

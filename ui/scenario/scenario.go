@@ -56,6 +56,8 @@ type Scenario struct {
 
 	Calibration      string  // file of a calibration of the counter, "": none
 	CalibrationAfter string  // file of a later one, "": none
+	SetSlope         Measure // 1/K, of the line that the counter itself takes, or "none"
+	SetIntercept     float64 // fraction
 	CNDelay          float64 // s
 	Settling         float64 // s
 	CNCutOff         Measure // m, or "none"
@@ -180,6 +182,7 @@ func Default() Scenario {
 		Polarity:         "positive",
 		Plateau:          Measure{Word: "fitted"},
 		CNCutOff:         Measure{Word: "none"},
+		SetSlope:         Measure{Word: "none"},
 		DoubleCharged:    Measure{Word: "fitted"},
 		Bootstrap:        1000,
 

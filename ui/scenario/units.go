@@ -13,6 +13,8 @@ var (
 	celsius = unit{[]string{"°C", "C", "degC", "celsius"}, "1", "273.15"}
 	kelvin  = unit{[]string{"K", "kelvin"}, "1", ""}
 
+	perCentPerKelvin = unit{[]string{"%/K"}, "0.01", ""}
+
 	perCent = unit{[]string{"%", "percent"}, "0.01", ""}
 	bare    = unit{[]string{""}, "1", ""}
 
@@ -92,6 +94,8 @@ var (
 	efficiency   = &quantity{says: "share", units: []unit{bare}, min: 0, open: true, max: 1.5, start: 1, step: stepper{small: 0.01, big: 0.1, decimals: 2}}
 	delay        = &quantity{says: "time", units: []unit{second, minute}, si: "s", min: 0, max: 3600, start: 60, step: stepper{small: 1, big: 30}}
 	cutOff       = &quantity{says: "length", units: []unit{nanometre, micrometre}, si: "m", min: 1e-9, max: 1e-7, start: 1e-8, step: stepper{ladder: true}}
+	setSlope     = &quantity{says: "slope", units: []unit{perCentPerKelvin}, si: "percent_per_k", min: 0, open: true, max: 0.01, start: 0.0006, step: stepper{small: 0.001, big: 0.01}}
+	setIntercept = &quantity{says: "supersaturation", units: []unit{perCent}, si: "percent", min: -0.05, max: 0.05, start: 0, step: stepper{small: 0.01, big: 0.1}}
 	ionCount     = &quantity{says: "number of ions", units: []unit{bare}, min: 0, max: 10, start: 2,
 		step: stepper{small: 1, big: 1}}
 )
