@@ -1,0 +1,189 @@
+package ledger
+
+import (
+	"fmt"
+	"math"
+	"sort"
+
+	"dropcrest/atmos"
+	"dropcrest/koehler"
+)
+
+// Contribution is the part of the uncertainty that one input makes.
+type Contribution struct {
+	Input
+	Sensitivity Values // ∂ ln y/∂x, per unit of the input
+	Percent     Values // of the outcome, with its sign: sensitivity times standard uncertainty
+	Share       Values // of the variance of the outcome
+}
+
+// Relative returns ∂ ln y/∂ ln x of one outcome, the power by which it follows the
+// input.
+func (c Contribution) Relative(o Outcome) float64 { return c.Sensitivity[o] * c.Value }
+
+// Budget is the uncertainty of the fullest answer by the law of propagation, JCGM
+// 100:2008, 5.1.2.
+type Budget struct {
+	Answer        Answer
+	Contributions []Contribution // in the order of the inputs
+	Combined      Values         // percent of the outcome, one standard uncertainty
+
+	// The tension of water follows the temperature, so the two are correlated: an
+	// error of the thermometer is one of the tension too. The contribution of the
+	// temperature holds both, that of the tension only what it does not owe to
+	// the temperature, and these two are independent.
+	Correlation float64 // of temperature and all of the tension, -1 to 0
+
+	// FixedTension is what the sensitivity to the temperature would be if the
+	// tension did not follow it.
+	FixedTension Values
+
+	model  *deviating
+	inputs []Input
+}
+
+// Steps of the central differences: large beside the rounding of the crests, and
+// their squares small beside the digits that a budget has.
+const (
+	relativeStep    = 1e-3
+	temperatureStep = 0.05 // K
+)
+
+// NewBudget propagates the uncertainties of the inputs, those of Ledger.Inputs as
+// they are or with uncertainties of the caller's own, through the fullest model.
+// An error wraps koehler.ErrInput.
+func NewBudget(l *Ledger, inputs []Input) (Budget, error) {
+	if err := check(inputs); err != nil {
+		return Budget{}, err
+	}
+	b := Budget{Answer: l.Fullest, model: l.deviating(inputs), inputs: inputs, FixedTension: none()}
+	tension, temperature := -1, -1
+	for i, in := range inputs {
+		c := Contribution{Input: in, Sensitivity: b.model.slope(in)}
+		for o := range c.Percent {
+			c.Percent[o] = 100 * c.Sensitivity[o] * in.StandardUncertainty
+			b.Combined[o] = math.Hypot(b.Combined[o], c.Percent[o])
+		}
+		b.Contributions = append(b.Contributions, c)
+		switch in.Quantity {
+		case SurfaceTension:
+			tension = i
+		case Temperature:
+			temperature = i
+		}
+	}
+	for i := range b.Contributions {
+		c := &b.Contributions[i]
+		for o, p := range c.Percent {
+			if c.Share[o] = 0; b.Combined[o] != 0 {
+				c.Share[o] = p * p / (b.Combined[o] * b.Combined[o])
+			}
+		}
+	}
+	if tension >= 0 && temperature >= 0 {
+		b.correlate(b.Contributions[temperature], b.Contributions[tension])
+	}
+	return b, nil
+}
+
+func check(inputs []Input) error {
+	seen := [quantities]bool{}
+	for _, in := range inputs {
+		switch {
+		case in.Quantity < 0 || in.Quantity >= quantities || seen[in.Quantity]:
+			return fmt.Errorf("%w: input %d is none of a ledger, or is there twice", koehler.ErrInput, int(in.Quantity))
+		case !(in.StandardUncertainty >= 0) || math.IsInf(in.StandardUncertainty, 1):
+			return &koehler.RangeError{What: "standard uncertainty of the " + in.String(), Value: in.StandardUncertainty, Right: "0 or more"}
+		case !(in.Value > 0):
+			return &koehler.RangeError{What: in.String(), Value: in.Value, Right: "above 0"}
+		}
+		seen[in.Quantity] = true
+	}
+	return nil
+}
+
+// slope is ∂ ln y/∂x by central differences.
+func (v *deviating) slope(in Input) Values {
+	h := relativeStep * in.Value
+	if in.Quantity == Temperature {
+		h = temperatureStep
+	}
+	var up, down deviation
+	up[in.Quantity], down[in.Quantity] = h, -h
+	above, below := v.answer(&up), v.answer(&down)
+	var s Values
+	for o := range s {
+		s[o] = math.Log(above.Values[o]/below.Values[o]) / (2 * h)
+	}
+	return s
+}
+
+// correlate works out how temperature and tension hang together.
+func (b *Budget) correlate(temperature, tension Contribution) {
+	fixed := temperature.Sensitivity
+	if follows := b.model.follows(); follows != 0 {
+		owed := follows * temperature.StandardUncertainty
+		if all := math.Hypot(owed, tension.StandardUncertainty); all > 0 {
+			b.Correlation = owed / all
+		}
+		for o := range fixed {
+			fixed[o] -= tension.Sensitivity[o] * follows
+		}
+	}
+	b.FixedTension = fixed
+}
+
+// follows is dσ/dT of the drop's tension, N/(m K): 0 for a tension that was given.
+func (v *deviating) follows() float64 {
+	if v.full.dissolved.Film == nil {
+		var up, down deviation
+		up[Temperature], down[Temperature] = temperatureStep, -temperatureStep
+		const dilute = 1e9
+		a, _ := v.tension(v.full.dissolved.Tension, &up).SurfaceTension(dilute)
+		b, _ := v.tension(v.full.dissolved.Tension, &down).SurfaceTension(dilute)
+		return (a - b) / (2 * temperatureStep)
+	}
+	T := v.full.particle.Temperature
+	return (atmos.SurfaceTension(T+temperatureStep) - atmos.SurfaceTension(T-temperatureStep)) / (2 * temperatureStep)
+}
+
+// Ranked returns the contributions by their size in one outcome, the largest first.
+func (b *Budget) Ranked(o Outcome) []Contribution {
+	c := append([]Contribution(nil), b.Contributions...)
+	sort.SliceStable(c, func(i, j int) bool { return math.Abs(c[i].Percent[o]) > math.Abs(c[j].Percent[o]) })
+	return c
+}
+
+// Need is an input that must be known better.
+type Need struct {
+	Input
+	Needed float64 // standard uncertainty to be reached, in the unit of the input
+}
+
+// Reach says what must be measured better, and how well, so that the combined
+// standard uncertainty of an outcome comes down to that many percent. It cuts the
+// largest contributions to a common level and leaves the smaller ones as they are,
+// which touches the fewest inputs; the largest comes first. None: it is there
+// already. percent must be above 0, otherwise the result is nil too.
+func (b *Budget) Reach(o Outcome, percent float64) []Need {
+	if !(percent > 0) || !(b.Combined[o] > percent) {
+		return nil
+	}
+	ranked := b.Ranked(o)
+	rest := b.Combined[o] * b.Combined[o]
+	level := 0.0
+	n := 0
+	for i, c := range ranked {
+		rest -= c.Percent[o] * c.Percent[o]
+		n = i + 1
+		level = math.Sqrt(math.Max(0, percent*percent-math.Max(0, rest)) / float64(n))
+		if i+1 == len(ranked) || level >= math.Abs(ranked[i+1].Percent[o]) {
+			break
+		}
+	}
+	needs := make([]Need, n)
+	for i, c := range ranked[:n] {
+		needs[i] = Need{c.Input, c.StandardUncertainty * level / math.Abs(c.Percent[o])}
+	}
+	return needs
+}
