@@ -45,6 +45,14 @@ func upgrades() []upgrade {
 // fullest is the fullest model at hand, with the reason of each upgrade that the
 // particle does not allow.
 func (a Asked) fullest(plain made) (made, map[Key]error) {
+	best, refused := a.upgraded(plain)
+	if !isKept(best.dissolved) { // so that a row that takes a simpler activity keeps to it
+		best.asked.Recipe.Solubility = solutes.Complete
+	}
+	return best, refused
+}
+
+func (a Asked) upgraded(plain made) (made, map[Key]error) {
 	all := a
 	for _, u := range upgrades() {
 		u.apply(&all)

@@ -19,9 +19,9 @@ const (
 	Shares                         // κ, as far as it is open by the shares of the parts
 	Solubility                     // m³ of compound per m³ of water
 	AdsorptionA                    // of the isotherm of Frenkel, Halsey and Hill
-	AdsorptionB
-	FilmExcess   // greatest surface excess, mol/m²
-	FilmConstant // adsorption constant of the film, m³/mol
+	AdsorptionB                    // and the exponent of its layers
+	FilmExcess                     // greatest surface excess, mol/m²
+	FilmConstant                   // adsorption constant of the film, m³/mol
 	quantities
 )
 

@@ -13,9 +13,9 @@ import (
 type Status int
 
 const (
-	Known         Status = iota
-	NotKnown             // what it would take is not known: the reason says what
-	NotApplicable        // the particle cannot make this assumption
+	Known         Status = iota // the row has a number
+	NotKnown                    // what it would take is not known: the reason says what
+	NotApplicable               // the particle cannot make this assumption
 )
 
 // String returns the status in words.

@@ -244,7 +244,7 @@ func (b *book) dissolutionByKappa() Row {
 		return unknown("No published model joins the solubility with the rest of the particle.")
 	}
 	a.Recipe.Model, a.Recipe.Kappa = solutes.KappaModel, math.NaN()
-	a.Recipe.TensionRule = solutes.PureWater
+	a.Recipe.TensionRule, a.Recipe.Solubility = solutes.PureWater, solutes.LimitedSolubility
 	limited, err := a.make()
 	if err != nil {
 		return unknown(sentence(err))
