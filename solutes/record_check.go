@@ -93,6 +93,9 @@ func (s *Substance) physical(in *recordReader) {
 			}
 		}
 	}
+	if s.Ion == nil && s.Concentrated != nil && hasOwnModel(*s) {
+		s.physicalOwn(in)
+	}
 	if s.Ion == nil || missing(*s) != nil {
 		return
 	}
@@ -112,6 +115,21 @@ func (s *Substance) physical(in *recordReader) {
 			}
 			in.fail(field, fmt.Sprintf("such that the water activity does not fall with concentration at %.3g mol/kg", m),
 				"checked against its source, or of a shorter range")
+			return
+		}
+	}
+}
+
+// physicalOwn is physical for data that are joined to a model of the substance's own.
+func (s *Substance) physicalOwn(in *recordReader) {
+	own, _, _, ok, err := OwnModel(*s, referenceTemperature)
+	if !ok || err != nil {
+		return
+	}
+	for u := 1e-3; u < 1e6; u *= 1.05 {
+		if lnaw, slope := own.LnActivity(u); !(lnaw < 0 && slope > 0) || math.IsInf(lnaw, 0) {
+			in.fail("concentrated", fmt.Sprintf("such that the water activity does not fall with concentration at %.3g volumes of water", u),
+				"checked against its source, or left out: "+s.called()+" has a model of its own")
 			return
 		}
 	}
