@@ -49,59 +49,21 @@ func recipeError(err error) error {
 // asks for. A solubility counts where it is known and a published model joins it
 // with the rest; where none does, a note says so.
 func dissolve(r solutes.Recipe, s scenario.Scenario) (solutes.Dissolved, []atmos.Note, error) {
-	all, notes, err := solutes.Dissolve(r)
-	if err != nil || s.Solubility != "limited" || len(all.Limits) == 0 {
-		return all, notes, err
+	if s.Solubility == "limited" {
+		r.Solubility = solutes.LimitedSolubility
 	}
-	limited := r
-	limited.Solubility = solutes.LimitedSolubility
-	if _, ok := all.Solution.(solutes.Kappa); ok && r.Model == solutes.IonInteraction {
-		limited.Model = solutes.KappaModel // that is what stands in for all its parts
-	}
-	if limited.Adsorption == solutes.KnownAdsorption {
-		limited.Adsorption = solutes.NoAdsorption
-	}
-	kept, more, err := solutes.Dissolve(limited)
-	var refused *solutes.RefusedError
-	if errors.As(err, &refused) {
-		return all, append(notes, atmos.Note{Code: "solubility-not-limited", Input: "solubility",
-			Text: "All of the particle is taken as soluble: " + refused.Why + "."}), nil
-	}
-	if limited.Model != r.Model {
-		more = append(notes, more...)
-	}
-	return kept, more, err
+	return solutes.DissolveJoined(r)
 }
 
 // newParticle is the droplet's particle: plain, with a film, or with water
 // adsorbed on a core.
-func newParticle(d solutes.Dissolved, s scenario.Scenario, dry float64) (p koehler.Particle, err error) {
-	switch {
-	case d.Film != nil:
-		f := d.Film
-		salt := koehler.Salt{Share: f.RestShare, Solution: f.Rest}
-		if f.Rest == nil {
-			salt.Kappa = f.RestKappa
-		}
-		p, err = koehler.Surfactant{Share: f.Share, Density: f.Density, MolarMass: f.MolarMass,
-			GammaMax: f.GammaMax, K: f.K, Floor: f.Floor, Partitioning: s.Partitioning == "on",
-		}.Particle(dry, s.Temperature, salt)
-	case d.Core != nil:
-		c := d.Core
-		film := koehler.Adsorption{A: c.A, B: c.B, SolubleShare: c.SolubleShare, Kappa: c.Kappa}
-		if isExponential(s) {
-			film.Form = koehler.Exponential
-		}
-		p, err = film.Particle(dry, s.Temperature)
-		p.Tension = d.Tension
-	default:
-		p = koehler.Particle{DryDiameter: dry, Temperature: s.Temperature, Solution: d.Solution, Swelling: d.Swelling, Tension: d.Tension}
+func newParticle(d solutes.Dissolved, s scenario.Scenario, dry float64) (koehler.Particle, error) {
+	m := koehler.Making{DryDiameter: dry, Temperature: s.Temperature, Partitioning: s.Partitioning == "on",
+		Kelvin: kelvinForm(s.Kelvin), TolmanLength: s.TolmanLength}
+	if isExponential(s) {
+		m.Form = koehler.Exponential
 	}
-	p.Kelvin, p.TolmanLength = kelvinForm(s.Kelvin), s.TolmanLength
-	if err != nil {
-		return p, err
-	}
-	return p, p.Check()
+	return m.Of(d)
 }
 
 // isExponential tells which published form a soluble share on adsorbing matter has.
