@@ -22,7 +22,7 @@ func (r *recorder) count(o *observation, s *fieldfile.Sample, air aerosol.Air) {
 	}
 	var points []spectrum.Observed
 	for _, c := range s.Counts {
-		level := r.level(o, s, c)
+		level, levelUncertainty := r.level(o, s, c)
 		if why := notCounted(c, level); why != "" {
 			o.reject(why)
 			r.leave(why)
@@ -44,7 +44,7 @@ func (r *recorder) count(o *observation, s *fieldfile.Sample, air aerosol.Air) {
 			continue
 		}
 		points = append(points, p)
-		o.counts = append(o.counts, measurement{s: p.Supersaturation, count: p.Activated, uncertainty: p.Uncertainty,
+		o.counts = append(o.counts, measurement{s: p.Supersaturation, count: p.Activated, uncertainty: p.Uncertainty, levelUncertainty: levelUncertainty,
 			flag: strings.Join(verdict.Flags, " "), predicted: math.NaN()})
 	}
 	r.cycle(o, points)
@@ -67,9 +67,9 @@ func notCounted(c fieldfile.Count, level float64) string {
 
 // level is the supersaturation that a count belongs to: by the calibration of the
 // scenario where there is a temperature difference, else as the data have it.
-func (r *recorder) level(o *observation, s *fieldfile.Sample, c fieldfile.Count) float64 {
+func (r *recorder) level(o *observation, s *fieldfile.Sample, c fieldfile.Count) (level, uncertainty float64) {
 	if r.calibrations.first == nil {
-		return c.At()
+		return c.At(), 0
 	}
 	difference := s.Values[fieldfile.TemperatureDifference]
 	if set := c.Set.Or(c.At()); !difference.OK() && r.setSlope > 0 && set > 0 {
@@ -77,12 +77,12 @@ func (r *recorder) level(o *observation, s *fieldfile.Sample, c fieldfile.Count)
 	}
 	if !difference.OK() {
 		r.note(o, "calibration-not-applied", "calibration", "The data have no temperature difference of the counter: the calibration cannot be applied, supersaturations are as the data have them. With the line that the counter itself takes (set-slope) it can.")
-		return c.At()
+		return c.At(), 0
 	}
 	calibration, err := r.calibrations.at(float64(s.Start.UnixNano()) / 1e9)
 	if err != nil {
 		r.note(o, "calibration-does-not-apply", "calibration-after", capital(sentenceOf(reason(err))))
-		return math.NaN()
+		return math.NaN(), 0
 	}
 	pressure, flow := s.Values[fieldfile.Pressure].Or(0), s.Values[fieldfile.SampleFlow].Or(0)
 	if pressure > 0 && calibration.Pressure == 0 {
@@ -92,15 +92,15 @@ func (r *recorder) level(o *observation, s *fieldfile.Sample, c fieldfile.Count)
 	if calibration.Flow == 0 {
 		flow = 0
 	}
-	level, _, notes, err := recalibrated(calibration, difference.X, pressure, flow)
+	level, uncertainty, notes, err := recalibrated(calibration, difference.X, pressure, flow)
 	if err != nil {
 		r.note(o, "calibration-does-not-apply", "calibration", capital(sentenceOf(reason(err))))
-		return math.NaN()
+		return math.NaN(), 0
 	}
 	for _, n := range notes {
 		r.note(o, n.Code, "calibration", n.Text)
 	}
-	return level
+	return level, uncertainty
 }
 
 // leave counts a point that no rule has looked at.

@@ -137,6 +137,9 @@ func TestCalibrationOfSetCounts(t *testing.T) {
 		if o.number == 1 {
 			for _, c := range o.counts {
 				got = append(got, c.s)
+				if !(c.levelUncertainty > 0 && c.levelUncertainty < 0.02*c.s) {
+					t.Errorf("the supersaturation %v is known to %v", c.s, c.levelUncertainty)
+				}
 			}
 		}
 		return nil

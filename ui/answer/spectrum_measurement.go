@@ -12,6 +12,7 @@ import (
 // measurement is what was counted at a supersaturation, with what it says.
 type measurement struct {
 	s, count, uncertainty float64 // 1/m³; NaN: not known
+	levelUncertainty      float64 // of s, by the counts of the calibration; 0: none is known
 	flag                  string  // "" : none
 	predicted             float64 // NaN: nothing to compare with
 	critical              float64 // m, of the prediction
@@ -39,12 +40,15 @@ func (m measurement) ratio() float64 {
 	return m.predicted / m.count
 }
 
-// kappaUncertainty is that of κ from the uncertainty of the count alone, 1/m³ or NaN.
+// kappaUncertainty is that of κ from the uncertainty of the count, and of the
+// supersaturation by the calibration where there is one; NaN: not known. Errors of
+// surface tension, temperature and sizing that the calibration shares with the
+// measurement are in neither, so that none is counted twice.
 func (m measurement) kappaUncertainty() float64 {
 	if m.noKappa != nil || !(m.uncertainty >= 0) {
 		return math.NaN()
 	}
-	return math.Abs(m.kappa.Kappa * m.kappa.ByCount * m.uncertainty / m.count)
+	return m.kappa.Kappa * math.Hypot(m.kappa.ByCount*m.uncertainty/m.count, m.kappa.BySupersaturation*m.levelUncertainty/m.s)
 }
 
 // rejection is why measured points are left out, and how many.
