@@ -3,6 +3,7 @@ package answer
 import (
 	"context"
 	"errors"
+	"fmt"
 
 	"dropcrest/atmos"
 	"dropcrest/koehler/ascent"
@@ -30,7 +31,7 @@ var ascentGroups = []Group{
 	{"The population", []string{"population", "mode", "bins-file=bins", "data", "map", "record", "every", "average"}},
 	{"The particles", []string{"component", "shares-by", "composition", "mixing", "kappa-spread", "adsorption"}},
 	curveGroups[1],
-	{"Growth", []string{"mass-accommodation", "thermal-accommodation", "transition", "moist-heat", "bins=ascent-bins", "tolerance"}},
+	{"Growth", []string{"mass-accommodation", "thermal-accommodation", "transition", "moist-heat", "bins=ascent-bins", "refinement", "tolerance"}},
 	{"Picture", []string{"follow"}},
 	{"Several ascents", []string{"sweep", "cases", "part"}},
 }
@@ -38,9 +39,10 @@ var ascentGroups = []Group{
 // risen is an ascent with all that stands beside it, before it is put into words,
 // lines and tables.
 type risen struct {
-	asked  scenario.Scenario
-	of     *rising
-	parcel ascent.Parcel
+	refined *ascent.Refinement // nil: not asked for
+	asked   scenario.Scenario
+	of      *rising
+	parcel  ascent.Parcel
 	ascent.Result
 	follow []ascent.Tracer
 
@@ -110,6 +112,16 @@ func (env Env) rise(ctx context.Context, s scenario.Scenario) (*risen, error) {
 	}
 	if err := r.sensitivities(ctx, workers, o); err != nil {
 		return nil, of.problem(err)
+	}
+	if s.Refinement == "on" {
+		refined, err := ascent.Refine(ctx, r.parcel, o)
+		if err != nil {
+			return nil, of.problem(err)
+		}
+		r.refined = &refined
+		r.notes = append(r.notes, atmos.Note{Code: "discretisation", Input: "ascent-bins", Text: fmt.Sprintf(
+			"With endless bins the peak would lie %s and the droplets %s from these, as two numbers of bins tell.",
+			finePercent(refined.PeakError), finePercent(refined.DropletsError))})
 	}
 	env.tell(1)
 	r.notes = distinct(append(append(r.notes, of.notes...), r.Result.Notes...))
@@ -221,3 +233,6 @@ func (of *rising) problem(err error) error {
 	}
 	return err
 }
+
+// finePercent is a small relative number in per cent.
+func finePercent(x float64) string { return digits(100*x, 2) + " %" }

@@ -36,7 +36,17 @@ type AscentFacts struct {
 	Steps             int                `json:"steps"`
 	RejectedSteps     int                `json:"rejected_steps"`
 	Bins              int                `json:"bins"`
-	Sweep             *SweepFacts        `json:"sweep"` // null without one
+	Refinement        *RefinementRow     `json:"refinement"` // null unless asked for
+	Sweep             *SweepFacts        `json:"sweep"`      // null without one
+}
+
+// RefinementRow is what endless bins would give.
+type RefinementRow struct {
+	Bins          int    `json:"bins"`
+	Peak          Number `json:"peak_supersaturation_percent"`
+	Droplets      Number `json:"droplets_per_m3"`
+	PeakError     Number `json:"peak_relative_error"`
+	DropletsError Number `json:"droplets_relative_error"`
 }
 
 // AscentModeRow is one mode's part, or that of the measured sizes.
@@ -144,6 +154,9 @@ func (r *risen) facts() AscentFacts {
 	}
 	for _, p := range r.Profile {
 		f.Profile = append(f.Profile, profileRow(p))
+	}
+	if f2 := r.refined; f2 != nil {
+		f.Refinement = &RefinementRow{f2.Bins, percentNumber(f2.Peak), Number(f2.Droplets), Number(f2.PeakError), Number(f2.DropletsError)}
 	}
 	if r.sweep != nil {
 		f.Sweep = r.sweep.facts()

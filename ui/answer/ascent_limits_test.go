@@ -3,6 +3,7 @@ package answer
 import (
 	"context"
 	"errors"
+	"math"
 	"slices"
 	"strings"
 	"testing"
@@ -55,5 +56,24 @@ func TestAscentLimitsAreSaid(t *testing.T) {
 			t.Errorf("%s: notes %q, finding %q", name, codes(a), says)
 		}
 		explained(t, a)
+	}
+}
+
+// What endless bins would give is close to what 200 give, and is said.
+func TestAscentRefinement(t *testing.T) {
+	s := modesOfKappa(t, "refinement=on")
+	a, err := askAscent(context.Background(), Env{}, s)
+	if err != nil {
+		t.Fatal(err)
+	}
+	f, ok := a.Facts.(AscentFacts)
+	if !ok || f.Refinement == nil {
+		t.Fatalf("facts %T without a refinement", a.Facts)
+	}
+	if e := math.Abs(float64(f.Refinement.PeakError)); e == 0 || e > 1e-3 {
+		t.Errorf("the peak is %v from that of endless bins, want some 1e-5", f.Refinement.PeakError)
+	}
+	if !slices.Contains(codes(a), "discretisation") {
+		t.Errorf("notes %q", codes(a))
 	}
 }

@@ -44,7 +44,7 @@ const mostLiveBins = 600
 // particles whose κ says all. Particles of any other kind take ten times as long.
 func ascentIsLive(s scenario.Scenario) bool {
 	switch {
-	case s.Sweep != "" || s.Cases != "" || s.UpdraftSpread > 0 || s.Updraft < weakestUpdraft/3 || s.Tolerance < 1e-7:
+	case s.Sweep != "" || s.Cases != "" || s.Refinement == "on" || s.UpdraftSpread > 0 || s.Updraft < weakestUpdraft/3 || s.Tolerance < 1e-7:
 		return false
 	case s.Population == "data":
 		return onlyDemo(s.Data) && s.Composition == "measured" && hasPlainCurves(s) && groupsOfMode(s)*s.AscentBins <= mostLiveBins

@@ -84,6 +84,7 @@ type Scenario struct {
 	ThermalAccommodation float64
 	Transition           string // fuchs-sutugin | flux-matching | continuum
 	MoistHeat            string // on | off
+	Refinement           string // on | off
 	AscentBins           int    // of each mode
 	Tolerance            float64
 	Height               float64   // m
@@ -194,6 +195,7 @@ func Default() Scenario {
 		ThermalAccommodation: 0.96,
 		Transition:           "fuchs-sutugin",
 		MoistHeat:            "off",
+		Refinement:           "off",
 		AscentBins:           200,
 		Tolerance:            1e-5,
 		Height:               300,
