@@ -9,6 +9,7 @@ import (
 	"dropcrest/atmos"
 	"dropcrest/atmos/aerosol"
 	"dropcrest/ui/fieldfile"
+	"dropcrest/ui/plain"
 	"dropcrest/ui/scenario"
 )
 
@@ -20,7 +21,7 @@ func oneBins(ctx context.Context, env Env, s scenario.Scenario) (*aerosol.Bins, 
 		if errors.As(err, &in) {
 			return nil, nil, err
 		}
-		return nil, nil, &InputError{Input: "bins", Text: err.Error()}
+		return nil, nil, &InputError{Input: "bins", Text: plain.Clean(err.Error())}
 	}
 	if s.Bins == "" {
 		return fail(errors.New("no file of bins is given: bins= names a CSV file with diameters and dN/dlog10D, dN/dlnD or counts"))
@@ -34,7 +35,7 @@ func oneBins(ctx context.Context, env Env, s scenario.Scenario) (*aerosol.Bins, 
 	if err != nil {
 		return fail(err)
 	}
-	if err := useMap(file, s.Map); err != nil {
+	if err := useMap([]*fieldfile.File{file}, s.Map); err != nil {
 		return fail(err)
 	}
 	var sample, further fieldfile.Sample
@@ -49,6 +50,7 @@ func oneBins(ctx context.Context, env Env, s scenario.Scenario) (*aerosol.Bins, 
 	if err != nil {
 		return fail(err)
 	}
+	r.parts = partsOf([]*fieldfile.File{file})
 	o := r.observe(&sample)
 	if o.sizes == nil {
 		return fail(fmt.Errorf("%s: %s", s.Bins, o.noSizes))

@@ -12,10 +12,8 @@ import (
 
 // count is what was counted at each supersaturation, judged by the rules of quality.
 func (r *recorder) count(o *observation, s *fieldfile.Sample, air aerosol.Air) {
-	all := s.Values[fieldfile.CN].Or(math.NaN())
-	if !math.IsNaN(all) {
-		all *= r.standard(o, s.Basis[fieldfile.CN], air)
-	}
+	all, allUncertainty := r.allParticles(o, s, air)
+	median := r.all.add(all)
 	sized := math.NaN()
 	if o.sizes != nil {
 		sized = o.sizes.Number()
@@ -30,13 +28,15 @@ func (r *recorder) count(o *observation, s *fieldfile.Sample, air aerosol.Air) {
 		}
 		factor := r.standard(o, c.Basis, air)
 		if math.IsNaN(factor) {
+			o.reject(airNotKnown)
+			r.leave(airNotKnown)
 			continue
 		}
 		p := spectrum.Unknown()
 		p.Supersaturation, p.Activated = level, c.N.X*factor
 		p.Uncertainty = countUncertainty(c) * factor
 		p.All, p.Sized = all, sized
-		p.AllUncertainty = s.Values[fieldfile.CNUncertainty].Or(math.NaN())
+		p.AllUncertainty, p.AllMedian = allUncertainty, median
 		p.Drops = c.Counted.Or(math.NaN())
 		verdict := r.judge.Look(p)
 		if verdict.Rejected != "" {
@@ -48,6 +48,21 @@ func (r *recorder) count(o *observation, s *fieldfile.Sample, air aerosol.Air) {
 			flag: strings.Join(verdict.Flags, " "), predicted: math.NaN()})
 	}
 	r.cycle(o, points)
+}
+
+// airNotKnown is why a count at ambient air is left out.
+const airNotKnown = "at ambient air whose temperature or pressure is missing"
+
+// allParticles is the number of all particles and its standard uncertainty, 1/m³ at
+// standard air; NaN: not known.
+func (r *recorder) allParticles(o *observation, s *fieldfile.Sample, air aerosol.Air) (n, uncertainty float64) {
+	c := s.Values[fieldfile.CN]
+	if !c.OK() {
+		return math.NaN(), math.NaN()
+	}
+	factor := r.standard(o, s.Basis[fieldfile.CN], air)
+	u := countUncertainty(fieldfile.Count{N: c, Uncertainty: s.Values[fieldfile.CNUncertainty], Counted: s.Values[fieldfile.CNCounted]})
+	return c.X * factor, u * factor
 }
 
 // notCounted says why there is no number to compare, "" where there is one.

@@ -2,15 +2,24 @@ package answer
 
 import (
 	"context"
-	"errors"
 	"fmt"
+	"strings"
 
 	"dropcrest/ui/scenario"
+)
+
+// mostKeptRecords is up to how many records of data are all kept between two
+// answers, so that stepping from one to the next is done within a frame. Of longer
+// data those around the record that was asked for are kept.
+const (
+	mostKeptRecords = 5000
+	keptAround      = 500 // on either side
 )
 
 // keptData are the records of data that were read, until other data are read.
 type keptData struct {
 	key     string
+	first   int // number of the first one that is kept
 	records []*observation
 	facts   campaignFacts
 }
@@ -20,78 +29,101 @@ func dataKey(s scenario.Scenario) string {
 	return fmt.Sprint(s.Data, s.Map, s.Every, s.Average, s.Rules, s.Penetration, s.DrySizeIs, s.ShapeFactor, s.Calibration, s.CalibrationAfter, s.SetSlope, s.SetIntercept)
 }
 
-// errEnough ends the reading of data that are too long to be kept.
-var errEnough = errors.New("more records than are kept")
+// stampOf tells whether the files of a scenario are still the ones that were read:
+// they may be written to while they are looked at. Where nothing is kept no file is
+// opened for it: a pipe can be read only once.
+func stampOf(env Env, s scenario.Scenario) string {
+	var stamp strings.Builder
+	if env.Kept == nil {
+		return ""
+	}
+	for _, f := range append([]scenario.DataFile{{Name: s.Penetration}}, s.Data...) {
+		if f.Name == "" || f.Name == scenario.DemoData || env.Open == nil {
+			continue
+		}
+		in, err := env.Open(f.Name)
+		if err != nil {
+			continue // the reading says it, or it is no file
+		}
+		if info := infoOf(in); info != nil {
+			fmt.Fprint(&stamp, " ", info.Size(), " ", info.ModTime().UnixNano())
+		}
+		_ = in.Close()
+	}
+	return stamp.String()
+}
 
 // oneRecord is record n of the data, counted from 1, with what there is to say
-// about them as a whole. Short data are kept, so that the next one comes at once.
+// about them as a whole. Records are kept, so that the next one comes at once.
 func oneRecord(ctx context.Context, env Env, s scenario.Scenario, n int) (observation, campaignFacts, error) {
-	kept, err := records(ctx, env, s)
-	switch {
-	case err == nil:
-		if n < 1 || n > len(kept.records) {
-			return observation{}, kept.facts, noRecord(n, len(kept.records))
+	key := dataKey(s) + stampOf(env, s)
+	d := env.Kept.dataOf(key, n)
+	if d == nil {
+		var err error
+		if d, err = readAround(ctx, env, s, n); err != nil {
+			return observation{}, campaignFacts{}, err
 		}
-		return *kept.records[n-1], kept.facts, nil
-	case !errors.Is(err, errEnough):
-		return observation{}, campaignFacts{}, err
+		d.key = key
+		env.Kept.keepData(d)
 	}
-	var found *observation
-	facts, err := campaign(ctx, env, s, func(o *observation) error {
-		if o.number == n {
-			found = o
-		}
-		return nil
-	})
-	if err != nil {
-		return observation{}, facts, err
+	if o := d.at(n); o != nil {
+		return *o, d.facts, nil
 	}
-	if found == nil {
-		return observation{}, facts, noRecord(n, facts.records)
-	}
-	return *found, facts, nil
+	return observation{}, d.facts, &InputError{Input: "record", Text: fmt.Sprintf("there is no record %d: the data have %d", n, d.facts.records)}
 }
 
-func noRecord(n, records int) error {
-	return &InputError{Input: "record", Text: fmt.Sprintf("there is no record %d: the data have %d", n, records)}
-}
-
-// records are all records of short data, kept from before if possible.
-func records(ctx context.Context, env Env, s scenario.Scenario) (*keptData, error) {
-	key := dataKey(s)
-	if env.Kept != nil {
-		if d := env.Kept.dataOf(key); d != nil {
-			return d, nil
-		}
-	}
-	d := &keptData{key: key}
+// readAround reads all records of short data, those around record n of long ones.
+func readAround(ctx context.Context, env Env, s scenario.Scenario, n int) (*keptData, error) {
+	d := &keptData{first: 1}
+	var near []*observation
 	facts, err := campaign(ctx, env, s, func(o *observation) error {
-		if len(d.records) == mostKeptRecords {
-			return errEnough
+		if o.number <= mostKeptRecords {
+			d.records = append(d.records, o)
+		} else {
+			d.records = nil // too many
 		}
-		d.records = append(d.records, o)
+		if o.number >= n-keptAround && o.number <= n+keptAround {
+			near = append(near, o)
+		}
 		return nil
 	})
 	if err != nil {
 		return nil, err
 	}
-	d.facts = facts
-	if env.Kept != nil {
-		env.Kept.keepData(d)
+	if d.facts = facts; facts.records > mostKeptRecords {
+		d.records = near
+		d.first = max(n-keptAround, 1)
 	}
 	return d, nil
 }
 
-func (k *Kept) dataOf(key string) *keptData {
-	k.mu.Lock()
-	defer k.mu.Unlock()
-	if k.data != nil && k.data.key == key {
-		return k.data
+// at is record n, nil where it is not kept.
+func (d *keptData) at(n int) *observation {
+	if i := n - d.first; i >= 0 && i < len(d.records) {
+		return d.records[i]
 	}
 	return nil
 }
 
+// dataOf are the data of a key with record n, or all there is to say about it: that
+// there is no such record. nil: they must be read.
+func (k *Kept) dataOf(key string, n int) *keptData {
+	if k == nil {
+		return nil
+	}
+	k.mu.Lock()
+	defer k.mu.Unlock()
+	d := k.data
+	if d == nil || d.key != key || d.at(n) == nil && n >= 1 && n <= d.facts.records {
+		return nil
+	}
+	return d
+}
+
 func (k *Kept) keepData(d *keptData) {
+	if k == nil {
+		return
+	}
 	k.mu.Lock()
 	defer k.mu.Unlock()
 	k.data = d

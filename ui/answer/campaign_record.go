@@ -26,6 +26,10 @@ type recorder struct {
 
 	grids []sizedGrid // of the bins so far
 	left  []rejection // points that are no numbers
+
+	parts  massParts     // of the composition that the files have columns for
+	looked []looked      // readings left out that belong to a window still to come
+	all    runningMedian // of all particles
 }
 
 // sizedGrid is the grid of bins that samples share.
@@ -59,6 +63,7 @@ func (r *recorder) observe(s *fieldfile.Sample) *observation {
 	r.number++
 	o := &observation{number: r.number, start: s.Start, end: s.End, kappa: math.NaN()}
 	air := aerosol.Air{Temperature: s.Values[fieldfile.Temperature].Or(math.NaN()), Pressure: s.Values[fieldfile.Pressure].Or(math.NaN())}
+	r.take(o, s)
 	r.size(o, s, air)
 	if o.sizes != nil {
 		sized, err := r.sizing.apply(o.sizes)
@@ -74,9 +79,11 @@ func (r *recorder) observe(s *fieldfile.Sample) *observation {
 
 func (r *recorder) note(o *observation, code, input, text string) {
 	n := atmos.Note{Code: code, Input: input, Text: text}
-	o.notes = append(o.notes, n)
-	if !slices.Contains(r.notes, n) {
-		r.notes = append(r.notes, n)
+	if !slices.Contains(o.notes, n) {
+		o.notes = append(o.notes, n)
+	}
+	if !slices.ContainsFunc(r.notes, func(known atmos.Note) bool { return known.Code == code && known.Input == input }) {
+		r.notes = append(r.notes, n) // of a kind the first: a campaign may have as many texts as records
 	}
 }
 
@@ -137,6 +144,7 @@ func (r *recorder) size(o *observation, s *fieldfile.Sample, air aerosol.Air) {
 	}
 	high, err := r.bins(o, g.high, values[g.cut:], s.Bins[g.cut:])
 	if err == nil {
+		r.compare(o, low, high)
 		o.sizes, err = aerosol.Join(low, high, joint(g.low, g.high))
 	}
 	if err != nil {
@@ -160,6 +168,10 @@ func (r *recorder) bins(o *observation, g *aerosol.Grid, values []float64, of []
 	return aerosol.NewBins(g, values, as)
 }
 
+// mostGrids is more than instruments change their sizes to and fro between; where each
+// record has sizes of its own none is used again.
+const mostGrids = 16
+
 // grid is the grid of the bins, made once for all samples that share them.
 func (r *recorder) grid(bins []fieldfile.Bin) *sizedGrid {
 	for i := range r.grids {
@@ -169,13 +181,16 @@ func (r *recorder) grid(bins []fieldfile.Bin) *sizedGrid {
 	}
 	g := sizedGrid{of: slices.Clone(bins), cut: len(bins)}
 	for i := 1; i < len(bins); i++ {
-		if bins[i].Diameter <= bins[i-1].Diameter {
+		if bins[i].Diameter <= bins[i-1].Diameter || bins[i].PerBin != bins[i-1].PerBin {
 			g.cut = i // a second instrument begins
 			break
 		}
 	}
 	if g.low, g.err = gridOf(bins[:g.cut]); g.err == nil && g.cut < len(bins) {
 		g.high, g.err = gridOf(bins[g.cut:])
+	}
+	if len(r.grids) == mostGrids {
+		r.grids = slices.Delete(r.grids, 0, 1)
 	}
 	r.grids = append(r.grids, g)
 	return &r.grids[len(r.grids)-1]
@@ -209,33 +224,14 @@ func joint(low, high *aerosol.Grid) float64 {
 	return math.Sqrt(a[len(a)-1] * b[0])
 }
 
-// compose is κ of what was measured of the composition.
-func (r *recorder) compose(o *observation, s *fieldfile.Sample) {
-	if k := s.Values[fieldfile.Kappa]; k.OK() {
-		o.kappa, o.kappaFrom = k.X, "kappa of the data"
-		return
-	}
-	known := false
-	mass := func(q fieldfile.Quantity) float64 {
-		c := s.Values[q]
-		if c.State == fieldfile.Below {
-			return 0
-		}
-		known = known || c.OK() && q != fieldfile.BlackCarbon
-		return max(c.Or(0), 0) // noise about zero is no mass
-	}
-	ions := spectrum.Ions{Organic: mass(fieldfile.Organic), Sulfate: mass(fieldfile.Sulfate), Nitrate: mass(fieldfile.Nitrate),
-		Ammonium: mass(fieldfile.Ammonium), Chloride: mass(fieldfile.Chloride), BlackCarbon: mass(fieldfile.BlackCarbon)}
-	if !known {
-		return
-	}
-	mixed, err := spectrum.Mix(ions, spectrum.CommonSpecies())
-	if err != nil {
-		r.note(o, "composition-not-usable", "data", "The composition of a record cannot be used: "+reason(err)+".")
-		return
-	}
-	o.kappa, o.kappaFrom, o.species = mixed.Kappa, "the composition that was measured, ions paired and mixed by volume", mixed.Parts
-	for _, n := range mixed.Notes {
-		r.note(o, n.Code, "data", n.Text)
+// mostOverlap is by which factor two instruments may differ where both measured
+// before that is said (own choice).
+const mostOverlap = 2
+
+// compare says where two instruments disagree about the same sizes.
+func (r *recorder) compare(o *observation, low, high *aerosol.Bins) {
+	both, ok := aerosol.OverlapOf(low, high)
+	if ok && both.FromLow > 0 && both.FromHi > 0 && math.Abs(math.Log(both.Ratio())) > math.Log(mostOverlap) {
+		r.note(o, "instruments-disagree", "data", "Where two instruments measured the same sizes, their numbers differ by more than a factor of two in some records.")
 	}
 }

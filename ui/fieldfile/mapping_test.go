@@ -83,6 +83,15 @@ func TestUse(t *testing.T) {
 	}
 }
 
+func TestNames(t *testing.T) {
+	f := open(t, "time,N_10,a=b\n2026-03-14T00:00:00Z,1,2\n")
+	for line, want := range map[string]bool{"N_10=cn in cm-3": true, " N_* =nonsense": true, "a=b=kappa": true, "a=kappa": false, "n_10=cn": false, "N_10": false, "": false} {
+		if got := f.Names(line); got != want {
+			t.Errorf("%q names a column: %v, want %v", line, got, want)
+		}
+	}
+}
+
 func TestGuess(t *testing.T) {
 	for name, want := range map[string]string{ // a CSV name and its role
 		"time":       "time in iso",

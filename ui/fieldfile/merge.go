@@ -9,6 +9,9 @@ import (
 type Source struct {
 	Samples *Samples
 	Offset  time.Duration
+	// Look sees each sample before it is averaged, its clock set right, and may
+	// take out what does not count; nil: nobody looks.
+	Look func(*Sample)
 }
 
 // Merging says how files come onto one time axis.
@@ -114,6 +117,9 @@ func (s *source) fetch(to *Sample) (bool, error) {
 			"records in order of time where files are merged")
 	}
 	s.last = to.Start
+	if s.Look != nil {
+		s.Look(to)
+	}
 	return true, nil
 }
 

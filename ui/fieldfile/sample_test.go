@@ -93,7 +93,7 @@ func merged(t *testing.T, how Merging, sources ...Source) []Sample {
 }
 
 func asSource(t *testing.T, text string, offset time.Duration, use ...string) Source {
-	return Source{open(t, text, use...).Samples(), offset}
+	return Source{Samples: open(t, text, use...).Samples(), Offset: offset}
 }
 
 func TestMergeOnTheFirstFile(t *testing.T) {
@@ -164,6 +164,21 @@ func TestMergeJoinsFiles(t *testing.T) {
 	}
 	if !noted(second.Samples.f, "ownedtemperature") {
 		t.Error("nothing said on the second temperature")
+	}
+}
+
+// Whoever looks at a sample sees it at its right time, and what is taken out there is
+// in no average.
+func TestMergeLooks(t *testing.T) {
+	s := asSource(t, "time,ccn 0.3% (cm-3)\n2026-03-14T00:00:00Z,1\n2026-03-14T00:10:00Z,2\n2026-03-14T00:20:00Z,3\n", time.Hour)
+	s.Look = func(s *Sample) {
+		if s.Start.Minute() == 20 && s.Start.Hour() == 1 {
+			s.Counts = s.Counts[:0]
+		}
+	}
+	got := merged(t, Merging{Every: time.Hour}, s)
+	if len(got) != 1 || len(got[0].Counts) != 1 || !sameCell(got[0].Counts[0].N, Cell{1.5e6, Value}) {
+		t.Errorf("got %v, want the mean of the first two", got)
 	}
 }
 

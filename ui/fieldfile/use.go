@@ -37,6 +37,16 @@ func (f *File) Use(lines ...string) error {
 	return f.setRoles(roles)
 }
 
+// Names reports whether a line of Use names a column of the file. A line without
+// "=" names none.
+func (f *File) Names(line string) bool {
+	i := strings.LastIndex(line, "=")
+	return i >= 0 && slices.ContainsFunc(f.Columns, func(c Column) bool {
+		_, ok := match(strings.TrimSpace(line[:i]), c.Name)
+		return ok
+	})
+}
+
 func (f *File) use(roles []Role, line string) error {
 	i := strings.LastIndex(line, "=")
 	if i < 0 {
