@@ -24,7 +24,8 @@ var componentList = list[Component]{
 // tables are the row lists of a scenario.
 func tables(s *Scenario) []table {
 	return []table{rowsOf[Component]{&componentList, s}, rowsOf[Film]{&filmList, s}, rowsOf[Isotherm]{&isothermList, s},
-		rowsOf[Mode]{&modeList, s}, rowsOf[DataFile]{&dataList, s}, rowsOf[MapLine]{&mapList, s}, rowsOf[Rule]{&ruleList, s}}
+		rowsOf[Mode]{&modeList, s}, rowsOf[DataFile]{&dataList, s}, rowsOf[MapLine]{&mapList, s}, rowsOf[Rule]{&ruleList, s},
+		rowsOf[Point]{&pointList, s}, rowsOf[DataFile]{&scanList, s}, rowsOf[MapLine]{&scanMapList, s}}
 }
 
 // anotherComponent is a substance that is not there yet, the most common ones

@@ -1,7 +1,9 @@
 package scenario
 
+import "slices"
+
 // fields declares the quantities of a scenario.
-var fields = append(particleFields, populationFields...)
+var fields = slices.Concat(particleFields, populationFields, kappaFields, counterFields)
 
 // particleFields declares the quantities of one particle.
 var particleFields = []field[Scenario]{

@@ -103,6 +103,8 @@ func value(at any) Measure {
 		return *p
 	case *[]float64:
 		return Measure{Word: fmt.Sprint(*p)} // to be compared only
+	case *Uncertain:
+		return Measure{Word: fmt.Sprint(*p)} // likewise
 	}
 	panic(fmt.Sprintf("scenario: a field cannot be a %T", at))
 }
@@ -122,18 +124,28 @@ func (i slot[R]) assign(m Measure) {
 	}
 }
 
+// uncertain is the value of a field with an uncertainty; nil: it has none.
+func (i slot[R]) uncertain() *Uncertain {
+	u, _ := i.at(i.r).(*Uncertain)
+	return u
+}
+
 // numbers are those of a field of several.
 func (i slot[R]) numbers() []float64 { return *i.at(i.r).(*[]float64) }
 
 func (i slot[R]) IsDefault() bool { return i.value() == value(i.at(i.standard)) }
 
 // isWord reports whether a word stands in the field, which the number 0 is not.
-func (i slot[R]) isWord() bool { return i.quantity == nil || !i.several && i.value().Word != "" }
+func (i slot[R]) isWord() bool {
+	return i.quantity == nil || !i.several && i.uncertain() == nil && i.value().Word != ""
+}
 
 func (i slot[R]) Show(st Style) string {
 	m := i.value()
 	text := m.Word
 	switch {
+	case i.uncertain() != nil:
+		text = i.quantity.showUncertain(*i.uncertain())
 	case i.several:
 		text = i.quantity.showAll(i.numbers())
 	case !i.isWord():
@@ -155,6 +167,9 @@ func (i slot[R]) Show(st Style) string {
 
 // exact is the value as a file keeps it.
 func (i slot[R]) exact() string {
+	if u := i.uncertain(); u != nil {
+		return i.quantity.exactUncertain(*u)
+	}
 	if i.several {
 		return i.quantity.exactAll(i.numbers())
 	}
@@ -180,6 +195,8 @@ func (i slot[R]) SI() (key string, si any) {
 	}
 	m := i.value()
 	switch {
+	case i.uncertain() != nil:
+		return key, i.uncertainSI()
 	case i.several:
 		out := make([]float64, 0, len(i.numbers()))
 		for _, x := range i.numbers() {
@@ -205,6 +222,15 @@ func (i slot[R]) SetWithUnit(text string) error { return i.set(text, false) }
 func (i slot[R]) set(text string, bare bool) error {
 	if i.several {
 		return i.setAll(text, bare)
+	}
+	if u := i.uncertain(); u != nil {
+		next, problem := i.quantity.readUncertain(plain.Clean(text), bare)
+		if problem != nil {
+			problem.Path = i.path
+			return problem
+		}
+		*u = next
+		return nil
 	}
 	m, problem := i.read(text, bare)
 	if problem != nil {
@@ -315,9 +341,22 @@ func (i slot[R]) Step(dir int, big bool) error {
 	q := i.quantity
 	u := q.units[0]
 	x := i.value().Number
+	if m := i.uncertain(); m != nil {
+		x = m.Value
+		if !m.Known() {
+			*m = Uncertain{Value: q.start}
+			return nil
+		}
+	}
 	shown := q.step.next(u.fromSI(x), dir > 0, big)
 	for q.whole && shown != math.Trunc(shown) {
 		shown = q.step.next(shown, dir > 0, big)
+		if shown < 1 {
+			shown = 0
+		}
+	}
+	if q.step.ladder && dir > 0 && x == 0 {
+		shown = u.fromSI(q.start) // no rung lies above nothing
 	}
 	to, err := u.toSI(fmt.Sprint(shown))
 	if err != nil {
@@ -330,8 +369,26 @@ func (i slot[R]) Step(dir int, big bool) error {
 	if to == x {
 		return &ValueError{Path: i.path, Problem: i.says + " ends at " + q.show(x), Right: i.Range()}
 	}
+	if m := i.uncertain(); m != nil {
+		*m = Uncertain{to, m.Own * to / x, m.Common * to / x} // the relative uncertainty stays
+		return nil
+	}
 	i.assign(Measure{Number: to})
 	return nil
+}
+
+// uncertainSI is the value with its uncertainties in SI, per cent where the key
+// says so; null where it was not measured.
+func (i slot[R]) uncertainSI() any {
+	u := *i.uncertain()
+	if !u.Known() {
+		return nil
+	}
+	scale := 1.0
+	if i.quantity.si == "percent" {
+		scale = 100
+	}
+	return map[string]float64{"value": scale * u.Value, "standard_uncertainty": scale * u.Own, "common_standard_uncertainty": scale * u.Common}
 }
 
 // stepWord goes one word up or down its list; below the words that may stand for

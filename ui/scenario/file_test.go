@@ -46,7 +46,8 @@ func TestFileKeepsEverything(t *testing.T) {
 			}
 		}
 	}
-	s.ToRadius.Number *= 2 // above the first radius
+	s.ToRadius.Number *= 2                                                          // above the first radius
+	s.Measurements[0].Growth, s.Measurements[0].Humidity = Uncertain{}, Uncertain{} // beside a supersaturation
 	if back := decoded(t, encoded(t, s)); !back.Equal(s) {
 		t.Errorf("written %+v\nread    %+v\nas %s", s, back, encoded(t, s))
 	}

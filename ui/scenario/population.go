@@ -183,16 +183,18 @@ var dataList = list[DataFile]{
 	first:    "file",
 	least:    1,
 	most:     20,
-	show: func(s *Scenario) string {
-		switch n := len(s.Data); {
-		case n == 1 && s.Data[0].Name == DemoData:
-			return "the invented demo station"
-		case n == 1 && s.Data[0].Name != "":
-			return filepath.Base(s.Data[0].Name)
-		default:
-			return count(n, "file")
-		}
-	},
+	show:     func(s *Scenario) string { return showFiles(s.Data) },
+}
+
+func showFiles(files []DataFile) string {
+	switch n := len(files); {
+	case n == 1 && files[0].Name == DemoData:
+		return "the invented demo station"
+	case n == 1 && files[0].Name != "":
+		return filepath.Base(files[0].Name)
+	default:
+		return count(n, "file")
+	}
 }
 
 var mapList = list[MapLine]{

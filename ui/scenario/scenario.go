@@ -4,6 +4,7 @@
 package scenario
 
 import (
+	"fmt"
 	"reflect"
 	"slices"
 
@@ -52,6 +53,20 @@ type Scenario struct {
 	Axes             string     // log | linear
 	Rules            []Rule     // of quality, whose bounds are not the usual ones
 	Penetration      string     // share of particles that reach the instrument: a number or a file, "": all
+
+	Calibration   string  // file of a calibration of the counter, "": none
+	Measurements  []Point // that imply a kappa
+	PointsFile    string  // file of such points, "": none
+	Trials        int     // of Monte Carlo; 0: linear propagation alone
+	Seed          int
+	Coverage      float64    // fraction
+	Scans         []DataFile // salt scans of the counter; "demo" is the invented station
+	ScansMap      []MapLine
+	Activation    string  // two-step | gaussian | sigmoid
+	Polarity      string  // positive | negative, of the classifier
+	Plateau       Measure // efficiency of the counter, or "fitted"
+	DoubleCharged Measure // share of doubly charged particles, or "fitted"
+	Bootstrap     int     // replicates, 0: none
 
 	substances *solutes.Catalogue // nil: the standard one
 	anyName    bool               // names of substances are not looked up
@@ -126,6 +141,16 @@ func Default() Scenario {
 		Supersaturations: []float64{0.001, 0.002, 0.004, 0.006, 0.01},
 		Fit:              "none",
 		Axes:             "log",
+		Measurements:     []Point{defaultPoint()},
+		Trials:           100000,
+		Seed:             1,
+		Coverage:         0.95,
+		Scans:            []DataFile{{Name: DemoData}},
+		Activation:       "two-step",
+		Polarity:         "positive",
+		Plateau:          Measure{Word: "fitted"},
+		DoubleCharged:    Measure{Word: "fitted"},
+		Bootstrap:        1000,
 	}
 }
 
@@ -143,19 +168,21 @@ func (s Scenario) Clone() Scenario {
 	s.Modes, s.Data, s.Map = slices.Clone(s.Modes), slices.Clone(s.Data), slices.Clone(s.Map)
 	s.Supersaturations = slices.Clone(s.Supersaturations)
 	s.Rules = slices.Clone(s.Rules)
+	s.Measurements, s.Scans, s.ScansMap = slices.Clone(s.Measurements), slices.Clone(s.Scans), slices.Clone(s.ScansMap)
 	return s
 }
 
 // Equal reports whether both ask the same.
 func (s Scenario) Equal(other Scenario) bool {
-	return slices.Equal(s.Rules, other.Rules) && slices.Equal(s.Modes, other.Modes) && slices.Equal(s.Data, other.Data) && slices.Equal(s.Map, other.Map) &&
+	return slices.Equal(s.Measurements, other.Measurements) && slices.Equal(s.Scans, other.Scans) && slices.Equal(s.ScansMap, other.ScansMap) &&
+		slices.Equal(s.Rules, other.Rules) && slices.Equal(s.Modes, other.Modes) && slices.Equal(s.Data, other.Data) && slices.Equal(s.Map, other.Map) &&
 		slices.Equal(s.Components, other.Components) && slices.Equal(s.Szyszkowski, other.Szyszkowski) &&
 		slices.Equal(s.Adsorption, other.Adsorption) && reflect.DeepEqual(s.plain(), other.plain())
 }
 
 // plain is the scenario without its rows and without where names are looked up.
 func (s Scenario) plain() Scenario {
-	s.Modes, s.Data, s.Map, s.Rules = nil, nil, nil, nil
+	s.Modes, s.Data, s.Map, s.Rules, s.Measurements, s.Scans, s.ScansMap = nil, nil, nil, nil, nil, nil, nil
 	s.Components, s.Szyszkowski, s.Adsorption, s.substances, s.anyName = nil, nil, nil, nil, false
 	return s
 }
@@ -229,6 +256,15 @@ func Changes(a, b Scenario) []string {
 
 // Check says which values contradict each other.
 func Check(s *Scenario) []*ValueError {
+	var problems []*ValueError
+	for i, p := range s.Measurements {
+		if problem, right := checkPoint(p); problem != "" {
+			problems = append(problems, &ValueError{Path: Path(fmt.Sprintf("point[%d].dry-diameter", i)), Problem: problem, Right: right})
+		}
+	}
+	if len(problems) > 0 {
+		return problems
+	}
 	if s.FromRadius.Word == "" && s.ToRadius.Word == "" && s.FromRadius.Number >= s.ToRadius.Number {
 		return []*ValueError{{Path: "from-radius", Given: wetRadius.show(s.FromRadius.Number),
 			Problem: "the first wet radius, " + wetRadius.show(s.FromRadius.Number) + ", is not below the last one",

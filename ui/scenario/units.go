@@ -85,7 +85,12 @@ var (
 	clockOffset     = &quantity{says: "time", units: []unit{second, minute, hour}, si: "s", min: -86400, max: 86400, start: 0, step: stepper{small: 1, big: 60}}
 	supersaturation = &quantity{says: "supersaturation", units: []unit{perCent}, si: "percent",
 		min: 0, open: true, max: 0.1, start: 0.002, step: stepper{ladder: true}}
-	ionCount = &quantity{says: "number of ions", units: []unit{bare}, min: 0, max: 10, start: 2,
+	growthFactor = &quantity{says: "growth factor", units: []unit{bare}, min: 1, max: 50, start: 1.4, step: stepper{small: 0.01, big: 0.1, decimals: 2}}
+	trialCount   = &quantity{says: "number", units: []unit{bare}, min: 0, max: 1e7, whole: true, start: 100000, step: stepper{ladder: true}}
+	seedNumber   = &quantity{says: "number", units: []unit{bare}, min: 0, max: 1e9, whole: true, start: 1, step: stepper{small: 1, big: 10}}
+	coverage     = &quantity{says: "share", units: []unit{perCent}, si: "percent", min: 0.5, max: 0.999, start: 0.95, step: stepper{small: 1, big: 5}}
+	efficiency   = &quantity{says: "share", units: []unit{bare}, min: 0, open: true, max: 1.5, start: 1, step: stepper{small: 0.01, big: 0.1, decimals: 2}}
+	ionCount     = &quantity{says: "number of ions", units: []unit{bare}, min: 0, max: 10, start: 2,
 		step: stepper{small: 1, big: 1}}
 )
 

@@ -175,7 +175,7 @@ func TestExact(t *testing.T) {
 // back leads back.
 func TestSteps(t *testing.T) {
 	for _, in := range func() []Input { s := Default(); return Inputs(&s)[:len(fields)] }() {
-		if in.Kind() != Number || in.Key() == "record" { // a thousand million single steps
+		if in.Kind() != Number || in.Key() == "record" || in.Key() == "seed" { // a thousand million single steps
 			continue
 		}
 		for _, big := range []bool{false, true} {
@@ -200,6 +200,9 @@ func TestSteps(t *testing.T) {
 					continue // the number that follows a word may lie between two steps
 				}
 				before := in.Show(Style{})
+				if before == "0" && in.Kind() == Number {
+					continue // up from nothing leads to the usual value
+				}
 				if in.Step(1, big) != nil || in.Step(-1, big) != nil {
 					t.Errorf("%s: no way back at %s", in.Path(), before)
 				}

@@ -46,7 +46,7 @@ type entry struct {
 }
 
 func (i slot[R]) entry() entry {
-	bare := !i.isWord() && i.quantity.units[0].name() == ""
+	bare := !i.isWord() && i.uncertain() == nil && !i.several && i.quantity.units[0].name() == ""
 	return entry{i.key, i.exact(), bare}
 }
 
