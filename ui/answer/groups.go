@@ -1,7 +1,9 @@
 package answer
 
 import (
+	"iter"
 	"slices"
+	"strings"
 
 	"dropcrest/ui/scenario"
 )
@@ -10,7 +12,51 @@ import (
 // its help.
 type Group struct {
 	Title string
-	Keys  []string // of inputs and of lists of rows
+
+	// Keys are those of inputs and of lists of rows. Where the option of a question
+	// is called otherwise than its input, or stands for an input of a row, the key is
+	// "option=path": "dry-diameter=point[0].dry-diameter".
+	Keys []string
+}
+
+// Options are the options of the group in their order, each with the input or the
+// list of rows that it sets.
+func (g Group) Options() iter.Seq2[string, scenario.Path] {
+	return func(yield func(string, scenario.Path) bool) {
+		for _, key := range g.Keys {
+			option, path, differs := strings.Cut(key, "=")
+			if !differs {
+				path = option
+			}
+			if !yield(option, scenario.Path(path)) {
+				return
+			}
+		}
+	}
+}
+
+// PathOf is the input or the list of rows that an option of the question sets.
+func (q Question) PathOf(option string) (scenario.Path, bool) {
+	for _, g := range q.Groups {
+		for o, path := range g.Options() {
+			if o == option {
+				return path, true
+			}
+		}
+	}
+	return "", false
+}
+
+// OptionOf is the option of the question that sets an input or a list of rows.
+func (q Question) OptionOf(path scenario.Path) (string, bool) {
+	for _, g := range q.Groups {
+		for option, p := range g.Options() {
+			if p == path {
+				return option, true
+			}
+		}
+	}
+	return "", false
 }
 
 // curveGroups are the inputs of the Curve question.
@@ -33,10 +79,12 @@ var spectrumGroups = []Group{
 	{"Picture", []string{"axes"}},
 }
 
-// LooksAt reports whether the question looks at the input or list of that key.
-// One scenario serves all questions; each looks at its part.
-func (q Question) LooksAt(key string) bool {
-	return slices.ContainsFunc(q.Groups, func(g Group) bool { return slices.Contains(g.Keys, key) })
+// LooksAt reports whether the question looks at the input or list of rows of that
+// path, which is its key unless it belongs to a row. One scenario serves all
+// questions; each looks at its part.
+func (q Question) LooksAt(path string) bool {
+	_, ok := q.OptionOf(scenario.Path(path))
+	return ok
 }
 
 // Inputs are the inputs of a scenario that the question looks at, those of rows
