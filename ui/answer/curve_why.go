@@ -35,15 +35,22 @@ func (c *curve) why() []string {
 	}
 	out = append(out, fmt.Sprintf("Constants: R = %v J/(mol K), molar mass of water %v kg/mol (%s).",
 		atmos.GasConstant, atmos.WaterMolarMass, "CODATA 2018; IUPAC"))
+	out = append(out, sourcesOfWater()...)
+	for _, n := range c.notes {
+		out = append(out, "Note: "+n.Text)
+	}
+	return out
+}
+
+// sourcesOfWater are the relations that the Kelvin term needs, with their range.
+func sourcesOfWater() []string {
+	var out []string
 	for _, r := range atmos.Relations() {
 		switch r.Key {
 		case "water-density", "surface-tension":
 			out = append(out, fmt.Sprintf("Source of the %s: %s, valid from %s to %s.", r.Name, r.Source,
 				celsius(r.Temperature.Min), celsius(r.Temperature.Max)))
 		}
-	}
-	for _, n := range c.notes {
-		out = append(out, "Note: "+n.Text)
 	}
 	return out
 }

@@ -1,0 +1,200 @@
+package answer
+
+import (
+	"fmt"
+	"math"
+	"slices"
+
+	"dropcrest/atmos"
+	"dropcrest/koehler/kappa"
+	"dropcrest/ui/scenario"
+)
+
+// fewestTrials is the least of which quantiles mean anything.
+const fewestTrials = 100
+
+// newImplied takes the points of a scenario, one by one or from a file.
+func newImplied(env Env, s scenario.Scenario) (*implied, error) {
+	switch {
+	case s.Trials > 0 && s.Trials < fewestTrials:
+		return nil, &InputError{"trials", fmt.Sprintf("%d trials make no interval: want %d or more, or 0 for linear propagation alone", s.Trials, fewestTrials)}
+	case s.Coverage > 0.99 && s.Trials > 0:
+		return nil, &InputError{"coverage", "the ends of so wide an interval rest on a handful of trials: want 99 % or less, or 0 trials for linear propagation alone"}
+	}
+	k := &implied{asked: s}
+	if s.PointsFile != "" {
+		points, notes, err := readPoints(env, s)
+		if err != nil {
+			return nil, err
+		}
+		k.points, k.notes = points, append(k.notes, notes...)
+	} else {
+		for i, p := range s.Measurements {
+			if err := checkMeasurement(p); err != nil {
+				return nil, &InputError{string(pathInPoint(i, err.Path)), err.Error()}
+			}
+			k.points = append(k.points, measurement{Point: p, name: defaultName(i), water: conventionOf(s)})
+		}
+	}
+	for i := range k.points {
+		p := &k.points[i]
+		p.measured = p.asMeasured(s)
+		s.Temperature = p.water.Temperature
+		k.notes = distinct(append(k.notes, waterNotes(s)...))
+	}
+	s = k.asked
+	if k.hasOwnWater() {
+		k.note("water-of-points", "temperature", "Temperature and surface tension are those of the file, each measurement its own; the lines of the picture are for those of the question.")
+	}
+	if s.SurfaceTension.Is("solution") {
+		k.notes = append(k.notes, atmos.Note{Code: "tension-of-solution", Input: "surface-tension",
+			Text: "The tension of the solution is not known of particles that are only measured: κ is that of the tension of pure water."})
+	}
+	return k, nil
+}
+
+// hasOwnWater reports whether the water of a point is not that of the question.
+func (k *implied) hasOwnWater() bool {
+	asked := conventionOf(k.asked)
+	return slices.ContainsFunc(k.points, func(m measurement) bool { return m.water != asked })
+}
+
+// checkMeasurement says what a measurement lacks.
+func checkMeasurement(p scenario.Point) *scenario.ValueError {
+	s := scenario.Default()
+	s.Measurements = []scenario.Point{p}
+	if wrong := scenario.Check(&s); len(wrong) > 0 {
+		return wrong[0]
+	}
+	return nil
+}
+
+// pathInPoint is a path in the first point as one in point i.
+func pathInPoint(i int, first scenario.Path) scenario.Path {
+	const head = "point[0]."
+	if len(first) < len(head) {
+		return first
+	}
+	return scenario.Path(fmt.Sprintf("point[%d].%s", i, first[len(head):]))
+}
+
+// defaultName is the name of a point without one.
+func defaultName(i int) string { return fmt.Sprintf("%d", i+1) }
+
+// conventionOf is the actual water of a scenario.
+func conventionOf(s scenario.Scenario) kappa.Convention {
+	c := kappa.Convention{Temperature: s.Temperature}
+	if s.SurfaceTension.Word == "" {
+		c.Tension = s.SurfaceTension.Number
+	}
+	return c
+}
+
+// asMeasured is the point as the library takes it. The classifier's air is that of
+// the Curve page: the temperature of the particle and one standard atmosphere.
+func (m *measurement) asMeasured(s scenario.Scenario) kappa.Point {
+	p := kappa.Point{
+		Name: m.name, Dry: measured(m.Dry),
+		Temperature: kappa.Measured{Value: m.water.Temperature},
+		Tension:     kappa.Measured{Value: m.water.Tension},
+	}
+	if m.Growth.Known() {
+		p.Method, p.Grown, p.Humidity = kappa.GrowthRate, measured(m.Growth), measured(m.Humidity)
+	} else {
+		p.Supersaturation = measured(m.Supersaturation)
+	}
+	if s.DrySizeIs == "mobility" {
+		p.Shape = kappa.Measured{Value: s.ShapeFactor}
+		p.SizingTemperature = m.water.Temperature
+	}
+	return p
+}
+
+func measured(u scenario.Uncertain) kappa.Measured {
+	return kappa.Measured{Value: u.Value, Independent: u.Own, Systematic: u.Common}
+}
+
+// isGrowth reports whether κ is from a growth factor.
+func (m *measurement) isGrowth() bool { return m.measured.Method == kappa.GrowthRate }
+
+// volumeDiameter is the volume-equivalent dry diameter in m.
+func (m *measurement) volumeDiameter() float64 {
+	p := m.measured
+	if p.Shape.Value == 0 {
+		return p.Dry.Value
+	}
+	return atmos.VolumeEquivalent(p.Dry.Value, p.Shape.Value, p.SizingTemperature, atmos.StandardPressure)
+}
+
+// fill adds what stands beside κ.
+func (m *measurement) fill() {
+	m.withoutKelvin = math.NaN()
+	if m.Err != nil || !m.isGrowth() {
+		return
+	}
+	if g, err := kappa.FromGrowth(m.volumeDiameter(), m.Growth.Value, m.Humidity.Value, m.water); err == nil {
+		m.withoutKelvin = g.WithoutKelvin
+	}
+}
+
+// contribution is the part of the uncertainty of κ that one input makes.
+type contribution struct {
+	quantity   kappa.Quantity
+	systematic bool
+	relative   float64 // ∂ ln κ/∂ ln x; NaN for several points
+	signed     float64 // contribution to κ with its sign; of several points without
+	share      float64 // of the variance
+}
+
+func contributionsOf(e kappa.Estimate) []contribution {
+	var out []contribution
+	for _, c := range e.Linear.Contributions {
+		out = append(out, contribution{c.Quantity, c.Systematic, c.Relative, c.Signed(), c.Share})
+	}
+	return out
+}
+
+// sumOfContributions ranks what the inputs of several points contribute to their
+// mean: independent parts in quadrature, common ones with their signs.
+func sumOfContributions(good []kappa.Estimate, total float64) []contribution {
+	var out []contribution
+	variance := 0.0
+	for _, systematic := range []bool{false, true} {
+		for q := kappa.Dry; q <= kappa.Shape; q++ {
+			sum, any := 0.0, false
+			for _, e := range good {
+				w := weightOf(e) / total
+				for _, c := range e.Linear.Contributions {
+					switch {
+					case c.Quantity != q || c.Systematic != systematic:
+						continue
+					case systematic:
+						sum += w * c.Signed()
+					default:
+						sum = math.Hypot(sum, w*c.Signed())
+					}
+					any = true
+				}
+			}
+			if any {
+				out = append(out, contribution{q, systematic, math.NaN(), sum, sum * sum})
+				variance += sum * sum
+			}
+		}
+	}
+	for i := range out {
+		if variance > 0 {
+			out[i].share /= variance
+		}
+	}
+	slices.SortStableFunc(out, func(a, b contribution) int {
+		switch {
+		case a.share > b.share:
+			return -1
+		case a.share < b.share:
+			return 1
+		}
+		return 0
+	})
+	return out
+}
