@@ -29,7 +29,7 @@ var kappaGroups = []Group{
 		"growth-factor=point[0].growth-factor", "relative-humidity=point[0].relative-humidity", "point", "points=points-file"}},
 	{"The dry particles", []string{"dry-size-is", "shape-factor"}},
 	{"The water", []string{"temperature", "surface-tension"}},
-	{"The uncertainty", []string{"trials", "seed", "coverage"}},
+	{"The uncertainty", []string{"temperature-uncertainty", "surface-tension-uncertainty", "shape-factor-uncertainty", "trials", "seed", "coverage"}},
 }
 
 // liveTrials are made in about 40 ms: as many as one point has by default.

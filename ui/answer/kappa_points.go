@@ -95,8 +95,8 @@ func conventionOf(s scenario.Scenario) kappa.Convention {
 func (m *measurement) asMeasured(s scenario.Scenario) kappa.Point {
 	p := kappa.Point{
 		Name: m.name, Dry: measured(m.Dry),
-		Temperature: kappa.Measured{Value: m.water.Temperature},
-		Tension:     kappa.Measured{Value: m.water.Tension},
+		Temperature: kappa.Measured{Value: m.water.Temperature, Systematic: s.TemperatureUncertainty},
+		Tension:     kappa.Measured{Value: m.water.Tension, Systematic: s.TensionUncertainty},
 	}
 	if m.Growth.Known() {
 		p.Method, p.Grown, p.Humidity = kappa.GrowthRate, measured(m.Growth), measured(m.Humidity)
@@ -104,7 +104,7 @@ func (m *measurement) asMeasured(s scenario.Scenario) kappa.Point {
 		p.Supersaturation = measured(m.Supersaturation)
 	}
 	if s.DrySizeIs == "mobility" {
-		p.Shape = kappa.Measured{Value: s.ShapeFactor}
+		p.Shape = kappa.Measured{Value: s.ShapeFactor, Systematic: s.ShapeUncertainty}
 		p.SizingTemperature = m.water.Temperature
 	}
 	return p

@@ -127,54 +127,6 @@ func TestKappaOfMobility(t *testing.T) {
 	}
 }
 
-// Several points of one kind have a mean at the top of the facts; both kinds stand
-// side by side and the top is null.
-func TestKappaMeans(t *testing.T) {
-	activation := []string{
-		"dry-diameter=60nm±3%rel±2%rel common supersaturation=0.40%±5%rel",
-		"dry-diameter=80nm±3%rel±2%rel common supersaturation=0.27%±5%rel",
-		"dry-diameter=120nm±3%rel±2%rel common supersaturation=0.14%±5%rel",
-	}
-	growth := "dry-diameter=100nm±3%rel growth-factor=1.4±0.02 relative-humidity=90%±1%abs"
-
-	a, f := implies(t, points(t, activation, "trials=20000"))
-	if f.Mean == nil || len(f.Points) != 3 || len(f.Means) != 1 || f.Mean.Kappa != f.Kappa || f.Mean.Freedom != 2 {
-		t.Fatalf("means %+v", f.Means)
-	}
-	if !(f.Mean.Linear.Standard < f.Points[0].Linear.Standard) || !(f.Mean.Linear.Common > 0.05*f.Kappa) {
-		t.Errorf("u of the mean %v, common %v; 2 %% of size common to all is 6 %% of κ", f.Mean.Linear.Standard, f.Mean.Linear.Common)
-	}
-	sum, low, high := 0.0, math.Inf(1), 0.0
-	for _, c := range f.Contributions {
-		sum += float64(c.Share)
-	}
-	for _, p := range f.Points {
-		low, high = math.Min(low, float64(p.Under25C)), math.Max(high, float64(p.Under25C))
-	}
-	within(t, "sum of shares", Number(sum), 1, 1e-12)
-	if k := float64(f.Under25C); !(low < k && k < high) {
-		t.Errorf("mean under the common convention %g is not between %g and %g", k, low, high)
-	}
-	if all := strings.Join(a.Finding, " "); !strings.Contains(all, "weighted mean of 3 points") || !strings.Contains(all, "χ²") {
-		t.Errorf("finding %q", all)
-	}
-
-	a, f = implies(t, points(t, append(activation, growth), "trials=20000"))
-	if f.Mean != nil || !math.IsNaN(float64(f.Kappa)) || len(f.Means) != 2 {
-		t.Errorf("growth and activation are merged: %+v", f.KappaRow)
-	}
-	if all := strings.Join(a.Finding, " "); !strings.Contains(all, "From activation") || !strings.Contains(all, "From growth factors (1 point) κ is 0.223") || !slices.Contains(codes(a), "methods-not-merged") {
-		t.Errorf("finding %q, notes %q", all, codes(a))
-	}
-	letters := map[rune]int{}
-	for _, p := range a.Figures[0].Points {
-		letters[p.Letter]++
-	}
-	if letters[0] != 3 || letters[growthLetter] != 1 {
-		t.Errorf("points of the picture by letter: %v", letters)
-	}
-}
-
 // What has no κ is said, and the others go on.
 func TestKappaLimitsAreSaid(t *testing.T) {
 	const good = "dry-diameter=80nm±3%rel supersaturation=0.27%±5%rel"

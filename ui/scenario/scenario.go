@@ -68,6 +68,11 @@ type Scenario struct {
 	DoubleCharged Measure // share of doubly charged particles, or "fitted"
 	Bootstrap     int     // replicates, 0: none
 
+	// Standard uncertainties that all measurements share.
+	TemperatureUncertainty float64 // K
+	TensionUncertainty     float64 // N/m
+	ShapeUncertainty       float64
+
 	substances *solutes.Catalogue // nil: the standard one
 	anyName    bool               // names of substances are not looked up
 }
