@@ -56,7 +56,8 @@ type measurement struct {
 	water    kappa.Convention
 	measured kappa.Point
 	kappa.Estimate
-	withoutKelvin float64 // of a growth factor, the Kelvin term left out; NaN: none
+	withoutKelvin float64           // of a growth factor, the Kelvin term left out; NaN: none
+	spread        *kappa.Population // of κ between particles; nil: no activation curve was measured
 }
 
 // kindMean is what all measurements of one kind say together.

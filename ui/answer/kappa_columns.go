@@ -22,6 +22,9 @@ const (
 	humidityOfPoint
 	temperatureOfPoint
 	tensionOfPoint
+	transferWidthOfPoint
+	widthOfPoint
+	plateauOfPoint
 )
 
 // heldBy names the quantities by words of a column's name. The first one that fits
@@ -31,6 +34,9 @@ var heldBy = []struct {
 	words []string
 	path  scenario.Path
 }{
+	{transferWidthOfPoint, []string{"transfer"}, "point[0].transfer-width"},
+	{widthOfPoint, []string{"width"}, "point[0].width"},
+	{plateauOfPoint, []string{"plateau"}, "point[0].plateau"},
 	{tensionOfPoint, []string{"tension"}, "surface-tension"},
 	{temperatureOfPoint, []string{"temperature", "temp"}, "temperature"},
 	{humidityOfPoint, []string{"humidity", "rh"}, "point[0].relative-humidity"},
@@ -54,7 +60,7 @@ func (h held) inPercent() bool { return h == supersaturationOfPoint || h == humi
 
 // mayVary: a standard uncertainty belongs to it.
 func (h held) mayVary() bool {
-	return h != nameOfPoint && h != temperatureOfPoint && h != tensionOfPoint
+	return h == drySizeOfPoint || h == supersaturationOfPoint || h == growthOfPoint || h == humidityOfPoint
 }
 
 // pointColumn is a column of a file of points.

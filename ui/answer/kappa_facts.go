@@ -88,7 +88,18 @@ type PointRow struct {
 	Problem         *string `json:"problem"` // why there is no κ
 	WaterRow
 	KappaRow
-	WithoutKelvin Number `json:"kappa_without_kelvin_term"`
+	WithoutKelvin Number     `json:"kappa_without_kelvin_term"`
+	Spread        *SpreadRow `json:"spread"` // null without an activation curve
+}
+
+// SpreadRow is what the width and the plateau of an activation curve say about the
+// particles: how far κ spreads between them, and how many never activate.
+type SpreadRow struct {
+	LnKappa    Number     `json:"standard_deviation_of_ln_kappa"` // null without a width
+	OneSigma   *[2]Number `json:"kappa_one_standard_deviation"`
+	Width      Number     `json:"width_of_kappa_in_ln_d"` // that of the classifier taken out
+	Unresolved bool       `json:"unresolved"`             // as narrow as the classifier's
+	Inactive   Number     `json:"inactive_share"` // null for a plateau above 1
 }
 
 // MeanRow is the weighted mean of the points of one kind.
@@ -164,7 +175,23 @@ func (m *measurement) row() PointRow {
 		r.Problem = &problem
 		return r
 	}
+	r.Spread = m.spreadRow()
 	r.KappaRow = kappaRow(m.Value, m.At25C, m.Linear, m.MonteCarlo, contributionsOf(m.Estimate))
+	return r
+}
+
+func (m *measurement) spreadRow() *SpreadRow {
+	p := m.spread
+	if p == nil {
+		return nil
+	}
+	r := &SpreadRow{Number(math.NaN()), nil, Number(math.NaN()), m.Width > 0 && p.Unresolved, Number(p.Insoluble)}
+	if p.Insoluble < 0 { // an efficiency that was not corrected
+		r.Inactive = Number(math.NaN())
+	}
+	if m.Width > 0 {
+		r.LnKappa, r.Width, r.OneSigma = Number(p.Spread), Number(p.WidthOfKappa), &[2]Number{Number(p.Low), Number(p.High)}
+	}
 	return r
 }
 

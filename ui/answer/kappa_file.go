@@ -142,7 +142,7 @@ func (f *pointsFile) next() ([]string, error) {
 func (f *pointsFile) point(cells []string, index int) (measurement, error) {
 	m := measurement{name: defaultName(index)}
 	s := f.asked.Clone()
-	s.Measurements = []scenario.Point{{}}
+	s.Measurements = []scenario.Point{{Plateau: 1}}
 	for i, c := range f.columns {
 		cell := strings.TrimSpace(cells[i])
 		if cell == "" || c.isUncertainty || c.holds == nothingUsed {

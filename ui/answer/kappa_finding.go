@@ -55,7 +55,30 @@ func (k *implied) findingOfOne(m *measurement) []string {
 	if parts := contributionsOf(m.Estimate); len(parts) > 0 {
 		out = append(out, rankWords(parts))
 	}
-	return append(out, conventionWords(m.Kappa, m.At25C, m.Classic))
+	last := conventionWords(m.Kappa, m.At25C, m.Classic)
+	if says := m.spreadWords(); says != "" {
+		last = says + " " + last
+	}
+	return append(out, last)
+}
+
+// spreadWords say what the activation curve tells about the particles.
+func (m *measurement) spreadWords() string {
+	p := m.spread
+	if p == nil {
+		return ""
+	}
+	says := "All particles have about the same κ: their curve is as narrow as the classifier's"
+	switch {
+	case m.Width == 0:
+		says = "How far κ spreads is not known without the width of the curve"
+	case !p.Unresolved:
+		says = fmt.Sprintf("Between the particles κ spreads from %s to %s (one standard deviation of its logarithm, %s)", digits3(p.Low), digits3(p.High), digits(p.Spread, 2))
+	}
+	if p.Insoluble > 0 {
+		says += fmt.Sprintf("; %s of them never activate", shareWords(p.Insoluble))
+	}
+	return says + "."
 }
 
 // sureWords say how sure a κ is.

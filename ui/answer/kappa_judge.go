@@ -64,6 +64,18 @@ func (k *implied) judgePoints() {
 		}
 		return "the particle took up no water, so that κ is 0 and its uncertainty only counts upwards"
 	})
+	k.noteOn("plateau-above-one", "a plateau above 1", func(m *measurement) string {
+		if m.Plateau <= 1 || m.isGrowth() {
+			return ""
+		}
+		return "more particles than there are cannot activate, so that the efficiency of the counters was not corrected"
+	})
+	k.noteOn("curve-unused", "no use for an activation curve", func(m *measurement) string {
+		if !m.isGrowth() || m.Width == 0 && m.Plateau == 1 {
+			return ""
+		}
+		return "its width and plateau belong to a supersaturation and not to a growth factor"
+	})
 	k.noteOn("trials-without-kappa", "trials without κ", func(m *measurement) string {
 		d := m.MonteCarlo
 		if m.Err != nil || d == nil || d.Above+d.Below == 0 {

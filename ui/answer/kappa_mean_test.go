@@ -69,3 +69,32 @@ func TestKappaMeans(t *testing.T) {
 		t.Errorf("points of the picture by letter: %v", letters)
 	}
 }
+
+// A curve of κ that spreads lognormally by σ is wider by σ/3 in ln D (classic form;
+// the exact slope at this size is within 1 %); the classifier's width is taken out in
+// quadrature.
+func TestKappaSpread(t *testing.T) {
+	const row = "dry-diameter=100nm±3%rel supersaturation=0.2%±5%rel "
+	a, f := implies(t, points(t, []string{row + "width=0.13 transfer-width=0.05 plateau=0.88"}, "trials=0"))
+	s := f.Points[0].Spread
+	if s == nil || s.Unresolved {
+		t.Fatalf("spread %+v", s)
+	}
+	within(t, "width of κ", s.Width, 0.12, 1e-12)
+	within(t, "spread of ln κ", s.LnKappa, 0.36, 4e-3)
+	within(t, "inactive", s.Inactive, 0.12, 1e-12)
+	if all := strings.Join(a.Finding, " "); !strings.Contains(all, "Between the particles κ spreads from") || !strings.Contains(all, "12 % of them never activate") {
+		t.Errorf("finding %q", all)
+	}
+	a, f = implies(t, points(t, []string{row + "width=0.05 transfer-width=0.05"}, "trials=0"))
+	if !f.Points[0].Spread.Unresolved || !strings.Contains(strings.Join(a.Finding, " "), "as narrow as the classifier's") {
+		t.Errorf("spread %+v, finding %q", f.Points[0].Spread, a.Finding)
+	}
+	if _, f = implies(t, points(t, []string{row}, "trials=0")); f.Points[0].Spread != nil {
+		t.Errorf("a spread from nowhere: %+v", f.Points[0].Spread)
+	}
+	fromFile, _, err := readPoints(opening("d50_nm,ss_percent,width,transfer_width,plateau\n100,0.2,0.13,0.05,0.88\n100,0.2,,,\n"), fromFile())
+	if err != nil || fromFile[0].Width != 0.13 || fromFile[0].TransferWidth != 0.05 || fromFile[0].Plateau != 0.88 || fromFile[1].Plateau != 1 {
+		t.Errorf("from a file: %+v, error %v", fromFile, err)
+	}
+}

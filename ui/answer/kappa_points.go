@@ -129,11 +129,26 @@ func (m *measurement) volumeDiameter() float64 {
 // fill adds what stands beside κ.
 func (m *measurement) fill() {
 	m.withoutKelvin = math.NaN()
-	if m.Err != nil || !m.isGrowth() {
+	if m.Err != nil {
+		return
+	}
+	if !m.isGrowth() {
+		m.fillSpread()
 		return
 	}
 	if g, err := kappa.FromGrowth(m.volumeDiameter(), m.Growth.Value, m.Humidity.Value, m.water); err == nil {
 		m.withoutKelvin = g.WithoutKelvin
+	}
+}
+
+// fillSpread adds what the width and the plateau of an activation curve say.
+func (m *measurement) fillSpread() {
+	if m.Width == 0 && m.Plateau == 1 {
+		return
+	}
+	c := kappa.Curve{D50: m.volumeDiameter(), Width: m.Width, TransferWidth: m.TransferWidth, Plateau: m.Plateau}
+	if p, err := kappa.FromCurve(c, m.Supersaturation.Value, m.water); err == nil {
+		m.spread = &p
 	}
 }
 

@@ -28,14 +28,20 @@ func (k *implied) pointsTable() Table {
 		{"interval_low", "interval from"},
 		{"interval_high", "interval to"},
 		{"linear_relative_standard_uncertainty", "linear relative standard uncertainty"},
+		{"standard_deviation_of_ln_kappa", "spread of ln κ between particles"},
+		{"inactive_share", "share that never activates"},
 		{"problem", "problem"},
 	}}
 	for i := range k.points {
 		r := k.points[i].row()
 		low, high := endCells(r.Interval)
+		var spread, inactive any
+		if r.Spread != nil {
+			spread, inactive = cell(float64(r.Spread.LnKappa)), cell(float64(r.Spread.Inactive))
+		}
 		t.Rows = append(t.Rows, []any{r.Name, r.Method, cell(float64(r.Dry)), cell(float64(r.Volume)), cell(float64(r.Supersaturation)), cell(float64(r.Growth)), cell(float64(r.Humidity)),
 			cell(float64(r.Kappa)), cell(float64(r.Classic)), cell(float64(r.WithoutKelvin)), cell(float64(r.Under25C)), cell(float64(r.Relative)), low, high,
-			cell(float64(r.Linear.Relative)), textCell(r.Problem)})
+			cell(float64(r.Linear.Relative)), spread, inactive, textCell(r.Problem)})
 	}
 	return t
 }

@@ -143,6 +143,8 @@ func TestKappaLimitsAreSaid(t *testing.T) {
 		"scatter":         {[]string{good, "dry-diameter=80nm±3%rel supersaturation=0.4%±5%rel"}, nil, "points-scatter", "scatter more than their own uncertainties say"},
 		"beyond any κ":    {[]string{"dry-diameter=80nm±3%rel supersaturation=0.05%±0.03%abs"}, nil, "trials-without-kappa", "κ is"},
 		"of the solution": {[]string{good}, []string{"surface-tension=solution"}, "tension-of-solution", "κ is"},
+		"plateau above 1": {[]string{good + " plateau=1.1"}, nil, "plateau-above-one", "κ is"},
+		"width of growth": {[]string{"dry-diameter=100nm growth-factor=1.4 relative-humidity=90% width=0.1"}, nil, "curve-unused", "κ is"},
 		"very cold":       {[]string{good}, []string{"temperature=-30C"}, "surface-tension-extrapolated", "κ is"},
 	} {
 		t.Run(name, func(t *testing.T) {

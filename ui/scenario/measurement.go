@@ -10,12 +10,20 @@ type Point struct {
 	Supersaturation Uncertain // fraction
 	Growth          Uncertain
 	Humidity        Uncertain // fraction
+
+	// Of the activation curve that the dry size is the middle of, where it was scanned.
+	Width         float64 // standard deviation in ln D; 0: not measured
+	TransferWidth float64 // of the classifier, likewise; 0: not taken out
+	Plateau       float64 // activated share of large particles
 }
 
 // defaultPoint is an invented measurement of activation.
 func defaultPoint() Point {
-	return Point{Dry: Uncertain{Value: 80e-9, Own: 0.03 * 80e-9}, Supersaturation: Uncertain{Value: 0.0025, Own: 0.05 * 0.0025}}
+	return Point{Dry: Uncertain{Value: 80e-9, Own: 0.03 * 80e-9}, Supersaturation: Uncertain{Value: 0.0025, Own: 0.05 * 0.0025}, Plateau: 1}
 }
+
+// curveWidth is a standard deviation in ln D.
+var curveWidth = &quantity{says: "width", units: []unit{bare}, min: 0, max: 3, start: 0.1, step: stepper{small: 0.01, big: 0.1, decimals: 2}}
 
 // pointList is the measurements of the Kappa question.
 var pointList = list[Point]{
@@ -35,9 +43,21 @@ var pointList = list[Point]{
 		{key: "relative-humidity", says: "humidity of growth", quantity: humidity,
 			help: "The relative humidity at which the growth factor was measured.", origin: "not measured",
 			at: func(p *Point) any { return &p.Humidity }},
+		{key: "width", says: "width of the activation curve", quantity: curveWidth,
+			help:   "The standard deviation in ln D of the activated share against dry size, where particles were scanned: it says how far kappa spreads. 0: not measured.",
+			origin: "not measured",
+			at:     func(p *Point) any { return &p.Width }},
+		{key: "transfer-width", says: "width of the classifier", quantity: curveWidth,
+			help:   "The standard deviation in ln D of the classifier's transfer function, which is taken out of the width of the activation curve. 0: not taken out.",
+			origin: "not taken out",
+			at:     func(p *Point) any { return &p.TransferWidth }},
+		{key: "plateau", says: "plateau of the activation curve", quantity: efficiency,
+			help:   "The activated share of the large particles, corrected for the efficiency of the counter. What is missing to 1 never activates.",
+			origin: "all large particles activate",
+			at:     func(p *Point) any { return &p.Plateau }},
 	},
 	standard: defaultPoint,
-	blank:    func() Point { return Point{} },
+	blank:    func() Point { return Point{Plateau: 1} },
 	required: []string{"dry-diameter"},
 	least:    1,
 	most:     200,
