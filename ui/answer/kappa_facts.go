@@ -99,7 +99,7 @@ type SpreadRow struct {
 	OneSigma   *[2]Number `json:"kappa_one_standard_deviation"`
 	Width      Number     `json:"width_of_kappa_in_ln_d"` // that of the classifier taken out
 	Unresolved bool       `json:"unresolved"`             // as narrow as the classifier's
-	Inactive   Number     `json:"inactive_share"` // null for a plateau above 1
+	Inactive   Number     `json:"inactive_share"`         // null for a plateau above 1
 }
 
 // MeanRow is the weighted mean of the points of one kind.

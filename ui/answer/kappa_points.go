@@ -59,6 +59,22 @@ func (k *implied) hasOwnWater() bool {
 	return slices.ContainsFunc(k.points, func(m measurement) bool { return m.water != asked })
 }
 
+// KappaGiven takes away what the first measurement has by default, or of a file, when
+// an option gives it the other kind: a growth factor takes the place of a
+// supersaturation, and the other way round. given reports which options were given.
+func KappaGiven(s *scenario.Scenario, given func(option string) bool) {
+	if len(s.Measurements) == 0 {
+		return
+	}
+	p := &s.Measurements[0]
+	switch activation, growth := given("supersaturation"), given("growth-factor"); {
+	case growth && !activation:
+		p.Supersaturation = scenario.Uncertain{}
+	case activation && !growth:
+		p.Growth, p.Humidity = scenario.Uncertain{}, scenario.Uncertain{}
+	}
+}
+
 // checkMeasurement says what a measurement lacks.
 func checkMeasurement(p scenario.Point) *scenario.ValueError {
 	s := scenario.Default()

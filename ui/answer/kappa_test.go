@@ -186,6 +186,27 @@ func TestKappaRefuses(t *testing.T) {
 	}
 }
 
+// An option of one kind takes the place of the other kind.
+func TestKappaGiven(t *testing.T) {
+	known := scenario.Uncertain{Value: 1.4}
+	for name, c := range map[string]struct {
+		options            []string
+		activation, growth bool
+	}{
+		"none":       {nil, true, true},
+		"growth":     {[]string{"growth-factor", "relative-humidity"}, false, true},
+		"activation": {[]string{"supersaturation"}, true, false},
+		"both":       {[]string{"supersaturation", "growth-factor"}, true, true}, // refused later
+	} {
+		s := scenario.Default()
+		s.Measurements[0].Growth, s.Measurements[0].Humidity = known, known
+		KappaGiven(&s, func(option string) bool { return slices.Contains(c.options, option) })
+		if p := s.Measurements[0]; p.Supersaturation.Known() != c.activation || p.Growth.Known() != c.growth || p.Humidity.Known() != c.growth {
+			t.Errorf("%s: %+v", name, p)
+		}
+	}
+}
+
 // Stopped work gives what there is, and says so; before it began there is nothing.
 func TestKappaStopped(t *testing.T) {
 	s := points(t, []string{
