@@ -155,12 +155,7 @@ func TestKappaLimitsAreSaid(t *testing.T) {
 			if all := strings.Join(a.Finding, " "); !strings.Contains(all, c.finding) {
 				t.Errorf("finding %q, want %q in it", all, c.finding)
 			}
-			why := strings.Join(a.Why, "\n")
-			for _, n := range a.Notes {
-				if !strings.Contains(why, n.Text) {
-					t.Errorf("note %q is not in the explanation", n.Text)
-				}
-			}
+			explained(t, a)
 		})
 	}
 }
