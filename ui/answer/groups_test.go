@@ -56,7 +56,7 @@ func TestOptionsThatDiffer(t *testing.T) {
 // Every option of every question sets something, and no two set the same.
 func TestOptionsSetSomething(t *testing.T) {
 	s := scenario.Default()
-	for _, q := range []Question{curveQuestion(), kappaQuestion()} {
+	for _, q := range Questions() {
 		seen := map[string]bool{}
 		for _, g := range q.Groups {
 			for option, path := range g.Options() {

@@ -3,7 +3,9 @@ package answer
 // Questions is the table of all questions in the order of the pages. Screen,
 // command line, help and README range over it; a question that is not here does
 // not exist.
-func Questions() []Question { return []Question{curveQuestion(), spectrumQuestion()} }
+func Questions() []Question {
+	return []Question{curveQuestion(), spectrumQuestion(), kappaQuestion()}
+}
 
 // Find returns the question of that key.
 func Find(key string) (Question, bool) {
