@@ -1,0 +1,176 @@
+package answer
+
+import (
+	"context"
+	"slices"
+
+	"dropcrest/atmos"
+	"dropcrest/koehler/counter"
+	"dropcrest/solutes"
+	"dropcrest/ui/figure"
+	"dropcrest/ui/scenario"
+)
+
+func counterQuestion() Question {
+	return Question{
+		Key:       "counter",
+		Title:     "Counter",
+		Says:      "Which supersaturation did the CCN counter really have?",
+		Groups:    counterGroups,
+		Live:      counterIsLive,
+		Statement: counterStatement,
+		Ask:       askCounter,
+	}
+}
+
+// counterGroups are the inputs of the Counter question.
+var counterGroups = []Group{
+	{"The scans", []string{"data=scans", "map=scans-map", "activation-curve", "plateau", "double-charged", "polarity"}},
+	{"The salt", []string{"component", "shares-by", "shape-factor", "water-activity", "kappa", "vant-hoff-factor", "temperature", "surface-tension"}},
+	{"The uncertainty", []string{"bootstrap", "seed"}},
+}
+
+// counterIsLive: without bootstrap the demo's scans are fitted within a frame.
+func counterIsLive(s scenario.Scenario) bool { return s.Bootstrap == 0 && onlyDemo(s.Scans) }
+
+func onlyDemo(files []scenario.DataFile) bool {
+	return !slices.ContainsFunc(files, func(f scenario.DataFile) bool { return f.Name != scenario.DemoData })
+}
+
+// counterStatement is the question in prose.
+func counterStatement(s scenario.Scenario) []string {
+	water := "and water activity by {water-activity}"
+	switch s.WaterActivity {
+	case "kappa":
+		water += " {kappa}"
+	case "vant-hoff":
+		water += " factor {vant-hoff-factor}"
+	}
+	return []string{
+		"A counter that was scanned as in {scans}, {polarity} particles selected,",
+		"with an activation curve of {activation-curve}, plateau {plateau},",
+		"on particles of {component}, shape factor {shape-factor},",
+		water + ", surface tension of {surface-tension},",
+		"at {temperature} where they activate, all else {further}.",
+	}
+}
+
+// calibrated is a calibration before it is put into words, lines and tables.
+type calibrated struct {
+	asked   scenario.Scenario
+	rows    int // of the log
+	mapping []string
+	counter.Calibration
+	notes []atmos.Note
+}
+
+func askCounter(ctx context.Context, env Env, s scenario.Scenario) (Answer, error) {
+	standard, notes, err := newStandard(env, s)
+	if err != nil {
+		return Answer{}, err
+	}
+	log, err := readScans(ctx, env, s)
+	if err != nil {
+		return Answer{}, err
+	}
+	axis := counter.DetectAxis(log.rows, counter.Tolerances{})
+	scans, salts := counter.Gather(log.rows, axis, counter.Tolerances{})
+	standards, scans, more, err := standardsOf(env, s, standard, scans, salts)
+	if err != nil {
+		return Answer{}, err
+	}
+	c := &calibrated{asked: s, rows: len(log.rows), mapping: log.mapping}
+	c.Calibration, err = counter.Calibrate(ctx, counter.Request{
+		Scans: scans, Standards: standards, Options: fitOptions(s),
+		Bootstrap: s.Bootstrap, Seed: uint64(s.Seed), Workers: env.Workers, Progress: env.Progress,
+	})
+	if err != nil {
+		return Answer{}, &InputError{Input: "scans", Text: reason(err)}
+	}
+	c.notes = distinct(slices.Concat(notes, log.notes, more, c.Calibration.Notes, waterNotes(s)))
+	return Answer{
+		Finding: c.finding(),
+		Why:     c.why(),
+		Facts:   c.facts(),
+		Figures: []figure.Figure{c.lineFigure(), c.curvesFigure(), c.residualFigure()},
+		Tables:  c.tables(),
+		Notes:   c.notes,
+	}, nil
+}
+
+// newStandard is the salt of the question with its Köhler model.
+func newStandard(env Env, s scenario.Scenario) (counter.Standard, []atmos.Note, error) {
+	recipe, notes, err := newRecipe(env, s)
+	if err != nil {
+		return counter.Standard{}, nil, err
+	}
+	_, more, err := solutes.Dissolve(recipe)
+	if err != nil {
+		return counter.Standard{}, nil, recipeError(err)
+	}
+	name := "the salt"
+	if len(recipe.Parts) > 0 {
+		name = recipe.Parts[0].Substance.Name
+	}
+	return counter.Standard{Name: name, Recipe: recipe, ShapeFactor: s.ShapeFactor, Air: classifier(s)}, append(notes, more...), nil
+}
+
+func classifier(s scenario.Scenario) counter.Classifier {
+	c := counter.Classifier{Polarity: counter.Positive}
+	if s.Polarity == "negative" {
+		c.Polarity = counter.Negative
+	}
+	return c
+}
+
+// standardsOf gives each salt of the log its standard. A log that names none is of
+// the salt of the question; one that names others is of those, by the same model.
+func standardsOf(env Env, s scenario.Scenario, own counter.Standard, scans []counter.Scan, salts []string) ([]counter.Standard, []counter.Scan, []atmos.Note, error) {
+	standards := []counter.Standard{own}
+	place := map[string]int{"": 0}
+	var notes []atmos.Note
+	for i, salt := range salts {
+		at, known := place[salt]
+		if !known {
+			found, ok := env.catalogue().Find(salt)
+			switch {
+			case !ok:
+				return nil, nil, nil, unknownSubstance(env.catalogue(), salt)
+			case found.Name == own.Name:
+				at = 0
+			default:
+				other := s.Clone()
+				other.Components = []scenario.Component{{Substance: found.Name, Share: 1, Kappa: catalogueWord, Density: catalogueWord,
+					MolarMass: catalogueWord, Ions: catalogueWord, Solubility: catalogueWord}}
+				standard, more, err := newStandard(env, other)
+				if err != nil {
+					return nil, nil, nil, err
+				}
+				standards, notes, at = append(standards, standard), append(notes, more...), len(standards)
+			}
+			place[salt] = at
+		}
+		scans[i].Standard = at
+	}
+	return standards, scans, notes, nil
+}
+
+var catalogueWord = scenario.Measure{Word: "catalogue"}
+
+// fitOptions are the options of the fits; what is fitted is 0 there.
+func fitOptions(s scenario.Scenario) counter.Options {
+	o := counter.Options{Curve: counter.TwoStep, Charges: counter.Charges{Classifier: classifier(s)}}
+	switch s.Activation {
+	case "gaussian":
+		o.Curve = counter.Gaussian
+	case "sigmoid":
+		o.Curve = counter.Sigmoid
+	}
+	if s.Plateau.Word == "" {
+		o.Plateau = s.Plateau.Number
+	}
+	if s.DoubleCharged.Word == "" {
+		o.Charges.Double = s.DoubleCharged.Number
+	}
+	return o
+}
