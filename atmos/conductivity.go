@@ -14,4 +14,7 @@ var AirConductivityRange = Range{233.15, 323.15}
 //
 // Source: Seinfeld and Pandis, Atmospheric Chemistry and Physics, whose form
 // follows Beard and Pruppacher, J. Atmos. Sci. 28 (1971) 1455, within 0.1 %.
-func AirConductivity(T float64) float64 { return 4.39e-3 + 7.1e-5*T }
+func AirConductivity(T float64) float64 { return 4.39e-3 + AirConductivitySlope*T }
+
+// AirConductivitySlope is dk_a/dT (W/(m K²)) of AirConductivity.
+const AirConductivitySlope = 7.1e-5

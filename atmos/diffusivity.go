@@ -17,5 +17,11 @@ var VapourDiffusivityRange = Range{233.15, 313.15}
 //
 // Source: Hall and Pruppacher, J. Atmos. Sci. 33 (1976) 1995.
 func VapourDiffusivity(T, p float64) float64 {
-	return 2.11e-5 * math.Pow(T/ZeroCelsius, 1.94) * (StandardPressure / p)
+	return 2.11e-5 * math.Pow(T/ZeroCelsius, diffusivityExponent) * (StandardPressure / p)
 }
+
+const diffusivityExponent = 1.94
+
+// VapourDiffusivityLogSlope returns d ln D_v/dT (1/K) of VapourDiffusivity at the
+// temperature T (K).
+func VapourDiffusivityLogSlope(T float64) float64 { return diffusivityExponent / T }

@@ -34,4 +34,8 @@ var LinearLatentHeatRange = Range{253.15, 323.15}
 //
 // Source: common practice; Bolton, Mon. Weather Rev. 108 (1980) 1046, has the
 // same numbers.
-func LinearLatentHeat(T float64) float64 { return 2.501e6 - 2370*(T-ZeroCelsius) }
+func LinearLatentHeat(T float64) float64 { return 2.501e6 + LinearLatentHeatSlope*(T-ZeroCelsius) }
+
+// LinearLatentHeatSlope is dL/dT (J/(kg K)) of LinearLatentHeat: by Kirchhoff's law
+// the heat capacity of vapour less that of the liquid.
+const LinearLatentHeatSlope = -2370.0

@@ -25,3 +25,10 @@ func SurfaceTension(T float64) float64 {
 	tau := 1 - T/CriticalTemperature
 	return 0.2358 * math.Pow(tau, 1.256) * (1 - 0.625*tau)
 }
+
+// SurfaceTensionLogSlope returns d ln σ/dT (1/K) of SurfaceTension at the
+// temperature T (K), by differentiating its formula.
+func SurfaceTensionLogSlope(T float64) float64 {
+	tau := 1 - T/CriticalTemperature
+	return -(1.256/tau - 0.625/(1-0.625*tau)) / CriticalTemperature
+}

@@ -53,6 +53,7 @@ type terms struct {
 	wetSlope                     float64 // d ln D/d ln u
 	activitySlope                float64 // d ln a_w/d ln u
 	fall                         float64 // what the growing size alone takes from the slope
+	byActivity                   float64 // the part of slope that ln a_w makes
 }
 
 func (c *curve) at(u float64) (t terms) {
@@ -84,7 +85,8 @@ func (c *curve) sized(t *terms, u, growth, wetSlope float64) {
 	lnS, byPressure, byActivity := c.kelvin.LnSaturation(pressure, t.lnaw)
 	t.lnS = lnS
 	t.fall = byPressure * pressure * t.wetSlope
-	t.slope = byActivity*t.activitySlope + byPressure*4*dsigma/t.wet - t.fall
+	t.byActivity = byActivity * t.activitySlope
+	t.slope = t.byActivity + byPressure*4*dsigma/t.wet - t.fall
 }
 
 func (c *curve) state(u float64) State {
