@@ -71,7 +71,7 @@ type Options struct {
 	Transition           Transition // zero: FuchsSutugin
 	MoistHeat            bool       // the heat capacities of vapour and liquid kept; otherwise that of dry air alone
 	Height               float64    // m above the start, where the ascent ends; 0: 300
-	StopAtPeak           bool       // end where the supersaturation first falls; Height is the farthest
+	StopAtPeak           bool       // end soon after the peak; Height is the farthest
 	ProfileRows          int        // heights of Result.Profile, the ends included; 0: none
 	Follow               []Tracer   // dry sizes whose wet radii the profile has
 	Probes               int        // of each group, in a second run that narrows the grown size down; 0: none

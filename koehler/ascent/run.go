@@ -49,6 +49,7 @@ type run struct {
 	last    float64 // s, of the end
 	peak    State
 	hasPeak bool
+	atPeak  bool    // the step ends at a peak
 	energy  float64 // residual so far, J per kg of dry air
 	stats   Stats
 	profile profile
@@ -135,14 +136,24 @@ func (r *run) step(h, growth float64) (taken, next float64, err error) {
 	if q := &r.to; !(q.T > coldest && q.T < warmest) {
 		return 0, h, ErrCold
 	}
-	taken = h
-	if r.from.rising() > 0 && r.to.rising() <= 0 {
-		taken = r.toPeak(h)
+	wasAtPeak := r.atPeak // where dS/dt is rounding and may change its sign again and again
+	taken, r.atPeak = h, false
+	if !wasAtPeak && r.from.rising() > 0 && r.to.rising() <= 0 && math.Max(r.from.S, r.to.S)-1 >= r.peak.Supersaturation-r.bump() {
+		taken, r.atPeak = r.toPeak(h), true
 	}
 	return taken, h / factor, nil
 }
 
-// rising is dS/dt.
+// bump is how far the supersaturation must fall below the highest so far to say that
+// it was the peak. Few bins make small peaks on the way, one a bin that crosses its
+// crest.
+func (r *run) bump() float64 { return bumpShare * math.Abs(r.peak.Supersaturation) }
+
+const bumpShare = 2e-3
+
+// rising is dS/dt. In weak updraft it is the small rest of large terms, and the error
+// of the smallest drops may turn its sign: it helps to find the peak between two
+// steps, whether there was one is told by S itself.
 func (q *point) rising() float64 { return q.byT*q.dT + q.byP*q.dp - q.byVapour*q.dl }
 
 // The error of a step against the tolerance. Radii count relative to themselves. The
@@ -155,7 +166,7 @@ const (
 	leastSuper  = 3e-3
 	scaleSuper  = 20.0
 	scaleRadius = 20.0
-	scaleT      = 60.0 // K
+	scaleT      = 5.0 // K
 )
 
 // lack is the error of the last step over what is allowed.
@@ -222,21 +233,19 @@ func (r *run) toPeak(h float64) float64 {
 // accept takes the step and reports whether the ascent is over.
 func (r *run) accept(h float64) (ended bool) {
 	r.stats.Steps++
-	from, to := &r.from, &r.to
+	to := &r.to
 	end := r.time + h
 	if r.last-end < leastStep*r.last {
 		end = r.last
 	}
 	r.addEnergy(h)
-	if now := r.state(to, end); now.Supersaturation >= r.peak.Supersaturation {
-		r.peak = now
-		r.hasPeak = false
-	}
-	turned := from.rising() > 0 && math.Abs(to.rising()) < 0.01*from.rising() || to.rising() <= 0
-	if turned && r.peak.Time > 0 {
+	now := r.state(to, end)
+	if now.Supersaturation > r.peak.Supersaturation {
+		r.peak, r.hasPeak = now, r.atPeak
+	} else {
 		r.hasPeak = true
 	}
-	over := r.hasPeak && r.opt.StopAtPeak
+	over := r.opt.StopAtPeak && r.hasPeak && now.Supersaturation < r.peak.Supersaturation-r.bump()
 	r.emit(h, end, over || end >= r.last)
 	r.time = end
 	r.from, r.to = r.to, r.from

@@ -1,0 +1,140 @@
+package ascent
+
+import (
+	"math"
+	"testing"
+
+	"dropcrest/atmos"
+	"dropcrest/atmos/aerosol"
+)
+
+// Without particles T falls as g/c_p, p as a power of T, and S follows from both.
+func TestNoAerosol(t *testing.T) {
+	p := Parcel{Temperature: 283.15, Pressure: 90000, Humidity: 0.95, Updraft: 1.3}
+	got := mustRun(t, p, Options{Height: 500, Tolerance: 1e-7})
+	T := p.Temperature - gravity*500/dryAirHeat
+	e := p.Humidity * atmos.VapourPressure(p.Temperature)
+	vapour := massRatio * e / (p.Pressure - e)
+	warmth := virtual(1, vapour)
+	pressure := p.Pressure * math.Pow(T/p.Temperature, dryAirHeat/(dryAirGas*warmth))
+	S := vapour * pressure / ((massRatio + vapour) * atmos.VapourPressure(T))
+	near(t, "T", got.End.Temperature, T, 1e-12)
+	near(t, "p", got.End.Pressure, pressure, 1e-9)
+	near(t, "S", 1+got.End.Supersaturation, S, 1e-8)
+	if got.HasPeak || got.Droplets != 0 || len(got.Notes) == 0 {
+		t.Errorf("peak %v, droplets %g, notes %v", got.HasPeak, got.Droplets, got.Notes)
+	}
+	// near saturation the rate is that of the closed forms
+	a := closedAirAt(T, pressure)
+	c := climateAt(T, pressure, vapour, 1000, kinetics{Continuum, 1, 1})
+	q := point{T: T, p: pressure, climate: c}
+	q.dT, q.dp = -gravity/dryAirHeat, -gravity*pressure/(dryAirGas*virtual(T, vapour))
+	near(t, "dS/dz", q.rising()/c.S, a.cooling, 1e-2) // virtual temperature left out there
+}
+
+// After the peak S comes to where condensation takes up the cooling (Squires 1952):
+//
+//	s = α w/(4π ρ_w γ G N r̄), and the mean A/r of the drops above it
+func TestQuasiSteady(t *testing.T) {
+	p := Parcel{Temperature: 288.15, Pressure: 90000, Updraft: 1, Population: []Group{
+		{Sizes: aerosol.Mode{Concentration: 200e6, Median: 150e-9, GSD: 1.3}, Kappa: 0.6}}}
+	got := mustRun(t, p, Options{Height: 600, Transition: Continuum, ProfileRows: 2, Tolerance: 1e-7})
+	end := got.Profile[1]
+	a := closedAirAt(end.Temperature, end.Pressure)
+	n := end.Droplets * dryDensity(end.State) / dryDensity(got.Profile[0].State)
+	s := a.cooling*p.Updraft/(4*math.Pi*a.rho*a.depletion*a.growth*n*end.MeanRadius) + a.kelvin/2/end.MeanRadius
+	near(t, "supersaturation", end.Supersaturation, s, 0.015) // α without virtual temperature: 0.7 %
+}
+
+// The peak falls with the number of particles and rises with the updraft; the droplets
+// rise with both.
+func TestPeakByNumberAndUpdraft(t *testing.T) {
+	at := func(number, w float64) Result {
+		p := continental()
+		p.Updraft = w
+		scaleNumber(&p, number)
+		return mustRun(t, p, Options{Bins: 60, Height: 3000, StopAtPeak: true})
+	}
+	for _, w := range []float64{0.1, 1, 5} {
+		for _, n := range []float64{0.3, 1, 4} {
+			a, more, faster := at(n, w), at(1.5*n, w), at(n, 1.5*w)
+			if !(more.Peak.Supersaturation < a.Peak.Supersaturation && a.Peak.Supersaturation < faster.Peak.Supersaturation) {
+				t.Errorf("N x %g, %g m/s: peaks %g, %g with more, %g with faster", n, w,
+					a.Peak.Supersaturation, more.Peak.Supersaturation, faster.Peak.Supersaturation)
+			}
+			if !(a.Droplets < more.Droplets && a.Droplets < faster.Droplets) {
+				t.Errorf("N x %g, %g m/s: droplets %g, %g, %g", n, w, a.Droplets, more.Droplets, faster.Droplets)
+			}
+		}
+	}
+}
+
+// Twomey's peak bounds the ascent from above where both use the same growth.
+func TestTwomeyBounds(t *testing.T) {
+	for _, w := range []float64{0.1, 1, 5} {
+		p := continental()
+		p.Updraft = w
+		bound, err := Closed(Twomey1959, p, Options{})
+		if err != nil {
+			t.Fatal(err)
+		}
+		got := mustRun(t, p, Options{Transition: Continuum, Height: 1000, StopAtPeak: true})
+		if !(got.Peak.Supersaturation < 1.3*bound.Peak && got.Peak.Supersaturation > 0.5*bound.Peak) {
+			t.Errorf("%g m/s: ascent %g, Twomey %g", w, got.Peak.Supersaturation, bound.Peak)
+		}
+		t.Log(w, got.Peak.Supersaturation/bound.Peak)
+	}
+}
+
+// Bins to infinity: of second order.
+func TestBinsAreOfSecondOrder(t *testing.T) {
+	p := continental()
+	at := func(bins int) float64 {
+		return mustRun(t, p, Options{Bins: bins, Tolerance: 1e-8, StopAtPeak: true}).Peak.Supersaturation
+	}
+	best := at(1600)
+	coarse, fine := math.Abs(at(100)/best-1), math.Abs(at(400)/best-1)
+	if order := math.Log(coarse/fine) / math.Log(4); !(order > 1.6 && order < 2.6) {
+		t.Errorf("order %.2f (errors %.3g at 100 bins, %.3g at 400)", order, coarse, fine)
+	}
+}
+
+// stress runs all combinations and fails for each that has an error or breaks a law.
+func stress(t *testing.T, o Options, parcels ...Parcel) {
+	n := 0
+	for _, base := range parcels {
+		for _, w := range []float64{0.01, 0.03, 0.1, 0.5, 2, 5, 10} {
+			for _, number := range []float64{0.05, 0.2, 1, 5, 10, 20} {
+				n++
+				p := base
+				p.Population = append([]Group(nil), base.Population...)
+				p.Updraft = w
+				scaleNumber(&p, number)
+				got := mustRun(t, p, o)
+				// the most coarse sea salt in the weakest updraft takes up all there is
+				if !got.HasPeak && !(w < 0.05 && number > 5 && got.End.Supersaturation < 1e-4) || math.Abs(got.EnergyResidual) > 1e-4 || math.Abs(got.WaterResidual) > 1e-14 ||
+					!(got.Droplets >= 0 && got.Droplets <= got.Number) || !(got.Grown <= got.Number) {
+					t.Errorf("w %g, N x %g: peak %v at %g m, droplets %g, grown %g of %g, energy %g, water %g", w, number, got.HasPeak,
+						got.Peak.Height, got.Droplets, got.Grown, got.Number, got.EnergyResidual, got.WaterResidual)
+				}
+			}
+		}
+	}
+	if n < 35 {
+		t.Errorf("%d combinations", n)
+	}
+}
+
+func TestStress(t *testing.T) { stress(t, Options{Bins: 40, Height: 1000}, continental()) }
+
+func TestLongStress(t *testing.T) {
+	needLong(t)
+	var all []Parcel
+	for _, c := range readComputed(t, "parcel.json") {
+		all = append(all, c.Input.parcel())
+	}
+	for _, o := range []Options{{}, {Transition: FluxMatching, MassAccommodation: 0.04}, {Transition: Continuum, MoistHeat: true}, {Bins: 13}} {
+		o.Height = 1500
+		stress(t, o, all...)
+	}
+}
