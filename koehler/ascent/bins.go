@@ -1,10 +1,10 @@
 package ascent
 
 import (
-	"errors"
 	"fmt"
 	"math"
 
+	"dropcrest/atmos"
 	"dropcrest/atmos/aerosol"
 	"dropcrest/koehler"
 	"dropcrest/koehler/spectrum"
@@ -30,8 +30,8 @@ const (
 	quantileSteps = 60
 )
 
-func newCohort(g Group, index, bins int) (cohort, error) {
-	c := cohort{Group: g, index: index}
+func newCohort(g Group, index, bins int, T float64) (cohort, error) {
+	c := cohort{Group: ofWater(g, T), index: index}
 	orDefault(&c.Share, 1)
 	orDefault(&c.TensionFactor, 1)
 	if err := c.check(); err != nil {
@@ -43,6 +43,20 @@ func newCohort(g Group, index, bins int) (cohort, error) {
 	}
 	c.cut(bins)
 	return c, nil
+}
+
+// ofWater takes a constant tension that is that of water at the start for what it
+// means: one that goes with the temperature.
+func ofWater(g Group, T float64) Group {
+	if g.Matter == nil {
+		return g
+	}
+	if sigma, ok := g.Matter.Tension.(solutes.ConstantTension); ok && float64(sigma) == atmos.SurfaceTension(T) {
+		p := *g.Matter
+		p.Tension = nil
+		g.Matter = &p
+	}
+	return g
 }
 
 func (c *cohort) check() error {
@@ -75,7 +89,7 @@ func (c *cohort) check() error {
 }
 
 // errNotSmooth is what a particle with kinks gets.
-var errNotSmooth = errors.New("the ascent needs a particle whose equilibrium curve is smooth: limited solubility and other kinks are not possible")
+var errNotSmooth = fmt.Errorf("%w: the particle must have a smooth equilibrium curve; limited solubility and other kinks cannot rise", ErrInput)
 
 func (c *cohort) checkMatter() error {
 	if c.Matter == nil {

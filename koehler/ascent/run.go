@@ -166,7 +166,7 @@ const (
 	leastSuper  = 3e-3
 	scaleSuper  = 20.0
 	scaleRadius = 20.0
-	scaleT      = 5.0 // K
+	scaleT      = 1.0 // K: what the energy of the parcel may lack
 )
 
 // lack is the error of the last step over what is allowed.

@@ -30,7 +30,7 @@ func newSystem(p Parcel, o Options, probes []probe) (*system, point, error) {
 	vapour := massRatio * vapourPressure / (p.Pressure - vapourPressure)
 	s.start = climateAt(p.Temperature, p.Pressure, vapour, s.rho, s.kin)
 	for i, g := range p.Population {
-		c, err := newCohort(g, i, o.Bins)
+		c, err := newCohort(g, i, o.Bins, p.Temperature)
 		if err != nil {
 			return nil, point{}, err
 		}

@@ -3,6 +3,7 @@ package ascent
 import (
 	"context"
 	"math"
+	"sort"
 
 	"gonum.org/v1/gonum/integrate/quad"
 )
@@ -85,6 +86,7 @@ func (u Updrafts) nodes() MeanDroplets {
 	to := math.Sqrt(u.Mean + updraftReach*u.Spread)
 	m := MeanDroplets{Updrafts: make([]float64, n), Weights: make([]float64, n), Droplets: make([]float64, 0, n)}
 	quad.Legendre{}.FixedLocations(m.Updrafts, m.Weights, from, to)
+	sort.Sort(byUpdraft(m)) // the nodes come in no order
 	sum := 0.0
 	for i, root := range m.Updrafts {
 		w := root * root
@@ -100,6 +102,15 @@ func (u Updrafts) nodes() MeanDroplets {
 		m.Weights[i] /= sum
 	}
 	return m
+}
+
+type byUpdraft MeanDroplets
+
+func (m byUpdraft) Len() int           { return len(m.Updrafts) }
+func (m byUpdraft) Less(i, j int) bool { return m.Updrafts[i] < m.Updrafts[j] }
+func (m byUpdraft) Swap(i, j int) {
+	m.Updrafts[i], m.Updrafts[j] = m.Updrafts[j], m.Updrafts[i]
+	m.Weights[i], m.Weights[j] = m.Weights[j], m.Weights[i]
 }
 
 // updraftOf reads the updraft off the points that has the number, linear in the
