@@ -21,6 +21,12 @@ type computedCase struct {
 	AtFixed    map[string]map[string]float64 `json:"at_fixed_bins"`
 	Kinetics   map[string]map[string]float64 `json:"other_kinetics_400_bins"`
 	Profile    []map[string]float64          `json:"profile_400_bins"`
+	Timing     []struct {
+		Bins      int `json:"bins_per_mode"`
+		Method    string
+		Tolerance float64 `json:"rtol"`
+		CPU       float64 `json:"cpu_user_s"`
+	}
 }
 
 type computedInput struct {

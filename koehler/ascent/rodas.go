@@ -9,7 +9,7 @@ const rodasGamma = 0.25
 
 // rodasA[i] are the weights of the stages before in the point of stage i+1, where
 // the last two points add the whole stage before them.
-var rodasA = [...][4]float64{
+var rodasA = [...][5]float64{
 	{1.544},
 	{0.9466785280815826, 0.2557011698983284},
 	{3.314825187068521, 2.896124015972201, 0.9986419139977817},
@@ -98,7 +98,7 @@ func (st *stepper) place(i int) {
 		st.to.T += a[s] * st.kT[s]
 		st.to.p += a[s] * st.kP[s]
 	}
-	weigh(to, from, i, a[:], &st.k)
+	weigh(to, from, i, &a, &st.k)
 }
 
 // right makes the right side of stage i in its own place.
@@ -110,34 +110,35 @@ func (st *stepper) right(i int, perStep float64) {
 		st.kT[i] += c[s] * st.kT[s]
 		st.kP[i] += c[s] * st.kP[s]
 	}
-	weigh(st.k[i], st.to.rate, i, c[:], &st.k)
+	weigh(st.k[i], st.to.rate, i, &c, &st.k)
 }
 
 // weigh makes dst the sum of base and the first n stages, each with its weight.
-func weigh(dst, base []float64, n int, w []float64, k *[rodasStages][]float64) {
+func weigh(dst, base []float64, n int, w *[5]float64, k *[rodasStages][]float64) {
 	m := len(dst)
 	base = base[:m]
 	k0, k1, k2, k3, k4 := k[0][:m], k[1][:m], k[2][:m], k[3][:m], k[4][:m]
+	w0, w1, w2, w3, w4 := w[0], w[1], w[2], w[3], w[4]
 	switch n {
 	case 1:
 		for j := range dst {
-			dst[j] = base[j] + w[0]*k0[j]
+			dst[j] = base[j] + w0*k0[j]
 		}
 	case 2:
 		for j := range dst {
-			dst[j] = base[j] + w[0]*k0[j] + w[1]*k1[j]
+			dst[j] = base[j] + w0*k0[j] + w1*k1[j]
 		}
 	case 3:
 		for j := range dst {
-			dst[j] = base[j] + w[0]*k0[j] + w[1]*k1[j] + w[2]*k2[j]
+			dst[j] = base[j] + w0*k0[j] + w1*k1[j] + w2*k2[j]
 		}
 	case 4:
 		for j := range dst {
-			dst[j] = base[j] + w[0]*k0[j] + w[1]*k1[j] + w[2]*k2[j] + w[3]*k3[j]
+			dst[j] = base[j] + w0*k0[j] + w1*k1[j] + w2*k2[j] + w3*k3[j]
 		}
 	case 5:
 		for j := range dst {
-			dst[j] = base[j] + w[0]*k0[j] + w[1]*k1[j] + w[2]*k2[j] + w[3]*k3[j] + w[4]*k4[j]
+			dst[j] = base[j] + w0*k0[j] + w1*k1[j] + w2*k2[j] + w3*k3[j] + w4*k4[j]
 		}
 	}
 }
@@ -150,7 +151,7 @@ func (st *stepper) dense(q *point, theta float64) {
 	for s := range d {
 		d[s] = theta * rest * (rodasD[0][s] + theta*rodasD[1][s])
 	}
-	weigh(q.r, st.from.r, 5, d[:], &st.k)
+	weigh(q.r, st.from.r, 5, &d, &st.k)
 	for i := range q.r {
 		q.r[i] += theta * (st.to.r[i] - st.from.r[i])
 	}
