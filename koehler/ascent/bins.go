@@ -35,11 +35,11 @@ func newCohort(g Group, index, bins int, T float64) (cohort, error) {
 	orDefault(&c.Share, 1)
 	orDefault(&c.TensionFactor, 1)
 	if err := c.check(); err != nil {
-		return c, &GroupError{index, err}
+		return c, &GroupError{Group: index, Err: err}
 	}
 	c.from, c.to = c.reach()
 	if !(c.from < c.to) {
-		return c, &GroupError{index, unusable("lower limit of the bins", -1, c.from, fmt.Sprintf("below the upper one, %.6g", c.to))}
+		return c, &GroupError{Group: index, Err: unusable("lower limit of the bins", -1, c.from, fmt.Sprintf("below the upper one, %.6g", c.to))}
 	}
 	c.cut(bins)
 	return c, nil

@@ -88,6 +88,9 @@ func Closed(m Method, p Parcel, o Options) (ClosedForm, error) {
 	if err != nil {
 		return ClosedForm{}, err
 	}
+	if len(modes) == 0 {
+		return ClosedForm{}, fmt.Errorf("%w: a closed form needs particles that take up water", ErrInput)
+	}
 	air := closedAirAt(p.Temperature, p.Pressure)
 	peak := 0.0
 	switch m {
@@ -159,7 +162,7 @@ func closedModes(p Parcel) ([]closedMode, error) {
 		orDefault(&c.Share, 1)
 		orDefault(&c.TensionFactor, 1)
 		if err := c.check(); err != nil {
-			return nil, &GroupError{i, err}
+			return nil, &GroupError{Group: i, Err: err}
 		}
 		var modes aerosol.Modes
 		switch s := g.Sizes.(type) {
@@ -168,7 +171,7 @@ func closedModes(p Parcel) ([]closedMode, error) {
 		case aerosol.Modes:
 			modes = s
 		default:
-			return nil, &GroupError{i, fmt.Errorf("%w: closed forms need lognormal modes; fit some to the bins", ErrInput)}
+			return nil, &GroupError{Group: i, Err: fmt.Errorf("%w: closed forms need lognormal modes; fit some to the bins", ErrInput)}
 		}
 		if c.isInert() {
 			continue
@@ -176,7 +179,7 @@ func closedModes(p Parcel) ([]closedMode, error) {
 		for _, m := range modes {
 			crest, err := c.medianCrest(m.Median, p.Temperature)
 			if err != nil {
-				return nil, &GroupError{i, err}
+				return nil, &GroupError{Group: i, Err: err}
 			}
 			m.Concentration *= c.Share
 			if m.Concentration > 0 {

@@ -1,6 +1,7 @@
 package ascent
 
 import (
+	"errors"
 	"math"
 	"testing"
 
@@ -85,6 +86,10 @@ func TestClosedFormsNeedModes(t *testing.T) {
 	forms, errs := ClosedForms(p, Options{})
 	if len(forms) != 3 || len(errs) != 3 || errs[0] == nil || errs[1] == nil || errs[2] == nil {
 		t.Errorf("%v %v", forms, errs)
+	}
+	p.Population = []Group{{Sizes: aerosol.Mode{Concentration: 1e8, Median: 1e-7, GSD: 2}}} // κ 0
+	if _, err := Closed(Twomey1959, p, Options{}); !errors.Is(err, ErrInput) {
+		t.Errorf("nothing that takes up water: %v", err)
 	}
 	for m := Twomey1959; m <= FountoukisNenes05; m++ {
 		if m.String() == "unknown" || m.Source() == "" || m.Limits() == "" {

@@ -27,7 +27,7 @@ func (r *run) result(p Parcel) (Result, error) {
 	for i := range r.all {
 		g, err := r.group(&r.all[i])
 		if err != nil {
-			return out, &GroupError{i, err}
+			return out, &GroupError{Group: i, Err: err}
 		}
 		out.ByGroup = append(out.ByGroup, g)
 		out.Number += g.Number
@@ -37,14 +37,27 @@ func (r *run) result(p Parcel) (Result, error) {
 	}
 	out.DropletsAtPeak = out.Droplets * dryDensity(r.peak) / r.system.dense
 	out.DropletsSTP = out.Droplets * aerosol.Air{Temperature: p.Temperature, Pressure: p.Pressure}.To(aerosol.StandardAir())
+	var err error
 	if r.opt.Sizes {
-		drops, err := r.drops()
-		if err != nil {
+		if out.Drops, err = r.drops(); err != nil {
 			return out, err
 		}
-		out.Drops = drops
+	}
+	if out.Tracers, err = r.tracers(); err != nil {
+		return out, err
 	}
 	out.Notes = r.notes(p)
+	return out, nil
+}
+
+func (r *run) tracers() (out []TracerResult, err error) {
+	for k, t := range r.opt.Follow {
+		wet, err := r.system.critical(&r.all[t.Group], r.bins+k, r.from.T)
+		if err != nil {
+			return nil, &GroupError{Group: t.Group, Err: err}
+		}
+		out = append(out, TracerResult{t, wet, r.from.r[r.bins+k] > wet})
+	}
 	return out, nil
 }
 
@@ -136,7 +149,7 @@ func (r *run) drops() ([]Drop, error) {
 		for i := c.first; i < c.last && i < r.bins; i++ {
 			wet, err := r.system.critical(c, i, r.from.T)
 			if err != nil {
-				return nil, &GroupError{c.index, err}
+				return nil, &GroupError{Group: c.index, Err: err}
 			}
 			out = append(out, Drop{c.index, 2 * r.dry[i], 2 * r.from.r[i], 2 * wet, r.number[i] * r.system.dense})
 		}
@@ -196,7 +209,7 @@ func (r *run) narrow(g *GroupResult, group int, bracket [2]float64, probes []pro
 		}
 		wet, err := r.system.critical(c, r.bins+k, r.from.T)
 		if err != nil {
-			return &GroupError{group, err}
+			return &GroupError{Group: group, Err: err}
 		}
 		if r.from.r[r.bins+k] > wet {
 			hi = pr.dry

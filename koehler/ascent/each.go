@@ -22,13 +22,8 @@ func Each[T any](ctx context.Context, first, n, workers int, work func(ctx conte
 	workers = min(workers, n-first)
 	inner, cancel := context.WithCancel(ctx)
 	defer cancel()
-
-	type job struct {
-		i    int
-		done chan T
-	}
-	jobs := make(chan job)
-	queue := make(chan job, 4*workers) // in order; its room bounds who runs ahead
+	jobs := make(chan job[T])
+	queue := make(chan job[T], 4*workers) // in order; its room bounds who runs ahead
 	var group sync.WaitGroup
 	for range workers {
 		group.Go(func() {
@@ -37,43 +32,49 @@ func Each[T any](ctx context.Context, first, n, workers int, work func(ctx conte
 			}
 		})
 	}
-	group.Go(func() {
-		defer close(jobs)
-		defer close(queue)
-		for i := first; i < n; i++ {
-			j := job{i, make(chan T, 1)}
-			select {
-			case queue <- j:
-			case <-inner.Done():
-				return
-			}
-			select {
-			case jobs <- j:
-			case <-inner.Done():
-				return
-			}
-		}
-	})
-	err := takeAll(inner, queue, func(j job) error {
-		select {
-		case result := <-j.done:
-			if err := inner.Err(); err != nil { // the result of a stopped run is none
-				return err
-			}
-			return take(j.i, result)
-		case <-inner.Done():
-			return inner.Err()
-		}
-	})
+	group.Go(func() { hand(inner, first, n, queue, jobs) })
+	err := takeAll(inner, queue, take)
 	cancel()
 	group.Wait()
 	return err
 }
 
-func takeAll[J any](ctx context.Context, queue <-chan J, take func(J) error) error {
+type job[T any] struct {
+	i    int
+	done chan T
+}
+
+// hand gives the jobs out in order until the context ends.
+func hand[T any](ctx context.Context, first, n int, to ...chan<- job[T]) {
+	for _, c := range to {
+		defer close(c)
+	}
+	for i := first; i < n; i++ {
+		j := job[T]{i, make(chan T, 1)}
+		for _, c := range to {
+			select {
+			case c <- j:
+			case <-ctx.Done():
+				return
+			}
+		}
+	}
+}
+
+// takeAll hands the results on as they come in order. The result of a stopped run
+// is none.
+func takeAll[T any](ctx context.Context, queue <-chan job[T], take func(int, T) error) error {
 	for j := range queue {
-		if err := take(j); err != nil {
-			return err
+		select {
+		case result := <-j.done:
+			if err := ctx.Err(); err != nil {
+				return err
+			}
+			if err := take(j.i, result); err != nil {
+				return err
+			}
+		case <-ctx.Done():
+			return ctx.Err()
 		}
 	}
 	return ctx.Err()

@@ -5,6 +5,7 @@ import (
 	"fmt"
 
 	"dropcrest/atmos/aerosol"
+	"dropcrest/koehler/spectrum"
 )
 
 // ErrInput is wrapped by every InputError.
@@ -40,14 +41,6 @@ func (e *StoppedError) Error() string {
 // Unwrap returns the reason.
 func (e *StoppedError) Unwrap() error { return e.Err }
 
-// A GroupError says which group of the population is not usable.
-type GroupError struct {
-	Group int // from 0
-	Err   error
-}
-
-// Error names the group, counted from 1.
-func (e *GroupError) Error() string { return fmt.Sprintf("group %d: %v", e.Group+1, e.Err) }
-
-// Unwrap returns what was wrong.
-func (e *GroupError) Unwrap() error { return e.Err }
+// GroupError says which group of the population is not usable, as in package
+// spectrum.
+type GroupError = spectrum.GroupError

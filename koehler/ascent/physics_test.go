@@ -1,7 +1,9 @@
 package ascent
 
 import (
+	"context"
 	"math"
+	"math/rand/v2"
 	"testing"
 
 	"dropcrest/atmos"
@@ -137,4 +139,34 @@ func TestLongStress(t *testing.T) {
 		o.Height = 1500
 		stress(t, o, all...)
 	}
+}
+
+// anyParcel is an ascent drawn at random from what may be asked.
+func anyParcel(r *rand.Rand) (Parcel, Options) {
+	between := func(lo, hi float64) float64 { return lo * math.Pow(hi/lo, r.Float64()) }
+	p := Parcel{Temperature: 240 + 65*r.Float64(), Pressure: 40000 + 62000*r.Float64(), Humidity: 0.5 + 0.5*r.Float64(), Updraft: between(0.005, 20)}
+	for range 1 + r.IntN(3) {
+		p.Population = append(p.Population, Group{Kappa: between(0.001, 1.5),
+			Sizes: aerosol.Mode{Concentration: between(1e6, 5e10), Median: between(8e-9, 1.5e-6), GSD: 1.1 + 1.6*r.Float64()}})
+	}
+	o := Options{Bins: 5 + r.IntN(80), MassAccommodation: between(0.01, 1), Transition: Transition(r.IntN(3)), MoistHeat: r.IntN(2) == 0, Height: 1200}
+	return p, o
+}
+
+func randomAscents(t *testing.T, n int) {
+	r := rand.New(rand.NewPCG(20261201, 6))
+	for i := range n {
+		p, o := anyParcel(r)
+		got, err := Run(context.Background(), p, o)
+		if err != nil || math.Abs(got.EnergyResidual) > 1e-4 || !(got.Droplets >= 0 && got.Droplets <= got.Number*(1+1e-12)) || got.Steps > 3000 {
+			t.Errorf("%d: %v, energy %g, droplets %g of %g, %d steps: %+v %+v", i, err, got.EnergyResidual, got.Droplets, got.Number, got.Steps, p, o)
+		}
+	}
+}
+
+func TestRandomAscents(t *testing.T) { randomAscents(t, 60) }
+
+func TestLongRandomAscents(t *testing.T) {
+	needLong(t)
+	randomAscents(t, 5000)
 }

@@ -21,7 +21,7 @@ func FromSpectrum(p spectrum.Population) (groups []Group, partOf []int, err erro
 	for i, g := range p {
 		first := len(groups)
 		if groups, err = appendComposition(groups, Group{Sizes: g.Sizes, Share: g.Share}, g.Of); err != nil {
-			return nil, nil, &GroupError{i, err}
+			return nil, nil, &GroupError{Group: i, Err: err}
 		}
 		for range groups[first:] {
 			partOf = append(partOf, i)

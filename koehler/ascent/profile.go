@@ -31,7 +31,7 @@ func (r *run) prepareProfile() error {
 		for i := c.first; i < c.last; i++ {
 			wet, err := r.system.critical(c, i, r.startT)
 			if err != nil {
-				return &GroupError{c.index, err}
+				return &GroupError{Group: c.index, Err: err}
 			}
 			p.critical[i] = wet
 		}

@@ -32,7 +32,8 @@ type Result struct {
 	EnergyResidual float64 // of ∫(c_p dT + g dz - L dw_l) over g z, at the end
 
 	Profile []Row
-	Drops   []Drop // at the end, where Options.Sizes asks for them
+	Tracers []TracerResult // of Options.Follow
+	Drops   []Drop         // at the end, where Options.Sizes asks for them
 	Notes   []atmos.Note
 	Stats
 }
@@ -54,6 +55,13 @@ type Row struct {
 	MeanRadius   float64   // of those, by number, m; 0 where there are none
 	SpreadRadius float64   // standard deviation of their radius, m
 	Followed     []float64 // wet radii of Options.Follow, m
+}
+
+// TracerResult is what became of a followed size.
+type TracerResult struct {
+	Tracer
+	CriticalRadius float64 // m, wet, at the temperature of the end
+	Grown          bool    // past it at the end
 }
 
 // Drop is the drops of one bin at the end.

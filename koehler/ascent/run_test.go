@@ -226,6 +226,9 @@ func TestResult(t *testing.T) {
 	if !(last.Droplets > 0.5*got.Grown && last.MeanRadius > 3e-6 && last.SpreadRadius < last.MeanRadius) {
 		t.Errorf("last row %+v", last)
 	}
+	if a, b := got.Tracers[0], got.Tracers[1]; a.Grown || !b.Grown || !(a.CriticalRadius < b.CriticalRadius) {
+		t.Errorf("followed: %+v", got.Tracers)
+	}
 	number := 0.0
 	for _, d := range got.Drops {
 		number += d.Number
@@ -237,6 +240,23 @@ func TestResult(t *testing.T) {
 	// soot of 80 nm has its crest at 2.7 %: none
 	if g := got.ByGroup[2]; g.Droplets > 0.01*g.Number || g.Grown != 0 {
 		t.Errorf("soot: %+v", g)
+	}
+}
+
+// Any humidity up to 1 makes a start: the peak falls a little as it rises, as large
+// particles are larger from the beginning.
+func TestStartHumidity(t *testing.T) {
+	last := math.Inf(1)
+	for _, rh := range []float64{0.2, 0.6, 0.9, 0.99, 0.9999, 1} {
+		p := continental()
+		p.Humidity = rh
+		got := mustRun(t, p, Options{Height: 3000, StopAtPeak: true, Bins: 100})
+		near(t, "start", got.Number, 1500e6, 1e-3)
+		if s := got.Peak.Supersaturation; !(s < last*1.001 && s > 0.0022) || math.Abs(got.EnergyResidual) > 1e-4 {
+			t.Errorf("start at %g: peak %g after %g, energy %g", rh, s, last, got.EnergyResidual)
+		} else {
+			last = s
+		}
 	}
 }
 

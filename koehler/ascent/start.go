@@ -43,7 +43,7 @@ func newSystem(p Parcel, o Options, probes []probe) (*system, point, error) {
 	q.T, q.p = p.Temperature, p.Pressure
 	for i := range s.cohorts {
 		if err := s.settle(&q, &s.cohorts[i], p.Humidity); err != nil {
-			return nil, q, &GroupError{s.cohorts[i].index, err}
+			return nil, q, &GroupError{Group: s.cohorts[i].index, Err: err}
 		}
 	}
 	liquid := 0.0
@@ -78,7 +78,7 @@ func (s *system) fill(probes []probe) error {
 		c.first = len(s.dry)
 		kept := c
 		if kept.isInert() {
-			return &GroupError{pr.group, unusable("followed dry diameter", -1, pr.dry, "of a group that takes up water")}
+			return &GroupError{Group: pr.group, Err: unusable("followed dry diameter", -1, pr.dry, "of a group that takes up water")}
 		}
 		s.add(&c, pr.dry, 0)
 		c.last = len(s.dry)
@@ -110,7 +110,7 @@ func (s *system) prepare() error {
 			p := c.particle(2*s.dry[i], s.startT)
 			ready, err := p.Prepare()
 			if err != nil {
-				return &GroupError{c.index, err}
+				return &GroupError{Group: c.index, Err: err}
 			}
 			s.prepared[i], s.hasTaut[i] = ready, p.Tension != nil
 		}

@@ -127,7 +127,9 @@ func (m MeanDroplets) updraftOf(number float64) float64 {
 }
 
 // Droplets returns the mean droplet number of the parcel over the updrafts, whose own
-// updraft does not matter. Each ascent ends at its peak.
+// updraft does not matter. Each ascent ends at its peak; the weakest updrafts, which
+// weigh least, may not come to one, and count by the highest supersaturation they
+// come to.
 func (u Updrafts) Droplets(ctx context.Context, workers int, p Parcel, o Options) (MeanDroplets, error) {
 	if o.Height == 0 {
 		o.Height = farthestPeak
@@ -137,9 +139,6 @@ func (u Updrafts) Droplets(ctx context.Context, workers int, p Parcel, o Options
 		q := p
 		q.Updraft = w
 		r, err := Run(ctx, q, o)
-		if err == nil && !r.HasPeak {
-			err = errNoPeak
-		}
 		return r.Droplets, err
 	})
 }
