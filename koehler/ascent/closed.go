@@ -48,7 +48,7 @@ func (m Method) Source() string {
 func (m Method) Limits() string {
 	switch m {
 	case Twomey1959:
-		return "A power law for the whole spectrum, every drop grown from its activation on as if it had no size before: no kinetic limit, accommodation of 1, no haze water; poor where the spectrum bends within the activated range."
+		return "A power law for the whole spectrum, every drop grown from its activation on as if it had no size before: no kinetic limit, accommodation of 1, no haze water. It bounds the peak from above for a true power law only; where the spectrum bends, the touching power law lies above it and the peak comes out too low."
 	case AbdulRazzakGhan00:
 		return "Fitted to a parcel model; diffusivity without kinetic correction, accommodation of 1; too few droplets where many small particles compete, with giant particles beside small ones, or in weak updraft."
 	case FountoukisNenes05:

@@ -69,9 +69,9 @@ func ExampleRun_convergence() {
 	//  200 bins: peak -1e-05, droplets -5e-06
 	//  400 bins: peak -3e-06, droplets -1e-06
 	//  800 bins: peak -6e-07, droplets -3e-07
-	// 1e-04: peak +3e-04, droplets +2e-04, energy -2e-05
+	// 1e-04: peak +1e-04, droplets +6e-05, energy -2e-05
 	// 1e-05: peak -4e-06, droplets -2e-06, energy -2e-06
-	// 1e-06: peak -1e-06, droplets -5e-07, energy -2e-07
+	// 1e-06: peak -8e-07, droplets -4e-07, energy -2e-07
 	// 1e-07: peak -6e-08, droplets -3e-08, energy -1e-08
 }
 

@@ -44,15 +44,16 @@ func rise(ctx context.Context, p Parcel, o Options, probes []probe) (*run, error
 // run is one ascent under way.
 type run struct {
 	*stepper
-	opt     Options
-	time    float64 // s, of st.from
-	last    float64 // s, of the end
-	peak    State
-	hasPeak bool
-	atPeak  bool    // the step ends at a peak
-	energy  float64 // residual so far, J per kg of dry air
-	stats   Stats
-	profile profile
+	opt                Options
+	time               float64 // s, of st.from
+	last               float64 // s, of the end
+	peak               State
+	hasPeak            bool
+	lastStep, lastLack float64 // of the last accepted step
+	atPeak             bool    // the step ends at a peak
+	energy             float64 // residual so far, J per kg of dry air
+	stats              Stats
+	profile            profile
 }
 
 const (
@@ -133,6 +134,11 @@ func (r *run) step(h, growth float64) (taken, next float64, err error) {
 		r.stats.Rejected++
 		return 0, h / math.Max(factor, 1.01), nil
 	}
+	if r.lastLack > 0 { // as the error has grown since the last step, so it will
+		trend := r.lastStep / h * math.Pow(lack*lack/r.lastLack, 0.25) / safety
+		factor = math.Max(factor, math.Min(mostShrink, trend))
+	}
+	r.lastStep, r.lastLack = h, math.Max(lack, 0.01)
 	if q := &r.to; !(q.T > coldest && q.T < warmest) {
 		return 0, h, ErrCold
 	}

@@ -9,7 +9,8 @@ import "math"
 //	s^(k+2) = (α w)^(3/2)/(2π ρ_w γ G^(3/2) c k B(k/2, 3/2))
 //
 // with Euler's beta function B; k above 0. It bounds the ascent from above when the
-// growth coefficient is the same and nothing delays growth.
+// growth coefficient is the same and nothing delays growth, if the spectrum truly is
+// that power law.
 func TwomeyPower(c, k, T, p, w float64) float64 {
 	a := closedAirAt(T, p)
 	return math.Pow(a.twomeySide(w)/(c*kBeta(k)), 1/(k+2))
