@@ -45,7 +45,7 @@ type Transition int
 
 const (
 	FuchsSutugin Transition = iota // Fuchs & Sutugin 1970, λ_v = 3 D_v/c̄
-	FluxMatching                   // fluxes matched at the surface, as in Pruppacher & Klett without the jump length
+	FluxMatching                   // fluxes matched at the surface, as in Pruppacher & Klett without the jump length (from memory)
 	Continuum                      // no correction
 )
 
