@@ -6,6 +6,8 @@ import (
 	"testing"
 
 	"dropcrest/atmos/aerosol"
+	"dropcrest/koehler"
+	"dropcrest/solutes"
 )
 
 func TestClosedFormsAgainstComputed(t *testing.T) {
@@ -94,6 +96,38 @@ func TestClosedFormsNeedModes(t *testing.T) {
 	for m := Twomey1959; m <= FountoukisNenes05; m++ {
 		if m.String() == "unknown" || m.Source() == "" || m.Limits() == "" {
 			t.Errorf("method %d says too little of itself", m)
+		}
+	}
+}
+
+// Matter of κ gives the closed forms of κ, but for its exact crest.
+func TestClosedFormsOfMatter(t *testing.T) {
+	p := continental()
+	want, _ := ClosedForms(p, Options{})
+	for i := range p.Population {
+		p.Population[i].Matter = &koehler.Particle{Solution: solutes.Kappa(p.Population[i].Kappa)}
+	}
+	got, errs := ClosedForms(p, Options{})
+	for i := range got {
+		if errs[i] != nil {
+			t.Fatal(errs[i])
+		}
+		near(t, got[i].Method.String(), got[i].Droplets, want[i].Droplets, 1e-2)
+	}
+}
+
+// The forms go on where every particle activates, or hardly one.
+func TestClosedFormsAtTheEnds(t *testing.T) {
+	for _, w := range []float64{1e-3, 50} {
+		for _, n := range []float64{1e5, 1e11} {
+			p := Parcel{Temperature: 283.15, Pressure: 90000, Updraft: w, Population: []Group{
+				{Sizes: aerosol.Mode{Concentration: n, Median: 100e-9, GSD: 1.3}, Kappa: 0.5}}}
+			forms, errs := ClosedForms(p, Options{})
+			for i, f := range forms {
+				if errs[i] != nil || !(f.Peak > 0 && f.Peak < 10) || !(f.Droplets >= 0 && f.Droplets <= n*(1+1e-12)) {
+					t.Errorf("w %g, N %g: %+v, %v", w, n, f, errs[i])
+				}
+			}
 		}
 	}
 }
