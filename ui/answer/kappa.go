@@ -44,13 +44,13 @@ func kappaIsLive(s scenario.Scenario) bool {
 // tables. Measurements of growth and of activation are evaluated apart.
 type implied struct {
 	asked  scenario.Scenario
-	points []measurement
+	points []kappaPoint
 	means  []kindMean // at most one of activation and one of growth
 	notes  []atmos.Note
 }
 
-// measurement is one point, as it was given and with what it says.
-type measurement struct {
+// kappaPoint is one point, as it was given and with what it says.
+type kappaPoint struct {
 	scenario.Point
 	name     string
 	water    kappa.Convention

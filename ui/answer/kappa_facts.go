@@ -154,14 +154,14 @@ func noKappa() KappaRow {
 }
 
 // wasStopped reports whether the work ended before all trials of the point.
-func (m *measurement) wasStopped(trials int) bool {
+func (m *kappaPoint) wasStopped(trials int) bool {
 	if trials == 0 || m.Err != nil || len(m.Linear.Contributions) == 0 {
 		return false
 	}
 	return m.MonteCarlo == nil || m.MonteCarlo.Stopped
 }
 
-func (m *measurement) row() PointRow {
+func (m *kappaPoint) row() PointRow {
 	gap := Number(math.NaN())
 	r := PointRow{Name: m.name, Method: m.measured.Method.String(), Dry: Number(m.Dry.Value), Volume: Number(m.volumeDiameter()),
 		Supersaturation: gap, Growth: gap, Humidity: gap, WaterRow: waterRow(m.water), KappaRow: noKappa(), WithoutKelvin: Number(m.withoutKelvin)}
@@ -180,7 +180,7 @@ func (m *measurement) row() PointRow {
 	return r
 }
 
-func (m *measurement) spreadRow() *SpreadRow {
+func (m *kappaPoint) spreadRow() *SpreadRow {
 	p := m.spread
 	if p == nil {
 		return nil

@@ -67,7 +67,7 @@ func (k *implied) sizes() (lo, hi float64) {
 }
 
 // plotted is the point in the plane, with one standard uncertainty to both sides.
-func (m *measurement) plotted() (figure.Point, bool) {
+func (m *kappaPoint) plotted() (figure.Point, bool) {
 	dry := m.volumeDiameter()
 	toVolume := dry / m.Dry.Value
 	p := figure.Point{X: 1e9 * dry}

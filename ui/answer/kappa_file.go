@@ -35,7 +35,7 @@ type pointsFile struct {
 // guessed from its name, which carries the unit: dry_diameter_nm,
 // supersaturation_percent, and beside them supersaturation_relative_uncertainty_percent;
 // a cell may also be written as an option is, 80nm±3%rel.
-func readPoints(env Env, s scenario.Scenario) ([]measurement, []atmos.Note, error) {
+func readPoints(env Env, s scenario.Scenario) ([]kappaPoint, []atmos.Note, error) {
 	f := &pointsFile{name: plain.Clean(s.PointsFile), asked: s}
 	if err := f.open(env); err != nil {
 		return nil, nil, err
@@ -44,7 +44,7 @@ func readPoints(env Env, s scenario.Scenario) ([]measurement, []atmos.Note, erro
 	if err != nil {
 		return nil, nil, err
 	}
-	var points []measurement
+	var points []kappaPoint
 	for {
 		cells, err := f.next()
 		if errors.Is(err, io.EOF) {
@@ -139,8 +139,8 @@ func (f *pointsFile) next() ([]string, error) {
 }
 
 // point makes a measurement of a row.
-func (f *pointsFile) point(cells []string, index int) (measurement, error) {
-	m := measurement{name: defaultName(index)}
+func (f *pointsFile) point(cells []string, index int) (kappaPoint, error) {
+	m := kappaPoint{name: defaultName(index)}
 	s := f.asked.Clone()
 	s.Measurements = []scenario.Point{{Plateau: 1}}
 	for i, c := range f.columns {

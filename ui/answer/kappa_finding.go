@@ -42,7 +42,7 @@ func (k *implied) withoutKappa() int {
 	return n
 }
 
-func (k *implied) findingOfOne(m *measurement) []string {
+func (k *implied) findingOfOne(m *kappaPoint) []string {
 	if m.Err != nil {
 		return []string{"This measurement has no κ: " + m.problem() + "."}
 	}
@@ -63,7 +63,7 @@ func (k *implied) findingOfOne(m *measurement) []string {
 }
 
 // spreadWords say what the activation curve tells about the particles.
-func (m *measurement) spreadWords() string {
+func (m *kappaPoint) spreadWords() string {
 	p := m.spread
 	if p == nil {
 		return ""

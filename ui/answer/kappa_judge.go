@@ -52,31 +52,31 @@ const mostNamed = 3
 
 // judgePoints says of which points what must be said.
 func (k *implied) judgePoints() {
-	k.noteOn("no-kappa", "no κ", func(m *measurement) string {
+	k.noteOn("no-kappa", "no κ", func(m *kappaPoint) string {
 		if m.Err == nil {
 			return ""
 		}
 		return m.problem()
 	})
-	k.noteOn("no-growth", "no growth", func(m *measurement) string {
+	k.noteOn("no-growth", "no growth", func(m *kappaPoint) string {
 		if m.Err != nil || !m.isGrowth() || m.Growth.Value != 1 {
 			return ""
 		}
 		return "the particle took up no water, so that κ is 0 and its uncertainty only counts upwards"
 	})
-	k.noteOn("plateau-above-one", "a plateau above 1", func(m *measurement) string {
+	k.noteOn("plateau-above-one", "a plateau above 1", func(m *kappaPoint) string {
 		if m.Plateau <= 1 || m.isGrowth() {
 			return ""
 		}
 		return "more particles than there are cannot activate, so that the efficiency of the counters was not corrected"
 	})
-	k.noteOn("curve-unused", "no use for an activation curve", func(m *measurement) string {
+	k.noteOn("curve-unused", "no use for an activation curve", func(m *kappaPoint) string {
 		if !m.isGrowth() || m.Width == 0 && m.Plateau == 1 {
 			return ""
 		}
 		return "its width and plateau belong to a supersaturation and not to a growth factor"
 	})
-	k.noteOn("trials-without-kappa", "trials without κ", func(m *measurement) string {
+	k.noteOn("trials-without-kappa", "trials without κ", func(m *kappaPoint) string {
 		d := m.MonteCarlo
 		if m.Err != nil || d == nil || d.Above+d.Below == 0 {
 			return ""
@@ -84,7 +84,7 @@ func (k *implied) judgePoints() {
 		return fmt.Sprintf("%s of the trials (%d beyond any κ, %d below 0); quantiles count them, the mean takes the latter as 0 and leaves the former out",
 			shareWords(float64(d.Above+d.Below)/float64(d.Trials)), d.Above, d.Below)
 	})
-	k.noteOn("linear-differs", "a skewed distribution", func(m *measurement) string {
+	k.noteOn("linear-differs", "a skewed distribution", func(m *kappaPoint) string {
 		if m.Err != nil || m.MonteCarlo == nil || m.MonteCarlo.Agrees {
 			return ""
 		}
@@ -93,7 +93,7 @@ func (k *implied) judgePoints() {
 }
 
 // noteOn makes one note on all points that what has something to say of.
-func (k *implied) noteOn(code, subject string, what func(*measurement) string) {
+func (k *implied) noteOn(code, subject string, what func(*kappaPoint) string) {
 	var named []string
 	more := 0
 	for i := range k.points {
@@ -121,7 +121,7 @@ func (k *implied) noteOn(code, subject string, what func(*measurement) string) {
 }
 
 // problem is why a point has no κ.
-func (m *measurement) problem() string {
+func (m *kappaPoint) problem() string {
 	var none *koehler.NoSolutionError
 	if errors.As(m.Err, &none) {
 		return none.Reason

@@ -33,7 +33,7 @@ func newImplied(env Env, s scenario.Scenario) (*implied, error) {
 			if err := checkMeasurement(p); err != nil {
 				return nil, &InputError{string(pathInPoint(i, err.Path)), err.Error()}
 			}
-			k.points = append(k.points, measurement{Point: p, name: defaultName(i), water: conventionOf(s)})
+			k.points = append(k.points, kappaPoint{Point: p, name: defaultName(i), water: conventionOf(s)})
 		}
 	}
 	for i := range k.points {
@@ -56,7 +56,7 @@ func newImplied(env Env, s scenario.Scenario) (*implied, error) {
 // hasOwnWater reports whether the water of a point is not that of the question.
 func (k *implied) hasOwnWater() bool {
 	asked := conventionOf(k.asked)
-	return slices.ContainsFunc(k.points, func(m measurement) bool { return m.water != asked })
+	return slices.ContainsFunc(k.points, func(m kappaPoint) bool { return m.water != asked })
 }
 
 // KappaGiven takes away what the first measurement has by default, or of a file, when
@@ -108,7 +108,7 @@ func conventionOf(s scenario.Scenario) kappa.Convention {
 
 // asMeasured is the point as the library takes it. The classifier's air is that of
 // the Curve page: the temperature of the particle and one standard atmosphere.
-func (m *measurement) asMeasured(s scenario.Scenario) kappa.Point {
+func (m *kappaPoint) asMeasured(s scenario.Scenario) kappa.Point {
 	p := kappa.Point{
 		Name: m.name, Dry: measured(m.Dry),
 		Temperature: kappa.Measured{Value: m.water.Temperature, Systematic: s.TemperatureUncertainty},
@@ -131,10 +131,10 @@ func measured(u scenario.Uncertain) kappa.Measured {
 }
 
 // isGrowth reports whether κ is from a growth factor.
-func (m *measurement) isGrowth() bool { return m.measured.Method == kappa.GrowthRate }
+func (m *kappaPoint) isGrowth() bool { return m.measured.Method == kappa.GrowthRate }
 
 // volumeDiameter is the volume-equivalent dry diameter in m.
-func (m *measurement) volumeDiameter() float64 {
+func (m *kappaPoint) volumeDiameter() float64 {
 	p := m.measured
 	if p.Shape.Value == 0 {
 		return p.Dry.Value
@@ -143,7 +143,7 @@ func (m *measurement) volumeDiameter() float64 {
 }
 
 // fill adds what stands beside κ.
-func (m *measurement) fill() {
+func (m *kappaPoint) fill() {
 	m.withoutKelvin = math.NaN()
 	if m.Err != nil {
 		return
@@ -158,7 +158,7 @@ func (m *measurement) fill() {
 }
 
 // fillSpread adds what the width and the plateau of an activation curve say.
-func (m *measurement) fillSpread() {
+func (m *kappaPoint) fillSpread() {
 	if m.Width == 0 && m.Plateau == 1 {
 		return
 	}

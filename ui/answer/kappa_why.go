@@ -19,7 +19,7 @@ func (k *implied) why() []string {
 		out = append(out, "From activation: κ is the one whose equilibrium curve has its maximum at the measured supersaturation, found exactly. "+
 			"The classic approximation is 4 A³/(27 Dd³ ln² S), equation 10 of the same source: it takes the drop as very dilute and is too high, the more so the smaller and the less hygroscopic the particle.")
 	}
-	if slices.ContainsFunc(k.points, func(m measurement) bool { return m.spread != nil }) {
+	if slices.ContainsFunc(k.points, func(m kappaPoint) bool { return m.spread != nil }) {
 		out = append(out, "The spread of κ between particles is the width of the activation curve in ln D, that of the classifier taken out in quadrature, times the slope "+
 			"of ln κ against ln D at that supersaturation, which is nearly 3. A plateau below 1 is a share of particles that never activate, or an efficiency that was not corrected.")
 	}
