@@ -6,6 +6,7 @@ import (
 	"context"
 	"io"
 	"io/fs"
+	"slices"
 
 	"dropcrest/atmos"
 	"dropcrest/solutes"
@@ -50,6 +51,11 @@ type Question struct {
 	// Frame is the frame of a figure in h rows, as like the last one as may be; nil:
 	// figure.Fit.
 	Frame func(s scenario.Scenario, f figure.Figure, last figure.Frame, h int) (figure.Frame, bool)
+	// Always are keys of inputs that the question looks at whatever the other values
+	// are, though others do so only then.
+	Always []string
+	// Given settles what follows from which options were given; nil: nothing.
+	Given func(s *scenario.Scenario, given func(option string) bool)
 	// Formats are the forms besides text, csv, json and figure files.
 	Formats []string
 	// Tabled are the keys of the tables that the text form shows; nil: none.
@@ -58,6 +64,12 @@ type Question struct {
 
 // IsLive reports whether the question is answered at once for that scenario.
 func (q Question) IsLive(s scenario.Scenario) bool { return q.Live == nil || q.Live(s) }
+
+// Uses reports whether the question looks at the input with the other values as
+// they are.
+func (q Question) Uses(in scenario.Input) bool {
+	return in.Used() || slices.Contains(q.Always, in.Key())
+}
 
 // FrameOf is the frame of a figure of the question's answer.
 func (q Question) FrameOf(s scenario.Scenario, f figure.Figure, last figure.Frame, h int) (figure.Frame, bool) {

@@ -18,6 +18,7 @@ func counterQuestion() Question {
 		Says:      "Which supersaturation did the CCN counter really have?",
 		Groups:    counterGroups,
 		Live:      counterIsLive,
+		Always:    []string{"shape-factor"},
 		Statement: counterStatement,
 		Ask:       askCounter,
 	}

@@ -17,6 +17,7 @@ func kappaQuestion() Question {
 		Says:      "Which hygroscopicity do these measurements imply, and how sure is it?",
 		Groups:    kappaGroups,
 		Live:      kappaIsLive,
+		Given:     KappaGiven,
 		Statement: kappaStatement,
 		Ask:       askKappa,
 	}

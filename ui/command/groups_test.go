@@ -2,6 +2,7 @@ package command
 
 import (
 	"slices"
+	"strings"
 	"testing"
 
 	"dropcrest/ui/answer"
@@ -30,14 +31,16 @@ func TestEveryInputIsAnOption(t *testing.T) {
 		}
 		var own []string
 		for _, g := range q.Groups {
-			for _, key := range g.Keys {
-				if slices.Contains(own, key) {
-					t.Errorf("%s: %s stands twice", q.Key, key)
+			for option, path := range g.Options() {
+				if slices.Contains(own, string(path)) {
+					t.Errorf("%s: %s stands twice", q.Key, path)
 				}
-				if cmd.Flags().Lookup(key) == nil {
-					t.Errorf("dropcrest %s has no --%s", q.Key, key)
+				if cmd.Flags().Lookup(option) == nil {
+					t.Errorf("dropcrest %s has no --%s", q.Key, option)
 				}
-				own = append(own, key)
+				if !strings.Contains(string(path), "[") { // no input of a row
+					own = append(own, string(path))
+				}
 			}
 		}
 		placed = append(placed, own...)

@@ -43,7 +43,7 @@ func openMeasured(name string) (io.ReadCloser, error) {
 }
 
 // questionError names the option that an error of the question belongs to.
-func questionError(err error, s scenario.Scenario) error {
+func questionError(err error, q answer.Question, s scenario.Scenario) error {
 	var in *answer.InputError
 	var open *openError
 	var content *fieldfile.Error
@@ -51,6 +51,9 @@ func questionError(err error, s scenario.Scenario) error {
 	switch {
 	case errors.As(err, &in):
 		key = in.Input
+		if option, ok := q.OptionOf(scenario.Path(in.Input)); ok {
+			key = option
+		}
 	case errors.As(err, &open):
 		key = fileOption(open.name, s)
 	case errors.As(err, &content):

@@ -135,21 +135,20 @@ func (o *options) inputs(cmd *cobra.Command, q answer.Question) {
 	s := scenario.Default()
 	lists := q.Lists(&s)
 	for _, group := range q.Groups {
-		for _, key := range group.Keys {
-			if in, ok := scenario.Find(&s, scenario.Path(key)); ok {
-				o.input(cmd, group.Title, in)
+		for option, path := range group.Options() {
+			if in, ok := scenario.Find(&s, path); ok {
+				o.input(cmd, group.Title, option, in)
 			}
 			for _, l := range lists {
-				if l.Key() == key {
-					o.list(cmd, group.Title, l)
+				if scenario.Path(l.Key()) == path {
+					o.list(cmd, group.Title, option, l)
 				}
 			}
 		}
 	}
 }
 
-func (o *options) input(cmd *cobra.Command, group string, in scenario.Input) {
-	key := in.Key()
+func (o *options) input(cmd *cobra.Command, group, key string, in scenario.Input) {
 	o.set.Var(&late{o, key, placeholder(in)}, key, inputHelp(in))
 	o.group(key, group)
 	if isFile(in) {
@@ -162,8 +161,7 @@ func (o *options) input(cmd *cobra.Command, group string, in scenario.Input) {
 	_ = cmd.RegisterFlagCompletionFunc(key, cobra.FixedCompletions(words, cobra.ShellCompDirectiveNoFileComp))
 }
 
-func (o *options) list(cmd *cobra.Command, group string, l scenario.RowList) {
-	key := l.Key()
+func (o *options) list(cmd *cobra.Command, group, key string, l scenario.RowList) {
 	o.set.Var(&late{o, key, "ROW"}, key, l.Help()+" May be given several times. Default: "+l.Show(scenario.Style{})+".")
 	o.group(key, group)
 	if l.Len() > 0 && isFile(l.Row(0)...) {
@@ -208,7 +206,7 @@ func (o *options) scenario(w world) (scenario.Scenario, []atmos.Note, error) {
 	}
 	fresh := map[string]bool{}
 	for _, g := range o.given {
-		if err := apply(&s, g, !fresh[g.key]); err != nil {
+		if err := apply(&s, o.path(g.key), g.text, !fresh[g.key]); err != nil {
 			return s, nil, misused("--%s: %v", g.key, err)
 		}
 		fresh[g.key] = true
@@ -216,20 +214,39 @@ func (o *options) scenario(w world) (scenario.Scenario, []atmos.Note, error) {
 	if err := o.implied(&s, fresh); err != nil {
 		return s, nil, err
 	}
+	if o.question.Given != nil {
+		o.question.Given(&s, func(option string) bool { return fresh[option] })
+	}
 	if s.WaterActivity == "kappa" && fresh["kappa"] && s.Kappa.Word == "" && !fresh["component"] && o.fromFile == "" {
 		s.Components = nil // kappa alone says what the particle is made of
 	}
 	if wrong := scenario.Check(&s); len(wrong) > 0 {
-		return s, nil, misused("--%s: %v", wrong[0].Path, wrong[0])
+		return s, nil, misused("--%s: %v", o.option(wrong[0].Path), wrong[0])
 	}
 	return s, o.unused(&s), nil
 }
 
-func apply(s *scenario.Scenario, g setting, first bool) error {
-	if in, ok := scenario.Find(s, scenario.Path(g.key)); ok {
-		return in.SetWithUnit(g.text)
+// path is the input or the list of rows that an option sets.
+func (o *options) path(option string) scenario.Path {
+	if p, ok := o.question.PathOf(option); ok {
+		return p
 	}
-	return scenario.SetRow(s, g.key, g.text, first)
+	return scenario.Path(option)
+}
+
+// option is the option that sets an input, or its path where there is none.
+func (o *options) option(p scenario.Path) string {
+	if option, ok := o.question.OptionOf(p); ok {
+		return option
+	}
+	return string(p)
+}
+
+func apply(s *scenario.Scenario, p scenario.Path, text string, first bool) error {
+	if in, ok := scenario.Find(s, p); ok {
+		return in.SetWithUnit(text)
+	}
+	return scenario.SetRow(s, string(p), text, first)
 }
 
 // unused are notes on options that were given and do not count.
@@ -237,8 +254,8 @@ func (o *options) unused(s *scenario.Scenario) []atmos.Note {
 	var notes []atmos.Note
 	said := map[string]bool{}
 	for _, g := range o.given {
-		in, ok := scenario.Find(s, scenario.Path(g.key))
-		if said[g.key] || ok && in.Used() || !ok && countsIn(g.key, s) {
+		in, ok := scenario.Find(s, o.path(g.key))
+		if said[g.key] || ok && o.question.Uses(in) || !ok && countsIn(g.key, s) {
 			continue
 		}
 		said[g.key] = true
@@ -248,7 +265,7 @@ func (o *options) unused(s *scenario.Scenario) []atmos.Note {
 		return notes
 	}
 	for _, in := range o.question.Inputs(s) {
-		if !in.Used() && !in.IsDefault() && !said[string(in.Path())] {
+		if !o.question.Uses(in) && !in.IsDefault() && !said[string(in.Path())] {
 			notes = append(notes, unusedNote(in.Path(), "The value of "+string(in.Path())+" in the scenario file"))
 		}
 	}

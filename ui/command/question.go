@@ -98,7 +98,7 @@ func (w world) ask(ctx context.Context, q answer.Question, s scenario.Scenario, 
 		return out.problem(out.err)
 	}
 	if err != nil {
-		return questionError(err, s)
+		return questionError(err, q, s)
 	}
 	a = withNotes(a, notes)
 	sheet := form.Sheet{Question: q, Scenario: s, Answer: a, Version: version(), Table: o.table, Picture: o.picture, Made: time.Now(),

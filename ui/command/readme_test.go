@@ -82,10 +82,10 @@ func optionRows() []string {
 	var said []string
 	for _, q := range answer.Questions() {
 		for _, g := range q.Groups {
-			for _, key := range g.Keys {
-				if !slices.Contains(said, key) {
-					said = append(said, key)
-					rows = append(rows, optionRow(&s, key))
+			for option, path := range g.Options() {
+				if name := option + " " + string(path); !slices.Contains(said, name) {
+					said = append(said, name)
+					rows = append(rows, optionRow(&s, option, path))
 				}
 			}
 		}
@@ -93,10 +93,10 @@ func optionRows() []string {
 	return rows
 }
 
-func optionRow(s *scenario.Scenario, key string) string {
+func optionRow(s *scenario.Scenario, key string, path scenario.Path) string {
 	var of []string
 	for _, q := range answer.Questions() {
-		if q.LooksAt(key) {
+		if option, ok := q.OptionOf(path); ok && option == key {
 			of = append(of, q.Key)
 		}
 	}
@@ -104,11 +104,11 @@ func optionRow(s *scenario.Scenario, key string) string {
 		return fmt.Sprintf("| `--%s` | %s | %s | %s |", key, what, shown, strings.Join(of, ", "))
 	}
 	for _, l := range scenario.Lists(s) {
-		if l.Key() == key {
+		if scenario.Path(l.Key()) == path {
 			return row(l.Says()+", may be given several times", l.Show(scenario.Style{}))
 		}
 	}
-	in, _ := scenario.Find(s, scenario.Path(key))
+	in, _ := scenario.Find(s, path)
 	what := in.Says()
 	if r := in.Range(); r != "" {
 		what += ": " + r
