@@ -14,6 +14,9 @@ type CounterFacts struct {
 	LeftOut []LeftOutRow   `json:"left_out"`
 	Columns []string       `json:"columns"` // column=quantity, as the files were understood
 	Record  CalibrationRow `json:"calibration"`
+
+	// File is all of the calibration in SI, which the Spectrum question reads.
+	File counter.Calibration `json:"calibration_file"`
 }
 
 // ScanRow is one scan.
@@ -94,6 +97,7 @@ func (c *calibrated) facts() CounterFacts {
 	} else {
 		f.Fault = &c.LineFault
 	}
+	f.File = c.Calibration
 	f.Record = CalibrationRow{Curve: c.Curve, Standards: []StandardRow{}, Pressure: positive(c.Pressure), Flow: positive(c.Flow)}
 	for _, s := range c.Standards {
 		f.Record.Standards = append(f.Record.Standards, StandardRow{s.Name, s.Models, Number(s.Temperature), Number(s.SurfaceTension),

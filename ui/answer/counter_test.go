@@ -237,3 +237,45 @@ func TestBadScans(t *testing.T) {
 		})
 	}
 }
+
+// What the Counter question writes is read back, and a file that is none is
+// refused with its place.
+func TestCalibrationFile(t *testing.T) {
+	a, err := calibrate(t, nil)
+	if err != nil {
+		t.Fatal(err)
+	}
+	text, err := json.Marshal(a.Facts)
+	if err != nil {
+		t.Fatal(err)
+	}
+	write := func(name, text string) scenario.Scenario {
+		s := scenario.Default()
+		s.Calibration = filepath.Join(t.TempDir(), name)
+		if err := os.WriteFile(s.Calibration, []byte(text), 0o644); err != nil {
+			t.Fatal(err)
+		}
+		return s
+	}
+	c, err := readCalibration(counterEnv(), write("a.json", string(text)))
+	if err != nil {
+		t.Fatal(err)
+	}
+	got, u, _, err := recalibrated(c, 10, 0, 0)
+	if want := (demoSlope*10 + demoIntercept) / 100; err != nil || math.Abs(got-want) > 3*u || u > 0.01*want {
+		t.Errorf("10 K is %v ± %v, %v; the truth is %v", got, u, err, want)
+	}
+	for text, want := range map[string]string{
+		"":                            "line 1, column 1",
+		"{}":                          "no key calibration_file",
+		"{\n\"calibration_file\": x}": "line 2, column",
+		"{\"calibration_file\": {}}":  "has no line",
+		"[1]":                         "no calibration",
+	} {
+		_, err := readCalibration(counterEnv(), write("b.json", text))
+		var in *InputError
+		if !errors.As(err, &in) || in.Input != "calibration" || !strings.Contains(err.Error(), want) {
+			t.Errorf("%q: %v, want %q", text, err, want)
+		}
+	}
+}
