@@ -28,7 +28,7 @@ func (c *calibrated) finding() []string {
 		l := c.Line
 		out = append(out, fmt.Sprintf("S = (%s ± %s) %%/K × ΔT %s (%s ± %s) %%, by %d scans from %s to %s K.",
 			digits(100*l.Slope, 4), digits(100*l.SlopeUncertainty, 2), sign(l.Intercept), digits(100*abs(l.Intercept), 3), digits(100*l.InterceptUncertainty, 2),
-			len(l.Residuals), shortest(l.Lowest), shortest(l.Highest)))
+			len(l.Residuals), digits(l.Lowest, 3), digits(l.Highest, 3)))
 		out = append(out, c.setPoints())
 	case len(good) > 0:
 		out = append(out, fmt.Sprintf("There is no calibration line: %s.", strings.TrimSuffix(c.LineFault, ".")), c.oneScan(good[0]))
@@ -70,9 +70,9 @@ func (c *calibrated) setPoints() string {
 			parts = append(parts, "…")
 			break
 		}
-		parts = append(parts, fmt.Sprintf("%s K %s ± %s", digits(r.X, 3), percent(c.Line.At(r.X)), digits(100*c.Line.Uncertainty(r.X), 2)))
+		parts = append(parts, fmt.Sprintf("%s ± %s at %s K", digits(100*c.Line.At(r.X), 4), digits(100*c.Line.Uncertainty(r.X), 2), digits(r.X, 3)))
 	}
-	return "At the set points: " + strings.Join(parts, ", ") + "."
+	return "That is " + strings.Join(parts, ", ") + ", in %."
 }
 
 func (c *calibrated) oneScan(s counter.ScanResult) string {

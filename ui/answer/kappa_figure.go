@@ -15,7 +15,7 @@ const growthLetter = 'G'
 
 const (
 	isolinePoints = 60
-	besidePoints  = 2.5 // times the largest dry size is shown, and the smallest over it
+	besidePoints  = 1.6 // times the largest dry size is shown, and the smallest over it
 	mostLabels    = 6   // points that get a label of their own
 )
 
@@ -31,7 +31,7 @@ func (k *implied) figure() figure.Figure {
 	lo, hi := k.sizes()
 	kelvin := conventionOf(k.asked).Kelvin()
 	for _, value := range isolines {
-		line := figure.Line{Says: "κ " + shortest(value), Dash: figure.Dotted}
+		line := figure.Line{Says: "κ " + shortest(value), Dash: figure.Dotted, AtEnd: true}
 		for i := range isolinePoints {
 			dry := lo * math.Pow(hi/lo, float64(i)/(isolinePoints-1))
 			line.X = append(line.X, dry*1e9)
@@ -51,7 +51,7 @@ func (k *implied) figure() figure.Figure {
 	return f
 }
 
-// sizes are the ends of the lines in m: beside the points, but a decade at least.
+// sizes are the ends of the lines in m: beside the points, but a factor of 5 at least.
 func (k *implied) sizes() (lo, hi float64) {
 	lo, hi = math.Inf(1), 0
 	for i := range k.points {
@@ -62,7 +62,7 @@ func (k *implied) sizes() (lo, hi float64) {
 	if !(lo <= hi) {
 		lo, hi = 100e-9, 100e-9
 	}
-	beside := math.Max(besidePoints, math.Sqrt(10*lo/hi))
+	beside := math.Max(besidePoints, math.Sqrt(5*lo/hi))
 	return lo / beside, hi * beside
 }
 
