@@ -22,7 +22,8 @@ func (r *recorder) count(o *observation, s *fieldfile.Sample, air aerosol.Air) {
 	}
 	var points []spectrum.Observed
 	for _, c := range s.Counts {
-		if why := notCounted(c); why != "" {
+		level := r.level(o, s, c)
+		if why := notCounted(c, level); why != "" {
 			o.reject(why)
 			r.leave(why)
 			continue
@@ -32,7 +33,7 @@ func (r *recorder) count(o *observation, s *fieldfile.Sample, air aerosol.Air) {
 			continue
 		}
 		p := spectrum.Unknown()
-		p.Supersaturation, p.Activated = c.At(), c.N.X*factor
+		p.Supersaturation, p.Activated = level, c.N.X*factor
 		p.Uncertainty = countUncertainty(c) * factor
 		p.All, p.Sized = all, sized
 		p.AllUncertainty = s.Values[fieldfile.CNUncertainty].Or(math.NaN())
@@ -50,7 +51,7 @@ func (r *recorder) count(o *observation, s *fieldfile.Sample, air aerosol.Air) {
 }
 
 // notCounted says why there is no number to compare, "" where there is one.
-func notCounted(c fieldfile.Count) string {
+func notCounted(c fieldfile.Count, level float64) string {
 	switch {
 	case c.N.State == fieldfile.Below:
 		return "below the limit of detection"
@@ -58,10 +59,32 @@ func notCounted(c fieldfile.Count) string {
 		return "above the upper limit of the instrument"
 	case !c.N.OK():
 		return "missing in the data"
-	case !(c.At() > 0):
+	case !(level > 0):
 		return "of no known supersaturation"
 	}
 	return ""
+}
+
+// level is the supersaturation that a count belongs to: by the calibration of the
+// scenario where there is a temperature difference, else as the data have it.
+func (r *recorder) level(o *observation, s *fieldfile.Sample, c fieldfile.Count) float64 {
+	if r.calibration == nil {
+		return c.At()
+	}
+	difference := s.Values[fieldfile.TemperatureDifference]
+	if !difference.OK() {
+		r.note(o, "calibration-not-applied", "calibration", "The data have no temperature difference of the counter: the calibration cannot be applied, supersaturations are as the data have them.")
+		return c.At()
+	}
+	level, _, notes, err := recalibrated(r.calibration, difference.X, s.Values[fieldfile.Pressure].Or(0), s.Values[fieldfile.SampleFlow].Or(0))
+	if err != nil {
+		r.note(o, "calibration-does-not-apply", "calibration", capital(sentenceOf(reason(err))))
+		return math.NaN()
+	}
+	for _, n := range notes {
+		r.note(o, n.Code, "calibration", n.Text)
+	}
+	return level
 }
 
 // leave counts a point that no rule has looked at.

@@ -6,6 +6,7 @@ import (
 
 	"dropcrest/atmos"
 	"dropcrest/atmos/aerosol"
+	"dropcrest/koehler/counter"
 	"dropcrest/koehler/spectrum"
 	"dropcrest/ui/fieldfile"
 	"dropcrest/ui/scenario"
@@ -18,7 +19,9 @@ type recorder struct {
 	judge  *spectrum.Judge
 	sizing sizing
 	number int
-	notes  []atmos.Note
+
+	calibration *counter.Calibration // nil: supersaturations as the data have them
+	notes       []atmos.Note
 
 	grids []sizedGrid // of the bins so far
 	left  []rejection // points that are no numbers
@@ -39,6 +42,9 @@ func newRecorder(env Env, s scenario.Scenario) (*recorder, error) {
 	var err error
 	if r.judge, err = spectrum.NewJudge(r.rules); err != nil {
 		return nil, &InputError{Input: "rule", Text: reason(err)}
+	}
+	if r.calibration, err = readCalibration(env, s); err != nil {
+		return nil, err
 	}
 	r.sizing, err = sizingOf(env, s)
 	return r, err

@@ -279,3 +279,42 @@ func TestCalibrationFile(t *testing.T) {
 		}
 	}
 }
+
+// Counts of a counter that was calibrated stand at the supersaturations of its
+// temperature differences.
+func TestCalibratedCounts(t *testing.T) {
+	a, err := calibrate(t, nil)
+	if err != nil {
+		t.Fatal(err)
+	}
+	text, err := json.Marshal(a.Facts)
+	if err != nil {
+		t.Fatal(err)
+	}
+	dir := t.TempDir()
+	s := scenario.Default()
+	s.Calibration = filepath.Join(dir, "cal.json")
+	data := filepath.Join(dir, "ccn.csv")
+	for name, content := range map[string]string{s.Calibration: string(text), data: "start_time,end_time,temperature difference (K),ccn (cm-3),supersaturation set (%)\n" +
+		"2026-03-14T00:00:00Z,2026-03-14T00:05:00Z,10.0,500,0.5\n2026-03-14T00:05:00Z,2026-03-14T00:10:00Z,5.0,200,0.2\n"} {
+		if err := os.WriteFile(name, []byte(content), 0o644); err != nil {
+			t.Fatal(err)
+		}
+	}
+	s.Data = []scenario.DataFile{{Name: data}}
+	var got []float64
+	if _, err := campaign(context.Background(), counterEnv(), s, func(o *observation) error {
+		for _, c := range o.counts {
+			got = append(got, c.s)
+		}
+		return nil
+	}); err != nil {
+		t.Fatal(err)
+	}
+	for i, dt := range []float64{10, 5} {
+		want := (demoSlope*dt + demoIntercept) / 100
+		if i >= len(got) || math.Abs(got[i]/want-1) > 0.01 {
+			t.Errorf("supersaturations %v, want that of %v K, %v, within 1 %%", got, dt, want)
+		}
+	}
+}

@@ -10,11 +10,11 @@ import (
 	"dropcrest/ui/scenario"
 )
 
-// held is what a column of a file of points holds.
-type held int
+// columnHolds is what a column of a file of points holds.
+type columnHolds int
 
 const (
-	nothingUsed held = iota
+	nothingUsed columnHolds = iota
 	nameOfPoint
 	drySizeOfPoint
 	supersaturationOfPoint
@@ -30,7 +30,7 @@ const (
 // heldBy names the quantities by words of a column's name. The first one that fits
 // counts.
 var heldBy = []struct {
-	holds held
+	holds columnHolds
 	words []string
 	path  scenario.Path
 }{
@@ -46,7 +46,7 @@ var heldBy = []struct {
 	{nameOfPoint, []string{"name", "label", "id", "sample", "point"}, ""},
 }
 
-func (h held) path() scenario.Path {
+func (h columnHolds) path() scenario.Path {
 	for _, by := range heldBy {
 		if by.holds == h {
 			return by.path
@@ -56,17 +56,17 @@ func (h held) path() scenario.Path {
 }
 
 // inPercent: a percentage of it may be relative or absolute.
-func (h held) inPercent() bool { return h == supersaturationOfPoint || h == humidityOfPoint }
+func (h columnHolds) inPercent() bool { return h == supersaturationOfPoint || h == humidityOfPoint }
 
 // mayVary: a standard uncertainty belongs to it.
-func (h held) mayVary() bool {
+func (h columnHolds) mayVary() bool {
 	return h == drySizeOfPoint || h == supersaturationOfPoint || h == growthOfPoint || h == humidityOfPoint
 }
 
 // pointColumn is a column of a file of points.
 type pointColumn struct {
 	name          string
-	holds         held
+	holds         columnHolds
 	unit          string // as options have it; "" where cells have their own
 	isUncertainty bool
 	isRelative    bool
@@ -97,7 +97,7 @@ func (f *pointsFile) header() ([]atmos.Note, error) {
 		}
 		f.columns = append(f.columns, c)
 	}
-	has := func(h held) bool {
+	has := func(h columnHolds) bool {
 		return slices.ContainsFunc(f.columns, func(c pointColumn) bool { return c.holds == h && !c.isUncertainty })
 	}
 	switch {
