@@ -4,9 +4,9 @@ package ascent
 type Regime int
 
 const (
-	UpdraftLimited Regime = iota
-	Transitional
-	AerosolLimited
+	UpdraftLimited Regime = iota // more particles make few more droplets
+	Transitional                 // both count
+	AerosolLimited               // nearly all particles activate
 )
 
 // String returns the word that scripts see.

@@ -9,6 +9,7 @@ import (
 	"github.com/spf13/cobra"
 	"github.com/spf13/pflag"
 
+	"dropcrest/ui/answer"
 	"dropcrest/ui/near"
 )
 
@@ -67,8 +68,13 @@ func optionsLike(cmd *cobra.Command, word string) []string {
 }
 
 // commandWith is the command below cmd that has the option, nil if none has.
-func commandWith(cmd *cobra.Command, name string) *cobra.Command {
-	for _, c := range cmd.Commands() {
+func commandWith(root *cobra.Command, name string) *cobra.Command {
+	for _, q := range answer.Questions() { // in the order of the pages
+		if c, _, err := root.Find([]string{q.Key}); err == nil && c != root && c.Flags().Lookup(name) != nil {
+			return c
+		}
+	}
+	for _, c := range root.Commands() {
 		if c.IsAvailableCommand() && c.Flags().Lookup(name) != nil {
 			return c
 		}
