@@ -56,6 +56,9 @@ type Question struct {
 	Always []string
 	// Given settles what follows from which options were given; nil: nothing.
 	Given func(s *scenario.Scenario, given func(option string) bool)
+	// Follow settles what follows from a change of one input on the screen, as Given
+	// does for options; nil: nothing.
+	Follow func(s *scenario.Scenario, changed scenario.Path)
 	// Formats are the forms besides text, csv, json and figure files.
 	Formats []string
 	// Tabled are the keys of the tables that the text form shows; nil: none.

@@ -18,6 +18,7 @@ func kappaQuestion() Question {
 		Groups:    kappaGroups,
 		Live:      kappaIsLive,
 		Given:     KappaGiven,
+		Follow:    kappaFollows,
 		Statement: kappaStatement,
 		Ask:       askKappa,
 	}

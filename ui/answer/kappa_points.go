@@ -75,6 +75,35 @@ func KappaGiven(s *scenario.Scenario, given func(option string) bool) {
 	}
 }
 
+// kappaFollows lets a growth factor take the place of a supersaturation, and the
+// other way round, when a person gives or takes away one of them in a measurement.
+func kappaFollows(s *scenario.Scenario, changed scenario.Path) {
+	for i := range s.Measurements {
+		p := &s.Measurements[i]
+		switch changed {
+		case pathInPoint(i, "point[0].supersaturation"):
+			if p.Supersaturation.Known() {
+				p.Growth, p.Humidity = scenario.Uncertain{}, scenario.Uncertain{}
+			} else {
+				p.Growth, p.Humidity = exampleGrowth, exampleHumidity
+			}
+		case pathInPoint(i, "point[0].growth-factor"):
+			switch {
+			case !p.Growth.Known():
+				p.Supersaturation, p.Humidity = scenario.Default().Measurements[0].Supersaturation, scenario.Uncertain{}
+			case !p.Humidity.Known():
+				p.Supersaturation, p.Humidity = scenario.Uncertain{}, exampleHumidity
+			}
+		}
+	}
+}
+
+// The measurement of growth that a person starts from, invented.
+var (
+	exampleGrowth   = scenario.Uncertain{Value: 1.4, Own: 0.02}
+	exampleHumidity = scenario.Uncertain{Value: 0.9, Own: 0.01}
+)
+
 // checkMeasurement says what a measurement lacks.
 func checkMeasurement(p scenario.Point) *scenario.ValueError {
 	s := scenario.Default()

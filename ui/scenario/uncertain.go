@@ -43,8 +43,12 @@ func (q *quantity) readUncertain(text string, bare bool) (Uncertain, *ValueError
 	return u, nil
 }
 
-// notMeasured is the word for a quantity that was not measured.
-const notMeasured = "not-measured"
+// notMeasured is the word for a quantity that was not measured, NotMeasured what
+// is shown of it.
+const (
+	notMeasured = "not-measured"
+	NotMeasured = "not measured"
+)
 
 // uncertainty reads what follows a ±.
 func (q *quantity) uncertainty(value float64, text string, bare bool) (own, common float64, _ *ValueError) {
@@ -116,7 +120,7 @@ func (q *quantity) difference(text string, bare bool) (float64, string) {
 // showUncertain writes a value with its uncertainties: "80 nm ± 3 %".
 func (q *quantity) showUncertain(u Uncertain) string {
 	if !u.Known() {
-		return "not measured"
+		return NotMeasured
 	}
 	text := q.show(u.Value)
 	for _, part := range []struct {

@@ -55,6 +55,9 @@ func (m *model) change(p scenario.Path, step bool, f func(*scenario.Scenario) er
 	if next.Equal(m.scenario) {
 		return nil
 	}
+	if m.question.Follow != nil {
+		m.question.Follow(&next, p)
+	}
 	if errs := scenario.Check(&next); len(errs) > 0 {
 		return errs[0]
 	}

@@ -71,7 +71,8 @@ func (r *rows) grid(m *model) (scenario.RowList, [][]scenario.Input) {
 	}
 	grid := [][]scenario.Input{above}
 	for i := range l.Len() {
-		grid = append(grid, ordered(l.Row(i), f.first))
+		row := l.Row(i)
+		grid = append(grid, ordered(row, f.named(l, row)))
 	}
 	return l, grid
 }

@@ -48,24 +48,32 @@ func (r *rows) body(l scenario.RowList, grid [][]scenario.Input, form rowForm, w
 	if form.shares {
 		each, mixed = answer.Hygroscopicity(m.env, m.scenario)
 	}
+	column := 24 // where the settings stand, behind their names
+	for _, row := range grid[1:] {
+		column = max(column, ansi.StringWidth(m.text(row[0].Says()))+1)
+	}
 	for i, row := range grid[1:] {
 		i++
 		if i == r.row {
 			at = len(body)
 		}
 		if r.settings() {
-			const names = 24
-			body = append(body, "   "+padded(m.text(row[0].Says()), names)+r.slotText(i, 0, row[0], m))
+			body = append(body, "   "+padded(m.text(row[0].Says()), column)+r.slotText(i, 0, row[0], m))
 			continue
 		}
-		line := fmt.Sprintf("  %2d  %s", i, r.fill(form.row, i, row, m))
+		sentence := form.sentence(l, row)
+		lines := r.clauses(fmt.Sprintf("  %2d  ", i), sentence, i, row, w, m)
+		if i == r.row {
+			at += lineOf(lines, "<")
+		}
+		body = append(body, lines[:len(lines)-1]...)
+		line := lines[len(lines)-1]
 		if i <= len(each) && !math.IsNaN(each[i-1]) {
 			line = beside(line, fmt.Sprintf("kappa %.3f", each[i-1]), w)
 		}
 		body = append(body, line)
-		n := min(len(form.first), len(row))
-		if more := r.more(i, n, row, w, m); len(more) > 0 {
-			if i == r.row && r.slot >= n {
+		if more := r.more(i, sentence, row, w, m); len(more) > 0 {
+			if i == r.row && !names(sentence, row[r.slot]) {
 				at = len(body) + lineOf(more, "<")
 			}
 			body = append(body, more...)
@@ -82,6 +90,28 @@ func (r *rows) body(l scenario.RowList, grid [][]scenario.Input, form rowForm, w
 		body = append(body, m.dim("      "+m.text(sums(l, mixed))))
 	}
 	return body, at
+}
+
+// clauses are the sentence of a row, on as many lines as its clauses need.
+func (r *rows) clauses(line, sentence string, row int, inputs []scenario.Input, w int, m *model) (out []string) {
+	const indent = "        "
+	for i, clause := range strings.Split(sentence, "\n") {
+		text := r.fill(clause, row, inputs, m)
+		switch {
+		case i == 0:
+			line += text
+		case ansi.StringWidth(line)+1+ansi.StringWidth(text) > w:
+			out, line = append(out, line), indent+text
+		default:
+			line += " " + text
+		}
+	}
+	return append(out, line)
+}
+
+// names reports whether a sentence has a slot for an input.
+func names(sentence string, in scenario.Input) bool {
+	return strings.Contains(sentence, "{"+in.Key()+"}")
 }
 
 // lineOf is the first line that holds a text.
@@ -135,12 +165,13 @@ const noSubstance = "values of its own"
 // shownTyped is how much of a text being typed is seen in its slot.
 const shownTyped = 30
 
-// more is what else belongs to a row, its slots from that one on: all of it below the chosen row, below the
-// others only what is not the default, so that nothing is hidden.
-func (r *rows) more(row, from int, inputs []scenario.Input, w int, m *model) []string {
+// more is what else belongs to a row, beside what its sentence names: all of it
+// below the chosen row, below the others only what is not the default, so that
+// nothing is hidden.
+func (r *rows) more(row int, sentence string, inputs []scenario.Input, w int, m *model) []string {
 	var parts []string
-	for i := from; i < len(inputs); i++ {
-		if in := inputs[i]; row == r.row || !in.IsDefault() {
+	for i, in := range inputs {
+		if !names(sentence, in) && (row == r.row || !in.IsDefault() && isMeasured(in)) {
 			parts = append(parts, m.text(in.Says())+" "+r.slotText(row, i, in, m))
 		}
 	}

@@ -184,8 +184,7 @@ func (m *model) pressOther(k tea.KeyMsg) bool {
 	case key.Matches(k, m.keys.Redo):
 		m.redo()
 	case key.Matches(k, m.keys.Stop):
-		m.stopWork()
-		m.say("stopped; the answer is of the question before")
+		m.halt()
 	case key.Matches(k, m.keys.Quit):
 		m.stopWork()
 		m.do(tea.Quit)

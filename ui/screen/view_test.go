@@ -103,6 +103,15 @@ func states() map[string]struct {
 		"mode rows":        {"tab right enter a right right", modes},
 		"modes held":       {"tab right right right space down v o end i", modes},
 		"giant":            {"", giant},
+
+		"kappa":         {"tab tab", nil},
+		"kappa held":    {"tab tab space up space end", nil},
+		"kappa entry":   {"tab tab 5 0", nil},
+		"kappa several": {"tab tab", points(activated, scanned, grown)},
+		"kappa rows":    {"tab tab enter tab tab", points(activated, scanned, grown)},
+		"kappa further": {"tab tab end left enter", points(grown)},
+		"kappa table":   {"tab tab t", points(activated, grown)},
+		"kappa why":     {"tab tab end i", nil},
 	}
 }
 

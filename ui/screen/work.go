@@ -2,6 +2,7 @@ package screen
 
 import (
 	"context"
+	"errors"
 	"fmt"
 	"runtime/debug"
 	"strings"
@@ -30,6 +31,7 @@ type work struct {
 	shown    bool
 	percent  int
 	old      bool // the answer belongs to an earlier scenario
+	halted   bool // the person has stopped it: what there is may still come
 }
 
 type (
@@ -70,12 +72,25 @@ func (m *model) begin() {
 
 // stopWork ends the work; its answer will not count.
 func (m *model) stopWork() {
+	m.work.halted = false
 	if m.work.cancel == nil {
 		return
 	}
 	m.work.cancel()
 	m.work = work{revision: m.work.revision, old: m.work.old}
 	m.keys.Stop.SetEnabled(false)
+}
+
+// halt ends the work as a person asks for it: a question that has something to
+// say by then still says it.
+func (m *model) halt() {
+	m.stopWork()
+	m.work.halted = true
+	if m.work.old {
+		m.say("stopped; the answer is of the question before")
+	} else {
+		m.say("stopped before there was an answer")
+	}
 }
 
 // look shows how far the work is.
@@ -88,9 +103,19 @@ func (m *model) look(l lookAtWork) {
 	m.do(tea.Tick(lookEvery, func(time.Time) tea.Msg { return l }))
 }
 
-// arrived takes the answer of the work that counts.
+// arrived takes the answer of the work that counts, or as much as there is of one
+// that was stopped.
 func (m *model) arrived(a answered) {
-	if m.work.cancel == nil || a.revision != m.work.revision {
+	if a.revision != m.work.revision {
+		return
+	}
+	if m.work.halted && errors.Is(a.err, context.Canceled) && len(a.answer.Finding) > 0 {
+		m.work.old, m.work.halted = false, false
+		m.accept(a.answer)
+		m.say("stopped; this is what there is so far")
+		return
+	}
+	if m.work.cancel == nil {
 		return
 	}
 	m.stopWork()
