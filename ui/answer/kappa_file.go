@@ -67,11 +67,15 @@ func readPoints(env Env, s scenario.Scenario) ([]kappaPoint, []atmos.Note, error
 	return points, notes, nil
 }
 
+// demoPoints is the file of measurements of the invented station.
+const demoPoints = "points.csv"
+
 func (f *pointsFile) open(env Env) error {
-	if env.Open == nil {
-		return &InputError{"points-file", "no files can be read here"}
+	name, isDemo := f.asked.PointsFile, f.asked.PointsFile == scenario.DemoData
+	if isDemo {
+		name = demoPoints
 	}
-	in, err := env.Open(f.asked.PointsFile)
+	in, err := openFile(env, name, isDemo)
 	if err != nil {
 		return &InputError{"points-file", err.Error()}
 	}

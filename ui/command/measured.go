@@ -8,6 +8,7 @@ import (
 
 	"dropcrest/ui/answer"
 	"dropcrest/ui/fieldfile"
+	"dropcrest/ui/plain"
 	"dropcrest/ui/scenario"
 )
 
@@ -55,9 +56,9 @@ func questionError(err error, q answer.Question, s scenario.Scenario) error {
 			key = option
 		}
 	case errors.As(err, &open):
-		key = fileOption(open.name, s)
+		key = fileOption(open.name, q, s)
 	case errors.As(err, &content):
-		key = fileOption(content.File, s)
+		key = fileOption(content.File, q, s)
 	}
 	if key == "" {
 		return err
@@ -66,9 +67,19 @@ func questionError(err error, q answer.Question, s scenario.Scenario) error {
 }
 
 // fileOption is the option that has named a measured file.
-func fileOption(name string, s scenario.Scenario) string {
-	if s.Population == "bins" && name == s.Bins {
-		return "bins"
+func fileOption(name string, q answer.Question, s scenario.Scenario) string {
+	for _, in := range q.Inputs(&s) {
+		_, value := in.SI()
+		if given, _ := value.(string); in.Kind() != scenario.File || plain.Clean(given) != name || !q.Uses(in) {
+			continue
+		}
+		option, _ := q.OptionOf(in.Path())
+		return option
 	}
-	return "data"
+	for _, list := range []scenario.Path{"data", "scans"} {
+		if option, ok := q.OptionOf(list); ok {
+			return option
+		}
+	}
+	return ""
 }

@@ -80,7 +80,7 @@ var pointList = list[Point]{
 // kappaFields declares what the Kappa question asks for besides its points.
 var kappaFields = []field[Scenario]{
 	{key: "points-file", says: "file of measurements", form: File,
-		help:   "A CSV file of measurements, one a row, in place of the points given one by one.",
+		help:   "A CSV file of measurements, one a row, in place of the points given one by one. demo stands for the built-in ones of an invented station.",
 		origin: "none",
 		at:     func(s *Scenario) any { return &s.PointsFile }},
 	{key: "trials", says: "trials", quantity: trialCount,

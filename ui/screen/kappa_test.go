@@ -64,6 +64,18 @@ func TestKappaScreens(t *testing.T) {
 	}
 }
 
+// The measurements of the demo are looked at by keys alone.
+func TestDemoPointsByKeys(t *testing.T) {
+	m := opened(onTerminal("plain"), 160, 48)
+	press(m, "tab tab end left enter enter d e m o")
+	_, cmd := m.Update(keyOf("enter"))
+	m.Update(answerOf(t, cmd))
+	press(m, "esc")
+	if view := m.View(); m.work.old || m.scenario.PointsFile != scenario.DemoData || !strings.Contains(view, "weighted mean of 8 points") || !strings.Contains(view, "weighted mean of 3 points") {
+		t.Errorf("points of %q:\n%s", m.scenario.PointsFile, view)
+	}
+}
+
 // A growth factor takes the place of the supersaturation and back, by keys alone,
 // and a further measurement is added.
 func TestFromActivationToGrowthByKeys(t *testing.T) {
