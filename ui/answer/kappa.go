@@ -32,6 +32,7 @@ var kappaGroups = []Group{
 	{"The dry particles", []string{"dry-size-is", "shape-factor"}},
 	{"The water", []string{"temperature", "surface-tension"}},
 	{"The uncertainty", []string{"temperature-uncertainty", "surface-tension-uncertainty", "shape-factor-uncertainty", "trials", "seed", "coverage"}},
+	{"A published kappa", []string{"published-kappa", "published-temperature", "published-surface-tension"}},
 }
 
 // liveTrials are made in about 40 ms: as many as one point has by default.
@@ -39,8 +40,22 @@ const liveTrials = 100000
 
 // kappaIsLive: a file is read, and more trials are made, beside the keys.
 func kappaIsLive(s scenario.Scenario) bool {
-	return s.PointsFile == "" && s.Trials*len(s.Measurements) <= liveTrials
+	return s.PointsFile == "" && mostTrials(s)*len(s.Measurements) <= liveTrials
 }
+
+// adaptiveTrials are the most that are made when the figures themselves say how many
+// are needed.
+const adaptiveTrials = 1000000
+
+// mostTrials is how many trials a point may have.
+func mostTrials(s scenario.Scenario) int {
+	if s.Trials.Is("adaptive") {
+		return adaptiveTrials
+	}
+	return int(s.Trials.Number)
+}
+
+func drawsTrials(s scenario.Scenario) bool { return mostTrials(s) > 0 }
 
 // implied is what measurements say about κ before it is put into words, lines and
 // tables. Measurements of growth and of activation are evaluated apart.
@@ -119,7 +134,7 @@ func (k *implied) evaluate(ctx context.Context, env Env) error {
 		}
 		// what is not reached in time still gets its linear propagation
 		result, err := propagate(ctx, env, points, k.asked, stopped == nil, func(n int64) {
-			env.Progress(done+n, int64(len(k.points)*k.asked.Trials))
+			env.Progress(done+n, int64(len(k.points)*mostTrials(k.asked)))
 		})
 		if err != nil {
 			if ctx.Err() == nil {
@@ -127,7 +142,7 @@ func (k *implied) evaluate(ctx context.Context, env Env) error {
 			}
 			stopped = err
 		}
-		done += int64(len(points) * k.asked.Trials)
+		done += int64(len(points) * mostTrials(k.asked))
 		for i, e := range result.Points {
 			k.points[index[i]].Estimate = e
 		}
@@ -141,8 +156,8 @@ func (k *implied) evaluate(ctx context.Context, env Env) error {
 
 // propagate is kappa.Propagate, or its linear part alone.
 func propagate(ctx context.Context, env Env, points []kappa.Point, s scenario.Scenario, trials bool, progress func(int64)) (kappa.Result, error) {
-	if s.Trials > 0 && trials {
-		settings := kappa.Settings{Trials: s.Trials, Coverage: s.Coverage, Seed: uint64(s.Seed), Workers: max(env.Workers, 1)}
+	if drawsTrials(s) && trials {
+		settings := kappa.Settings{Trials: int(s.Trials.Number), MaxTrials: adaptiveTrials, Coverage: s.Coverage, Seed: uint64(s.Seed), Workers: max(env.Workers, 1)}
 		if env.Progress != nil {
 			settings.Progress = func(n, _ int64) { progress(n) }
 		}

@@ -76,7 +76,7 @@ func TestDemoPoints(t *testing.T) {
 // given for it, both kinds on their own.
 func TestDemoKappa(t *testing.T) {
 	s := scenario.Default()
-	s.PointsFile, s.Trials = scenario.DemoData, 20000
+	s.PointsFile, s.Trials.Number = scenario.DemoData, 20000
 	a, err := askKappa(context.Background(), Env{Demo: os.DirFS(demoFolder)}, s)
 	if err != nil {
 		t.Fatal(err)

@@ -13,14 +13,16 @@ type KappaFacts struct {
 	KappaRow
 	Interval95 *[2]Number `json:"kappa_interval_95"` // null when the coverage is another
 	Coverage   Number     `json:"coverage_percent"`
-	Trials     int        `json:"trials"` // of Monte Carlo, 0: linear propagation alone
+	Trials     int        `json:"trials"` // of Monte Carlo, the most that a point has; 0: linear propagation alone
+	Adaptive   bool       `json:"adaptive"`
 	Stopped    bool       `json:"stopped"`
 	Actual     WaterRow   `json:"actual_convention"`
 	At25C      WaterRow   `json:"convention_25c"`
 
-	Points []PointRow `json:"points"`
-	Mean   *MeanRow   `json:"mean"`  // null unless there are several points of one kind
-	Means  []MeanRow  `json:"means"` // of activation, of growth factors
+	Published *PublishedRow `json:"published"` // null unless a kappa is compared with
+	Points    []PointRow    `json:"points"`
+	Mean      *MeanRow      `json:"mean"`  // null unless there are several points of one kind
+	Means     []MeanRow     `json:"means"` // of activation, of growth factors
 }
 
 // KappaRow is a κ with its uncertainty: that of Monte Carlo, or linear propagation
@@ -57,6 +59,8 @@ type MonteCarloRow struct {
 	Interval *[2]Number `json:"interval"`
 	Shortest *[2]Number `json:"shortest_interval"`
 	Agrees   bool       `json:"linear_agrees"`
+	Stable   *bool      `json:"stable"`    // null unless adaptive
+	Within   Number     `json:"tolerance"` // of kappa, to which adaptive trials make the figures stable; else null
 	Above    int        `json:"trials_beyond_any_kappa"`
 	Below    int        `json:"trials_below_zero"`
 }
@@ -116,14 +120,17 @@ type MeanRow struct {
 func (k *implied) facts() KappaFacts {
 	actual := conventionOf(k.asked)
 	f := KappaFacts{
-		KappaRow: noKappa(), Coverage: percentNumber(k.asked.Coverage), Trials: k.asked.Trials,
+		KappaRow: noKappa(), Coverage: percentNumber(k.asked.Coverage), Trials: mostTrials(k.asked), Adaptive: k.asked.Trials.Is("adaptive"),
 		Actual: waterRow(actual), At25C: waterRow(kappa.At25C()),
 		Points: make([]PointRow, 0, len(k.points)), Means: make([]MeanRow, 0, len(k.means)),
 	}
 	for i := range k.points {
 		m := &k.points[i]
 		f.Points = append(f.Points, m.row())
-		f.Stopped = f.Stopped || m.wasStopped(k.asked.Trials)
+		f.Stopped = f.Stopped || m.wasStopped(drawsTrials(k.asked))
+	}
+	if f.Adaptive {
+		f.Trials = k.mostMade()
 	}
 	if len(k.points) > 1 {
 		for i := range k.means {
@@ -137,6 +144,7 @@ func (k *implied) facts() KappaFacts {
 		f.Mean = &f.Means[0]
 		f.KappaRow = f.Mean.KappaRow
 	}
+	f.Published = k.publishedRow()
 	if k.asked.Coverage == 0.95 {
 		f.Interval95 = f.Interval
 	}
@@ -154,8 +162,8 @@ func noKappa() KappaRow {
 }
 
 // wasStopped reports whether the work ended before all trials of the point.
-func (m *kappaPoint) wasStopped(trials int) bool {
-	if trials == 0 || m.Err != nil || len(m.Linear.Contributions) == 0 {
+func (m *kappaPoint) wasStopped(draws bool) bool {
+	if !draws || m.Err != nil || len(m.Linear.Contributions) == 0 {
 		return false
 	}
 	return m.MonteCarlo == nil || m.MonteCarlo.Stopped
@@ -225,7 +233,10 @@ func kappaRow(v kappa.Value, at25C float64, l kappa.Linear, d *kappa.Distributio
 	}
 	if d != nil {
 		r.MonteCarlo = &MonteCarloRow{d.Trials, Number(d.Mean), Number(d.Median), Number(d.StandardUncertainty), Number(d.StandardUncertainty / v.Kappa),
-			ends(d.Interval), ends(d.Shortest), d.Agrees, d.Above, d.Below}
+			ends(d.Interval), ends(d.Shortest), d.Agrees, nil, Number(d.Tolerance), d.Above, d.Below}
+		if !math.IsNaN(d.Tolerance) {
+			r.MonteCarlo.Stable = &d.Stable
+		}
 		r.Standard, r.Relative, r.Interval = r.MonteCarlo.Standard, r.MonteCarlo.Relative, r.MonteCarlo.Interval
 	}
 	for _, c := range parts {

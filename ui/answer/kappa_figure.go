@@ -31,13 +31,10 @@ func (k *implied) figure() figure.Figure {
 	lo, hi := k.sizes()
 	kelvin := conventionOf(k.asked).Kelvin()
 	for _, value := range isolines {
-		line := figure.Line{Says: "κ " + shortest(value), Dash: figure.Dotted, AtEnd: true}
-		for i := range isolinePoints {
-			dry := lo * math.Pow(hi/lo, float64(i)/(isolinePoints-1))
-			line.X = append(line.X, dry*1e9)
-			line.Y = append(line.Y, 100*koehler.SolveKappa(dry, kelvin, value).Supersaturation)
-		}
-		f.Lines = append(f.Lines, line)
+		f.Lines = append(f.Lines, isoline(value, kelvin, lo, hi))
+	}
+	if k.isCompared() {
+		f.Lines = append(f.Lines, k.publishedLine(lo, hi))
 	}
 	for i := range k.points {
 		if p, ok := k.points[i].plotted(); ok {
@@ -49,6 +46,18 @@ func (k *implied) figure() figure.Figure {
 		}
 	}
 	return f
+}
+
+// isoline is the line of one κ for a Kelvin length, from one dry diameter to
+// another, in m.
+func isoline(value, kelvin, lo, hi float64) figure.Line {
+	line := figure.Line{Says: "κ " + shortest(value), Dash: figure.Dotted, AtEnd: true}
+	for i := range isolinePoints {
+		dry := lo * math.Pow(hi/lo, float64(i)/(isolinePoints-1))
+		line.X = append(line.X, dry*1e9)
+		line.Y = append(line.Y, 100*koehler.SolveKappa(dry, kelvin, value).Supersaturation)
+	}
+	return line
 }
 
 // sizes are the ends of the lines in m: beside the points, but a factor of 5 at least.

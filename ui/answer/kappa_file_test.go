@@ -21,7 +21,7 @@ func opening(text string) Env {
 // fromFile is the scenario that asks for a file of points, without trials.
 func fromFile() scenario.Scenario {
 	s := scenario.Default()
-	s.PointsFile, s.Trials = "points.csv", 0
+	s.PointsFile, s.Trials.Number = "points.csv", 0
 	return s
 }
 

@@ -10,6 +10,15 @@ import (
 
 // finding is the answer in sentences.
 func (k *implied) finding() []string {
+	out := k.findingOfAll()
+	if says := k.publishedWords(); says != "" {
+		out[len(out)-1] += " " + says
+	}
+	return out
+}
+
+// findingOfAll is what the measurements say.
+func (k *implied) findingOfAll() []string {
 	if len(k.points) == 1 {
 		return k.findingOfOne(&k.points[0])
 	}

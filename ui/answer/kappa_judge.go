@@ -7,7 +7,6 @@ import (
 	"strings"
 
 	"dropcrest/atmos"
-	"dropcrest/koehler"
 	"dropcrest/koehler/kappa"
 )
 
@@ -26,8 +25,8 @@ func (k *implied) judge(stopped bool) {
 			"by surface tension and because κ itself depends on how dilute the droplet is.")
 	}
 	if stopped {
-		k.note("trials-stopped", "trials", fmt.Sprintf("The work was stopped after %d of %d trials: what has none has the interval of linear propagation.",
-			k.made(), k.asked.Trials*len(k.points)))
+		k.note("trials-stopped", "trials", fmt.Sprintf("The work was stopped after %d of at most %d trials: what has none has the interval of linear propagation.",
+			k.made(), mostTrials(k.asked)*len(k.points)))
 	}
 	k.notes = distinct(k.notes)
 }
@@ -45,6 +44,17 @@ func (k *implied) made() int {
 
 func (k *implied) note(code, input, text string) {
 	k.notes = append(k.notes, atmos.Note{Code: code, Input: input, Text: text})
+}
+
+// mostMade is the most trials that a point has.
+func (k *implied) mostMade() int {
+	most := 0
+	for _, p := range k.points {
+		if p.MonteCarlo != nil {
+			most = max(most, p.MonteCarlo.Trials)
+		}
+	}
+	return most
 }
 
 // mostNamed is how many points a note names; the tables have them all.
@@ -84,6 +94,13 @@ func (k *implied) judgePoints() {
 		return fmt.Sprintf("%s of the trials (%d beyond any κ, %d below 0); quantiles count them, the mean takes the latter as 0 and leaves the former out",
 			shareWords(float64(d.Above+d.Below)/float64(d.Trials)), d.Above, d.Below)
 	})
+	k.noteOn("trials-not-stable", "trials that are not enough", func(m *kappaPoint) string {
+		d := m.MonteCarlo
+		if m.Err != nil || d == nil || d.Stable || d.Stopped || math.IsNaN(d.Tolerance) {
+			return ""
+		}
+		return fmt.Sprintf("after %d of them mean, standard uncertainty and interval are not yet stable to %s", d.Trials, digits(d.Tolerance, 1))
+	})
 	k.noteOn("linear-differs", "a skewed distribution", func(m *kappaPoint) string {
 		if m.Err != nil || m.MonteCarlo == nil || m.MonteCarlo.Agrees {
 			return ""
@@ -121,13 +138,7 @@ func (k *implied) noteOn(code, subject string, what func(*kappaPoint) string) {
 }
 
 // problem is why a point has no κ.
-func (m *kappaPoint) problem() string {
-	var none *koehler.NoSolutionError
-	if errors.As(m.Err, &none) {
-		return none.Reason
-	}
-	return reason(m.Err)
-}
+func (m *kappaPoint) problem() string { return problemOf(m.Err) }
 
 func (k *implied) judgeMean(m kindMean) {
 	var weightless *kappa.NoWeightError

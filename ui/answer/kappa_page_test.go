@@ -74,11 +74,11 @@ func TestKappaIsLive(t *testing.T) {
 	if !q.IsLive(s) {
 		t.Error("the default is not answered at once")
 	}
-	s.Trials = 1000000
+	s.Trials.Number = 1000000
 	if q.IsLive(s) {
 		t.Error("a million trials would be made within a frame")
 	}
-	s.Trials, s.PointsFile = 0, "points.csv"
+	s.Trials.Number, s.PointsFile = 0, "points.csv"
 	if q.IsLive(s) {
 		t.Error("a file would be read within a frame")
 	}
@@ -88,7 +88,7 @@ func TestKappaIsLive(t *testing.T) {
 func BenchmarkKappa(b *testing.B) {
 	for name, trials := range map[string]int{"100000 trials": 100000, "linear": 0} {
 		s := scenario.Default()
-		s.Trials = trials
+		s.Trials.Number = float64(trials)
 		b.Run(name, func(b *testing.B) {
 			b.ReportAllocs()
 			for b.Loop() {

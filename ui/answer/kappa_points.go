@@ -16,9 +16,9 @@ const fewestTrials = 100
 // newImplied takes the points of a scenario, one by one or from a file.
 func newImplied(env Env, s scenario.Scenario) (*implied, error) {
 	switch {
-	case s.Trials > 0 && s.Trials < fewestTrials:
-		return nil, &InputError{"trials", fmt.Sprintf("%d trials make no interval: want %d or more, or 0 for linear propagation alone", s.Trials, fewestTrials)}
-	case s.Coverage > 0.99 && s.Trials > 0:
+	case drawsTrials(s) && mostTrials(s) < fewestTrials:
+		return nil, &InputError{"trials", fmt.Sprintf("%d trials make no interval: want %d or more, or 0 for linear propagation alone", mostTrials(s), fewestTrials)}
+	case s.Coverage > 0.99 && drawsTrials(s):
 		return nil, &InputError{"coverage", "the ends of so wide an interval rest on a handful of trials: want 99 % or less, or 0 trials for linear propagation alone"}
 	}
 	k := &implied{asked: s}

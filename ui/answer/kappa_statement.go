@@ -20,7 +20,7 @@ func kappaStatement(s scenario.Scenario) []string {
 		lines = onePoint(s.Measurements[0], size, shape)
 	}
 	lines = append(lines, "in water of {temperature}, surface tension of {surface-tension},")
-	if s.Trials == 0 {
+	if !drawsTrials(s) {
 		return append(lines, "{trials} trials: linear propagation alone, {coverage} coverage,", "all else {further}.")
 	}
 	return append(lines, "{trials} trials of Monte Carlo, {coverage} coverage, all else {further}.")

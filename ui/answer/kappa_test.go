@@ -167,9 +167,9 @@ func TestKappaRefuses(t *testing.T) {
 	}{
 		"neither":      {func(s *scenario.Scenario) { s.Measurements[0].Supersaturation = scenario.Uncertain{} }, "point[0].dry-diameter", "neither"},
 		"both":         {func(s *scenario.Scenario) { s.Measurements[0].Growth.Value = 1.4 }, "point[0].dry-diameter", "one of them"},
-		"few trials":   {func(s *scenario.Scenario) { s.Trials = 7 }, "trials", "100 or more"},
+		"few trials":   {func(s *scenario.Scenario) { s.Trials.Number = 7 }, "trials", "100 or more"},
 		"far coverage": {func(s *scenario.Scenario) { s.Coverage = 0.999 }, "coverage", "99 % or less"},
-		"no file":      {func(s *scenario.Scenario) { s.PointsFile = "x.csv" }, "points-file", "no files"},
+		"no file":      {func(s *scenario.Scenario) { s.PointsFile = "x.csv" }, "points-file", "files cannot be opened here"},
 	} {
 		s := scenario.Default()
 		c.change(&s)

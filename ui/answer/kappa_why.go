@@ -33,8 +33,8 @@ func (k *implied) why() []string {
 			"the same measurement under both conventions is recomputed exactly.", digits(actual.SurfaceTension()*1e3, 4), shortest(actual.Temperature), shortest(common.Temperature)),
 		"Uncertainty: linear propagation by JCGM 100:2008, 5.1.2, with the derivatives of the exact κ; Monte Carlo by JCGM 101:2008 with normal inputs, "+
 			"intervals between quantiles. The part of an uncertainty that is common moves all points together; the rest is independent.",
-		fmt.Sprintf("%d trials a point, seed %d; the same seed gives the same answer on any machine. relative_standard_uncertainty is the standard deviation of the trials over κ, "+
-			"or that of linear propagation where there are no trials.", k.asked.Trials, k.asked.Seed))
+		k.trialsWords()+fmt.Sprintf(", seed %d; the same seed gives the same answer on any machine. relative_standard_uncertainty is the standard deviation of the trials over κ, "+
+			"or that of linear propagation where there are no trials.", k.asked.Seed))
 	if len(k.points) > 1 {
 		out = append(out, "The mean weighs the points by their independent parts, w = 1/u²; common parts take no part in weights and χ² and do not average out: "+
 			"u² = Σ w² u² + Σ (Σ w c)². κ from growth factors and from activation are not merged.")
@@ -48,6 +48,14 @@ func (k *implied) why() []string {
 		out = append(out, "Note: "+n.Text)
 	}
 	return out
+}
+
+// trialsWords say how many trials were made, or why that many.
+func (k *implied) trialsWords() string {
+	if !k.asked.Trials.Is("adaptive") {
+		return fmt.Sprintf("%d trials a point", mostTrials(k.asked))
+	}
+	return fmt.Sprintf("Trials in blocks of 10000 until two digits of the standard uncertainty are stable (JCGM 101:2008, 7.9.4), up to %d a point", k.mostMade())
 }
 
 // kinds reports which kinds of measurements there are.

@@ -83,8 +83,9 @@ var kappaFields = []field[Scenario]{
 		help:   "A CSV file of measurements, one a row, in place of the points given one by one. demo stands for the built-in ones of an invented station.",
 		origin: "none",
 		at:     func(s *Scenario) any { return &s.PointsFile }},
-	{key: "trials", says: "trials", quantity: trialCount,
-		help:   "How many trials Monte Carlo makes (JCGM 101); 0 is linear propagation alone (JCGM 100).",
+	{key: "trials", says: "trials", quantity: trialCount, words: []Option{{"adaptive", "as many as needed"}},
+		help: "How many trials Monte Carlo makes (JCGM 101); 0 is linear propagation alone (JCGM 100). With adaptive as many as two digits of the standard uncertainty " +
+			"need (JCGM 101, 7.9), one million at most.",
 		origin: "enough for two digits of the interval (common practice)",
 		at:     func(s *Scenario) any { return &s.Trials }},
 	{key: "seed", says: "seed", quantity: seedNumber,
@@ -95,7 +96,24 @@ var kappaFields = []field[Scenario]{
 		help:   "Which share of the distribution the intervals hold.",
 		origin: "common practice",
 		at:     func(s *Scenario) any { return &s.Coverage }},
+	{key: "published-kappa", says: "published kappa", quantity: kappaValue, words: []Option{{"none", "none"}},
+		help: "A kappa to compare with: it is recomputed for the water of the question, and the dry size at which such particles activate stands beside each " +
+			"measurement, or how far they grow.",
+		origin: "nothing is compared",
+		at:     func(s *Scenario) any { return &s.PublishedKappa }},
+	{key: "published-temperature", says: "temperature of the published kappa", quantity: airTemperature,
+		help:   "The temperature that the published kappa was computed with.",
+		origin: "the convention of most published kappa (Petters and Kreidenweis 2007)",
+		at:     func(s *Scenario) any { return &s.PublishedTemperature },
+		used:   isCompared},
+	{key: "published-surface-tension", says: "surface tension of the published kappa", quantity: tension,
+		help:   "The surface tension that the published kappa was computed with.",
+		origin: "the convention of most published kappa (Petters and Kreidenweis 2007)",
+		at:     func(s *Scenario) any { return &s.PublishedTension },
+		used:   isCompared},
 }
+
+func isCompared(s *Scenario) bool { return s.PublishedKappa.Word == "" }
 
 // counterFields declares what the Counter question asks for besides its scans.
 var counterFields = []field[Scenario]{

@@ -57,7 +57,7 @@ type Scenario struct {
 	Calibration   string  // file of a calibration of the counter, "": none
 	Measurements  []Point // that imply a kappa
 	PointsFile    string  // file of such points, "": none
-	Trials        int     // of Monte Carlo; 0: linear propagation alone
+	Trials        Measure // of Monte Carlo, 0: linear propagation alone; or "adaptive"
 	Seed          int
 	Coverage      float64    // fraction
 	Scans         []DataFile // salt scans of the counter; "demo" is the invented station
@@ -67,6 +67,10 @@ type Scenario struct {
 	Plateau       Measure // efficiency of the counter, or "fitted"
 	DoubleCharged Measure // share of doubly charged particles, or "fitted"
 	Bootstrap     int     // replicates, 0: none
+
+	PublishedKappa       Measure // that the measurements are compared with, or "none"
+	PublishedTemperature float64 // K, and
+	PublishedTension     float64 // N/m: of the water that it was computed with
 
 	// Standard uncertainties that all measurements share.
 	TemperatureUncertainty float64 // K
@@ -147,7 +151,7 @@ func Default() Scenario {
 		Fit:              "none",
 		Axes:             "log",
 		Measurements:     []Point{defaultPoint()},
-		Trials:           100000,
+		Trials:           Measure{Number: 100000},
 		Seed:             1,
 		Coverage:         0.95,
 		Scans:            []DataFile{{Name: DemoData}},
@@ -156,6 +160,10 @@ func Default() Scenario {
 		Plateau:          Measure{Word: "fitted"},
 		DoubleCharged:    Measure{Word: "fitted"},
 		Bootstrap:        1000,
+
+		PublishedKappa:       Measure{Word: "none"},
+		PublishedTemperature: 298.15,
+		PublishedTension:     0.072,
 	}
 }
 

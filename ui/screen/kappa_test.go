@@ -21,7 +21,7 @@ func points(rows ...string) func(*scenario.Scenario) {
 				panic(err)
 			}
 		}
-		s.Trials = 10000
+		s.Trials.Number = 10000
 	}
 }
 
@@ -80,7 +80,7 @@ func TestDemoPointsByKeys(t *testing.T) {
 // and a further measurement is added.
 func TestFromActivationToGrowthByKeys(t *testing.T) {
 	m := opened(onTerminal("plain"), 80, 24)
-	press(m, "tab tab end left enter tab tab tab tab enter")
+	press(m, "tab tab end left enter tab tab tab tab tab tab tab enter")
 	if _, ok := m.panel.(*rows); !ok {
 		t.Fatalf("a %T is open:\n%s", m.panel, m.View())
 	}
@@ -151,7 +151,7 @@ func TestStoppedAnswerIsDropped(t *testing.T) {
 // Ten million trials are stopped half-way and say how many were made.
 func TestLongTrialsAreStopped(t *testing.T) {
 	o := onTerminal("plain")
-	o.Scenario.Trials = 10000000
+	o.Scenario.Trials.Number = 10000000
 	m := opened(o, 80, 24)
 	press(m, "tab")
 	_, cmd := m.Update(keyOf("tab"))
