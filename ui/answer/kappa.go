@@ -28,7 +28,7 @@ func kappaQuestion() Question {
 // set the first one.
 var kappaGroups = []Group{
 	{"The measurements", []string{"dry-diameter=point[0].dry-diameter", "supersaturation=point[0].supersaturation",
-		"growth-factor=point[0].growth-factor", "relative-humidity=point[0].relative-humidity", "point", "points=points-file"}},
+		"growth-factor=point[0].growth-factor", "relative-humidity=point[0].relative-humidity", "point", "points=points-file", "growth-factors"}},
 	{"The dry particles", []string{"dry-size-is", "shape-factor"}},
 	{"The water", []string{"temperature", "surface-tension"}},
 	{"The uncertainty", []string{"temperature-uncertainty", "surface-tension-uncertainty", "shape-factor-uncertainty", "trials", "seed", "coverage"}},
@@ -62,7 +62,8 @@ func drawsTrials(s scenario.Scenario) bool { return mostTrials(s) > 0 }
 type implied struct {
 	asked  scenario.Scenario
 	points []kappaPoint
-	means  []kindMean // at most one of activation and one of growth
+	means  []kindMean    // at most one of activation and one of growth
+	spread *growthSpread // of κ between particles, by their growth factors; nil: none was measured
 	notes  []atmos.Note
 }
 

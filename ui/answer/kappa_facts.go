@@ -19,10 +19,11 @@ type KappaFacts struct {
 	Actual     WaterRow   `json:"actual_convention"`
 	At25C      WaterRow   `json:"convention_25c"`
 
-	Published *PublishedRow `json:"published"` // null unless a kappa is compared with
-	Points    []PointRow    `json:"points"`
-	Mean      *MeanRow      `json:"mean"`  // null unless there are several points of one kind
-	Means     []MeanRow     `json:"means"` // of activation, of growth factors
+	Growth    *GrowthSpreadRow `json:"growth_distribution"` // null unless growth factors were measured as a distribution
+	Published *PublishedRow    `json:"published"`           // null unless a kappa is compared with
+	Points    []PointRow       `json:"points"`
+	Mean      *MeanRow         `json:"mean"`  // null unless there are several points of one kind
+	Means     []MeanRow        `json:"means"` // of activation, of growth factors
 }
 
 // KappaRow is a κ with its uncertainty: that of Monte Carlo, or linear propagation
@@ -144,7 +145,7 @@ func (k *implied) facts() KappaFacts {
 		f.Mean = &f.Means[0]
 		f.KappaRow = f.Mean.KappaRow
 	}
-	f.Published = k.publishedRow()
+	f.Published, f.Growth = k.publishedRow(), k.spread.row()
 	if k.asked.Coverage == 0.95 {
 		f.Interval95 = f.Interval
 	}

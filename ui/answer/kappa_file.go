@@ -37,7 +37,7 @@ type pointsFile struct {
 // a cell may also be written as an option is, 80nm±3%rel.
 func readPoints(env Env, s scenario.Scenario) ([]kappaPoint, []atmos.Note, error) {
 	f := &pointsFile{name: plain.Clean(s.PointsFile), asked: s}
-	if err := f.open(env); err != nil {
+	if err := f.open(env, "points-file", s.PointsFile, demoPoints); err != nil {
 		return nil, nil, err
 	}
 	notes, err := f.header()
@@ -70,14 +70,16 @@ func readPoints(env Env, s scenario.Scenario) ([]kappaPoint, []atmos.Note, error
 // demoPoints is the file of measurements of the invented station.
 const demoPoints = "points.csv"
 
-func (f *pointsFile) open(env Env) error {
-	name, isDemo := f.asked.PointsFile, f.asked.PointsFile == scenario.DemoData
+// open reads the file of that name, which the input has given. demo is the one that
+// the word demo stands for, "" if there is none.
+func (f *pointsFile) open(env Env, input, name, demo string) error {
+	isDemo := name == scenario.DemoData && demo != ""
 	if isDemo {
-		name = demoPoints
+		name = demo
 	}
 	in, err := openFile(env, name, isDemo)
 	if err != nil {
-		return &InputError{"points-file", err.Error()}
+		return &InputError{input, err.Error()}
 	}
 	defer in.Close()
 	f.text, err = io.ReadAll(io.LimitReader(in, largestPoints+1))

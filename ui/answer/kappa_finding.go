@@ -11,6 +11,9 @@ import (
 // finding is the answer in sentences.
 func (k *implied) finding() []string {
 	out := k.findingOfAll()
+	if k.spread != nil {
+		out[len(out)-1] += " " + k.spread.words()
+	}
 	if says := k.publishedWords(); says != "" {
 		out[len(out)-1] += " " + says
 	}

@@ -16,6 +16,7 @@ func TestKappaStatement(t *testing.T) {
 		"default":  scenario.Default(),
 		"common":   points(t, []string{long}, "dry-size-is=mobility"),
 		"growth":   points(t, []string{"dry-diameter=80nm±3%rel±2%rel common growth-factor=1.4±1.43%rel±1.01%rel common relative-humidity=90%±1.11%rel±1.11%rel common"}, "trials=10000000"),
+		"spread":   points(t, []string{"dry-diameter=80nm growth-factor=1.4 relative-humidity=90%"}, "growth-factors=growth.csv"),
 		"several":  points(t, []string{long, long}, "dry-size-is=mobility"),
 		"linear":   points(t, []string{long}, "trials=0"),
 		"mobility": points(t, []string{long, long}, "dry-size-is=mobility", "trials=0"),

@@ -36,6 +36,9 @@ func newImplied(env Env, s scenario.Scenario) (*implied, error) {
 			k.points = append(k.points, kappaPoint{Point: p, name: defaultName(i), water: conventionOf(s)})
 		}
 	}
+	if err := k.readGrowthFactors(env); err != nil {
+		return nil, err
+	}
 	for i := range k.points {
 		p := &k.points[i]
 		p.measured = p.asMeasured(s)
@@ -68,6 +71,8 @@ func KappaGiven(s *scenario.Scenario, given func(option string) bool) {
 	}
 	p := &s.Measurements[0]
 	switch activation, growth := given("supersaturation"), given("growth-factor"); {
+	case given("growth-factors") && !activation && !growth && !p.Growth.Known():
+		p.Supersaturation, p.Growth = scenario.Uncertain{}, exampleGrowth // the file has it
 	case growth && !activation:
 		p.Supersaturation = scenario.Uncertain{}
 	case activation && !growth:
@@ -81,6 +86,10 @@ func kappaFollows(s *scenario.Scenario, changed scenario.Path) {
 	for i := range s.Measurements {
 		p := &s.Measurements[i]
 		switch changed {
+		case "growth-factors":
+			if i == 0 && s.GrowthFactors != "" && !p.Growth.Known() {
+				p.Supersaturation, p.Growth, p.Humidity = scenario.Uncertain{}, exampleGrowth, exampleHumidity
+			}
 		case pathInPoint(i, "point[0].supersaturation"):
 			if p.Supersaturation.Known() {
 				p.Growth, p.Humidity = scenario.Uncertain{}, scenario.Uncertain{}

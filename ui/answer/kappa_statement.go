@@ -1,6 +1,10 @@
 package answer
 
-import "dropcrest/ui/scenario"
+import (
+	"strings"
+
+	"dropcrest/ui/scenario"
+)
 
 // kappaStatement is the question in prose. The slots of one measurement stand in
 // it; several are one slot, behind which their rows lie.
@@ -18,6 +22,11 @@ func kappaStatement(s scenario.Scenario) []string {
 		lines = []string{"{point},", "with dry sizes that are " + size + shape + ","}
 	default:
 		lines = onePoint(s.Measurements[0], size, shape)
+		if s.GrowthFactors != "" {
+			for i, clause := range lines {
+				lines[i] = strings.Replace(clause, "that have grown {point[0].growth-factor} times", "that have grown as {growth-factors} says", 1)
+			}
+		}
 	}
 	lines = append(lines, "in water of {temperature}, surface tension of {surface-tension},")
 	if !drawsTrials(s) {

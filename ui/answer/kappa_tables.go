@@ -8,6 +8,9 @@ func (k *implied) tables() []Table {
 	if len(k.points) > 1 {
 		out = append(out, k.meansTable())
 	}
+	if k.spread != nil {
+		out = append(out, k.spread.table())
+	}
 	if k.isCompared() {
 		out = append(out, k.publishedTable())
 	}

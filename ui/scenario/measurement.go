@@ -83,6 +83,12 @@ var kappaFields = []field[Scenario]{
 		help:   "A CSV file of measurements, one a row, in place of the points given one by one. demo stands for the built-in ones of an invented station.",
 		origin: "none",
 		at:     func(s *Scenario) any { return &s.PointsFile }},
+	{key: "growth-factors", says: "file of growth factors", form: File,
+		help: "A CSV file with the distribution of growth factors of the first measurement, which it must be of growth: columns growth_factor and share, or " +
+			"growth_factor_low, growth_factor_high and share. It becomes a distribution of kappa.",
+		origin: "none",
+		at:     func(s *Scenario) any { return &s.GrowthFactors },
+		used:   func(s *Scenario) bool { return s.PointsFile == "" }},
 	{key: "trials", says: "trials", quantity: trialCount, words: []Option{{"adaptive", "as many as needed"}},
 		help: "How many trials Monte Carlo makes (JCGM 101); 0 is linear propagation alone (JCGM 100). With adaptive as many as two digits of the standard uncertainty " +
 			"need (JCGM 101, 7.9), one million at most.",

@@ -57,6 +57,7 @@ type Scenario struct {
 	Calibration   string  // file of a calibration of the counter, "": none
 	Measurements  []Point // that imply a kappa
 	PointsFile    string  // file of such points, "": none
+	GrowthFactors string  // file of a distribution of growth factors, "": none
 	Trials        Measure // of Monte Carlo, 0: linear propagation alone; or "adaptive"
 	Seed          int
 	Coverage      float64    // fraction
