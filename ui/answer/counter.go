@@ -85,7 +85,13 @@ func askCounter(ctx context.Context, env Env, s scenario.Scenario) (Answer, erro
 		Scans: scans, Standards: standards, Options: fitOptions(s),
 		Bootstrap: s.Bootstrap, Seed: uint64(s.Seed), Workers: env.Workers, Progress: env.Progress,
 	})
-	if err != nil {
+	stopped := ctx.Err()
+	switch {
+	case stopped != nil && c.Line == nil: // too early to have something to say
+		return Answer{}, stopped
+	case stopped != nil:
+		c.Notes = append(c.Notes, c.stoppedNote())
+	case err != nil:
 		return Answer{}, &InputError{Input: "scans", Text: reason(err)}
 	}
 	c.notes = distinct(slices.Concat(notes, log.notes, more, c.Calibration.Notes, waterNotes(s)))
@@ -96,7 +102,7 @@ func askCounter(ctx context.Context, env Env, s scenario.Scenario) (Answer, erro
 		Figures: []figure.Figure{c.lineFigure(), c.curvesFigure(), c.residualFigure()},
 		Tables:  c.tables(),
 		Notes:   c.notes,
-	}, nil
+	}, stopped
 }
 
 // newStandard is the salt of the question with its Köhler model.

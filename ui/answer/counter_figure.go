@@ -1,7 +1,6 @@
 package answer
 
 import (
-	"fmt"
 	"math"
 
 	"dropcrest/koehler/counter"
@@ -63,7 +62,7 @@ func (c *calibrated) curvesFigure() figure.Figure {
 		}
 		f.Lines = append(f.Lines, line)
 		f.Marks = append(f.Marks, figure.Mark{Kind: figure.PointMark, X: s.MobilityDiameter * 1e9, Y: s.Plateau.Value / 2,
-			Text: fmt.Sprintf("%s nm", digits(s.MobilityDiameter*1e9, 4))})
+			Text: digits(s.TemperatureDifference, 3) + " K"})
 	}
 	return f
 }

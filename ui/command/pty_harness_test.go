@@ -48,11 +48,16 @@ func (u user) stateFile(name string) string {
 }
 
 // env is a terminal that an ordinary test never has: xterm-256color without CI,
-// on which Bubble Tea would ask for the background.
+// on which Bubble Tea would ask for the background. The demo is there, as it is for
+// everybody.
 func (u user) env() []string {
+	demo, err := filepath.Abs("../../testdata/demo")
+	if err != nil {
+		panic(err)
+	}
 	return []string{
 		"HOME=" + u.home, "XDG_STATE_HOME=" + filepath.Join(u.home, "state"), "TMPDIR=" + u.home,
-		"PATH=" + os.Getenv("PATH"), "TERM=xterm-256color", "LANG=C.UTF-8", started + "=1",
+		"PATH=" + os.Getenv("PATH"), "TERM=xterm-256color", "LANG=C.UTF-8", started + "=1", demoFolder + "=" + demo,
 	}
 }
 

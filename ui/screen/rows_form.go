@@ -23,6 +23,8 @@ var forms = map[string]rowForm{
 	"component": {head: "The particle is made of:", row: "{share} of {substance}", first: []string{"share", "substance"}, shares: true},
 	"mode":      {head: "The modes of the population:", row: "{N} with median {Dg}, gsd {gsd}", first: []string{"N", "Dg", "gsd"}},
 	"data":      {head: "Measured files, merged on time:", row: "{file}, clock offset {offset}", first: []string{"file", "offset"}, typed: true},
+	"scans":     {head: "Files of salt scans, one after the other:", row: "{file}", first: []string{"file"}, typed: true},
+	"scans-map": {head: "What columns of the scans hold, where the guess is wrong, as column=quantity:", row: "{column}", first: []string{"column"}, typed: true},
 	"point":     {head: "The measurements, with their standard uncertainties:", row: "{dry-diameter}\nactivates at {supersaturation}", first: []string{"dry-diameter", "supersaturation"}},
 	"map":       {head: "What columns hold, where the guess is wrong, as column=quantity:", row: "{column}", first: []string{"column"}, typed: true},
 }

@@ -112,6 +112,17 @@ func states() map[string]struct {
 		"kappa further": {"tab tab end left enter", points(grown)},
 		"kappa table":   {"tab tab t", points(activated, grown)},
 		"kappa why":     {"tab tab end i", nil},
+
+		"counter":         {"tab tab tab", fitsOnly},
+		"counter curves":  {"tab tab tab v", fitsOnly},
+		"counter rest":    {"tab tab tab v v end", fitsOnly},
+		"counter held":    {"tab tab tab space", fitsOnly},
+		"counter files":   {"tab tab tab enter a m tab", fitsOnly},
+		"counter columns": {"tab tab tab end left enter end enter", fitsOnly},
+		"counter further": {"tab tab tab end left enter", fitsOnly},
+		"counter table":   {"tab tab tab t right", fitsOnly},
+		"counter why":     {"tab tab tab end i", fitsOnly},
+		"counter write":   {"tab tab tab w tab", fitsOnly},
 	}
 }
 
