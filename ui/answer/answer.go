@@ -87,6 +87,7 @@ func (q Question) FrameOf(s scenario.Scenario, f figure.Figure, last figure.Fram
 type Answer struct {
 	Finding []string // one to three sentences, the most important first
 	Why     []string // for `i` on the finding: formulas, constants, sources
+	Paper   []string // a record on paper that stands below the finding in text, one paragraph an entry
 	Facts   any      // the JSON object, without scenario, notes, version
 	Figures []figure.Figure
 	Others  []figure.Line // lines of the first figure that are shown on demand

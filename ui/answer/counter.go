@@ -3,6 +3,7 @@ package answer
 import (
 	"context"
 	"slices"
+	"time"
 
 	"dropcrest/atmos"
 	"dropcrest/koehler/counter"
@@ -26,7 +27,7 @@ func counterQuestion() Question {
 
 // counterGroups are the inputs of the Counter question.
 var counterGroups = []Group{
-	{"The scans", []string{"data=scans", "map=scans-map", "activation-curve", "plateau", "double-charged", "polarity"}},
+	{"The scans", []string{"data=scans", "map=scans-map", "activation-curve", "plateau", "double-charged", "scan-sizes", "polarity"}},
 	{"The salt", []string{"component", "shares-by", "shape-factor", "water-activity", "kappa", "vant-hoff-factor", "temperature", "surface-tension"}},
 	{"The uncertainty", []string{"bootstrap", "seed"}},
 }
@@ -61,6 +62,8 @@ type calibrated struct {
 	asked   scenario.Scenario
 	rows    int // of the log
 	mapping []string
+	begin   time.Time // of the first row; zero: not known
+	end     time.Time
 	counter.Calibration
 	notes []atmos.Note
 }
@@ -80,9 +83,16 @@ func askCounter(ctx context.Context, env Env, s scenario.Scenario) (Answer, erro
 	if err != nil {
 		return Answer{}, err
 	}
+	options := fitOptions(s)
+	sizes, sizeNotes, err := saltSizes(ctx, env, s)
+	if err != nil {
+		return Answer{}, err
+	}
+	options.Charges.Sizes = sizes
 	c := &calibrated{asked: s, rows: len(log.rows), mapping: log.mapping}
+	c.begin, c.end = log.span()
 	c.Calibration, err = counter.Calibrate(ctx, counter.Request{
-		Scans: scans, Standards: standards, Options: fitOptions(s),
+		Scans: scans, Standards: standards, Options: options,
 		Bootstrap: s.Bootstrap, Seed: uint64(s.Seed), Workers: env.Workers, Progress: env.Progress,
 	})
 	stopped := ctx.Err()
@@ -94,12 +104,15 @@ func askCounter(ctx context.Context, env Env, s scenario.Scenario) (Answer, erro
 	case err != nil:
 		return Answer{}, &InputError{Input: "scans", Text: reason(err)}
 	}
-	c.notes = distinct(slices.Concat(notes, log.notes, more, c.Calibration.Notes, waterNotes(s)))
+	c.notes = distinct(slices.Concat(notes, log.notes, sizeNotes, more, c.Calibration.Notes, waterNotes(s)))
+	line := c.lineFigure()
+	line.Notes = c.pageOf(env.Version)
 	return Answer{
 		Finding: c.finding(),
 		Why:     c.why(),
+		Paper:   c.paper(env.Version, true),
 		Facts:   c.facts(),
-		Figures: []figure.Figure{c.lineFigure(), c.curvesFigure(), c.residualFigure()},
+		Figures: []figure.Figure{line, c.curvesFigure(), c.residualFigure()},
 		Tables:  c.tables(),
 		Notes:   c.notes,
 	}, stopped

@@ -7,6 +7,7 @@ import (
 	"io"
 	"io/fs"
 	"math"
+	"time"
 
 	"dropcrest/atmos"
 	"dropcrest/koehler/counter"
@@ -22,6 +23,23 @@ type scanLog struct {
 	rows    []counter.Row
 	mapping []string // column=quantity, as it was understood
 	notes   []atmos.Note
+}
+
+// span is from when to when rows were measured, zero where no row says it.
+func (l *scanLog) span() (begin, end time.Time) {
+	for _, r := range l.rows {
+		if r.Time == 0 {
+			continue
+		}
+		at := time.UnixMilli(int64(math.Round(1e3 * r.Time))).UTC()
+		if begin.IsZero() || at.Before(begin) {
+			begin = at
+		}
+		if last := at.Add(time.Duration(r.Duration * float64(time.Second))); last.After(end) {
+			end = last
+		}
+	}
+	return begin, end
 }
 
 // readScans reads the files of a scenario. A row without what a scan needs is kept

@@ -135,11 +135,7 @@ func (c *calibrated) why() []string {
 			"the likelihood is that of CCN given CN + CCN, with the efficiency of the counter inside the fit.",
 		"Activation curve: " + c.Curve + ". Charges by Wiedensohler (1988) for one and two, by Gunn and Woessner (1956) for more.",
 	}
-	for _, s := range c.Standards {
-		out = append(out, fmt.Sprintf("%s: %s; surface tension %s mN/m, water %s kg/m³ at %s; shape factor %s; classifier at %s and %s hPa.", s.Name,
-			strings.Join(s.Models, ", "), digits(s.SurfaceTension*1e3, 4), digits(s.WaterDensity, 5), celsius(s.Temperature), shortest(s.ShapeFactor),
-			celsius(s.AirTemperature), digits(s.AirPressure/100, 5)))
-	}
+	out = append(out, c.standardWords()...)
 	if l := c.Line; l != nil {
 		out = append(out, fmt.Sprintf("The line has errors in both coordinates (York et al. 2004): χ² %s for %d degrees of freedom, probability %s.",
 			digits(l.ChiSquare, 3), l.Freedom, digits(l.Probability, 2)))

@@ -50,7 +50,7 @@ func TestCounterOnScreen(t *testing.T) {
 	const end = "\x1b[F"
 	s.types(end + left + enter)
 	s.sees(`bootstrap +\[1000\]`)
-	s.types("\t\t1")
+	s.types("\t\t\t1")
 	s.sees(`bootstrap +<1`)
 	s.types("000000" + enter)
 	s.sees(`<1000000>`)

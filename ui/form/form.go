@@ -182,6 +182,10 @@ func (s Sheet) writeText(b *bytes.Buffer) {
 		b.WriteString(strings.Join(figure.Lines(cells), "\n") + "\n\n")
 	}
 	say(strings.Join(s.Answer.Finding, " "))
+	for _, p := range s.Answer.Paper {
+		b.WriteByte('\n')
+		say(p)
+	}
 	var tabled []string
 	if s.Question.Tabled != nil {
 		tabled = s.Question.Tabled(s.Answer)

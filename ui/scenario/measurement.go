@@ -145,6 +145,12 @@ var counterFields = []field[Scenario]{
 		help:   "A constant share of doubly charged particles where no size distribution gives it.",
 		origin: "it follows from the scan itself",
 		at:     func(s *Scenario) any { return &s.DoubleCharged },
+		used:   func(s *Scenario) bool { return s.Activation == "two-step" && s.ScanSizes == "" }},
+	{key: "scan-sizes", says: "size distribution of the salt", form: File,
+		help: "A file of the size distribution of the salt particles before the charger, one row: it gives the share of multiply charged particles at each size, with the charges of " +
+			"Wiedensohler 1988 and Gunn and Woessner 1956.",
+		origin: "none: one constant share a scan",
+		at:     func(s *Scenario) any { return &s.ScanSizes },
 		used:   func(s *Scenario) bool { return s.Activation == "two-step" }},
 	{key: "bootstrap", says: "bootstrap", quantity: trialCount,
 		help:   "How many replicates check the covariance of the fits; 0 is none.",

@@ -61,6 +61,7 @@ type Scenario struct {
 	Trials        Measure // of Monte Carlo, 0: linear propagation alone; or "adaptive"
 	Seed          int
 	Coverage      float64    // fraction
+	ScanSizes     string     // file of the size distribution of the salt particles, "": none
 	Scans         []DataFile // salt scans of the counter; "demo" is the invented station
 	ScansMap      []MapLine
 	Activation    string  // two-step | gaussian | sigmoid

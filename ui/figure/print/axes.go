@@ -30,6 +30,9 @@ const (
 	noteSize   = vg.Length(7.5)
 	legendLine = vg.Length(12)
 	noteLine   = vg.Length(10)
+
+	smallNoteSize = vg.Length(6.5)
+	smallNoteLine = vg.Length(8.5)
 )
 
 func typeface(size vg.Length) font.Font {

@@ -58,7 +58,9 @@ func linesOf(f figure.Figure) []line {
 				held++
 			default:
 				out.style = draw.LineStyle{Color: otherColour, Width: vg.Points(1), Dashes: otherDashes[other%3]}
-				other++
+				if out.name != "" { // without one it belongs to the next, as the two sides of a band
+					other++
+				}
 			}
 			if l.Letter != 0 {
 				out.name = clean(string(l.Letter) + "  " + l.Says)

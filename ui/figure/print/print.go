@@ -9,6 +9,7 @@ import (
 	"regexp"
 
 	"gonum.org/v1/plot"
+	"gonum.org/v1/plot/text"
 	"gonum.org/v1/plot/vg"
 	"gonum.org/v1/plot/vg/draw"
 	"gonum.org/v1/plot/vg/vgimg"
@@ -93,6 +94,9 @@ type sheet struct {
 	lines  []line
 	legend []entry
 	notes  []string
+
+	noteStyle text.Style
+	noteLine  vg.Length
 }
 
 // entry is one line of the legend.
@@ -104,7 +108,7 @@ func newSheet(f figure.Figure, fr figure.Frame) *sheet {
 	s := &sheet{f: f, fr: fr}
 	s.lines = linesOf(f)
 	for _, l := range s.lines {
-		if !l.AtEnd {
+		if !l.AtEnd && l.name != "" {
 			s.legend = append(s.legend, l)
 		}
 	}
@@ -114,10 +118,23 @@ func newSheet(f figure.Figure, fr figure.Frame) *sheet {
 	if len(s.legend) == 1 {
 		s.legend = nil // there is nothing to tell it from
 	}
-	for _, n := range f.Notes {
-		s.notes = append(s.notes, wrap(n, textStyle(noteSize), pageWidth-2*margin)...)
+	s.note(noteSize, noteLine)
+	if len(s.notes) > mostNotes {
+		s.note(smallNoteSize, smallNoteLine)
 	}
 	return s
+}
+
+// mostNotes is how many lines of notes are in letters of the usual size: a whole
+// record below a picture is smaller, so that it stays one page.
+const mostNotes = 24
+
+// note breaks the notes into lines of letters of that size.
+func (s *sheet) note(size, line vg.Length) {
+	s.notes, s.noteStyle, s.noteLine = nil, textStyle(size), line
+	for _, n := range s.f.Notes {
+		s.notes = append(s.notes, wrap(n, s.noteStyle, pageWidth-2*margin)...)
+	}
 }
 
 // height is the height of the page with everything on it.
@@ -127,7 +144,7 @@ func (s *sheet) height() vg.Length {
 		h += vg.Length(n)*legendLine + margin/2
 	}
 	if n := len(s.notes); n > 0 {
-		h += vg.Length(n)*noteLine + margin/2
+		h += vg.Length(n)*s.noteLine + margin/2
 	}
 	return h
 }
@@ -148,10 +165,9 @@ func (s *sheet) draw(page draw.Canvas) {
 	if len(s.legend) > 0 {
 		at.Y -= margin / 2
 	}
-	style := textStyle(noteSize)
 	for _, n := range s.notes {
-		at.Y -= noteLine
-		inner.FillText(style, at, n)
+		at.Y -= s.noteLine
+		inner.FillText(s.noteStyle, at, n)
 	}
 }
 
