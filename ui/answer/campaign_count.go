@@ -5,7 +5,9 @@ import (
 	"slices"
 	"strings"
 
+	"dropcrest/atmos"
 	"dropcrest/atmos/aerosol"
+	"dropcrest/koehler/counter"
 	"dropcrest/koehler/spectrum"
 	"dropcrest/ui/fieldfile"
 )
@@ -22,7 +24,7 @@ func (r *recorder) count(o *observation, s *fieldfile.Sample, air aerosol.Air) {
 	}
 	var points []spectrum.Observed
 	for _, c := range s.Counts {
-		level := r.level(o, s, c)
+		level, inherits := r.level(o, s, c)
 		if why := notCounted(c, level); why != "" {
 			o.reject(why)
 			r.leave(why)
@@ -45,7 +47,8 @@ func (r *recorder) count(o *observation, s *fieldfile.Sample, air aerosol.Air) {
 		}
 		points = append(points, p)
 		o.counts = append(o.counts, measurement{s: p.Supersaturation, count: p.Activated, uncertainty: p.Uncertainty,
-			flag: strings.Join(verdict.Flags, " "), predicted: math.NaN()})
+			inherits: inherits,
+			flag:     strings.Join(verdict.Flags, " "), predicted: math.NaN()})
 	}
 	r.cycle(o, points)
 }
@@ -67,24 +70,34 @@ func notCounted(c fieldfile.Count, level float64) string {
 
 // level is the supersaturation that a count belongs to: by the calibration of the
 // scenario where there is a temperature difference, else as the data have it.
-func (r *recorder) level(o *observation, s *fieldfile.Sample, c fieldfile.Count) float64 {
+func (r *recorder) level(o *observation, s *fieldfile.Sample, c fieldfile.Count) (float64, inherited) {
 	if r.calibration == nil {
-		return c.At()
+		return c.At(), inherited{}
 	}
 	difference := s.Values[fieldfile.TemperatureDifference]
 	if !difference.OK() {
 		r.note(o, "calibration-not-applied", "calibration", "The data have no temperature difference of the counter: the calibration cannot be applied, supersaturations are as the data have them.")
-		return c.At()
+		return c.At(), inherited{}
 	}
-	level, _, notes, err := recalibrated(r.calibration, difference.X, s.Values[fieldfile.Pressure].Or(0), s.Values[fieldfile.SampleFlow].Or(0))
+	at := counter.Site{Pressure: s.Values[fieldfile.Pressure].Or(0), Flow: s.Values[fieldfile.SampleFlow].Or(0)}
+	if r.calibration.first.Pressure == 0 && at.Pressure > 0 {
+		at.Pressure = 0
+		r.note(o, "calibration-pressure", "calibration", "The calibration has no pressure: it is taken to hold at that of the measurement.")
+	}
+	if r.calibration.first.Flow == 0 && at.Flow > 0 {
+		at.Flow = 0
+		r.note(o, "calibration-flow", "calibration", "The calibration has no flow: it is taken to hold at that of the measurement.")
+	}
+	middle := float64(o.start.Unix()) + o.end.Sub(o.start).Seconds()/2
+	applied, err := r.calibration.apply(difference.X, middle, at)
 	if err != nil {
-		r.note(o, "calibration-does-not-apply", "calibration", capital(sentenceOf(reason(err))))
-		return math.NaN()
+		r.noteOnce(o, atmos.Note{Code: "calibration-does-not-apply", Input: "calibration", Text: capital(sentenceOf(reason(err)))})
+		return math.NaN(), inherited{}
 	}
-	for _, n := range notes {
-		r.note(o, n.Code, "calibration", n.Text)
+	for _, n := range applied.Notes {
+		r.noteOnce(o, n)
 	}
-	return level
+	return applied.Supersaturation, inherited{applied.Uncertainty / applied.Supersaturation, applied.Sensitivity}
 }
 
 // leave counts a point that no rule has looked at.

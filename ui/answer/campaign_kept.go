@@ -17,7 +17,7 @@ type keptData struct {
 
 // dataKey is what the records of a scenario depend on.
 func dataKey(s scenario.Scenario) string {
-	return fmt.Sprint(s.Data, s.Map, s.Every, s.Average, s.Rules, s.Penetration, s.DrySizeIs, s.ShapeFactor, s.Calibration)
+	return fmt.Sprint(s.Data, s.Map, s.Every, s.Average, s.Rules, s.Penetration, s.DrySizeIs, s.ShapeFactor, s.Calibration, s.SecondCalibration)
 }
 
 // errEnough ends the reading of data that are too long to be kept.

@@ -1,12 +1,12 @@
 package answer
 
 import (
+	"fmt"
 	"math"
 	"slices"
 
 	"dropcrest/atmos"
 	"dropcrest/atmos/aerosol"
-	"dropcrest/koehler/counter"
 	"dropcrest/koehler/spectrum"
 	"dropcrest/ui/fieldfile"
 	"dropcrest/ui/scenario"
@@ -20,7 +20,7 @@ type recorder struct {
 	sizing sizing
 	number int
 
-	calibration *counter.Calibration // nil: supersaturations as the data have them
+	calibration *calibrations // nil: supersaturations as the data have them
 	notes       []atmos.Note
 
 	grids []sizedGrid // of the bins so far
@@ -43,7 +43,7 @@ func newRecorder(env Env, s scenario.Scenario) (*recorder, error) {
 	if r.judge, err = spectrum.NewJudge(r.rules); err != nil {
 		return nil, &InputError{Input: "rule", Text: reason(err)}
 	}
-	if r.calibration, err = readCalibration(env, s); err != nil {
+	if r.calibration, err = readCalibrations(env, s); err != nil {
 		return nil, err
 	}
 	r.sizing, err = sizingOf(env, s)
@@ -72,6 +72,19 @@ func (r *recorder) note(o *observation, code, input, text string) {
 	n := atmos.Note{Code: code, Input: input, Text: text}
 	o.notes = append(o.notes, n)
 	if !slices.Contains(r.notes, n) {
+		r.notes = append(r.notes, n)
+	}
+}
+
+// noteOnce notes what has other numbers in every record: of the data as a whole it is
+// said of the first one.
+func (r *recorder) noteOnce(o *observation, n atmos.Note) {
+	if slices.ContainsFunc(o.notes, func(old atmos.Note) bool { return old.Code == n.Code }) {
+		return
+	}
+	o.notes = append(o.notes, n)
+	if !slices.ContainsFunc(r.notes, func(old atmos.Note) bool { return old.Code == n.Code }) {
+		n.Text = fmt.Sprintf("Record %d: %s", o.number, n.Text)
 		r.notes = append(r.notes, n)
 	}
 }

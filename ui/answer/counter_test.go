@@ -257,11 +257,12 @@ func TestCalibrationFile(t *testing.T) {
 		}
 		return s
 	}
-	c, err := readCalibration(counterEnv(), write("a.json", string(text)))
+	c, err := readCalibrations(counterEnv(), write("a.json", string(text)))
 	if err != nil {
 		t.Fatal(err)
 	}
-	got, u, _, err := recalibrated(c, 10, 0, 0)
+	applied, err := c.apply(10, 0, counter.Site{})
+	got, u := applied.Supersaturation, applied.Uncertainty
 	if want := (demoSlope*10 + demoIntercept) / 100; err != nil || math.Abs(got-want) > 3*u || u > 0.01*want {
 		t.Errorf("10 K is %v ± %v, %v; the truth is %v", got, u, err, want)
 	}
@@ -272,7 +273,7 @@ func TestCalibrationFile(t *testing.T) {
 		"{\"calibration_file\": {}}":  "has no line",
 		"[1]":                         "no calibration",
 	} {
-		_, err := readCalibration(counterEnv(), write("b.json", text))
+		_, err := readCalibrations(counterEnv(), write("b.json", text))
 		var in *InputError
 		if !errors.As(err, &in) || in.Input != "calibration" || !strings.Contains(err.Error(), want) {
 			t.Errorf("%q: %v, want %q", text, err, want)

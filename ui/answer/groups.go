@@ -71,7 +71,7 @@ var curveGroups = []Group{
 // spectrumGroups are the inputs of the Spectrum question: those of the particles
 // are the ones of a curve, without their size.
 var spectrumGroups = []Group{
-	{"The population", []string{"population", "mode", "bins", "data", "map", "calibration", "rule", "penetration", "dry-size-is", "shape-factor", "record", "every", "average"}},
+	{"The population", []string{"population", "mode", "bins", "data", "map", "calibration", "second-calibration", "rule", "penetration", "dry-size-is", "shape-factor", "record", "every", "average"}},
 	{"The particles", []string{"component", "shares-by", "composition", "mixing", "kappa-spread", "adsorption"}},
 	curveGroups[1],
 	{"The air", []string{"temperature"}},

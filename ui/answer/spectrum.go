@@ -89,6 +89,9 @@ func (a *activated) solve() error {
 	}
 	a.fit()
 	a.limit()
+	if n, ok := a.sharedNote(); ok {
+		a.notes = distinct(append(a.notes, n))
+	}
 	return nil
 }
 

@@ -16,9 +16,10 @@ type measurement struct {
 	predicted             float64 // NaN: nothing to compare with
 	critical              float64 // m, of the prediction
 	kappa                 spectrum.CountKappa
-	noKappa               error // why the count implies no κ
-	records               int   // that it is a mean of
-	isBetween             bool  // interpolated between measured ones: compared, but no pair of its own
+	noKappa               error     // why the count implies no κ
+	records               int       // that it is a mean of
+	inherits              inherited // from the calibration of the counter
+	isBetween             bool      // interpolated between measured ones: compared, but no pair of its own
 }
 
 // inPercent is a supersaturation in per cent without the last binary digits: 0.7 and
@@ -39,12 +40,13 @@ func (m measurement) ratio() float64 {
 	return m.predicted / m.count
 }
 
-// kappaUncertainty is that of κ from the uncertainty of the count alone, 1/m³ or NaN.
+// kappaUncertainty is that of κ from the uncertainty of the count, and of the
+// supersaturation where a calibration gives it; NaN: not known.
 func (m measurement) kappaUncertainty() float64 {
 	if m.noKappa != nil || !(m.uncertainty >= 0) {
 		return math.NaN()
 	}
-	return math.Abs(m.kappa.Kappa * m.kappa.ByCount * m.uncertainty / m.count)
+	return math.Abs(m.kappa.Kappa) * math.Hypot(m.kappa.ByCount*m.uncertainty/m.count, m.kappa.BySupersaturation*m.inherits.uncertainty)
 }
 
 // rejection is why measured points are left out, and how many.

@@ -127,6 +127,10 @@ var counterFields = []field[Scenario]{
 		help:   "A calibration file that the Counter question has written; measured counts then stand at calibrated supersaturations.",
 		origin: "none: supersaturations as the data have them",
 		at:     func(s *Scenario) any { return &s.Calibration }},
+	{key: "second-calibration", says: "second calibration of the counter", form: File,
+		help:   "A second calibration file, of another day: the line is interpolated in time between both.",
+		origin: "none: one calibration holds for all data",
+		at:     func(s *Scenario) any { return &s.SecondCalibration }},
 	{key: "activation-curve", says: "activation curve",
 		words: []Option{{"two-step", "two steps"}, {"gaussian", "cumulative Gaussian"}, {"sigmoid", "sigmoid"}},
 		help: "The form of the activated fraction: two steps, the lower one of doubly charged particles of equal mobility; or one step as a cumulative Gaussian in " +

@@ -54,21 +54,22 @@ type Scenario struct {
 	Rules            []Rule     // of quality, whose bounds are not the usual ones
 	Penetration      string     // share of particles that reach the instrument: a number or a file, "": all
 
-	Calibration   string  // file of a calibration of the counter, "": none
-	Measurements  []Point // that imply a kappa
-	PointsFile    string  // file of such points, "": none
-	GrowthFactors string  // file of a distribution of growth factors, "": none
-	Trials        Measure // of Monte Carlo, 0: linear propagation alone; or "adaptive"
-	Seed          int
-	Coverage      float64    // fraction
-	ScanSizes     string     // file of the size distribution of the salt particles, "": none
-	Scans         []DataFile // salt scans of the counter; "demo" is the invented station
-	ScansMap      []MapLine
-	Activation    string  // two-step | gaussian | sigmoid
-	Polarity      string  // positive | negative, of the classifier
-	Plateau       Measure // efficiency of the counter, or "fitted"
-	DoubleCharged Measure // share of doubly charged particles, or "fitted"
-	Bootstrap     int     // replicates, 0: none
+	Calibration       string  // file of a calibration of the counter, "": none
+	SecondCalibration string  // another one, for what was measured between both
+	Measurements      []Point // that imply a kappa
+	PointsFile        string  // file of such points, "": none
+	GrowthFactors     string  // file of a distribution of growth factors, "": none
+	Trials            Measure // of Monte Carlo, 0: linear propagation alone; or "adaptive"
+	Seed              int
+	Coverage          float64    // fraction
+	ScanSizes         string     // file of the size distribution of the salt particles, "": none
+	Scans             []DataFile // salt scans of the counter; "demo" is the invented station
+	ScansMap          []MapLine
+	Activation        string  // two-step | gaussian | sigmoid
+	Polarity          string  // positive | negative, of the classifier
+	Plateau           Measure // efficiency of the counter, or "fitted"
+	DoubleCharged     Measure // share of doubly charged particles, or "fitted"
+	Bootstrap         int     // replicates, 0: none
 
 	PublishedKappa       Measure // that the measurements are compared with, or "none"
 	PublishedTemperature float64 // K, and
