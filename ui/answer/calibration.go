@@ -180,7 +180,7 @@ func (a *activated) sharedNote() (atmos.Note, bool) {
 			"Uncertainties of κ are those of the counts and of the calibration's counts. Errors that the calibration shares with the particles largely cancel and are not counted twice: "+
 				"+1 %% of all sizes moves κ at %s %% by %+.2f %% and not by %+.2f %%, +1 %% of the surface tension by %+.2f %% and not by %+.2f %%, +1 K by %+.2f %%, "+
 				"as far as both were sized by the same classifier.",
-			shortest(100*m.s), float64(e.Sizing), m.kappa.ByDiameter, float64(e.Tension), -m.kappa.ByDiameter, 100*float64(e.Temperature))}, true
+			digits(100*m.s, 4), float64(e.Sizing), m.kappa.ByDiameter, float64(e.Tension), -m.kappa.ByDiameter, 100*float64(e.Temperature))}, true
 	}
 	return atmos.Note{}, false
 }

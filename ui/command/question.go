@@ -57,6 +57,7 @@ func examples() map[string]string {
 		"curve":      "dropcrest curve --dry-diameter 50nm --component \"sodium chloride\"",
 		"spectrum":   "dropcrest spectrum --mode \"N=850/cm3 Dg=45nm gsd=1.6 kappa=0.3\" --supersaturation 0.1%,0.2%,0.5%",
 		"kappa":      "dropcrest kappa --dry-diameter 80nm±3%rel --supersaturation 0.25%±5%rel",
+		"counter":    "dropcrest counter --data scans.csv --as json --out calibration.json && dropcrest spectrum --data counts.csv --calibration calibration.json",
 		"substances": "dropcrest substances \"ammonium sulfate\"",
 		"verify":     "dropcrest verify --as csv --out verify.csv",
 	}

@@ -149,7 +149,7 @@ const sameLevel = 0.05
 func (w *window) addCount(c *Count, sec, share float64) {
 	level := c.Set.Or(c.At())
 	if math.IsNaN(level) {
-		return
+		level = 0 // none is known: a temperature difference may say it
 	}
 	var p *countPool
 	for i := range w.counts {

@@ -1,6 +1,9 @@
 package screen
 
 import (
+	"io"
+	"os"
+	"path/filepath"
 	"strings"
 	"testing"
 
@@ -78,5 +81,56 @@ func TestBootstrapIsStopped(t *testing.T) {
 	}
 	if why := strings.Join(m.answer.Why, " "); !strings.Contains(why, "of 1000000 replicates of the bootstrap were made") {
 		t.Errorf("the notes do not say it: %s", why)
+	}
+}
+
+// With keys alone a person comes from the scans to a record, to the file of the
+// calibration, and on to measured counts at calibrated supersaturations.
+func TestFromScansToCalibratedCounts(t *testing.T) {
+	dir := t.TempDir()
+	data := filepath.Join(dir, "counts.csv")
+	if err := os.WriteFile(data, []byte("start_time,end_time,temperature difference (K),ccn at STP (cm-3),dN/dlogD at STP 50 nm (cm-3),dN/dlogD at STP 100 nm (cm-3),"+
+		"dN/dlogD at STP 200 nm (cm-3)\n2026-03-14T00:00:00Z,2026-03-14T00:05:00Z,10,310,500,500,300\n"), 0o644); err != nil {
+		t.Fatal(err)
+	}
+	o := onTerminal("plain")
+	o.Env.Open = func(name string) (io.ReadCloser, error) { return os.Open(name) }
+	fitsOnly(&o.Scenario)
+	m := opened(o, 80, 24)
+	press(m, "tab tab tab")
+	for _, name := range []string{"record.txt", "record.pdf", "calibration.json"} {
+		press(m, "w")
+		m.Update(keyOf("paste:" + filepath.Join(dir, name)))
+		m.Update(only(t, press(m, "enter")))
+		if info, err := os.Stat(filepath.Join(dir, name)); err != nil || info.Size() == 0 {
+			t.Fatalf("%s: %v\n%s", name, err, m.View())
+		}
+	}
+	press(m, "shift+tab shift+tab right enter a")
+	m.Update(keyOf("paste:" + data))
+	press(m, "enter shift+tab")
+	_, cmd := m.Update(keyOf("d"))
+	m.Update(answerOf(t, cmd))
+	press(m, "esc end left enter")
+	chosen := func() scenario.Path {
+		r := m.panel.(*rows)
+		return r.given[r.row-1]
+	}
+	for n := 0; chosen() != "calibration"; n++ {
+		if n > 50 {
+			t.Fatalf("no calibration among the rest:\n%s", m.View())
+		}
+		press(m, "tab")
+	}
+	press(m, "enter")
+	m.Update(keyOf("paste:" + filepath.Join(dir, "calibration.json")))
+	_, cmd = m.Update(keyOf("enter"))
+	m.Update(answerOf(t, cmd))
+	press(m, "esc end")
+	if view := m.View(); m.work.old || !strings.Contains(view, "at 0.587") {
+		t.Errorf("the counts are not where the calibration has 10 K:\n%s", view)
+	}
+	if why := strings.Join(m.answer.Why, " "); !strings.Contains(why, "are not counted twice") {
+		t.Errorf("it is not said what cancels: %s", why)
 	}
 }
