@@ -5,8 +5,10 @@ import (
 	"errors"
 	"fmt"
 	"io"
+	"math"
 
 	"dropcrest/atmos"
+	"dropcrest/koehler"
 	"dropcrest/koehler/counter"
 	"dropcrest/ui/scenario"
 )
@@ -90,10 +92,50 @@ func placeOf(text []byte, offset int64) (line, column int) {
 	return line, column
 }
 
-// recalibrated is the supersaturation of a set temperature difference by a
-// calibration, with its standard uncertainty (fractions), carried to the pressure
-// and the flow of the measurement; 0 stands for not known.
-func recalibrated(c *counter.Calibration, difference, pressure, flow float64) (s, uncertainty float64, notes []atmos.Note, err error) {
-	applied, err := c.Apply(difference, counter.Site{Pressure: pressure, Flow: flow})
-	return applied.Supersaturation, applied.Uncertainty, applied.Notes, err
+// CalibrationEffect is how errors that the calibration of the counter shares with the
+// measured particles move κ through both: through the supersaturation and through the
+// particles themselves.
+type CalibrationEffect struct {
+	Uncertainty Number `json:"supersaturation_standard_uncertainty_percent"`
+	Sizing      Number `json:"kappa_by_size"`              // d ln κ/d ln D
+	Tension     Number `json:"kappa_by_surface_tension"`   // d ln κ/d ln σ
+	Temperature Number `json:"kappa_by_temperature_per_k"` // d ln κ/dT of the activation
+}
+
+// shared is the effect on the κ that a count implies; nil without a calibration. Only
+// the ratio of size and Kelvin length counts, so that κ goes with that length as it
+// goes with the inverse of all sizes.
+func (m measurement) shared(temperature float64) *CalibrationEffect {
+	if m.transfer == (counter.Sensitivity{}) {
+		return nil
+	}
+	unknown := Number(math.NaN())
+	e := &CalibrationEffect{percentNumber(m.levelUncertainty), unknown, unknown, unknown}
+	if m.noKappa != nil || !(m.kappa.Kappa > 0) {
+		return e
+	}
+	const step = 0.1 // K
+	length := func(T float64) float64 { return math.Log(koehler.KelvinLength(atmos.SurfaceTension(T), T)) }
+	slope := (length(temperature+step) - length(temperature-step)) / (2 * step)
+	k := m.kappa
+	e.Sizing = Number(k.ByDiameter + k.BySupersaturation*m.transfer.Dry)
+	e.Tension = Number(-k.ByDiameter + k.BySupersaturation*m.transfer.Tension)
+	e.Temperature = Number(-k.ByDiameter*slope + k.BySupersaturation*m.transfer.Temperature)
+	return e
+}
+
+// sharedNotes say what cancels, by the first count with a κ.
+func (a *activated) sharedNotes() []atmos.Note {
+	for _, m := range a.measured {
+		e := m.shared(a.asked.Temperature)
+		if e == nil || math.IsNaN(float64(e.Sizing)) {
+			continue
+		}
+		return []atmos.Note{{Code: "calibration-shared", Input: "calibration", Text: fmt.Sprintf(
+			"Uncertainties of κ are those of the counts and of the calibration's counts. Errors that the calibration shares with the particles largely cancel and are not counted twice: "+
+				"+1 %% of all sizes moves κ at %s %% supersaturation by %+.2f %% and not by %+.2f %%, +1 %% of the surface tension by %+.2f %% and not by %+.2f %%, +1 K by %+.2f %%, "+
+				"as far as one classifier sized both.",
+			levelWords(m.s), float64(e.Sizing), m.kappa.ByDiameter, float64(e.Tension), -m.kappa.ByDiameter, 100*float64(e.Temperature))}}
+	}
+	return nil
 }

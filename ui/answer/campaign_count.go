@@ -6,6 +6,7 @@ import (
 	"strings"
 
 	"dropcrest/atmos/aerosol"
+	"dropcrest/koehler/counter"
 	"dropcrest/koehler/spectrum"
 	"dropcrest/ui/fieldfile"
 )
@@ -20,8 +21,8 @@ func (r *recorder) count(o *observation, s *fieldfile.Sample, air aerosol.Air) {
 	}
 	var points []spectrum.Observed
 	for _, c := range s.Counts {
-		level, levelUncertainty := r.level(o, s, c)
-		if why := notCounted(c, level); why != "" {
+		at := r.level(o, s, c)
+		if why := notCounted(c, at.Supersaturation); why != "" {
 			o.reject(why)
 			r.leave(why)
 			continue
@@ -33,7 +34,7 @@ func (r *recorder) count(o *observation, s *fieldfile.Sample, air aerosol.Air) {
 			continue
 		}
 		p := spectrum.Unknown()
-		p.Supersaturation, p.Activated = level, c.N.X*factor
+		p.Supersaturation, p.Activated = at.Supersaturation, c.N.X*factor
 		p.Uncertainty = countUncertainty(c) * factor
 		p.All, p.Sized = all, sized
 		p.AllUncertainty, p.AllMedian = allUncertainty, median
@@ -44,8 +45,8 @@ func (r *recorder) count(o *observation, s *fieldfile.Sample, air aerosol.Air) {
 			continue
 		}
 		points = append(points, p)
-		o.counts = append(o.counts, measurement{s: p.Supersaturation, count: p.Activated, uncertainty: p.Uncertainty, levelUncertainty: levelUncertainty,
-			flag: strings.Join(verdict.Flags, " "), predicted: math.NaN()})
+		o.counts = append(o.counts, measurement{s: p.Supersaturation, count: p.Activated, uncertainty: p.Uncertainty,
+			levelUncertainty: at.Uncertainty, transfer: at.Sensitivity, flag: strings.Join(verdict.Flags, " "), predicted: math.NaN()})
 	}
 	r.cycle(o, points)
 }
@@ -81,10 +82,11 @@ func notCounted(c fieldfile.Count, level float64) string {
 }
 
 // level is the supersaturation that a count belongs to: by the calibration of the
-// scenario where there is a temperature difference, else as the data have it.
-func (r *recorder) level(o *observation, s *fieldfile.Sample, c fieldfile.Count) (level, uncertainty float64) {
+// scenario where there is a temperature difference, else as the data have it, with no uncertainty.
+func (r *recorder) level(o *observation, s *fieldfile.Sample, c fieldfile.Count) counter.Applied {
+	asGiven := counter.Applied{Supersaturation: c.At()}
 	if r.calibrations.first == nil {
-		return c.At(), 0
+		return asGiven
 	}
 	difference := s.Values[fieldfile.TemperatureDifference]
 	if set := c.Set.Or(c.At()); !difference.OK() && r.setSlope > 0 && set > 0 {
@@ -92,12 +94,12 @@ func (r *recorder) level(o *observation, s *fieldfile.Sample, c fieldfile.Count)
 	}
 	if !difference.OK() {
 		r.note(o, "calibration-not-applied", "calibration", "The data have no temperature difference of the counter: the calibration cannot be applied, supersaturations are as the data have them. With the line that the counter itself takes (set-slope) it can.")
-		return c.At(), 0
+		return asGiven
 	}
 	calibration, err := r.calibrations.at(float64(s.Start.UnixNano()) / 1e9)
 	if err != nil {
 		r.note(o, "calibration-does-not-apply", "calibration-after", capital(sentenceOf(reason(err))))
-		return math.NaN(), 0
+		return counter.Applied{Supersaturation: math.NaN()}
 	}
 	pressure, flow := s.Values[fieldfile.Pressure].Or(0), s.Values[fieldfile.SampleFlow].Or(0)
 	if pressure > 0 && calibration.Pressure == 0 {
@@ -107,15 +109,15 @@ func (r *recorder) level(o *observation, s *fieldfile.Sample, c fieldfile.Count)
 	if calibration.Flow == 0 {
 		flow = 0
 	}
-	level, uncertainty, notes, err := recalibrated(calibration, difference.X, pressure, flow)
+	applied, err := calibration.Apply(difference.X, counter.Site{Pressure: pressure, Flow: flow})
 	if err != nil {
 		r.note(o, "calibration-does-not-apply", "calibration", capital(sentenceOf(reason(err))))
-		return math.NaN(), 0
+		return counter.Applied{Supersaturation: math.NaN()}
 	}
-	for _, n := range notes {
+	for _, n := range applied.Notes {
 		r.note(o, n.Code, "calibration", n.Text)
 	}
-	return level, uncertainty
+	return applied
 }
 
 // leave counts a point that no rule has looked at.

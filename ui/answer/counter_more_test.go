@@ -11,6 +11,7 @@ import (
 	"strings"
 	"testing"
 
+	"dropcrest/koehler/spectrum"
 	"dropcrest/ui/scenario"
 )
 
@@ -115,9 +116,10 @@ func TestBetweenCalibrations(t *testing.T) {
 	}
 }
 
-// Counts at supersaturations as set go through the counter's own line back to
-// temperature differences: the demo's counts move by what its calibration says.
-func TestCalibrationOfSetCounts(t *testing.T) {
+// calibratedDemo asks for the demo's counts by the demo's calibration, through the
+// line that the counter took.
+func calibratedDemo(t *testing.T) scenario.Scenario {
+	t.Helper()
 	a, err := calibrate(t, nil)
 	if err != nil {
 		t.Fatal(err)
@@ -132,6 +134,13 @@ func TestCalibrationOfSetCounts(t *testing.T) {
 		t.Fatal(err)
 	}
 	s.SetSlope, s.SetIntercept = scenario.Measure{Number: 0.0006}, -0.0004
+	return s
+}
+
+// Counts at supersaturations as set go through the counter's own line back to
+// temperature differences: the demo's counts move by what its calibration says.
+func TestCalibrationOfSetCounts(t *testing.T) {
+	s := calibratedDemo(t)
 	var got []float64
 	if _, err := campaign(context.Background(), counterEnv(), s, func(o *observation) error {
 		if o.number == 1 {
@@ -151,5 +160,48 @@ func TestCalibrationOfSetCounts(t *testing.T) {
 		if i >= len(got) || math.Abs(got[i]/want-1) > 0.01 {
 			t.Fatalf("supersaturations %v, want %v for the one set as %v", got, want, set)
 		}
+	}
+}
+
+// What calibration and particles share nearly cancels in the κ of counts: sizes and
+// tension alone would each move it by some 3 % per cent.
+func TestSharedErrorsCancel(t *testing.T) {
+	s := calibratedDemo(t)
+	s.Record = scenario.Measure{Number: 1}
+	a, err := askSpectrum(context.Background(), counterEnv(), s)
+	if err != nil {
+		t.Fatal(err)
+	}
+	calibrated := 0
+	for _, row := range a.Facts.(SpectrumFacts).Measured {
+		e := row.Calibration
+		if e == nil {
+			continue // interpolated
+		}
+		calibrated++
+		for name, x := range map[string]Number{"sizes": e.Sizing, "tension": e.Tension, "temperature, per 100 K": 100 * e.Temperature} {
+			const most = 0.3 // a tenth of what each does alone
+			if !(math.Abs(float64(x)) < most) {
+				t.Errorf("at %v %%: %s move κ by %v, want them to cancel", row.Supersaturation, name, x)
+			}
+		}
+		if !(e.Uncertainty > 0) || !(row.KappaUncertainty > 0) {
+			t.Errorf("uncertainties %v and %v", e.Uncertainty, row.KappaUncertainty)
+		}
+	}
+	if calibrated != 5 {
+		t.Errorf("%d calibrated rows, want 5", calibrated)
+	}
+	if why := strings.Join(a.Why, " "); !strings.Contains(why, "not counted twice: +1 % of all sizes moves κ at") {
+		t.Errorf("it is not said: %s", why)
+	}
+}
+
+// The uncertainty of κ has a part of the count and one of the supersaturation.
+func TestPartsOfKappaUncertainty(t *testing.T) {
+	m := measurement{count: 100, uncertainty: 3, s: 0.005, levelUncertainty: 0.02 * 0.005}
+	m.kappa = spectrum.CountKappa{Kappa: 0.3, ByCount: 1, BySupersaturation: -2}
+	if got, want := m.kappaUncertainty(), 0.3*0.05; math.Abs(got/want-1) > 1e-12 { // 3-4-5
+		t.Errorf("%v, want %v", got, want)
 	}
 }

@@ -261,7 +261,8 @@ func TestCalibrationFile(t *testing.T) {
 	if err != nil {
 		t.Fatal(err)
 	}
-	got, u, _, err := recalibrated(c, 10, 0, 0)
+	applied, err := c.Apply(10, counter.Site{})
+	got, u := applied.Supersaturation, applied.Uncertainty
 	if want := (demoSlope*10 + demoIntercept) / 100; err != nil || math.Abs(got-want) > 3*u || u > 0.01*want {
 		t.Errorf("10 K is %v ± %v, %v; the truth is %v", got, u, err, want)
 	}

@@ -89,6 +89,7 @@ func (a *activated) solve() error {
 	}
 	a.fit()
 	a.limit()
+	a.notes = distinct(append(a.notes, a.sharedNotes()...))
 	return nil
 }
 

@@ -46,10 +46,12 @@ type MeasuredRow struct {
 	Predicted        Number  `json:"predicted_ccn_per_m3"`
 	Ratio            Number  `json:"ratio"`             // predicted over measured
 	Kappa            Number  `json:"kappa"`             // that the count implies; of several records the median
-	KappaUncertainty Number  `json:"kappa_uncertainty"` // from that of the count alone
+	KappaUncertainty Number  `json:"kappa_uncertainty"` // from those of the count and of a calibration
 	Critical         Number  `json:"critical_dry_diameter_m"`
 	NoKappa          *string `json:"no_kappa"` // why the count implies none
 	Records          int     `json:"records"`
+
+	Calibration *CalibrationEffect `json:"calibration"` // null where the data give the supersaturation
 }
 
 // ClosureFacts are how predicted and measured counts agree.
@@ -153,7 +155,7 @@ func (a *activated) facts() SpectrumFacts {
 		f.Spectrum = append(f.Spectrum, SpectrumRow{Number(inPercent(p.s)), Number(p.count), Number(p.critical)})
 	}
 	for _, m := range a.measured {
-		f.Measured = append(f.Measured, m.row())
+		f.Measured = append(f.Measured, m.row(a.asked.Temperature))
 	}
 	f.Closure = a.closureFacts()
 	for _, x := range a.fits {
@@ -175,10 +177,10 @@ func (a *activated) facts() SpectrumFacts {
 // clock writes a time as in files.
 func clock(t time.Time) string { return t.UTC().Format(time.RFC3339) }
 
-func (m measurement) row() MeasuredRow {
+func (m measurement) row(temperature float64) MeasuredRow {
 	r := MeasuredRow{Supersaturation: Number(inPercent(m.s)), Count: Number(m.count), Uncertainty: Number(m.uncertainty),
 		Predicted: Number(m.predicted), Ratio: Number(m.ratio()), Kappa: Number(math.NaN()), KappaUncertainty: Number(m.kappaUncertainty()),
-		Critical: Number(math.NaN()), Records: m.records}
+		Critical: Number(math.NaN()), Records: m.records, Calibration: m.shared(temperature)}
 	if m.flag != "" {
 		r.Flag = &m.flag
 	}

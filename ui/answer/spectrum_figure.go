@@ -145,7 +145,7 @@ func (a *activated) sizesFigure() figure.Figure {
 	for _, p := range a.predicted {
 		if !math.IsNaN(p.critical) {
 			f.Marks = append(f.Marks, figure.Mark{Kind: figure.PointMark, X: p.critical * nano, Y: a.density(p.critical),
-				Text: shortest(100*p.s) + " %"})
+				Text: levelWords(p.s) + " %"})
 		}
 	}
 	return f

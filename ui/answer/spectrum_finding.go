@@ -50,7 +50,7 @@ func (a *activated) countSentence() string {
 		if len(a.predicted) > mostListed && i != 0 && i != len(a.predicted)-1 {
 			continue
 		}
-		at, counts, wide = append(at, shortest(100*p.s)), append(counts, cubic(p.count)), append(wide, nanometres(p.critical))
+		at, counts, wide = append(at, levelWords(p.s)), append(counts, cubic(p.count)), append(wide, nanometres(p.critical))
 	}
 	says := fmt.Sprintf("%s activate at %s %% supersaturation", list(counts), list(at))
 	if a.sizes != nil {
@@ -147,14 +147,14 @@ func (a *activated) countedKappas() string {
 			continue
 		}
 		if m.noKappa != nil {
-			without = append(without, fmt.Sprintf("at %s %%: %s", shortest(100*m.s), noKappaWords(m.noKappa)))
+			without = append(without, fmt.Sprintf("at %s %%: %s", levelWords(m.s), noKappaWords(m.noKappa)))
 			continue
 		}
 		text := digits(m.kappa.Kappa, 3)
 		if u := m.kappaUncertainty(); u > 0 {
 			text = roundedPair(m.kappa.Kappa, u)
 		}
-		at, kappas = append(at, shortest(100*m.s)), append(kappas, text)
+		at, kappas = append(at, levelWords(m.s)), append(kappas, text)
 	}
 	of := "of"
 	if a.isSeason() {
@@ -182,7 +182,7 @@ func (a *activated) asksAt(at []string) bool {
 		return false
 	}
 	for i, p := range a.predicted {
-		if at[i] != shortest(100*p.s) {
+		if at[i] != levelWords(p.s) {
 			return false
 		}
 	}
@@ -229,7 +229,7 @@ func (a *activated) fitSentence() string {
 		fit = "fit"
 	}
 	says := fmt.Sprintf("The %s that %s the %s counts from %s to %s %%: %s", formWords(f.form), fit, f.of,
-		shortest(100*f.Low), shortest(100*f.High), f.numberWords())
+		levelWords(f.Low), levelWords(f.High), f.numberWords())
 	if f.DegreesOfFreedom > 0 {
 		says += fmt.Sprintf("; root mean square deviation %s", wholeOrOne(f.Deviation))
 	}

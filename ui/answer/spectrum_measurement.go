@@ -2,20 +2,23 @@ package answer
 
 import (
 	"cmp"
+	"fmt"
 	"math"
 	"slices"
 	"strconv"
 
+	"dropcrest/koehler/counter"
 	"dropcrest/koehler/spectrum"
 )
 
 // measurement is what was counted at a supersaturation, with what it says.
 type measurement struct {
-	s, count, uncertainty float64 // 1/m³; NaN: not known
-	levelUncertainty      float64 // of s, by the counts of the calibration; 0: none is known
-	flag                  string  // "" : none
-	predicted             float64 // NaN: nothing to compare with
-	critical              float64 // m, of the prediction
+	s, count, uncertainty float64             // 1/m³; NaN: not known
+	levelUncertainty      float64             // of s, by the counts of the calibration; 0: none is known
+	transfer              counter.Sensitivity // of s, by the calibration; zero: none
+	flag                  string              // "" : none
+	predicted             float64             // NaN: nothing to compare with
+	critical              float64             // m, of the prediction
 	kappa                 spectrum.CountKappa
 	noKappa               error // why the count implies no κ
 	records               int   // that it is a mean of
@@ -31,6 +34,10 @@ func inPercent(s float64) float64 {
 	}
 	return x
 }
+
+// levelWords is a supersaturation in per cent for a sentence: that of a calibration
+// has digits enough to fill a line with them.
+func levelWords(s float64) string { return fmt.Sprintf("%.4g", 100*s) }
 
 // ratio is predicted over measured, NaN where one is not known.
 func (m measurement) ratio() float64 {
@@ -48,7 +55,7 @@ func (m measurement) kappaUncertainty() float64 {
 	if m.noKappa != nil || !(m.uncertainty >= 0) {
 		return math.NaN()
 	}
-	return m.kappa.Kappa * math.Hypot(m.kappa.ByCount*m.uncertainty/m.count, m.kappa.BySupersaturation*m.levelUncertainty/m.s)
+	return math.Abs(m.kappa.Kappa) * math.Hypot(m.kappa.ByCount*m.uncertainty/m.count, m.kappa.BySupersaturation*m.levelUncertainty/m.s)
 }
 
 // rejection is why measured points are left out, and how many.

@@ -109,7 +109,7 @@ func (a *activated) fitWords() []string {
 }
 
 func (f fitted) rangeWords() string {
-	says := fmt.Sprintf("Fitted to %d %s counts from %s to %s %%; outside, the form extrapolates.", f.Points, f.of, shortest(100*f.Low), shortest(100*f.High))
+	says := fmt.Sprintf("Fitted to %d %s counts from %s to %s %%; outside, the form extrapolates.", f.Points, f.of, levelWords(f.Low), levelWords(f.High))
 	if !math.IsNaN(f.ReducedChiSquare) {
 		says += fmt.Sprintf(" Reduced χ² %s.", digits(f.ReducedChiSquare, 3))
 	}
