@@ -101,7 +101,13 @@ func askCounter(ctx context.Context, env Env, s scenario.Scenario) (Answer, erro
 		Scans: scans, Standards: standards, Options: options,
 		Bootstrap: s.Bootstrap, Seed: uint64(s.Seed), Workers: env.Workers, Progress: env.Progress,
 	})
-	if err != nil {
+	stopped := ctx.Err()
+	switch {
+	case stopped != nil && c.Line == nil: // too early to have something to say
+		return Answer{}, stopped
+	case stopped != nil:
+		c.Notes = append(c.Notes, c.stoppedNote())
+	case err != nil:
 		return Answer{}, &InputError{Input: "scans", Text: reason(err)}
 	}
 	c.notes = distinct(slices.Concat(notes, log.notes, more, c.Calibration.Notes, waterNotes(s)))
@@ -115,7 +121,7 @@ func askCounter(ctx context.Context, env Env, s scenario.Scenario) (Answer, erro
 		Tables:  c.tables(),
 		Notes:   c.notes,
 		Account: c.account(env.Version),
-	}, nil
+	}, stopped
 }
 
 // newStandard is the salt of the question with its Köhler model.

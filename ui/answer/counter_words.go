@@ -20,6 +20,16 @@ func (c *calibrated) fitted() (good, bad []counter.ScanResult) {
 	return good, bad
 }
 
+// stoppedNote says how far a calibration came that was stopped.
+func (c *calibrated) stoppedNote() atmos.Note {
+	done := 0
+	if c.LineBootstrap != nil {
+		done = c.LineBootstrap.Slope.Replicates
+	}
+	return atmos.Note{Code: "stopped", Input: "bootstrap", Text: fmt.Sprintf(
+		"The work was stopped: %d of %d replicates of the bootstrap were made. The fits are complete.", done, c.asked.Bootstrap)}
+}
+
 // finding is the calibration in sentences.
 func (c *calibrated) finding() []string {
 	good, bad := c.fitted()
