@@ -4,6 +4,8 @@ package command_test
 
 import (
 	"bytes"
+	"encoding/json"
+	"fmt"
 	"io"
 	"os"
 	"os/exec"
@@ -48,11 +50,42 @@ func (u user) stateFile(name string) string {
 }
 
 // env is a terminal that an ordinary test never has: xterm-256color without CI,
-// on which Bubble Tea would ask for the background.
+// on which Bubble Tea would ask for the background. The demo is there, as it is for
+// everybody.
 func (u user) env() []string {
+	demo, err := filepath.Abs("../../testdata/demo")
+	if err != nil {
+		panic(err)
+	}
 	return []string{
 		"HOME=" + u.home, "XDG_STATE_HOME=" + filepath.Join(u.home, "state"), "TMPDIR=" + u.home,
-		"PATH=" + os.Getenv("PATH"), "TERM=xterm-256color", "LANG=C.UTF-8", started + "=1",
+		"PATH=" + os.Getenv("PATH"), "TERM=xterm-256color", "LANG=C.UTF-8", started + "=1", demoFolder + "=" + demo,
+	}
+}
+
+// facts are what a command answers as JSON.
+func (u user) facts(t *testing.T, command string, into any) {
+	t.Helper()
+	self, err := os.Executable()
+	if err != nil {
+		t.Fatal(err)
+	}
+	out, err := (&exec.Cmd{Path: self, Args: []string{"dropcrest", command, "--as", "json"}, Env: u.env()}).Output()
+	if err != nil {
+		t.Fatal(err)
+	}
+	if err := json.Unmarshal(out, into); err != nil {
+		t.Fatal(err)
+	}
+}
+
+// agrees tells whether the screen shows a number of the command, to the digits that
+// it shows.
+func agrees(t *testing.T, shown string, x float64) {
+	t.Helper()
+	_, decimals, _ := strings.Cut(shown, ".")
+	if want := fmt.Sprintf("%.*f", len(decimals), x); shown != want {
+		t.Errorf("the screen says %s, the command %v", shown, x)
 	}
 }
 

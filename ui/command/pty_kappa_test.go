@@ -2,14 +2,7 @@
 
 package command_test
 
-import (
-	"encoding/json"
-	"fmt"
-	"os"
-	"os/exec"
-	"strings"
-	"testing"
-)
+import "testing"
 
 // The Kappa page of the whole program: it says what the command says, a long Monte
 // Carlo tells how far it is, and Esc keeps what there is.
@@ -21,27 +14,13 @@ func TestKappaOnScreen(t *testing.T) {
 	s.types("\t\t")
 	seen := s.sees(`activation κ is ([0-9.]+) ± ([0-9.]+)`)
 
-	self, err := os.Executable()
-	if err != nil {
-		t.Fatal(err)
-	}
-	out, err := (&exec.Cmd{Path: self, Args: []string{"dropcrest", "kappa", "--as", "json"}, Env: u.env()}).Output()
-	if err != nil {
-		t.Fatal(err)
-	}
 	var answer struct {
 		Kappa    float64 `json:"kappa"`
 		Standard float64 `json:"standard_uncertainty"`
 	}
-	if err := json.Unmarshal(out, &answer); err != nil {
-		t.Fatal(err)
-	}
-	for i, x := range []float64{answer.Kappa, answer.Standard} {
-		decimals := len(seen[i+1]) - strings.Index(seen[i+1], ".") - 1
-		if want := fmt.Sprintf("%.*f", decimals, x); seen[i+1] != want {
-			t.Errorf("the screen says %s, the command %v", seen[i+1], x)
-		}
-	}
+	u.facts(t, "kappa", &answer)
+	agrees(t, seen[1], answer.Kappa)
+	agrees(t, seen[2], answer.Standard)
 
 	s.types(right + right + right + right + right)
 	s.sees(`<100000>`)

@@ -3,7 +3,6 @@
 package command_test
 
 import (
-	"encoding/json"
 	"fmt"
 	"os"
 	"os/exec"
@@ -63,24 +62,11 @@ func TestCrestOnScreen(t *testing.T) {
 	s := u.run(t, 80, 24)
 	seen := s.sees(`at ([0-9.]+) % supersaturation`)[1]
 
-	self, err := os.Executable()
-	if err != nil {
-		t.Fatal(err)
-	}
-	out, err := (&exec.Cmd{Path: self, Args: []string{"dropcrest", "curve", "--as", "json"}, Env: u.env()}).Output()
-	if err != nil {
-		t.Fatal(err)
-	}
 	var answer struct {
 		S float64 `json:"critical_supersaturation_percent"`
 	}
-	if err := json.Unmarshal(out, &answer); err != nil {
-		t.Fatal(err)
-	}
-	decimals := len(seen) - strings.Index(seen, ".") - 1
-	if want := fmt.Sprintf("%.*f", decimals, answer.S); seen != want {
-		t.Errorf("the screen says %s %%, the command %v %%", seen, answer.S)
-	}
+	u.facts(t, "curve", &answer)
+	agrees(t, seen, answer.S)
 }
 
 // An arrow key that arrives in two pieces is one arrow key; pieces that arrive
