@@ -3,6 +3,8 @@ package koehler
 import (
 	"math"
 	"testing"
+
+	"dropcrest/koehler/internal/computed"
 )
 
 type adsorptionCase struct {
@@ -38,7 +40,7 @@ func (c adsorptionCase) film() Adsorption {
 }
 
 func TestAdsorptionAgainstComputed(t *testing.T) {
-	for _, c := range computedCases[adsorptionCase](t, "adsorption.json") {
+	for _, c := range computed.Read[adsorptionCase](t, "adsorption.json") {
 		t.Run(c.ID, func(t *testing.T) {
 			if c.Output.N != 1 || c.Output.Note != nil {
 				t.Fatalf("the case has %d maxima and the note %v; written for one and none", c.Output.N, c.Output.Note)

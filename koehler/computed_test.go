@@ -1,11 +1,10 @@
 package koehler
 
 import (
-	"encoding/json"
 	"math"
-	"os"
 	"testing"
 
+	"dropcrest/koehler/internal/computed"
 	"dropcrest/solutes"
 )
 
@@ -20,24 +19,6 @@ type computedCase struct {
 
 func (c computedCase) in(key string) float64 { x, _ := c.Input[key].(float64); return x }
 
-func readComputed(t *testing.T, name string) []computedCase {
-	t.Helper()
-	text, err := os.ReadFile("../testdata/computed/" + name)
-	if err != nil {
-		t.Fatal(err)
-	}
-	var file struct {
-		Cases []computedCase `json:"cases"`
-	}
-	if err := json.Unmarshal(text, &file); err != nil {
-		t.Fatal(err)
-	}
-	if len(file.Cases) == 0 {
-		t.Fatalf("%s holds no cases", name)
-	}
-	return file.Cases
-}
-
 func checkClose(t *testing.T, what string, got, want, tol float64) {
 	t.Helper()
 	if d := math.Abs(got - want); !(d <= tol*math.Abs(want)) {
@@ -48,7 +29,7 @@ func checkClose(t *testing.T, what string, got, want, tol float64) {
 // The reference's Kelvin length is given to full precision, so s_c must agree
 // to rounding.
 func TestSolveKappaAgainstComputed(t *testing.T) {
-	for _, c := range readComputed(t, "koehler_kappa.json") {
+	for _, c := range computed.Read[computedCase](t, "koehler_kappa.json") {
 		dry, kappa, A := c.in("Dd"), c.in("kappa"), c.Output["A"]
 		got := SolveKappa(dry, A, kappa)
 		checkClose(t, c.ID+" sc", got.Supersaturation, c.Output["sc"], 1e-14)
@@ -120,7 +101,7 @@ func referenceSalt(name, model string, rhoWater float64) (s pitzerSalt, incremen
 }
 
 func TestSaltsAgainstComputed(t *testing.T) {
-	for _, c := range readComputed(t, "koehler_solutes.json") {
+	for _, c := range computed.Read[computedCase](t, "koehler_solutes.json") {
 		if c.Input["molality"] != nil {
 			continue // osmotic tables: package solutes
 		}
@@ -151,7 +132,7 @@ func TestSaltsAgainstComputed(t *testing.T) {
 
 func TestInversesAgainstComputed(t *testing.T) {
 	const R, Mw = 8.314462618, 0.01801528 // the reference's
-	for _, c := range readComputed(t, "inverse.json") {
+	for _, c := range computed.Read[computedCase](t, "inverse.json") {
 		T := c.in("T")
 		A := 4 * c.in("sigma_factor") * atmosTension(T) * Mw / (R * T * atmosDensity(T))
 		switch c.Family {

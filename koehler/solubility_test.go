@@ -1,35 +1,13 @@
 package koehler
 
 import (
-	"encoding/json"
 	"math"
-	"os"
 	"testing"
 
 	"dropcrest/atmos"
+	"dropcrest/koehler/internal/computed"
 	"dropcrest/solutes"
 )
-
-// computedCases reads a file of values from general-purpose numerical
-// libraries; the README beside it states the equations.
-func computedCases[Case any](t testing.TB, name string) []Case {
-	t.Helper()
-	data, err := os.ReadFile("../testdata/computed/" + name)
-	if err != nil {
-		t.Fatal(err)
-	}
-	var file struct {
-		Count int    `json:"n_cases"`
-		Cases []Case `json:"cases"`
-	}
-	if err := json.Unmarshal(data, &file); err != nil {
-		t.Fatal(err)
-	}
-	if file.Count == 0 || len(file.Cases) != file.Count {
-		t.Fatalf("%s: %d cases, %d announced", name, len(file.Cases), file.Count)
-	}
-	return file.Cases
-}
 
 // apart returns |got/want - 1|, or the absolute difference for want = 0.
 func apart(got, want float64) float64 {
@@ -98,7 +76,7 @@ var kindWords = map[Kind]string{Maximum: "max", Minimum: "min", KinkMinimum: "ki
 // Every extremum of every case, its kind and its place, and the kinks where
 // nothing turns. s is compared where S has no cancellation left to hide it.
 func TestLimitedAgainstComputed(t *testing.T) {
-	for _, c := range computedCases[limitedCase](t, "limited_solubility.json") {
+	for _, c := range computed.Read[limitedCase](t, "limited_solubility.json") {
 		t.Run(c.ID, func(t *testing.T) {
 			if d := apart(lengthAt(c.Input.T, c.Input.SigmaFactor), c.Output.A); d > 1e-10 {
 				t.Errorf("Kelvin length: %.2g apart", d)

@@ -6,6 +6,7 @@ import (
 	"testing"
 
 	"dropcrest/atmos"
+	"dropcrest/koehler/internal/computed"
 	"dropcrest/solutes"
 )
 
@@ -82,7 +83,7 @@ func mustSurface(t testing.TB, dry, T float64, p Surfactant, salt Salt) *Surface
 const surfaceTolerance = 2e-10
 
 func TestSurfaceActiveAgainstComputed(t *testing.T) {
-	for _, c := range computedCases[surfaceCase](t, "surface_active.json") {
+	for _, c := range computed.Read[surfaceCase](t, "surface_active.json") {
 		t.Run(c.ID, func(t *testing.T) {
 			for _, mode := range []struct {
 				name         string

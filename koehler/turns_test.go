@@ -8,6 +8,7 @@ import (
 	"testing"
 
 	"dropcrest/atmos"
+	"dropcrest/koehler/internal/computed"
 	"dropcrest/solutes"
 )
 
@@ -154,19 +155,19 @@ func TestParticlesAgainstComputed(t *testing.T) {
 	tension := func(T, factor float64) solutes.Tension {
 		return solutes.ConstantTension(factor * atmos.SurfaceTension(T))
 	}
-	for _, c := range computedCases[limitedCase](t, "limited_solubility.json") {
+	for _, c := range computed.Read[limitedCase](t, "limited_solubility.json") {
 		p := Particle{DryDiameter: c.Input.Dd, Temperature: c.Input.T, Solution: c.mix(t), Tension: tension(c.Input.T, c.Input.SigmaFactor)}
 		check(c.ID, p, nil, c.Output.Barrier.Small, c.Output.Barrier.D, c.Output.NMaxima)
 		if crest, err := p.Crest(); err != nil || crest.Place.String() != c.Output.BarrierIs {
 			t.Errorf("%s: the barrier is the %s maximum (%v), want %s", c.ID, crest.Place, err, c.Output.BarrierIs)
 		}
 	}
-	for _, c := range computedCases[adsorptionCase](t, "adsorption.json") {
+	for _, c := range computed.Read[adsorptionCase](t, "adsorption.json") {
 		p, err := c.film().Particle(c.Input.Dd, c.Input.T)
 		p.Tension = tension(c.Input.T, c.Input.SigmaFactor)
 		check(c.ID, p, err, c.Output.Small, c.Output.Dc, c.Output.N)
 	}
-	for _, c := range computedCases[surfaceCase](t, "surface_active.json") {
+	for _, c := range computed.Read[surfaceCase](t, "surface_active.json") {
 		for _, mode := range []struct {
 			partitioning bool
 			want         surfaceCrest

@@ -7,6 +7,8 @@ import (
 	"os"
 	"strconv"
 	"testing"
+
+	"dropcrest/koehler/internal/computed"
 )
 
 func mustRun(t testing.TB, p Parcel, o Options) Result {
@@ -34,7 +36,7 @@ func TestLongAscentsAgainstComputed(t *testing.T) {
 }
 
 func ascents(t *testing.T, bins int, tol, peak, end float64) {
-	for _, c := range readComputed(t, "parcel.json") {
+	for _, c := range computed.Read[computedCase](t, "parcel.json") {
 		want := c.AtFixed[strconv.Itoa(bins)]
 		got := mustRun(t, c.Input.parcel(), c.Input.options(t, bins, tol))
 		near(t, c.ID+" peak", got.Peak.Supersaturation, want["smax"], peak)
@@ -57,7 +59,7 @@ func ascents(t *testing.T, bins int, tol, peak, end float64) {
 }
 
 func TestOtherTransitionsAgainstComputed(t *testing.T) {
-	for _, c := range readComputed(t, "parcel.json") {
+	for _, c := range computed.Read[computedCase](t, "parcel.json") {
 		for name, want := range c.Kinetics {
 			o := c.Input.options(t, 400, 1e-6)
 			o.Transition = transitionOf(t, name)
@@ -70,7 +72,7 @@ func TestOtherTransitionsAgainstComputed(t *testing.T) {
 }
 
 func TestProfilesAgainstComputed(t *testing.T) {
-	for _, c := range readComputed(t, "parcel.json") {
+	for _, c := range computed.Read[computedCase](t, "parcel.json") {
 		if len(c.Profile) == 0 {
 			continue
 		}
@@ -99,7 +101,7 @@ func TestProfilesAgainstComputed(t *testing.T) {
 // The extrapolation to infinitely many bins is what the reference calls its output.
 func TestLongManyBinsAgainstComputed(t *testing.T) {
 	needLong(t)
-	for _, c := range readComputed(t, "parcel.json") {
+	for _, c := range computed.Read[computedCase](t, "parcel.json") {
 		got, err := Refine(context.Background(), c.Input.parcel(), c.Input.options(t, 400, 1e-7))
 		if err != nil {
 			t.Fatal(err)
@@ -123,7 +125,7 @@ func TestLongManyBinsAgainstComputed(t *testing.T) {
 // Who has grown, narrowed down by probes, as in the reference. A size counts whose
 // drop is past its crest at the end; the sum over bins lies off by up to 2 %.
 func TestGrownAgainstComputed(t *testing.T) {
-	for _, c := range readComputed(t, "parcel.json") {
+	for _, c := range computed.Read[computedCase](t, "parcel.json") {
 		o := c.Input.options(t, 400, 1e-6)
 		o.Probes = 60
 		got := mustRun(t, c.Input.parcel(), o)
@@ -152,7 +154,7 @@ func TestChoicesAgainstComputed(t *testing.T) {
 		t.Fatal(err)
 	}
 	cases := map[string]computedCase{}
-	for _, c := range readComputed(t, "parcel.json") {
+	for _, c := range computed.Read[computedCase](t, "parcel.json") {
 		cases[c.ID] = c
 	}
 	for _, e := range effects {

@@ -4,6 +4,8 @@ import (
 	"context"
 	"fmt"
 	"testing"
+
+	"dropcrest/koehler/internal/computed"
 )
 
 // Aim: 4 ms for 200 bins in two modes to 300 m at a tolerance of 1e-5; time in
@@ -85,7 +87,7 @@ func BenchmarkSweep(b *testing.B) {
 // The reference's own cases at 200 bins a mode, to be set against the timing in
 // parcel.json (README 8). Aim: 100 times faster than BDF at the same tolerance.
 func BenchmarkReference(b *testing.B) {
-	for _, c := range readComputed(b, "parcel.json") {
+	for _, c := range computed.Read[computedCase](b, "parcel.json") {
 		for _, tol := range []float64{1e-5, 1e-6} {
 			b.Run(fmt.Sprintf("%s/%.0e", c.ID, tol), func(b *testing.B) {
 				p, o := c.Input.parcel(), c.Input.options(b, 200, tol)

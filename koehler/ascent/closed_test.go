@@ -7,12 +7,13 @@ import (
 
 	"dropcrest/atmos/aerosol"
 	"dropcrest/koehler"
+	"dropcrest/koehler/internal/computed"
 	"dropcrest/solutes"
 )
 
 func TestClosedFormsAgainstComputed(t *testing.T) {
 	n := 0
-	for _, c := range readComputed(t, "parameterisations.json") {
+	for _, c := range computed.Read[computedCase](t, "parameterisations.json") {
 		if c.Family == "twomey_power_law" {
 			n++
 			got := TwomeyPower(c.Input.C, c.Input.K, c.Input.T0, c.Input.P0, c.Input.W)

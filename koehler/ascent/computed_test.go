@@ -1,14 +1,13 @@
 package ascent
 
 import (
-	"encoding/json"
 	"math"
-	"os"
 	"strings"
 	"testing"
 
 	"dropcrest/atmos"
 	"dropcrest/atmos/aerosol"
+	"dropcrest/koehler/internal/computed"
 )
 
 // computedCase is one case of ../../testdata/computed, described in the README
@@ -47,22 +46,6 @@ type computedInput struct {
 
 func (c computedCase) out(key string) float64 { x, _ := c.Output[key].(float64); return x }
 
-func readComputed(t testing.TB, name string) []computedCase {
-	t.Helper()
-	text, err := os.ReadFile("../../testdata/computed/" + name)
-	if err != nil {
-		t.Fatal(err)
-	}
-	var file struct{ Cases []computedCase }
-	if err := json.Unmarshal(text, &file); err != nil {
-		t.Fatal(err)
-	}
-	if len(file.Cases) == 0 {
-		t.Fatalf("%s holds no cases", name)
-	}
-	return file.Cases
-}
-
 func near(t *testing.T, what string, got, want, tol float64) {
 	t.Helper()
 	if d := math.Abs(got - want); !(d <= tol*math.Abs(want)) && got != want {
@@ -100,7 +83,7 @@ const referenceR = 1e-10
 
 func TestGrowthAgainstComputed(t *testing.T) {
 	n := 0
-	for _, c := range readComputed(t, "growth.json") {
+	for _, c := range computed.Read[computedCase](t, "growth.json") {
 		if c.Family == "parcel_start_200_bins" {
 			continue
 		}
@@ -140,7 +123,7 @@ func TestGrowthAgainstComputed(t *testing.T) {
 
 func TestStartsAgainstComputed(t *testing.T) {
 	n := 0
-	for _, c := range readComputed(t, "growth.json") {
+	for _, c := range computed.Read[computedCase](t, "growth.json") {
 		if c.Family != "parcel_start_200_bins" {
 			continue
 		}

@@ -3,6 +3,8 @@ package ascent
 import (
 	"os"
 	"testing"
+
+	"dropcrest/koehler/internal/computed"
 )
 
 func needLong(t *testing.T) {
@@ -19,7 +21,7 @@ func needLong(t *testing.T) {
 // 0.9 lies inside the range.
 func TestKreidenweis(t *testing.T) {
 	inside := 0
-	for _, c := range readComputed(t, "kreidenweis2003.json") {
+	for _, c := range computed.Read[computedCase](t, "kreidenweis2003.json") {
 		got := mustRun(t, c.Input.parcel(), c.Input.options(t, 800, 1e-6)) // N_growth_bin_width says 800
 		near(t, c.ID+" peak", got.Peak.Supersaturation, c.out("smax"), 2e-5)
 		near(t, c.ID+" droplets", got.Droplets, c.out("N_act"), 2e-5)

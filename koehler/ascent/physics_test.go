@@ -9,6 +9,7 @@ import (
 	"dropcrest/atmos"
 	"dropcrest/atmos/aerosol"
 	"dropcrest/koehler"
+	"dropcrest/koehler/internal/computed"
 )
 
 // Without particles T falls as g/c_p, p as a power of T, and S follows from both.
@@ -153,7 +154,7 @@ func TestStress(t *testing.T) { stress(t, Options{Bins: 40, Height: 1000}, conti
 func TestLongStress(t *testing.T) {
 	needLong(t)
 	var all []Parcel
-	for _, c := range readComputed(t, "parcel.json") {
+	for _, c := range computed.Read[computedCase](t, "parcel.json") {
 		all = append(all, c.Input.parcel())
 	}
 	for _, o := range []Options{{}, {Transition: FluxMatching, MassAccommodation: 0.04}, {Transition: Continuum, MoistHeat: true}, {Bins: 13}} {

@@ -4,30 +4,22 @@ import (
 	"encoding/json"
 	"fmt"
 	"math"
-	"os"
 	"strconv"
 	"testing"
+
+	"dropcrest/koehler/internal/computed"
 )
 
 // dma.json of testdata/computed: general-purpose libraries, README there, section
 // 10. It takes k and e in all digits.
 func TestComputedCharges(t *testing.T) {
-	text, err := os.ReadFile("../../testdata/computed/dma.json")
-	if err != nil {
-		t.Fatal(err)
-	}
-	var file struct {
-		Cases []struct {
-			ID, Family string
-			Input      map[string]float64
-			Output     json.RawMessage
-		}
-	}
-	if err := json.Unmarshal(text, &file); err != nil {
-		t.Fatal(err)
+	type chargeCase struct {
+		Family, ID string
+		Input      map[string]float64
+		Output     json.RawMessage
 	}
 	checked := 0
-	for _, c := range file.Cases {
+	for _, c := range computed.Read[chargeCase](t, "dma.json") {
 		if c.Family != "mobility_and_charge" {
 			continue
 		}

@@ -1,34 +1,24 @@
 package kappa
 
 import (
-	"encoding/json"
 	"math"
-	"os"
 	"testing"
 
 	"dropcrest/atmos"
+	"dropcrest/koehler/internal/computed"
 )
 
 // inverse.json of testdata/computed: 40 digits by another library, README there,
 // section 6. Its R has ten digits, which leaves 2e-11 in A, 6e-11 in κ, and more
 // near κ = 0 where κ is a small difference.
 func TestComputedInverses(t *testing.T) {
-	text, err := os.ReadFile("../../testdata/computed/inverse.json")
-	if err != nil {
-		t.Fatal(err)
-	}
-	var file struct {
-		Cases []struct {
-			ID, Family string
-			Input      map[string]float64
-			Output     map[string]*float64
-		}
-	}
-	if err := json.Unmarshal(text, &file); err != nil {
-		t.Fatal(err)
+	type inverseCase struct {
+		ID, Family string
+		Input      map[string]float64
+		Output     map[string]*float64
 	}
 	checked := map[string]int{}
-	for _, c := range file.Cases {
+	for _, c := range computed.Read[inverseCase](t, "inverse.json") {
 		in := c.Input
 		w := Convention{in["T"], in["sigma_factor"] * atmos.SurfaceTension(in["T"])}
 		check := func(key string, got float64) {

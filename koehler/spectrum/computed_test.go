@@ -1,14 +1,13 @@
 package spectrum
 
 import (
-	"encoding/json"
 	"errors"
 	"math"
-	"os"
 	"testing"
 
 	"dropcrest/atmos"
 	"dropcrest/atmos/aerosol"
+	"dropcrest/koehler/internal/computed"
 )
 
 // computedCase is one case of ../../testdata/computed, described in the README
@@ -17,22 +16,6 @@ type computedCase[I, O any] struct {
 	ID, Family string
 	Input      I
 	Output     O
-}
-
-func readComputed[I, O any](t *testing.T, name string) []computedCase[I, O] {
-	t.Helper()
-	text, err := os.ReadFile("../../testdata/computed/" + name)
-	if err != nil {
-		t.Fatal(err)
-	}
-	var file struct{ Cases []computedCase[I, O] }
-	if err := json.Unmarshal(text, &file); err != nil {
-		t.Fatal(err)
-	}
-	if len(file.Cases) == 0 {
-		t.Fatalf("%s holds no cases", name)
-	}
-	return file.Cases
 }
 
 func near(t *testing.T, what string, got, want, tol float64) {
@@ -97,7 +80,7 @@ func TestSpectraAgainstComputed(t *testing.T) {
 		NTotal float64 `json:"N_total"`
 	}
 	seen := map[string]int{}
-	for _, c := range readComputed[spectraInput, output](t, "spectra.json") {
+	for _, c := range computed.Read[computedCase[spectraInput, output]](t, "spectra.json") {
 		seen[c.Family]++
 		tol := 1e-9
 		if c.Family == "kappa_spread" {
@@ -132,7 +115,7 @@ func TestKappaOfCountAgainstComputed(t *testing.T) {
 	}
 	type output struct{ Kappa, Dd float64 }
 	n := 0
-	for _, c := range readComputed[input, output](t, "inverse.json") {
+	for _, c := range computed.Read[computedCase[input, output]](t, "inverse.json") {
 		A := referenceKelvin(c.Input.T, c.Input.SigmaFactor)
 		kappa, dry, tol := c.Output.Kappa, c.Input.Dd, 1e-9
 		switch {
