@@ -5,19 +5,24 @@ import (
 	"testing"
 )
 
+// hold presses two keys in turn, each followed by its screen.
+func hold(b *testing.B, m *model, there, back string) {
+	keys := []string{there, back}
+	n := 0
+	b.ReportAllocs()
+	for b.Loop() {
+		m.Update(keyOf(keys[n%2]))
+		m.View()
+		n++
+	}
+}
+
 // A key that changes the answer, from the key to the finished screen.
 func BenchmarkStep(b *testing.B) {
 	for _, size := range [][2]int{{80, 24}, {200, 50}} {
 		b.Run(fmt.Sprintf("%dx%d", size[0], size[1]), func(b *testing.B) {
 			m := opened(onTerminal("colour"), size[0], size[1])
-			keys := []string{"up", "down"}
-			n := 0
-			b.ReportAllocs()
-			for b.Loop() {
-				m.Update(keyOf(keys[n%2]))
-				m.View()
-				n++
-			}
+			hold(b, m, "up", "down")
 		})
 	}
 }
@@ -25,14 +30,7 @@ func BenchmarkStep(b *testing.B) {
 // A key that moves the choice: the picture is kept.
 func BenchmarkMove(b *testing.B) {
 	m := opened(onTerminal("colour"), 80, 24)
-	keys := []string{"right", "left"}
-	n := 0
-	b.ReportAllocs()
-	for b.Loop() {
-		m.Update(keyOf(keys[n%2]))
-		m.View()
-		n++
-	}
+	hold(b, m, "right", "left")
 }
 
 // A key that goes to the next record of the demo, from the key to the finished
@@ -40,12 +38,5 @@ func BenchmarkMove(b *testing.B) {
 func BenchmarkRecord(b *testing.B) {
 	m := opened(onTerminal("colour"), 80, 24)
 	press(m, "tab")
-	keys := []string{"n", "p"}
-	n := 0
-	b.ReportAllocs()
-	for b.Loop() {
-		m.Update(keyOf(keys[n%2]))
-		m.View()
-		n++
-	}
+	hold(b, m, "n", "p")
 }

@@ -7,7 +7,6 @@ import (
 	"testing"
 
 	tea "github.com/charmbracelet/bubbletea"
-	"github.com/charmbracelet/x/exp/golden"
 
 	"dropcrest/ui/answer"
 	"dropcrest/ui/scenario"
@@ -34,12 +33,7 @@ const (
 // The Kappa page as a person sees it.
 func TestKappaScreens(t *testing.T) {
 	three := points(activated, scanned, grown)
-	for name, c := range map[string]struct {
-		terminal string
-		w, h     int
-		keys     string
-		from     func(*scenario.Scenario)
-	}{
+	look(t, "tab tab ", map[string]sight{
 		"start_80x24":       {"plain", 80, 24, "", nil},
 		"start_80x24_ascii": {"ascii", 80, 24, "", nil},
 		"start_160x48":      {"plain", 160, 48, "", nil},
@@ -51,17 +45,7 @@ func TestKappaScreens(t *testing.T) {
 		"growth_80x24":      {"plain", 80, 24, "", points(grown)},
 		"further_80x24":     {"plain", 80, 24, "end left enter", nil},
 		"why_80x24":         {"plain", 80, 24, "end i", nil},
-	} {
-		t.Run(name, func(t *testing.T) {
-			o := onTerminal(c.terminal)
-			if c.from != nil {
-				c.from(&o.Scenario)
-			}
-			m := opened(o, c.w, c.h)
-			press(m, "tab tab "+c.keys)
-			golden.RequireEqual(t, []byte(m.View()+"\n"))
-		})
-	}
+	})
 }
 
 // The measurements of the demo are looked at by keys alone.

@@ -8,20 +8,13 @@ import (
 	"strings"
 	"testing"
 
-	"github.com/charmbracelet/x/exp/golden"
-
 	"dropcrest/ui/scenario"
 )
 
 // The Spectrum page as a person sees it, from the demo on.
 func TestSpectrumScreens(t *testing.T) {
 	modes := func(s *scenario.Scenario) { s.Population, s.Fit = "modes", "power" }
-	for name, c := range map[string]struct {
-		terminal string
-		w, h     int
-		keys     string
-		from     func(*scenario.Scenario)
-	}{
+	look(t, "tab ", map[string]sight{
 		"start_80x24":       {"plain", 80, 24, "", nil},
 		"start_80x24_ascii": {"ascii", 80, 24, "", nil},
 		"start_160x48":      {"plain", 160, 48, "", nil},
@@ -34,17 +27,7 @@ func TestSpectrumScreens(t *testing.T) {
 		"modes_80x24":       {"plain", 80, 24, "", modes},
 		"mode_rows_160x48":  {"plain", 160, 48, "right enter tab", modes},
 		"why_80x24":         {"plain", 80, 24, "end i", nil},
-	} {
-		t.Run(name, func(t *testing.T) {
-			o := onTerminal(c.terminal)
-			if c.from != nil {
-				c.from(&o.Scenario)
-			}
-			m := opened(o, c.w, c.h)
-			press(m, "tab "+c.keys)
-			golden.RequireEqual(t, []byte(m.View()+"\n"))
-		})
-	}
+	})
 }
 
 // With keys alone a person comes from three files to the closure and to kappa: the

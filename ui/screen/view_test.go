@@ -8,7 +8,6 @@ import (
 
 	tea "github.com/charmbracelet/bubbletea"
 	"github.com/charmbracelet/x/ansi"
-	"github.com/charmbracelet/x/exp/golden"
 
 	"dropcrest/ui/scenario"
 )
@@ -16,40 +15,23 @@ import (
 // The page as a person sees it: on the usual window, a large one, the least one,
 // without UTF-8, and once with its colours.
 func TestScreens(t *testing.T) {
-	for name, c := range map[string]struct {
-		terminal string
-		w, h     int
-		keys     string
-	}{
-		"start_80x24":        {"plain", 80, 24, ""},
-		"start_80x24_ascii":  {"ascii", 80, 24, ""},
-		"start_80x24_colour": {"colour", 80, 24, ""},
-		"start_160x48":       {"plain", 160, 48, ""},
-		"start_60x18":        {"plain", 60, 18, ""},
-		"held_80x24":         {"plain", 80, 24, "space pgup"},
-		"held_80x24_ascii":   {"ascii", 80, 24, "space pgup o"},
-		"finding_80x24":      {"plain", 80, 24, "end"},
-		"entry_80x24":        {"plain", 80, 24, "5 0"},
-		"undone_80x24":       {"plain", 80, 24, "up up right right u"},
-		"long_80x24":         {"plain", 80, 24, "right down home right right right down"},
-		"small_40x10":        {"plain", 40, 10, ""},
-		"rows_80x24":         {"plain", 80, 24, "right right enter a"},
-		"further_80x24":      {"plain", 80, 24, "end left enter tab down"},
-		"readme":             {"plain", 80, 24, "space pgup"},
-	} {
-		t.Run(name, func(t *testing.T) {
-			m := opened(onTerminal(c.terminal), c.w, c.h)
-			press(m, c.keys)
-			view := m.View()
-			golden.RequireEqual(t, []byte(view+"\n"))
-			if c.terminal != "colour" && strings.Contains(view, "\x1b") {
-				t.Error("NO_COLOR is set and the screen has an escape sequence")
-			}
-			if c.terminal == "ascii" && strings.ContainsFunc(view, func(r rune) bool { return r > '~' }) {
-				t.Error("the locale is ASCII and the screen is not")
-			}
-		})
-	}
+	look(t, "", map[string]sight{
+		"start_80x24":        {"plain", 80, 24, "", nil},
+		"start_80x24_ascii":  {"ascii", 80, 24, "", nil},
+		"start_80x24_colour": {"colour", 80, 24, "", nil},
+		"start_160x48":       {"plain", 160, 48, "", nil},
+		"start_60x18":        {"plain", 60, 18, "", nil},
+		"held_80x24":         {"plain", 80, 24, "space pgup", nil},
+		"held_80x24_ascii":   {"ascii", 80, 24, "space pgup o", nil},
+		"finding_80x24":      {"plain", 80, 24, "end", nil},
+		"entry_80x24":        {"plain", 80, 24, "5 0", nil},
+		"undone_80x24":       {"plain", 80, 24, "up up right right u", nil},
+		"long_80x24":         {"plain", 80, 24, "right down home right right right down", nil},
+		"small_40x10":        {"plain", 40, 10, "", nil},
+		"rows_80x24":         {"plain", 80, 24, "right right enter a", nil},
+		"further_80x24":      {"plain", 80, 24, "end left enter tab down", nil},
+		"readme":             {"plain", 80, 24, "space pgup", nil},
+	})
 }
 
 // states are keys that lead to every state of the page, and the scenario they
