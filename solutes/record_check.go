@@ -99,26 +99,72 @@ func (s *Substance) physical(in *recordReader) {
 	if s.Ion == nil || missing(*s) != nil {
 		return
 	}
-	const rhoWater = 997.05
-	salt, err := NewSalt(SaltInput{Ion: s.Ion, Concentrated: s.Concentrated, MolarMass: s.MolarMass.Value,
-		Density: s.Density.Value, Hydration: s.Hydration.Value, WaterDensity: rhoWater, Temperature: referenceTemperature})
-	if err != nil {
-		in.fail("ion", "not usable", err.Error())
-		return
-	}
-	for m := 1e-6; m < 2*salt.MaxMolality() && salt.Water(m) > 0; m *= 1.02 {
-		lnaw, slope := salt.LnActivity(salt.Water(m))
-		if !(lnaw < 0 && slope > 0) || math.IsInf(lnaw, 0) {
-			field := "ion"
-			if m > salt.low {
-				field = "concentrated"
-			}
-			in.fail(field, fmt.Sprintf("such that the water activity does not fall with concentration at %.3g mol/kg", m),
-				"checked against its source, or of a shorter range")
+	for _, T := range s.checkedTemperatures() {
+		if !s.physicalAt(T, in) {
 			return
 		}
 	}
 }
+
+// checkedTemperatures are those (K) at which a record must make sense: all of the
+// troposphere, the ends of its own temperature terms, and 25 °C.
+func (s *Substance) checkedTemperatures() []float64 {
+	temperatures := []float64{referenceTemperature}
+	if s.Ion == nil {
+		return temperatures
+	}
+	for T := 233.15; T < 320; T += 10 {
+		temperatures = append(temperatures, T)
+	}
+	if t := s.Ion.Temperature; t != nil {
+		temperatures = append(temperatures, t.Low, t.High)
+	}
+	return temperatures
+}
+
+// physicalAt is physical for ion interaction at the temperature T (K).
+func (s *Substance) physicalAt(T float64, in *recordReader) bool {
+	const rhoWater = 997.05
+	salt, err := NewSalt(SaltInput{Ion: s.Ion, Concentrated: s.Concentrated, MolarMass: s.MolarMass.Value,
+		Density: s.Density.Value, Hydration: s.Hydration.Value, WaterDensity: rhoWater, Temperature: T})
+	if err != nil {
+		in.fail("ion", "not usable", err.Error())
+		return false
+	}
+	falls := func(m float64) bool {
+		if salt.Water(m) <= 0 {
+			return true
+		}
+		lnaw, slope := salt.LnActivity(salt.Water(m))
+		if lnaw < 0 && slope > 0 && !math.IsInf(lnaw, 0) {
+			return true
+		}
+		field := "ion"
+		if m > salt.low {
+			field = "concentrated"
+			if salt.extended {
+				field = "ion.extended"
+			}
+		}
+		in.fail(field, fmt.Sprintf("such that the water activity does not fall with concentration at %.3g mol/kg and %.4g K", m, T),
+			"checked against its source, or of a shorter range")
+		return false
+	}
+	for m := 1e-6; m < 2*salt.MaxMolality(); m *= 1.02 {
+		if !falls(m) {
+			return false
+		}
+	}
+	for i := 1; i < joinSteps && salt.high < math.Inf(1); i++ { // however narrow it is
+		if !falls(salt.low + (salt.high-salt.low)*float64(i)/joinSteps) {
+			return false
+		}
+	}
+	return true
+}
+
+// joinSteps is how finely the window between two models is looked at.
+const joinSteps = 64
 
 // physicalOwn is physical for data that are joined to a model of the substance's own.
 func (s *Substance) physicalOwn(in *recordReader) {

@@ -142,6 +142,8 @@ func TestRecordErrors(t *testing.T) {
 		{"join beyond the ions", inside("concentrated", "join_high", 6.), RecordError{"salt", "concentrated.join_high", "6", "at most 5.5 mol/kg, where the ion parameters end"}},
 		{"rising activity", inside("concentrated", "activity", []any{0.01}), RecordError{"salt", "concentrated",
 			"such that the water activity does not fall with concentration", "checked against its source"}},
+		{"rising activity in the cold", inside("ion", "temperature", map[string]any{"low": 230., "high": 300., "beta0": []any{0., 0., 0.1, 0.}}),
+			RecordError{"salt", "ion", "such that the water activity does not fall with concentration at", "checked against its source"}},
 		{"adsorbing salt", inside("", "adsorption", map[string]any{"a": 1., "b": 1.}), RecordError{"salt", "ions", "3", "0, insoluble, where adsorption is given"}},
 		{"half an isotherm", inside("", "adsorption", map[string]any{"a": 1.}), RecordError{"salt", "adsorption.b", "nothing", "a number"}},
 		{"bounds", inside("", "kappa", map[string]any{"value": 0.5, "low": 0.6}), RecordError{"salt", "kappa.low", "0.6", "at most the value 0.5"}},
