@@ -1,12 +1,10 @@
 package ledger
 
 import (
-	"fmt"
 	"math"
 	"sort"
 
 	"dropcrest/atmos"
-	"dropcrest/koehler"
 )
 
 // Contribution is the part of the uncertainty that one input makes.
@@ -38,16 +36,9 @@ type Budget struct {
 	// tension did not follow it.
 	FixedTension Values
 
-	model  *deviating
+	model  Model
 	inputs []Input
 }
-
-// Steps of the central differences: large beside the rounding of the crests, and
-// their squares small beside the digits that a budget has.
-const (
-	relativeStep    = 1e-3
-	temperatureStep = 0.05 // K
-)
 
 // NewBudget propagates the uncertainties of the inputs, those of Ledger.Inputs as
 // they are or with uncertainties of the caller's own, through the fullest model.
@@ -56,15 +47,11 @@ func NewBudget(l *Ledger, inputs []Input) (Budget, error) {
 	if err := check(inputs); err != nil {
 		return Budget{}, err
 	}
-	b := Budget{Answer: l.Fullest, model: l.deviating(inputs), inputs: inputs, FixedTension: none()}
+	v := l.deviating(inputs)
+	b := propagate(l.Fullest.Values, inputs, func(x *Deviation) Values { return v.answer(x).Values }, 0)
+	b.Answer = l.Fullest
 	tension, temperature := -1, -1
 	for i, in := range inputs {
-		c := Contribution{Input: in, Sensitivity: b.model.slope(in)}
-		for o := range c.Percent {
-			c.Percent[o] = 100 * c.Sensitivity[o] * in.StandardUncertainty
-			b.Combined[o] = math.Hypot(b.Combined[o], c.Percent[o])
-		}
-		b.Contributions = append(b.Contributions, c)
 		switch in.Quantity {
 		case SurfaceTension:
 			tension = i
@@ -72,56 +59,16 @@ func NewBudget(l *Ledger, inputs []Input) (Budget, error) {
 			temperature = i
 		}
 	}
-	for i := range b.Contributions {
-		c := &b.Contributions[i]
-		for o, p := range c.Percent {
-			if c.Share[o] = 0; b.Combined[o] != 0 {
-				c.Share[o] = p * p / (b.Combined[o] * b.Combined[o])
-			}
-		}
-	}
 	if tension >= 0 && temperature >= 0 {
-		b.correlate(b.Contributions[temperature], b.Contributions[tension])
+		b.correlate(v.follows(), b.Contributions[temperature], b.Contributions[tension])
 	}
 	return b, nil
 }
 
-func check(inputs []Input) error {
-	seen := [quantities]bool{}
-	for _, in := range inputs {
-		switch {
-		case in.Quantity < 0 || in.Quantity >= quantities || seen[in.Quantity]:
-			return fmt.Errorf("%w: input %d is none of a ledger, or is there twice", koehler.ErrInput, int(in.Quantity))
-		case !(in.StandardUncertainty >= 0) || math.IsInf(in.StandardUncertainty, 1):
-			return &koehler.RangeError{What: "standard uncertainty of the " + in.String(), Value: in.StandardUncertainty, Right: "0 or more"}
-		case !(in.Value > 0):
-			return &koehler.RangeError{What: in.String(), Value: in.Value, Right: "above 0"}
-		}
-		seen[in.Quantity] = true
-	}
-	return nil
-}
-
-// slope is ∂ ln y/∂x by central differences.
-func (v *deviating) slope(in Input) Values {
-	h := relativeStep * in.Value
-	if in.Quantity == Temperature {
-		h = temperatureStep
-	}
-	var up, down deviation
-	up[in.Quantity], down[in.Quantity] = h, -h
-	above, below := v.answer(&up), v.answer(&down)
-	var s Values
-	for o := range s {
-		s[o] = math.Log(above.Values[o]/below.Values[o]) / (2 * h)
-	}
-	return s
-}
-
-// correlate works out how temperature and tension hang together.
-func (b *Budget) correlate(temperature, tension Contribution) {
+// correlate works out how temperature and tension hang together; follows is dσ/dT.
+func (b *Budget) correlate(follows float64, temperature, tension Contribution) {
 	fixed := temperature.Sensitivity
-	if follows := b.model.follows(); follows != 0 {
+	if follows != 0 {
 		owed := follows * temperature.StandardUncertainty
 		if all := math.Hypot(owed, tension.StandardUncertainty); all > 0 {
 			b.Correlation = owed / all
@@ -136,7 +83,7 @@ func (b *Budget) correlate(temperature, tension Contribution) {
 // follows is dσ/dT of the drop's tension, N/(m K): 0 for a tension that was given.
 func (v *deviating) follows() float64 {
 	if v.full.dissolved.Film == nil {
-		var up, down deviation
+		var up, down Deviation
 		up[Temperature], down[Temperature] = temperatureStep, -temperatureStep
 		const dilute = 1e9
 		a, _ := v.tension(v.full.dissolved.Tension, &up).SurfaceTension(dilute)

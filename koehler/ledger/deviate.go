@@ -6,16 +6,13 @@ import (
 	"dropcrest/solutes"
 )
 
-// deviation is what each input is off by, in its unit.
-type deviation [quantities]float64
-
 // deviating makes the particle of the fullest model with inputs that are off. The
 // water activity stays that of the temperature asked for: by itself it moves the
 // crest of a salt by less than 0.02 % for a kelvin, beside 0.8 % by tension and
 // temperature of the Kelvin term.
 type deviating struct {
 	full   made
-	values deviation // of the inputs
+	values Deviation // of the inputs
 	water  float64   // tension of water, N/m
 }
 
@@ -28,14 +25,14 @@ func (l *Ledger) deviating(inputs []Input) *deviating {
 }
 
 // factor is a quantity over its value.
-func (v *deviating) factor(x *deviation, q Quantity) float64 {
+func (v *deviating) factor(x *Deviation, q Quantity) float64 {
 	if v.values[q] == 0 {
 		return 1
 	}
 	return 1 + x[q]/v.values[q]
 }
 
-func (v *deviating) answer(x *deviation) Answer {
+func (v *deviating) answer(x *Deviation) Answer {
 	p, err := v.particle(x)
 	if err != nil {
 		return Answer{Values: none(), NoCrest: err, NoHaze: err}
@@ -43,7 +40,7 @@ func (v *deviating) answer(x *deviation) Answer {
 	return answer(p, v.full.asked.SaturationRatio)
 }
 
-func (v *deviating) particle(x *deviation) (koehler.Particle, error) {
+func (v *deviating) particle(x *Deviation) (koehler.Particle, error) {
 	a, d := v.full.asked, v.full.dissolved
 	dry := a.DryDiameter + x[DryDiameter]
 	if a.Mobility {
@@ -75,7 +72,7 @@ func (v *deviating) particle(x *deviation) (koehler.Particle, error) {
 }
 
 // tension scales a tension and lets that of water follow the temperature.
-func (v *deviating) tension(t solutes.Tension, x *deviation) solutes.Tension {
+func (v *deviating) tension(t solutes.Tension, x *Deviation) solutes.Tension {
 	factor, water := v.factor(x, SurfaceTension), v.water
 	if x[Temperature] != 0 {
 		water = atmos.SurfaceTension(v.full.particle.Temperature + x[Temperature])
@@ -91,7 +88,7 @@ func (v *deviating) tension(t solutes.Tension, x *deviation) solutes.Tension {
 	return solutes.ConstantTension(factor * water)
 }
 
-func (v *deviating) film(m koehler.Making, f solutes.Film, x *deviation, solute float64) (koehler.Particle, error) {
+func (v *deviating) film(m koehler.Making, f solutes.Film, x *Deviation, solute float64) (koehler.Particle, error) {
 	f.GammaMax, f.K = f.GammaMax+x[FilmExcess], f.K+x[FilmConstant]
 	f.RestKappa *= solute
 	if f.Rest != nil {

@@ -22,8 +22,24 @@ const (
 	AdsorptionB                    // and the exponent of its layers
 	FilmExcess                     // greatest surface excess, mol/m²
 	FilmConstant                   // adsorption constant of the film, m³/mol
+
+	// of populations and of rising air, as factors of what was given where no unit is named
+	Sizes           // all dry sizes alike
+	Numbers         // of all particles alike
+	Supersaturation // at which droplets were counted
+	Updraft
+	Pressure // Pa
 	quantities
 )
+
+// Quantities returns all quantities in their order.
+func Quantities() []Quantity {
+	all := make([]Quantity, quantities)
+	for i := range all {
+		all[i] = Quantity(i)
+	}
+	return all
+}
 
 // Key returns the word that scripts see.
 func (q Quantity) Key() string { return quantityWords[q].key }
@@ -46,6 +62,11 @@ var quantityWords = [quantities]struct{ key, says, unit string }{
 	{"adsorption_b", "adsorption constant B", "1"},
 	{"film_excess", "surface excess of the film", "mol/m²"},
 	{"film_constant", "adsorption constant of the film", "m³/mol"},
+	{"sizes", "all dry sizes", "1"},
+	{"numbers", "number of particles", "1"},
+	{"supersaturation", "supersaturation of the counter", "1"},
+	{"updraft", "updraft", "1"},
+	{"pressure", "pressure", "Pa"},
 }
 
 // Input is a quantity with what is not known of it.

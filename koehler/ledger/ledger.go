@@ -34,6 +34,19 @@ type Row struct {
 	Full       Answer // what Simplified is compared with: the fullest answer unless Reason says otherwise
 	If         *If    // nil: none
 	Pressures  *Pressures
+
+	simple, whole *koehler.Particle // nil: no particle makes the assumption by itself
+}
+
+// Particles returns the particle that makes the assumption and the one it is
+// compared with, so that it can be asked of other sizes (Particle.Sized) and of
+// whole populations. ok is false where no particle makes it: a row without a number,
+// and the textbook form, whose crests are those of Particle.Textbook.
+func (r Row) Particles() (simplified, full koehler.Particle, ok bool) {
+	if r.simple == nil || r.whole == nil {
+		return koehler.Particle{}, koehler.Particle{}, false
+	}
+	return *r.simple, *r.whole, true
 }
 
 // If is what a row would cost under a condition that does not hold or is disputed.

@@ -114,11 +114,11 @@ func normal(random *rand.Rand, z []float64) []float64 {
 
 // solved solves the curve of one trial, inputs off by z standard uncertainties.
 func (b *Budget) solved(varied []Input, z []float64) Values {
-	var x deviation
+	var x Deviation
 	for i, in := range varied {
 		x[in.Quantity] = z[i] * in.StandardUncertainty
 	}
-	return b.model.answer(&x).Values
+	return b.model(&x)
 }
 
 // describe sums up the trials of one outcome, whose order it changes.

@@ -12,7 +12,9 @@ import (
 
 // against is the row of a simplified particle.
 func (b *book) against(p koehler.Particle) Row {
-	return b.row(answer(p, b.asked.SaturationRatio))
+	r := b.row(answer(p, b.asked.SaturationRatio))
+	r.simple, r.whole = &p, &b.full.particle
+	return r
 }
 
 func (b *book) row(simplified Answer) Row { return compare(simplified, b.fullest) }
@@ -56,7 +58,7 @@ func (b *book) pair(simple, full koehler.Kelvin) (Answer, Answer) {
 func vapourRow(b *book) Row {
 	simple, vapour := b.pair(koehler.Standard, koehler.PureVapour)
 	inVapour := compare(simple, vapour)
-	r := b.row(b.fullest) // air: the term does not exist
+	r := b.against(b.full.particle) // air: the term does not exist
 	r.Reason = "In air of a fixed total pressure it is exactly zero."
 	r.If = &If{"in pure water vapour instead of air", inVapour.Change}
 	if b.asked.Kelvin == koehler.PureVapour {
@@ -254,6 +256,7 @@ func (b *book) dissolutionByKappa() Row {
 		return unknown("No published model joins the solubility with the rest of the particle.")
 	}
 	row := compare(answer(all, a.SaturationRatio), answer(limited.particle, a.SaturationRatio))
+	row.simple, row.whole = &all, &limited.particle
 	row.Reason = "Both answers are those of the κ model with the tension of water: no published model joins solubility with ion interaction."
 	return row
 }
