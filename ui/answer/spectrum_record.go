@@ -44,7 +44,7 @@ type activated struct {
 	closures  spectrum.Closures
 	fits      []fitted
 	modes     *aerosol.ModeFit // of measured sizes; nil: not fitted
-	rejected  []rejection
+	rejected  rejections
 	notes     []atmos.Note
 }
 
