@@ -1,6 +1,7 @@
 package answer
 
 import (
+	"bytes"
 	"context"
 	"encoding/csv"
 	"errors"
@@ -22,6 +23,25 @@ const stationFolder = "../../testdata/demo"
 
 func stationEnv() Env {
 	return Env{Demo: os.DirFS(stationFolder), Version: "test", Open: func(name string) (io.ReadCloser, error) { return os.Open(name) }}
+}
+
+// isInDemo fails unless a file of the demo is, byte for byte, what its program writes.
+// With DROPCREST_WRITE_DEMO in the environment it is written anew.
+func isInDemo(t *testing.T, file string, want []byte) {
+	t.Helper()
+	name := filepath.Join(stationFolder, file)
+	if os.Getenv("DROPCREST_WRITE_DEMO") != "" {
+		if err := os.WriteFile(name, want, 0o644); err != nil {
+			t.Fatal(err)
+		}
+	}
+	got, err := os.ReadFile(name)
+	if err != nil {
+		t.Fatal(err)
+	}
+	if !bytes.Equal(got, want) {
+		t.Errorf("%s is not what its program writes", file)
+	}
 }
 
 // truthRow is what is behind the demo in half an hour.

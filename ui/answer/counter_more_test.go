@@ -103,7 +103,7 @@ func TestBetweenCalibrations(t *testing.T) {
 	}
 	s.Data = []scenario.DataFile{{Name: data}}
 	var got float64
-	if _, err := campaign(context.Background(), counterEnv(), s, func(o *observation) error {
+	if _, err := campaign(context.Background(), stationEnv(), s, func(o *observation) error {
 		for _, c := range o.counts {
 			got = c.s
 		}
@@ -142,7 +142,7 @@ func calibratedDemo(t *testing.T) scenario.Scenario {
 func TestCalibrationOfSetCounts(t *testing.T) {
 	s := calibratedDemo(t)
 	var got []float64
-	if _, err := campaign(context.Background(), counterEnv(), s, func(o *observation) error {
+	if _, err := campaign(context.Background(), stationEnv(), s, func(o *observation) error {
 		if o.number == 1 {
 			for _, c := range o.counts {
 				got = append(got, c.s)
@@ -168,7 +168,7 @@ func TestCalibrationOfSetCounts(t *testing.T) {
 func TestSharedErrorsCancel(t *testing.T) {
 	s := calibratedDemo(t)
 	s.Record = scenario.Measure{Number: 1}
-	a, err := askSpectrum(context.Background(), counterEnv(), s)
+	a, err := askSpectrum(context.Background(), stationEnv(), s)
 	if err != nil {
 		t.Fatal(err)
 	}

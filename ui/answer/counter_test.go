@@ -6,7 +6,6 @@ import (
 	"encoding/json"
 	"errors"
 	"fmt"
-	"io"
 	"math"
 	"math/rand/v2"
 	"os"
@@ -26,7 +25,6 @@ import (
 // supersaturation of the counter, its width, its efficiency, and the share of
 // doubly charged particles.
 const (
-	demoFolder    = "../../testdata/demo"
 	demoSlope     = 0.064 // % per K
 	demoIntercept = -0.052
 	demoWidth     = 0.05 // standard deviation in ln D
@@ -90,26 +88,7 @@ func demoSize(t testing.TB, s counter.Standard, want float64) float64 {
 
 // The file of the demo is what the program above writes. To write it anew:
 // DROPCREST_WRITE_DEMO=1 go test -run TestDemoScans ./ui/answer
-func TestDemoScans(t *testing.T) {
-	name := filepath.Join(demoFolder, demoScans)
-	want := demoLog(t)
-	if os.Getenv("DROPCREST_WRITE_DEMO") != "" {
-		if err := os.WriteFile(name, want, 0o644); err != nil {
-			t.Fatal(err)
-		}
-	}
-	got, err := os.ReadFile(name)
-	if err != nil {
-		t.Fatal(err)
-	}
-	if !bytes.Equal(got, want) {
-		t.Error("the file of scans is not what its program writes")
-	}
-}
-
-func counterEnv() Env {
-	return Env{Demo: os.DirFS(demoFolder), Version: "test", Open: func(name string) (io.ReadCloser, error) { return os.Open(name) }}
-}
+func TestDemoScans(t *testing.T) { isInDemo(t, demoScans, demoLog(t)) }
 
 // calibrate asks the Counter question without bootstrap, for spherical particles.
 func calibrate(t testing.TB, change func(*scenario.Scenario)) (Answer, error) {
@@ -119,7 +98,7 @@ func calibrate(t testing.TB, change func(*scenario.Scenario)) (Answer, error) {
 	if change != nil {
 		change(&s)
 	}
-	return askCounter(context.Background(), counterEnv(), s)
+	return askCounter(context.Background(), stationEnv(), s)
 }
 
 func counterFacts(t testing.TB, a Answer) CounterFacts {
@@ -257,7 +236,7 @@ func TestCalibrationFile(t *testing.T) {
 		}
 		return s
 	}
-	c, err := readCalibration(counterEnv(), "calibration", write("a.json", string(text)).Calibration)
+	c, err := readCalibration(stationEnv(), "calibration", write("a.json", string(text)).Calibration)
 	if err != nil {
 		t.Fatal(err)
 	}
@@ -273,7 +252,7 @@ func TestCalibrationFile(t *testing.T) {
 		"{\"calibration_file\": {}}":  "has no line",
 		"[1]":                         "no calibration",
 	} {
-		_, err := readCalibration(counterEnv(), "calibration", write("b.json", text).Calibration)
+		_, err := readCalibration(stationEnv(), "calibration", write("b.json", text).Calibration)
 		var in *InputError
 		if !errors.As(err, &in) || in.Input != "calibration" || !strings.Contains(err.Error(), want) {
 			t.Errorf("%q: %v, want %q", text, err, want)
@@ -304,7 +283,7 @@ func TestCalibratedCounts(t *testing.T) {
 	}
 	s.Data = []scenario.DataFile{{Name: data}}
 	var got []float64
-	if _, err := campaign(context.Background(), counterEnv(), s, func(o *observation) error {
+	if _, err := campaign(context.Background(), stationEnv(), s, func(o *observation) error {
 		for _, c := range o.counts {
 			got = append(got, c.s)
 		}
