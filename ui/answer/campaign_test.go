@@ -172,25 +172,17 @@ func TestOneRecord(t *testing.T) {
 
 // Files that cannot be read say which, where, and what would be right.
 func TestDataErrors(t *testing.T) {
-	dir := t.TempDir()
-	write := func(name, text string) string {
-		file := filepath.Join(dir, name)
-		if err := os.WriteFile(file, []byte(text), 0o644); err != nil {
-			t.Fatal(err)
-		}
-		return file
-	}
 	for name, c := range map[string]struct {
 		file  string
 		line  string
 		input string
 		says  string
 	}{
-		"missing": {filepath.Join(dir, "none.csv"), "", "data", "no such file"},
-		"empty":   {write("empty.csv", ""), "", "data", "empty"},
+		"missing": {filepath.Join(t.TempDir(), "none.csv"), "", "data", "no such file"},
+		"empty":   {written(t, "empty.csv", ""), "", "data", "empty"},
 		"no name": {"", "", "data", "no name"},
-		"map":     {write("a.csv", "time,ccn (cm-3)\n2026-03-14T00:00:00Z,5\n"), "none=ccn @0.3%", "map", "none"},
-		"comma":   {write("b.csv", "time;ccn at 0.3% (cm-3)\n2026-03-14T00:00:00Z;5,5\n"), "", "data", "b.csv"},
+		"map":     {written(t, "a.csv", "time,ccn (cm-3)\n2026-03-14T00:00:00Z,5\n"), "none=ccn @0.3%", "map", "none"},
+		"comma":   {written(t, "b.csv", "time;ccn at 0.3% (cm-3)\n2026-03-14T00:00:00Z;5,5\n"), "", "data", "b.csv"},
 	} {
 		t.Run(name, func(t *testing.T) {
 			s := scenario.Default()

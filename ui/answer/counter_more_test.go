@@ -2,12 +2,9 @@ package answer
 
 import (
 	"context"
-	"encoding/json"
 	"errors"
 	"fmt"
 	"math"
-	"os"
-	"path/filepath"
 	"strings"
 	"testing"
 
@@ -18,17 +15,13 @@ import (
 // What a log needs before it is fitted: rows while the column settles left out, small
 // particles that are not counted corrected for, charges by the size distribution.
 func TestCounterPreparation(t *testing.T) {
-	dir := t.TempDir()
-	sizes := filepath.Join(dir, "sizes.csv")
 	var b strings.Builder
 	b.WriteString("diameter (nm),dN/dlog10D (cm-3)\n")
 	for d := 8.0; d < 900; d *= 1.12 {
 		x := math.Log(d/60) / math.Log(1.7)
 		fmt.Fprintf(&b, "%.2f,%.3f\n", d, 2000*math.Exp(-x*x/2))
 	}
-	if err := os.WriteFile(sizes, []byte(b.String()), 0o644); err != nil {
-		t.Fatal(err)
-	}
+	sizes := written(t, "sizes.csv", b.String())
 	plain, err := calibrate(t, nil)
 	if err != nil {
 		t.Fatal(err)
@@ -73,43 +66,22 @@ func TestDelayNeedsDurations(t *testing.T) {
 
 // Between two calibrations the supersaturation is interpolated in time.
 func TestBetweenCalibrations(t *testing.T) {
-	dir := t.TempDir()
-	write := func(name string, slope, time float64) string {
-		a, err := calibrate(t, nil)
-		if err != nil {
-			t.Fatal(err)
-		}
-		f := counterFacts(t, a)
-		f.File.Line.Slope *= slope
-		f.File.Time = time
-		text, err := json.Marshal(f)
-		if err != nil {
-			t.Fatal(err)
-		}
-		file := filepath.Join(dir, name)
-		if err := os.WriteFile(file, text, 0o644); err != nil {
-			t.Fatal(err)
-		}
-		return file
+	file := func(slope, time float64) string {
+		return demoCalibration(t, func(f *CounterFacts) {
+			f.File.Line.Slope *= slope
+			f.File.Time = time
+		})
 	}
 	const midnight = 1773446400 // 2026-03-14T00:00:00Z
-	s := scenario.Default()
-	s.Calibration = write("before.json", 1, midnight-43200)
-	s.CalibrationAfter = write("after.json", 1.1, midnight+43200)
-	data := filepath.Join(dir, "ccn.csv")
-	if err := os.WriteFile(data, []byte("start_time,end_time,temperature difference (K),ccn (cm-3),supersaturation set (%)\n"+
-		"2026-03-14T00:00:00Z,2026-03-14T00:05:00Z,10.0,500,0.5\n"), 0o644); err != nil {
-		t.Fatal(err)
-	}
-	s.Data = []scenario.DataFile{{Name: data}}
+	s := ofText(t, "start_time,end_time,temperature difference (K),ccn (cm-3),supersaturation set (%)\n"+
+		"2026-03-14T00:00:00Z,2026-03-14T00:05:00Z,10.0,500,0.5\n")
+	s.Calibration, s.CalibrationAfter = file(1, midnight-43200), file(1.1, midnight+43200)
 	var got float64
-	if _, err := campaign(context.Background(), stationEnv(), s, func(o *observation) error {
+	records, _ := allRecords(t, s)
+	for _, o := range records {
 		for _, c := range o.counts {
 			got = c.s
 		}
-		return nil
-	}); err != nil {
-		t.Fatal(err)
 	}
 	if want := (1.05*demoSlope*10 + demoIntercept) / 100; math.Abs(got/want-1) > 0.01 {
 		t.Errorf("half way between slopes 1 and 1.1 it is %v, want %v within 1 %%", got, want)
@@ -120,19 +92,8 @@ func TestBetweenCalibrations(t *testing.T) {
 // line that the counter took.
 func calibratedDemo(t *testing.T) scenario.Scenario {
 	t.Helper()
-	a, err := calibrate(t, nil)
-	if err != nil {
-		t.Fatal(err)
-	}
-	text, err := json.Marshal(a.Facts)
-	if err != nil {
-		t.Fatal(err)
-	}
 	s := scenario.Default()
-	s.Calibration = filepath.Join(t.TempDir(), "cal.json")
-	if err := os.WriteFile(s.Calibration, text, 0o644); err != nil {
-		t.Fatal(err)
-	}
+	s.Calibration = demoCalibration(t, nil)
 	s.SetSlope, s.SetIntercept = scenario.Measure{Number: 0.0006}, -0.0004
 	return s
 }
@@ -141,19 +102,16 @@ func calibratedDemo(t *testing.T) scenario.Scenario {
 // temperature differences: the demo's counts move by what its calibration says.
 func TestCalibrationOfSetCounts(t *testing.T) {
 	s := calibratedDemo(t)
-	var got []float64
-	if _, err := campaign(context.Background(), stationEnv(), s, func(o *observation) error {
-		if o.number == 1 {
-			for _, c := range o.counts {
-				got = append(got, c.s)
-				if !(c.levelUncertainty > 0 && c.levelUncertainty < 0.02*c.s) {
-					t.Errorf("the supersaturation %v is known to %v", c.s, c.levelUncertainty)
-				}
-			}
-		}
-		return nil
-	}); err != nil {
+	first, _, err := oneRecord(context.Background(), stationEnv(), s, 1)
+	if err != nil {
 		t.Fatal(err)
+	}
+	var got []float64
+	for _, c := range first.counts {
+		got = append(got, c.s)
+		if !(c.levelUncertainty > 0 && c.levelUncertainty < 0.02*c.s) {
+			t.Errorf("the supersaturation %v is known to %v", c.s, c.levelUncertainty)
+		}
 	}
 	for i, set := range []float64{0.001, 0.002, 0.004, 0.006, 0.01} {
 		want := (demoSlope*(set+0.0004)/0.0006 + demoIntercept) / 100

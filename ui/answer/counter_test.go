@@ -8,8 +8,6 @@ import (
 	"fmt"
 	"math"
 	"math/rand/v2"
-	"os"
-	"path/filepath"
 	"regexp"
 	"strings"
 	"testing"
@@ -197,10 +195,7 @@ func TestBadScans(t *testing.T) {
 		"damaged number":    {strings.Replace(good, lines[5], "2026-03-13T09:02:00Z,ammonium sulfate,3.0,3o,1500,2\n", 1), ":6:"},
 	} {
 		t.Run(name, func(t *testing.T) {
-			file := filepath.Join(t.TempDir(), "scans.csv")
-			if err := os.WriteFile(file, []byte(c.text), 0o644); err != nil {
-				t.Fatal(err)
-			}
+			file := written(t, "scans.csv", c.text)
 			a, err := calibrate(t, func(s *scenario.Scenario) { s.Scans = []scenario.DataFile{{Name: file}} })
 			said := strings.Join(a.Finding, " ")
 			if err != nil {
@@ -217,26 +212,29 @@ func TestBadScans(t *testing.T) {
 	}
 }
 
-// What the Counter question writes is read back, and a file that is none is
-// refused with its place.
-func TestCalibrationFile(t *testing.T) {
+// demoCalibration is a file of the calibration by the demo's scans as the Counter
+// question writes it, after a change.
+func demoCalibration(t testing.TB, change func(*CounterFacts)) string {
+	t.Helper()
 	a, err := calibrate(t, nil)
 	if err != nil {
 		t.Fatal(err)
 	}
-	text, err := json.Marshal(a.Facts)
+	f := counterFacts(t, a)
+	if change != nil {
+		change(&f)
+	}
+	text, err := json.Marshal(f)
 	if err != nil {
 		t.Fatal(err)
 	}
-	write := func(name, text string) scenario.Scenario {
-		s := scenario.Default()
-		s.Calibration = filepath.Join(t.TempDir(), name)
-		if err := os.WriteFile(s.Calibration, []byte(text), 0o644); err != nil {
-			t.Fatal(err)
-		}
-		return s
-	}
-	c, err := readCalibration(stationEnv(), "calibration", write("a.json", string(text)).Calibration)
+	return written(t, "calibration.json", string(text))
+}
+
+// What the Counter question writes is read back, and a file that is none is
+// refused with its place.
+func TestCalibrationFile(t *testing.T) {
+	c, err := readCalibration(stationEnv(), "calibration", demoCalibration(t, nil))
 	if err != nil {
 		t.Fatal(err)
 	}
@@ -252,7 +250,7 @@ func TestCalibrationFile(t *testing.T) {
 		"{\"calibration_file\": {}}":  "has no line",
 		"[1]":                         "no calibration",
 	} {
-		_, err := readCalibration(stationEnv(), "calibration", write("b.json", text).Calibration)
+		_, err := readCalibration(stationEnv(), "calibration", written(t, "calibration.json", text))
 		var in *InputError
 		if !errors.As(err, &in) || in.Input != "calibration" || !strings.Contains(err.Error(), want) {
 			t.Errorf("%q: %v, want %q", text, err, want)
@@ -263,33 +261,15 @@ func TestCalibrationFile(t *testing.T) {
 // Counts of a counter that was calibrated stand at the supersaturations of its
 // temperature differences.
 func TestCalibratedCounts(t *testing.T) {
-	a, err := calibrate(t, nil)
-	if err != nil {
-		t.Fatal(err)
-	}
-	text, err := json.Marshal(a.Facts)
-	if err != nil {
-		t.Fatal(err)
-	}
-	dir := t.TempDir()
-	s := scenario.Default()
-	s.Calibration = filepath.Join(dir, "cal.json")
-	data := filepath.Join(dir, "ccn.csv")
-	for name, content := range map[string]string{s.Calibration: string(text), data: "start_time,end_time,temperature difference (K),ccn (cm-3),supersaturation set (%)\n" +
-		"2026-03-14T00:00:00Z,2026-03-14T00:05:00Z,10.0,500,0.5\n2026-03-14T00:05:00Z,2026-03-14T00:10:00Z,5.0,200,0.2\n"} {
-		if err := os.WriteFile(name, []byte(content), 0o644); err != nil {
-			t.Fatal(err)
-		}
-	}
-	s.Data = []scenario.DataFile{{Name: data}}
+	s := ofText(t, "start_time,end_time,temperature difference (K),ccn (cm-3),supersaturation set (%)\n"+
+		"2026-03-14T00:00:00Z,2026-03-14T00:05:00Z,10.0,500,0.5\n2026-03-14T00:05:00Z,2026-03-14T00:10:00Z,5.0,200,0.2\n")
+	s.Calibration = demoCalibration(t, nil)
 	var got []float64
-	if _, err := campaign(context.Background(), stationEnv(), s, func(o *observation) error {
+	records, _ := allRecords(t, s)
+	for _, o := range records {
 		for _, c := range o.counts {
 			got = append(got, c.s)
 		}
-		return nil
-	}); err != nil {
-		t.Fatal(err)
 	}
 	for i, dt := range []float64{10, 5} {
 		want := (demoSlope*dt + demoIntercept) / 100
