@@ -2,65 +2,81 @@ package answer
 
 import (
 	"context"
+	"encoding/json"
 	"errors"
-	"fmt"
 	"math"
 	"strings"
 	"testing"
 
+	"dropcrest/koehler/counter"
 	"dropcrest/koehler/spectrum"
 	"dropcrest/ui/scenario"
 )
 
-// What a log needs before it is fitted: rows while the column settles left out, small
-// particles that are not counted corrected for, charges by the size distribution.
-func TestCounterPreparation(t *testing.T) {
-	var b strings.Builder
-	b.WriteString("diameter (nm),dN/dlog10D (cm-3)\n")
-	for d := 8.0; d < 900; d *= 1.12 {
-		x := math.Log(d/60) / math.Log(1.7)
-		fmt.Fprintf(&b, "%.2f,%.3f\n", d, 2000*math.Exp(-x*x/2))
-	}
-	sizes := written(t, "sizes.csv", b.String())
-	plain, err := calibrate(t, nil)
+// demoCalibration is a file of the calibration by the demo's scans as the Counter
+// question writes it, after a change.
+func demoCalibration(t testing.TB, change func(*CounterFacts)) string {
+	t.Helper()
+	a, err := calibrate(t, nil)
 	if err != nil {
 		t.Fatal(err)
 	}
-	want := counterFacts(t, plain)
-	for name, c := range map[string]struct {
-		change  func(*scenario.Scenario)
-		leftOut int // at least
-		moves   float64
-	}{
-		"settling": {func(s *scenario.Scenario) { s.Settling = 100 }, 10, 0.02},
-		"cut-off":  {func(s *scenario.Scenario) { s.CNCutOff = scenario.Measure{Number: 5e-9} }, 0, 0.02},
-		"sizes":    {func(s *scenario.Scenario) { s.Bins = sizes }, 0, 0.02},
+	f := counterFacts(t, a)
+	if change != nil {
+		change(&f)
+	}
+	text, err := json.Marshal(f)
+	if err != nil {
+		t.Fatal(err)
+	}
+	return written(t, "calibration.json", string(text))
+}
+
+// What the Counter question writes is read back, and a file that is none is
+// refused with its place.
+func TestCalibrationFile(t *testing.T) {
+	c, err := readCalibration(stationEnv(), "calibration", demoCalibration(t, nil))
+	if err != nil {
+		t.Fatal(err)
+	}
+	applied, err := c.Apply(10, counter.Site{})
+	got, u := applied.Supersaturation, applied.Uncertainty
+	if want := (demoSlope*10 + demoIntercept) / 100; err != nil || math.Abs(got-want) > 3*u || u > 0.01*want {
+		t.Errorf("10 K is %v ± %v, %v; the truth is %v", got, u, err, want)
+	}
+	for text, want := range map[string]string{
+		"":                            "line 1, column 1",
+		"{}":                          "no key calibration_file",
+		"{\n\"calibration_file\": x}": "line 2, column",
+		"{\"calibration_file\": {}}":  "has no line",
+		"[1]":                         "no calibration",
 	} {
-		a, err := calibrate(t, c.change)
-		if err != nil {
-			t.Errorf("%s: %v", name, err)
-			continue
-		}
-		f := counterFacts(t, a)
-		if f.Line == nil || math.Abs(float64(f.Line.Slope/want.Line.Slope)-1) > c.moves {
-			t.Errorf("%s: line %+v, want about %v", name, f.Line, want.Line.Slope)
-		}
-		if len(f.LeftOut) < c.leftOut {
-			t.Errorf("%s: %d points left out, want %d or more", name, len(f.LeftOut), c.leftOut)
-		}
-		constant := strings.Contains(strings.Join(codes(a), " "), "constant") || strings.Contains(strings.Join(a.Why, " "), "for want of a size distribution")
-		if (name == "sizes") == constant {
-			t.Errorf("%s: notes %q", name, codes(a))
+		_, err := readCalibration(stationEnv(), "calibration", written(t, "calibration.json", text))
+		var in *InputError
+		if !errors.As(err, &in) || in.Input != "calibration" || !strings.Contains(err.Error(), want) {
+			t.Errorf("%q: %v, want %q", text, err, want)
 		}
 	}
 }
 
-// A delay moves counts between samples, so their lengths must be known.
-func TestDelayNeedsDurations(t *testing.T) {
-	_, err := calibrate(t, func(s *scenario.Scenario) { s.CNDelay = 3 })
-	var in *InputError
-	if !errors.As(err, &in) || in.Input != "cn-delay" || !strings.Contains(err.Error(), "sampling time") {
-		t.Errorf("error %v", err)
+// Counts of a counter that was calibrated stand at the supersaturations of its
+// temperature differences.
+func TestCalibratedCounts(t *testing.T) {
+	s := ofText(t, "start_time,end_time,temperature difference (K),ccn (cm-3),supersaturation set (%)\n"+
+		"2026-03-14T00:00:00Z,2026-03-14T00:05:00Z,10.0,500,0.5\n2026-03-14T00:05:00Z,2026-03-14T00:10:00Z,5.0,200,0.2\n")
+	s.Calibration = demoCalibration(t, nil)
+	var got []float64
+	records, _ := allRecords(t, s)
+	for _, o := range records {
+		for _, c := range o.counts {
+			got = append(got, c.s)
+		}
+	}
+	for i, dt := range []float64{10, 5} {
+		want := (demoSlope*dt + demoIntercept) / 100
+		if i >= len(got) || math.Abs(got[i]/want-1) > 0.01 {
+			t.Errorf("supersaturations %v, want that of %v K, %v, within 1 %%", got, dt, want)
+		}
 	}
 }
 
