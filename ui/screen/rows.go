@@ -188,9 +188,12 @@ func (r *rows) move(by int, grid [][]scenario.Input) {
 
 // change takes a key that changes the chosen slot or opens it.
 func (r *rows) change(k tea.KeyMsg, in scenario.Input, m *model) (panel, bool) {
-	number := isNumeric(in)
 	kept := m.left[in.Path()]
-	switch {
+	switch e := m.begun(in, k, r); {
+	case e != nil:
+		r.entry = e
+	case k.Paste:
+		m.say(notPasted)
 	case hits(k, m.keys.Up):
 		r.step(in, 1, false, m)
 	case hits(k, m.keys.Down):
@@ -199,8 +202,6 @@ func (r *rows) change(k tea.KeyMsg, in scenario.Input, m *model) (panel, bool) {
 		r.step(in, 1, true, m)
 	case hits(k, m.keys.BigDown):
 		r.step(in, -1, true, m)
-	case hits(k, m.keys.Type) && number:
-		r.entry = openEntry(in, k.Runes[0], "", r)
 	case hits(k, m.keys.Open) && isList(in):
 		next := newRows(in.(listSlot).RowList).(*rows)
 		next.back = r
