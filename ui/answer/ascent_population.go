@@ -93,13 +93,7 @@ func (env Env) risingBins(ctx context.Context, s scenario.Scenario) (*activated,
 	if err != nil {
 		return nil, err
 	}
-	of, err := env.compose(s)
-	if err != nil {
-		return nil, err
-	}
-	a := ofBins(s, bins, of)
-	a.notes = distinct(append(a.notes, notes...))
-	return a, nil
+	return ofBins(env, s, bins, notes)
 }
 
 func (env Env) risingRecord(ctx context.Context, s scenario.Scenario) (*activated, error) {

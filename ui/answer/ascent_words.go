@@ -12,18 +12,8 @@ import (
 // finding is the answer in sentences: peak and droplets, the mean over updrafts, the
 // closed forms, what limits the number, and what limits the answer.
 func (r *risen) finding() []string {
-	out := []string{r.dropletSentence()}
-	for _, says := range []string{r.meanSentence(), r.sweepSentence(), r.closedSentence(), r.limitSentence(), r.grownSentence()} {
-		if says != "" {
-			out = append(out, says)
-		}
-	}
-	for _, n := range r.notes {
-		if limitsAscent(n) {
-			return append(out, capital(n.Text))
-		}
-	}
-	return out
+	return findingOf([]string{r.dropletSentence(), r.meanSentence(), r.sweepSentence(), r.closedSentence(), r.limitSentence(), r.grownSentence()},
+		r.notes, limitsAscent)
 }
 
 // limitsAscent tells whether a note says what limits the numbers.

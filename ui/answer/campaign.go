@@ -18,7 +18,7 @@ var demoFiles = []string{"ccn-counts_demo-station_20260314_R0.ict", "sizes.nas",
 type campaignFacts struct {
 	records  int
 	mapping  []string // "file: column=quantity", as it was understood
-	rejected []rejection
+	rejected rejections
 	notes    []atmos.Note
 }
 

@@ -23,14 +23,14 @@ func (r *recorder) count(o *observation, s *fieldfile.Sample, air aerosol.Air) {
 	for _, c := range s.Counts {
 		at := r.level(o, s, c)
 		if why := notCounted(c, at.Supersaturation); why != "" {
-			o.reject(why)
-			r.leave(why)
+			o.rejected.add(why)
+			r.left.add(why)
 			continue
 		}
 		factor := r.standard(o, c.Basis, air)
 		if math.IsNaN(factor) {
-			o.reject(airNotKnown)
-			r.leave(airNotKnown)
+			o.rejected.add(airNotKnown)
+			r.left.add(airNotKnown)
 			continue
 		}
 		p := spectrum.Unknown()
@@ -41,7 +41,7 @@ func (r *recorder) count(o *observation, s *fieldfile.Sample, air aerosol.Air) {
 		p.Drops = c.Counted.Or(math.NaN())
 		verdict := r.judge.Look(p)
 		if verdict.Rejected != "" {
-			o.reject(r.says(verdict.Rejected))
+			o.rejected.add(r.says(verdict.Rejected))
 			continue
 		}
 		points = append(points, p)
@@ -120,17 +120,6 @@ func (r *recorder) level(o *observation, s *fieldfile.Sample, c fieldfile.Count)
 	return applied
 }
 
-// leave counts a point that no rule has looked at.
-func (r *recorder) leave(why string) {
-	for i := range r.left {
-		if r.left[i].Reason == why {
-			r.left[i].Count++
-			return
-		}
-	}
-	r.left = append(r.left, rejection{why, 1})
-}
-
 // countUncertainty is that of the file, else that of counting, 1/m³.
 func countUncertainty(c fieldfile.Count) float64 {
 	if c.Uncertainty.OK() {
@@ -151,7 +140,7 @@ func (r *recorder) cycle(o *observation, points []spectrum.Observed) {
 	out := map[int]bool{}
 	for _, i := range rejected {
 		out[i] = true
-		o.reject(r.says(spectrum.Monotonic))
+		o.rejected.add(r.says(spectrum.Monotonic))
 	}
 	kept := o.counts[:0]
 	for i, m := range o.counts {
@@ -160,17 +149,6 @@ func (r *recorder) cycle(o *observation, points []spectrum.Observed) {
 		}
 	}
 	o.counts = kept
-}
-
-// reject counts a point that is left out.
-func (o *observation) reject(why string) {
-	for i := range o.rejected {
-		if o.rejected[i].Reason == why {
-			o.rejected[i].Count++
-			return
-		}
-	}
-	o.rejected = append(o.rejected, rejection{why, 1})
 }
 
 // says is a rule in words.
@@ -184,7 +162,7 @@ func (r *recorder) says(key string) string {
 }
 
 // rejected is what was left out of all records, and by which rule.
-func (r *recorder) rejected() []rejection {
+func (r *recorder) rejected() rejections {
 	out := slices.Clone(r.left)
 	for _, t := range r.judge.Tallies() {
 		if t.Rejected > 0 {

@@ -121,7 +121,7 @@ func (r *recorder) take(o *observation, s *fieldfile.Sample) {
 		case !l.at.Before(s.End) && s.End.After(s.Start):
 			ahead = append(ahead, l)
 		case !l.at.Before(s.Start):
-			o.reject(l.why)
+			o.rejected.add(l.why)
 		}
 	}
 	r.looked = ahead

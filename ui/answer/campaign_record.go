@@ -25,7 +25,7 @@ type recorder struct {
 	notes        []atmos.Note
 
 	grids []sizedGrid // of the bins so far
-	left  []rejection // points that are no numbers
+	left  rejections  // points that no rule has looked at
 
 	parts  massParts     // of the composition that the files have columns for
 	looked []looked      // readings left out that belong to a window still to come

@@ -15,15 +15,21 @@ import (
 	"dropcrest/ui/scenario"
 )
 
-// ofText is a scenario of one file with that text.
-func ofText(t *testing.T, text string, lines ...string) scenario.Scenario {
+// written is a new file with that text.
+func written(t testing.TB, name, text string) string {
 	t.Helper()
-	file := filepath.Join(t.TempDir(), "data.csv")
+	file := filepath.Join(t.TempDir(), name)
 	if err := os.WriteFile(file, []byte(text), 0o644); err != nil {
 		t.Fatal(err)
 	}
+	return file
+}
+
+// ofText is a scenario of one file with that text.
+func ofText(t *testing.T, text string, lines ...string) scenario.Scenario {
+	t.Helper()
 	s := scenario.Default()
-	s.Data = []scenario.DataFile{{Name: file}}
+	s.Data = []scenario.DataFile{{Name: written(t, "data.csv", text)}}
 	for _, l := range lines {
 		s.Map = append(s.Map, scenario.MapLine{Text: l})
 	}

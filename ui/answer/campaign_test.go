@@ -1,6 +1,7 @@
 package answer
 
 import (
+	"bytes"
 	"context"
 	"encoding/csv"
 	"errors"
@@ -22,6 +23,25 @@ const stationFolder = "../../testdata/demo"
 
 func stationEnv() Env {
 	return Env{Demo: os.DirFS(stationFolder), Version: "test", Open: func(name string) (io.ReadCloser, error) { return os.Open(name) }}
+}
+
+// isInDemo fails unless a file of the demo is, byte for byte, what its program writes.
+// With DROPCREST_WRITE_DEMO in the environment it is written anew.
+func isInDemo(t *testing.T, file string, want []byte) {
+	t.Helper()
+	name := filepath.Join(stationFolder, file)
+	if os.Getenv("DROPCREST_WRITE_DEMO") != "" {
+		if err := os.WriteFile(name, want, 0o644); err != nil {
+			t.Fatal(err)
+		}
+	}
+	got, err := os.ReadFile(name)
+	if err != nil {
+		t.Fatal(err)
+	}
+	if !bytes.Equal(got, want) {
+		t.Errorf("%s is not what its program writes", file)
+	}
 }
 
 // truthRow is what is behind the demo in half an hour.
@@ -152,25 +172,17 @@ func TestOneRecord(t *testing.T) {
 
 // Files that cannot be read say which, where, and what would be right.
 func TestDataErrors(t *testing.T) {
-	dir := t.TempDir()
-	write := func(name, text string) string {
-		file := filepath.Join(dir, name)
-		if err := os.WriteFile(file, []byte(text), 0o644); err != nil {
-			t.Fatal(err)
-		}
-		return file
-	}
 	for name, c := range map[string]struct {
 		file  string
 		line  string
 		input string
 		says  string
 	}{
-		"missing": {filepath.Join(dir, "none.csv"), "", "data", "no such file"},
-		"empty":   {write("empty.csv", ""), "", "data", "empty"},
+		"missing": {filepath.Join(t.TempDir(), "none.csv"), "", "data", "no such file"},
+		"empty":   {written(t, "empty.csv", ""), "", "data", "empty"},
 		"no name": {"", "", "data", "no name"},
-		"map":     {write("a.csv", "time,ccn (cm-3)\n2026-03-14T00:00:00Z,5\n"), "none=ccn @0.3%", "map", "none"},
-		"comma":   {write("b.csv", "time;ccn at 0.3% (cm-3)\n2026-03-14T00:00:00Z;5,5\n"), "", "data", "b.csv"},
+		"map":     {written(t, "a.csv", "time,ccn (cm-3)\n2026-03-14T00:00:00Z,5\n"), "none=ccn @0.3%", "map", "none"},
+		"comma":   {written(t, "b.csv", "time;ccn at 0.3% (cm-3)\n2026-03-14T00:00:00Z;5,5\n"), "", "data", "b.csv"},
 	} {
 		t.Run(name, func(t *testing.T) {
 			s := scenario.Default()

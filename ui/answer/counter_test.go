@@ -1,115 +1,17 @@
 package answer
 
 import (
-	"bytes"
 	"context"
 	"encoding/json"
 	"errors"
 	"fmt"
-	"io"
 	"math"
-	"math/rand/v2"
-	"os"
-	"path/filepath"
 	"regexp"
 	"strings"
 	"testing"
 
-	"gonum.org/v1/gonum/stat/distuv"
-
-	"dropcrest/koehler/counter"
-	"dropcrest/solutes"
 	"dropcrest/ui/scenario"
 )
-
-// The salt scans of the demo station are invented. The truth behind them: the
-// supersaturation of the counter, its width, its efficiency, and the share of
-// doubly charged particles.
-const (
-	demoFolder    = "../../testdata/demo"
-	demoSlope     = 0.064 // % per K
-	demoIntercept = -0.052
-	demoWidth     = 0.05 // standard deviation in ln D
-	demoPlateau   = 0.97
-	demoDouble    = 0.06
-	demoCounts    = 1500 // particles at each size
-)
-
-var demoDifferences = []float64{3, 5, 8, 12, 17}
-
-// demoLog writes the invented log: ammonium sulfate, 22 sizes around the one that
-// activates half, counts with the noise of Poisson.
-func demoLog(t testing.TB) []byte {
-	t.Helper()
-	rng := rand.New(rand.NewPCG(2026, 314))
-	salt, ok := solutes.Standard().Find("ammonium sulfate")
-	if !ok {
-		t.Fatal("no ammonium sulfate")
-	}
-	standard := counter.SaltStandard(salt, solutes.IonInteraction, 298.15, counter.Classifier{})
-	standard.ShapeFactor = 1
-	var b bytes.Buffer
-	b.WriteString("time,salt,temperature difference (K),dry diameter (nm),cn counted,ccn counted\n")
-	second := 0
-	for _, dt := range demoDifferences {
-		d50 := demoSize(t, standard, (demoSlope*dt+demoIntercept)/100)
-		for i := range 22 {
-			d := d50 * math.Exp(-0.62+1.1*float64(i)/21)
-			half := counter.EqualMobility(d, 2, 296.15, 101325)
-			step := func(d float64) float64 { return 0.5 * math.Erfc(-math.Log(d/d50)/demoWidth/math.Sqrt2) }
-			fraction := demoPlateau * ((1-demoDouble)*step(d) + demoDouble*step(half))
-			cn := distuv.Poisson{Lambda: demoCounts, Src: rng}.Rand()
-			ccn := distuv.Poisson{Lambda: demoCounts * fraction, Src: rng}.Rand()
-			noise := 0.01 * distuv.Normal{Sigma: 1, Src: rng}.Rand()
-			fmt.Fprintf(&b, "2026-03-13T%02d:%02d:%02dZ,ammonium sulfate,%.3f,%.2f,%.0f,%.0f\n",
-				9+second/3600, second/60%60, second%60, dt+noise, d*1e9, cn, ccn)
-			second += 30
-		}
-		second += 300 // the column settles
-	}
-	return b.Bytes()
-}
-
-// demoSize is the mobility diameter that activates at a supersaturation.
-func demoSize(t testing.TB, s counter.Standard, want float64) float64 {
-	low, high := 10e-9, 400e-9
-	for range 60 {
-		mid := math.Sqrt(low * high)
-		got, err := s.Supersaturation(mid)
-		if err != nil {
-			t.Fatal(err)
-		}
-		if got > want {
-			low = mid
-		} else {
-			high = mid
-		}
-	}
-	return math.Sqrt(low * high)
-}
-
-// The file of the demo is what the program above writes. To write it anew:
-// DROPCREST_WRITE_DEMO=1 go test -run TestDemoScans ./ui/answer
-func TestDemoScans(t *testing.T) {
-	name := filepath.Join(demoFolder, demoScans)
-	want := demoLog(t)
-	if os.Getenv("DROPCREST_WRITE_DEMO") != "" {
-		if err := os.WriteFile(name, want, 0o644); err != nil {
-			t.Fatal(err)
-		}
-	}
-	got, err := os.ReadFile(name)
-	if err != nil {
-		t.Fatal(err)
-	}
-	if !bytes.Equal(got, want) {
-		t.Error("the file of scans is not what its program writes")
-	}
-}
-
-func counterEnv() Env {
-	return Env{Demo: os.DirFS(demoFolder), Version: "test", Open: func(name string) (io.ReadCloser, error) { return os.Open(name) }}
-}
 
 // calibrate asks the Counter question without bootstrap, for spherical particles.
 func calibrate(t testing.TB, change func(*scenario.Scenario)) (Answer, error) {
@@ -119,7 +21,7 @@ func calibrate(t testing.TB, change func(*scenario.Scenario)) (Answer, error) {
 	if change != nil {
 		change(&s)
 	}
-	return askCounter(context.Background(), counterEnv(), s)
+	return askCounter(context.Background(), stationEnv(), s)
 }
 
 func counterFacts(t testing.TB, a Answer) CounterFacts {
@@ -129,60 +31,6 @@ func counterFacts(t testing.TB, a Answer) CounterFacts {
 		t.Fatalf("facts are a %T", a.Facts)
 	}
 	return f
-}
-
-// The truth behind the demo is recovered within its noise.
-func TestDemoCalibration(t *testing.T) {
-	a, err := calibrate(t, nil)
-	if err != nil {
-		t.Fatal(err)
-	}
-	f := counterFacts(t, a)
-	if f.Line == nil || len(f.Scans) != len(demoDifferences) {
-		t.Fatalf("line %v, %d scans", f.Line, len(f.Scans))
-	}
-	us := math.Sqrt(float64(f.Line.Covariance[1][1]))
-	ui := math.Sqrt(float64(f.Line.Covariance[0][0]))
-	const sigmas = 3
-	if d := float64(f.Line.Slope) - demoSlope; math.Abs(d) > sigmas*us {
-		t.Errorf("slope %v ± %.2g, the truth is %v", f.Line.Slope, us, demoSlope)
-	}
-	if d := float64(f.Line.Intercept) - demoIntercept; math.Abs(d) > sigmas*ui {
-		t.Errorf("intercept %v ± %.2g, the truth is %v", f.Line.Intercept, ui, demoIntercept)
-	}
-	if us > 0.01*demoSlope {
-		t.Errorf("the slope is known to %.2g of %.2g only: the check says nothing", us, demoSlope)
-	}
-	for i, s := range f.Scans {
-		if math.Abs(float64(s.Plateau)-demoPlateau) > 0.05 || math.Abs(float64(s.DoublyCharged)-demoDouble) > 0.03 {
-			t.Errorf("scan %d: plateau %v, doubly charged %v; the truth is %v and %v", i, s.Plateau, s.DoublyCharged, demoPlateau, demoDouble)
-		}
-		if len(s.Choices) < 2 {
-			t.Errorf("scan %d: no other models", i)
-		}
-	}
-	all := strings.Join(a.Finding, " ")
-	if !regexp.MustCompile(`S = \(0\.06[34]\d* ± `).MatchString(all) || !strings.Contains(all, "water-activity model is worth") {
-		t.Errorf("finding %q", all)
-	}
-}
-
-// Every form of the curve finds about the same line; the two-step one lies closest.
-func TestActivationCurves(t *testing.T) {
-	for _, curve := range []string{"two-step", "gaussian", "sigmoid"} {
-		a, err := calibrate(t, func(s *scenario.Scenario) { s.Activation = curve })
-		if err != nil {
-			t.Fatal(err)
-		}
-		f := counterFacts(t, a)
-		if f.Line == nil {
-			t.Fatalf("%s: no line: %v", curve, *f.Fault)
-		}
-		at10 := float64(f.Line.Slope)*10 + float64(f.Line.Intercept)
-		if want := demoSlope*10 + demoIntercept; math.Abs(at10/want-1) > 0.015 {
-			t.Errorf("%s: %v %% at 10 K, want %v", curve, at10, want)
-		}
-	}
 }
 
 func TestCounterFactsKeys(t *testing.T) {
@@ -218,10 +66,7 @@ func TestBadScans(t *testing.T) {
 		"damaged number":    {strings.Replace(good, lines[5], "2026-03-13T09:02:00Z,ammonium sulfate,3.0,3o,1500,2\n", 1), ":6:"},
 	} {
 		t.Run(name, func(t *testing.T) {
-			file := filepath.Join(t.TempDir(), "scans.csv")
-			if err := os.WriteFile(file, []byte(c.text), 0o644); err != nil {
-				t.Fatal(err)
-			}
+			file := written(t, "scans.csv", c.text)
 			a, err := calibrate(t, func(s *scenario.Scenario) { s.Scans = []scenario.DataFile{{Name: file}} })
 			said := strings.Join(a.Finding, " ")
 			if err != nil {
@@ -238,84 +83,54 @@ func TestBadScans(t *testing.T) {
 	}
 }
 
-// What the Counter question writes is read back, and a file that is none is
-// refused with its place.
-func TestCalibrationFile(t *testing.T) {
-	a, err := calibrate(t, nil)
+// What a log needs before it is fitted: rows while the column settles left out, small
+// particles that are not counted corrected for, charges by the size distribution.
+func TestCounterPreparation(t *testing.T) {
+	var b strings.Builder
+	b.WriteString("diameter (nm),dN/dlog10D (cm-3)\n")
+	for d := 8.0; d < 900; d *= 1.12 {
+		x := math.Log(d/60) / math.Log(1.7)
+		fmt.Fprintf(&b, "%.2f,%.3f\n", d, 2000*math.Exp(-x*x/2))
+	}
+	sizes := written(t, "sizes.csv", b.String())
+	plain, err := calibrate(t, nil)
 	if err != nil {
 		t.Fatal(err)
 	}
-	text, err := json.Marshal(a.Facts)
-	if err != nil {
-		t.Fatal(err)
-	}
-	write := func(name, text string) scenario.Scenario {
-		s := scenario.Default()
-		s.Calibration = filepath.Join(t.TempDir(), name)
-		if err := os.WriteFile(s.Calibration, []byte(text), 0o644); err != nil {
-			t.Fatal(err)
-		}
-		return s
-	}
-	c, err := readCalibration(counterEnv(), "calibration", write("a.json", string(text)).Calibration)
-	if err != nil {
-		t.Fatal(err)
-	}
-	applied, err := c.Apply(10, counter.Site{})
-	got, u := applied.Supersaturation, applied.Uncertainty
-	if want := (demoSlope*10 + demoIntercept) / 100; err != nil || math.Abs(got-want) > 3*u || u > 0.01*want {
-		t.Errorf("10 K is %v ± %v, %v; the truth is %v", got, u, err, want)
-	}
-	for text, want := range map[string]string{
-		"":                            "line 1, column 1",
-		"{}":                          "no key calibration_file",
-		"{\n\"calibration_file\": x}": "line 2, column",
-		"{\"calibration_file\": {}}":  "has no line",
-		"[1]":                         "no calibration",
+	want := counterFacts(t, plain)
+	for name, c := range map[string]struct {
+		change  func(*scenario.Scenario)
+		leftOut int // at least
+		moves   float64
+	}{
+		"settling": {func(s *scenario.Scenario) { s.Settling = 100 }, 10, 0.02},
+		"cut-off":  {func(s *scenario.Scenario) { s.CNCutOff = scenario.Measure{Number: 5e-9} }, 0, 0.02},
+		"sizes":    {func(s *scenario.Scenario) { s.Bins = sizes }, 0, 0.02},
 	} {
-		_, err := readCalibration(counterEnv(), "calibration", write("b.json", text).Calibration)
-		var in *InputError
-		if !errors.As(err, &in) || in.Input != "calibration" || !strings.Contains(err.Error(), want) {
-			t.Errorf("%q: %v, want %q", text, err, want)
+		a, err := calibrate(t, c.change)
+		if err != nil {
+			t.Errorf("%s: %v", name, err)
+			continue
+		}
+		f := counterFacts(t, a)
+		if f.Line == nil || math.Abs(float64(f.Line.Slope/want.Line.Slope)-1) > c.moves {
+			t.Errorf("%s: line %+v, want about %v", name, f.Line, want.Line.Slope)
+		}
+		if len(f.LeftOut) < c.leftOut {
+			t.Errorf("%s: %d points left out, want %d or more", name, len(f.LeftOut), c.leftOut)
+		}
+		constant := strings.Contains(strings.Join(codes(a), " "), "constant") || strings.Contains(strings.Join(a.Why, " "), "for want of a size distribution")
+		if (name == "sizes") == constant {
+			t.Errorf("%s: notes %q", name, codes(a))
 		}
 	}
 }
 
-// Counts of a counter that was calibrated stand at the supersaturations of its
-// temperature differences.
-func TestCalibratedCounts(t *testing.T) {
-	a, err := calibrate(t, nil)
-	if err != nil {
-		t.Fatal(err)
-	}
-	text, err := json.Marshal(a.Facts)
-	if err != nil {
-		t.Fatal(err)
-	}
-	dir := t.TempDir()
-	s := scenario.Default()
-	s.Calibration = filepath.Join(dir, "cal.json")
-	data := filepath.Join(dir, "ccn.csv")
-	for name, content := range map[string]string{s.Calibration: string(text), data: "start_time,end_time,temperature difference (K),ccn (cm-3),supersaturation set (%)\n" +
-		"2026-03-14T00:00:00Z,2026-03-14T00:05:00Z,10.0,500,0.5\n2026-03-14T00:05:00Z,2026-03-14T00:10:00Z,5.0,200,0.2\n"} {
-		if err := os.WriteFile(name, []byte(content), 0o644); err != nil {
-			t.Fatal(err)
-		}
-	}
-	s.Data = []scenario.DataFile{{Name: data}}
-	var got []float64
-	if _, err := campaign(context.Background(), counterEnv(), s, func(o *observation) error {
-		for _, c := range o.counts {
-			got = append(got, c.s)
-		}
-		return nil
-	}); err != nil {
-		t.Fatal(err)
-	}
-	for i, dt := range []float64{10, 5} {
-		want := (demoSlope*dt + demoIntercept) / 100
-		if i >= len(got) || math.Abs(got[i]/want-1) > 0.01 {
-			t.Errorf("supersaturations %v, want that of %v K, %v, within 1 %%", got, dt, want)
-		}
+// A delay moves counts between samples, so their lengths must be known.
+func TestDelayNeedsDurations(t *testing.T) {
+	_, err := calibrate(t, func(s *scenario.Scenario) { s.CNDelay = 3 })
+	var in *InputError
+	if !errors.As(err, &in) || in.Input != "cn-delay" || !strings.Contains(err.Error(), "sampling time") {
+		t.Errorf("error %v", err)
 	}
 }

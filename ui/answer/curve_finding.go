@@ -14,16 +14,12 @@ import (
 // finding is the answer in sentences: the crest, the drop at the humidity looked
 // at, and whatever limits both.
 func (c *curve) finding(limits []atmos.Note) []string {
-	out := []string{c.crestSentence(), c.hazeSentence()}
+	sentences := []string{c.crestSentence(), c.hazeSentence()}
 	if c.hasTwin {
-		out = []string{c.crestSentence(), c.twinSentence(), c.hazeSentence()}
+		sentences = []string{c.crestSentence(), c.twinSentence(), c.hazeSentence()}
 	}
-	for _, n := range limits {
-		if n.Code != aboveCrest { // the drop's sentence has said it
-			return append(out, capital(n.Text))
-		}
-	}
-	return out
+	// The drop's sentence has said it when the humidity is above the crest.
+	return findingOf(sentences, limits, func(n atmos.Note) bool { return n.Code != aboveCrest })
 }
 
 func (c *curve) crestSentence() string {

@@ -7,7 +7,6 @@ import (
 	"math"
 	"math/rand/v2"
 	"os"
-	"path/filepath"
 	"testing"
 
 	"dropcrest/koehler/kappa"
@@ -55,29 +54,14 @@ func demoMeasurements(t testing.TB) []byte {
 
 // The file of the demo is what the program above writes. To write it anew:
 // DROPCREST_WRITE_DEMO=1 go test -run TestDemoPoints ./ui/answer
-func TestDemoPoints(t *testing.T) {
-	name := filepath.Join(demoFolder, demoPoints)
-	want := demoMeasurements(t)
-	if os.Getenv("DROPCREST_WRITE_DEMO") != "" {
-		if err := os.WriteFile(name, want, 0o644); err != nil {
-			t.Fatal(err)
-		}
-	}
-	got, err := os.ReadFile(name)
-	if err != nil {
-		t.Fatal(err)
-	}
-	if !bytes.Equal(got, want) {
-		t.Error("the file of measurements is not what its program writes")
-	}
-}
+func TestDemoPoints(t *testing.T) { isInDemo(t, demoPoints, demoMeasurements(t)) }
 
 // The truth behind the demo is recovered within twice the uncertainty that is
 // given for it, both kinds on their own.
 func TestDemoKappa(t *testing.T) {
 	s := scenario.Default()
 	s.PointsFile, s.Trials.Number = scenario.DemoData, 20000
-	a, err := askKappa(context.Background(), Env{Demo: os.DirFS(demoFolder)}, s)
+	a, err := askKappa(context.Background(), Env{Demo: os.DirFS(stationFolder)}, s)
 	if err != nil {
 		t.Fatal(err)
 	}

@@ -62,15 +62,7 @@ func newActivated(ctx context.Context, env Env, s scenario.Scenario) (*activated
 		if err != nil {
 			return nil, err
 		}
-		mixed = func(s scenario.Scenario) (*activated, error) {
-			of, err := env.compose(s)
-			if err != nil {
-				return nil, err
-			}
-			a := ofBins(s, bins, of)
-			a.notes = distinct(append(a.notes, notes...))
-			return a, nil
-		}
+		mixed = func(s scenario.Scenario) (*activated, error) { return ofBins(env, s, bins, notes) }
 	default:
 		return ofRecords(ctx, env, s)
 	}

@@ -14,22 +14,11 @@ import (
 // finding is the answer in sentences: how many activate, whether that agrees with
 // what was counted, the κ of both, the numbers of the fit, and what limits it.
 func (a *activated) finding() []string {
-	out := []string{a.countSentence()}
-	for _, says := range []string{a.closureSentence(), a.kappaSentence(), a.fitSentence(), a.rejectedSentence()} {
-		if says != "" {
-			out = append(out, says)
-		}
-	}
-	for _, n := range a.notes {
-		if limits(n) {
-			return append(out, capital(n.Text))
-		}
-	}
-	return out
+	return findingOf([]string{a.countSentence(), a.closureSentence(), a.kappaSentence(), a.fitSentence(), a.rejectedSentence()}, a.notes, limitsCounts)
 }
 
-// limits tells whether a note says what limits the counts.
-func limits(n atmos.Note) bool {
+// limitsCounts tells whether a note says what limits the counts.
+func limitsCounts(n atmos.Note) bool {
 	switch n.Code {
 	case "critical-size-below-bins", "critical-size-above-bins", "count-misses-upper-tail":
 		return true

@@ -25,7 +25,7 @@ type observation struct {
 	kappaFrom  string        // what it follows from, in words
 	species    []spectrum.MixedPart
 	counts     []measurement // ascending
-	rejected   []rejection
+	rejected   rejections
 	notes      []atmos.Note
 }
 

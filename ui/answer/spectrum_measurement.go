@@ -64,6 +64,20 @@ type rejection struct {
 	Count  int
 }
 
+// rejections are what is left out, a line for each reason in the order it came up.
+type rejections []rejection
+
+// add counts a point that is left out.
+func (r *rejections) add(why string) {
+	for i := range *r {
+		if (*r)[i].Reason == why {
+			(*r)[i].Count++
+			return
+		}
+	}
+	*r = append(*r, rejection{why, 1})
+}
+
 // betweenFlag is the flag of a count that was interpolated.
 const betweenFlag = "interpolated"
 

@@ -44,7 +44,7 @@ type activated struct {
 	closures  spectrum.Closures
 	fits      []fitted
 	modes     *aerosol.ModeFit // of measured sizes; nil: not fitted
-	rejected  []rejection
+	rejected  rejections
 	notes     []atmos.Note
 }
 
@@ -110,11 +110,16 @@ func modeError(i int, err error) error {
 	return err
 }
 
-// ofBins is the population of measured bins.
-func ofBins(s scenario.Scenario, bins *aerosol.Bins, of composed) *activated {
+// ofBins is the population of measured bins, with the notes on how they were read.
+func ofBins(env Env, s scenario.Scenario, bins *aerosol.Bins, notes []atmos.Note) (*activated, error) {
+	of, err := env.compose(s)
+	if err != nil {
+		return nil, err
+	}
 	a := &activated{asked: s, isAlike: true, sizes: bins, bins: bins}
 	a.add(bins, of)
-	return a
+	a.notes = distinct(append(a.notes, notes...))
+	return a, nil
 }
 
 func (a *activated) add(sizes spectrum.Sizes, of composed) {

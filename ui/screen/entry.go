@@ -43,6 +43,20 @@ func openEntry(in scenario.Input, first rune, kept string, back panel) *entry {
 	return e
 }
 
+// begun is an entry of an input with the characters that begin it: one typed, several
+// that arrive at once on a slow line, or pasted text. It is nil where they are no
+// number for a slot that takes one; a slot for text takes any that is pasted.
+func (m *model) begun(in scenario.Input, k tea.KeyMsg, back panel) *entry {
+	text := strings.TrimSpace(string(k.Runes))
+	first := tea.KeyMsg{Type: tea.KeyRunes, Runes: []rune(text)[:min(1, len(text))]}
+	takesText := !isList(in) && (in.Kind() == scenario.File || in.Kind() == scenario.Text)
+	isPasted, isNumber := k.Paste && text != "", key.Matches(first, m.keys.Type)
+	if isPasted && takesText || isNumber && isNumeric(in) {
+		return openEntry(in, 0, text, back)
+	}
+	return nil
+}
+
 // editable is the value of an input as a text that is worth changing: a series of
 // numbers, a file name. A single number is sooner typed anew.
 func editable(in scenario.Input) string {

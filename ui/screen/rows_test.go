@@ -62,6 +62,67 @@ func TestRowsChange(t *testing.T) {
 	}
 }
 
+// Characters that arrive at once on a slow line are typed, and a pasted number too;
+// other text would drive the rows and means nothing.
+func TestRowsBursts(t *testing.T) {
+	share := scenario.Path("component[1].share")
+	for name, c := range map[string]struct {
+		keys  []string // each is one message
+		typed string   // in the entry; "" when none is open
+		want  string   // the share after Enter
+	}{
+		"at once":                 {[]string{"0.5"}, "0.5", "0.50"},
+		"begun, then at once":     {[]string{"0", ".75"}, "0.75", "0.75"},
+		"at once, then at once":   {[]string{"0.", "75"}, "0.75", "0.75"},
+		"one digit several times": {[]string{"11"}, "11", "11.00"},
+		"pasted":                  {[]string{"paste: 0.5\n"}, "0.5", "0.50"},
+		"pasted digit":            {[]string{"paste:2"}, "2", "2.00"},
+		"pasted into an entry":    {[]string{"0", "paste:.5\x1b\r\u202e"}, "0.5", "0.50"},
+		"controls":                {[]string{"0.5\x1b\x07"}, "0.5", "0.50"},
+		"piece of a key":          {[]string{"[5~"}, "", "0.25"},
+		"letters":                 {[]string{"da"}, "", "0.25"},
+		"pasted letters":          {[]string{"paste:da"}, "", "0.25"},
+		"pasted nothing":          {[]string{"paste:\n"}, "", "0.25"},
+	} {
+		t.Run(name, func(t *testing.T) {
+			d := mixture(t).rows().press("tab")
+			for _, k := range c.keys {
+				d.Update(keyOf(k))
+			}
+			typed := ""
+			if e := d.panel.(*rows).entry; e != nil {
+				typed = e.field.String()
+				d.press("enter")
+			}
+			if typed != c.typed {
+				t.Errorf("%q is typed, want %q", typed, c.typed)
+			}
+			if n := len(d.scenario.Components); n != 2 {
+				t.Errorf("%d components", n)
+			}
+			d.shows(share, c.want)
+		})
+	}
+}
+
+// Pasted text begins the name of a file, but text that arrives at once does not; a
+// list among the settings takes neither.
+func TestRowsPastedText(t *testing.T) {
+	m := onSeason(t)
+	press(m, "right enter")
+	r := m.panel.(*rows)
+	if m.Update(keyOf("b.csv")); r.entry != nil {
+		t.Errorf("%q is typed", r.entry.field.String())
+	}
+	if m.Update(keyOf("paste:b.csv")); r.entry == nil || r.entry.field.String() != "b.csv" {
+		t.Errorf("the entry is %v", r.entry)
+	}
+	l, _ := m.listOf("data")
+	if e := m.begun(listSlot{l}, keyOf("paste:b.csv"), r); e != nil {
+		t.Errorf("%q is typed into a list", e.field.String())
+	}
+}
+
 // a adds and chooses a row, d drops the chosen one; the last one stays.
 func TestRowsAddAndDrop(t *testing.T) {
 	d := mixture(t).rows().press("a").says("3 [1.00] of <ammonium bisulfate>", "2.25 in all")

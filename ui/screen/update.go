@@ -2,7 +2,6 @@ package screen
 
 import (
 	"errors"
-	"strings"
 
 	"github.com/charmbracelet/bubbles/key"
 	tea "github.com/charmbracelet/bubbletea"
@@ -223,17 +222,16 @@ func stopped(err error) string {
 // paste opens an entry with text pasted on a slot that takes text, or with a
 // number on a slot for one. Other text would drive the page.
 func (m *model) paste(k tea.KeyMsg) {
-	text := strings.TrimSpace(string(k.Runes))
-	in, ok := m.input()
-	first := tea.KeyMsg{Type: tea.KeyRunes, Runes: []rune(text)[:min(1, len(text))]}
-	switch {
-	case ok && text != "" && (in.Kind() == scenario.File || in.Kind() == scenario.Text),
-		ok && isNumeric(in) && key.Matches(first, m.keys.Type):
-		m.panel = newEntry(in, 0, text)
-	default:
-		m.say("pasted text is taken by an entry, or when it is a number on a slot for one")
+	if in, ok := m.input(); ok {
+		if e := m.begun(in, k, nil); e != nil {
+			m.panel = e
+			return
+		}
 	}
+	m.say(notPasted)
 }
+
+const notPasted = "pasted text is taken by an entry, or when it is a number on a slot for one"
 
 // startEntry starts an entry with the first character typed.
 func (m *model) startEntry(first rune) {
