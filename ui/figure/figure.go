@@ -2,7 +2,8 @@
 // its text form. Coordinates are in the units that are shown (µm, %).
 package figure
 
-// Figure is one picture: dense polylines that contain their extrema, and marks.
+// Figure is one picture: dense polylines that contain their extrema, and marks; or,
+// where there are bars, these alone.
 type Figure struct {
 	Key    string // "curve"
 	Title  string // "supersaturation, % against wet radius, µm"
@@ -10,6 +11,7 @@ type Figure struct {
 	Lines  []Line
 	Marks  []Mark
 	Points []Point  // measured, drawn over the lines
+	Bars   []Bar    // rows with signed bars instead of lines; X is the axis of their values, Y is not looked at
 	Notes  []string // printed below the picture in figure files
 }
 
@@ -54,6 +56,17 @@ type Point struct {
 	XLow, XHigh float64
 	YLow, YHigh float64
 }
+
+// Bar is one row of a figure of bars.
+type Bar struct {
+	Says   string  // "one κ at every dilution"
+	Value  float64 // in the unit of X; NaN: it has none
+	Text   string  // the value in words: "-7.2 %", "not known"
+	Chosen bool    // marked, and always in sight
+}
+
+// Drawable reports whether the value is a number that a bar can show.
+func (b Bar) Drawable() bool { return usable(b.Value) }
 
 // MarkKind says what a mark stands for.
 type MarkKind int
@@ -100,7 +113,7 @@ const (
 	CrestRole
 	HazeRole
 	PointRole // measured points
-	BarRole   // their uncertainty
+	BarRole   // their uncertainty; the bars of a figure of bars are CurrentRole
 	LabelRole
 )
 

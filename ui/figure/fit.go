@@ -22,7 +22,12 @@ const (
 // points, and stays until they leave it or use less than half of it. On a
 // logarithmic Y axis a decade is a whole number of rows, or a row of decades, and
 // of lines that fall towards zero four decades are shown.
+//
+// A figure of bars is seen through no frame: its frame is the zero Frame.
 func Fit(f Figure, last Frame, h int) (Frame, bool) {
+	if len(f.Bars) > 0 {
+		return Frame{}, last != Frame{}
+	}
 	rows := pictureRows(h)
 	n := needsOf(f)
 	fresh := n.frame(rows)
@@ -50,8 +55,11 @@ func (fr Frame) Serves() bool {
 }
 
 // Suits reports whether a figure can be drawn through the frame: logarithmic axes
-// begin above zero.
+// begin above zero. A figure of bars can be drawn through any, as it looks at none.
 func (fr Frame) Suits(f Figure) bool {
+	if len(f.Bars) > 0 {
+		return true
+	}
 	return fr.Serves() && fr.YLog == f.Y.Log && (!f.X.Log || fr.XMin > 0)
 }
 

@@ -13,12 +13,17 @@ type glyphSet struct {
 	measured            rune // points of data, with their bars
 	upright, across     rune
 	lines               [3]asciigraph.CharSet // by Dash
+
+	// A row with a bar: its mark, a cell of the bar, and half a cell at the end of
+	// one left and right of zero.
+	chosen, full, halfLeft, halfRight rune
 }
 
 var boxGlyphs = glyphSet{
 	bar: '│', barLabelled: '┤', corner: '└', floor: '─', tick: '┬', zero: '╌',
 	crest: '◆', haze: '○', point: '●', up: '▲', down: '▼', left: '←', right: '→',
 	measured: '■', upright: '┃', across: '━',
+	chosen: '▸', full: '█', halfLeft: '▐', halfRight: '▌',
 	lines: [3]asciigraph.CharSet{
 		Solid: {
 			Horizontal: "─", VerticalLine: "│", ArcDownRight: "╭", ArcDownLeft: "╮", ArcUpRight: "╰", ArcUpLeft: "╯",
@@ -36,6 +41,7 @@ var asciiGlyphs = glyphSet{
 	bar: '|', barLabelled: '+', corner: '+', floor: '-', tick: '+', zero: '-',
 	crest: '#', haze: 'o', point: '@', up: '^', down: 'v', left: '<', right: '>',
 	measured: 'X', upright: '!', across: '=',
+	chosen: '>', full: '#', halfLeft: '-', halfRight: '-',
 	lines: [3]asciigraph.CharSet{
 		Solid: dots("*"),
 		Dashed: {
@@ -44,6 +50,13 @@ var asciiGlyphs = glyphSet{
 		},
 		Dotted: dots("."),
 	},
+}
+
+func glyphsOf(st Style) glyphSet {
+	if st.ASCII {
+		return asciiGlyphs
+	}
+	return boxGlyphs
 }
 
 // lineGlyphs are the characters of the lines in both sets.

@@ -2,6 +2,7 @@ package figure
 
 import (
 	"math"
+	"unicode"
 	"unicode/utf8"
 
 	"github.com/charmbracelet/x/ansi"
@@ -12,10 +13,14 @@ import (
 // Text draws f through the frame as h rows of w cells: the picture's rows with
 // the vertical axis at their left, then the horizontal axis and its labels. A
 // frame made for another height is relaid, the zero Frame is fitted here. The
-// same figure, frame, size and style give the same cells.
+// same figure, frame, size and style give the same cells. A figure of bars has a
+// bar in each row and neither axes nor a frame.
 func Text(f Figure, fr Frame, w, h int, st Style) [][]Cell {
 	if w < 1 || h < 1 {
 		return nil
+	}
+	if len(f.Bars) > 0 {
+		return barRows(f.Bars, w, h, st)
 	}
 	rows := pictureRows(h)
 	if !fr.Suits(f) {
@@ -51,18 +56,22 @@ type canvas struct {
 }
 
 func newCanvas(w, rows, gutter int, st Style) *canvas {
-	c := &canvas{rows: rows, cols: max(w-gutter, 0), gutter: gutter, ascii: st.ASCII, glyphs: boxGlyphs}
-	if st.ASCII {
-		c.glyphs = asciiGlyphs
+	return &canvas{
+		cells: blankCells(w, rows+2), rows: rows, cols: max(w-gutter, 0), gutter: gutter, ascii: st.ASCII, glyphs: glyphsOf(st),
 	}
-	all := make([]Cell, w*(rows+2))
+}
+
+// blankCells are h rows of w blank cells.
+func blankCells(w, h int) [][]Cell {
+	all := make([]Cell, w*h)
 	for i := range all {
 		all[i].Rune = ' '
 	}
-	for i := range rows + 2 {
-		c.cells = append(c.cells, all[i*w:(i+1)*w:(i+1)*w])
+	rows := make([][]Cell, h)
+	for i := range rows {
+		rows[i] = all[i*w : (i+1)*w : (i+1)*w]
 	}
-	return c
+	return rows
 }
 
 // place sets which part of the plane the columns and rows show.
@@ -166,21 +175,25 @@ func (c *canvas) xAxis(x Axis) {
 	}
 }
 
-// text is s as runes of one cell each. Whatever could drive or shift a terminal
-// is taken out, a wide character becomes a question mark.
-func (c *canvas) text(s string) []rune {
-	if c.ascii {
+func (c *canvas) text(s string) []rune { return cellText(s, c.ascii) }
+
+// cellText is s as runes of one cell each. Whatever could drive or shift a terminal
+// is taken out; a wide character, or one that nobody knows how to show, becomes a
+// question mark.
+func cellText(s string, ascii bool) []rune {
+	if ascii {
 		s = plain.ASCII(s)
 	}
 	s = plain.Clean(s)
 	var out []rune
 	for _, r := range s {
 		if r >= utf8.RuneSelf {
-			switch ansi.StringWidth(string(r)) {
-			case 0:
+			switch n := ansi.StringWidth(string(r)); {
+			case n == 0:
 				continue
-			case 1:
-			default:
+			case unicode.IsSpace(r):
+				r = ' '
+			case n > 1 || !unicode.IsPrint(r):
 				r = '?'
 			}
 		}

@@ -163,17 +163,18 @@ func TestEveryFigureAtEverySize(t *testing.T) {
 }
 
 func TestTinySizes(t *testing.T) {
-	f := pictures()["others"]
-	for h := range 8 {
-		for w := range 14 {
-			cells := Text(f, Frame{}, w, h, Style{})
-			if w == 0 || h == 0 {
-				if cells != nil {
-					t.Errorf("%d x %d: cells from nothing", w, h)
+	for _, f := range []Figure{pictures()["others"], {Bars: ledgerBars()}} {
+		for h := range 8 {
+			for w := range 14 {
+				cells := Text(f, Frame{}, w, h, Style{})
+				if w == 0 || h == 0 {
+					if cells != nil {
+						t.Errorf("%d x %d: cells from nothing", w, h)
+					}
+					continue
 				}
-				continue
+				checkCells(t, cells, w, h, Style{})
 			}
-			checkCells(t, cells, w, h, Style{})
 		}
 	}
 }

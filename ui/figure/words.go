@@ -19,9 +19,12 @@ func Lines(cells [][]Cell) []string {
 	return out
 }
 
-// Words prints the marked and the measured points of f as text, one a line: what
-// the picture says where there is no room for a picture.
+// Words prints the marked and the measured points of f as text, or its bars, one a
+// line: what the picture says where there is no room for a picture.
 func Words(f Figure) []string {
+	if len(f.Bars) > 0 {
+		return wordsOfBars(f.Bars)
+	}
 	var out []string
 	for _, m := range f.Marks {
 		if !usable(m.X) || !usable(m.Y) {
@@ -40,6 +43,15 @@ func Words(f Figure) []string {
 		if usable(p.X) && usable(p.Y) {
 			out = append(out, f.saysPoint(p))
 		}
+	}
+	return out
+}
+
+// wordsOfBars has a line for each bar, so that lines and rows have the same numbers.
+func wordsOfBars(bars []Bar) []string {
+	out := make([]string, len(bars))
+	for i, b := range bars {
+		out[i] = strings.TrimSpace(b.Says + " " + b.Text)
 	}
 	return out
 }

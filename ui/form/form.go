@@ -164,6 +164,14 @@ func (s Sheet) writeRows(b *bytes.Buffer, format string, t answer.Table) error {
 // pictureHeight is the height of the picture in text, axis included.
 const pictureHeight = 16
 
+// heightOf is the height of a figure in text. On paper there is room for every bar.
+func heightOf(f figure.Figure) int {
+	if n := len(f.Bars); n > 0 {
+		return n
+	}
+	return pictureHeight
+}
+
 func (s Sheet) frame(i int) figure.Frame {
 	if i == 0 && s.Frame.Serves() {
 		return s.Frame
@@ -180,7 +188,7 @@ func (s Sheet) writeText(b *bytes.Buffer) {
 	b.WriteByte('\n')
 	for i, f := range s.Answer.Figures {
 		say(f.Title)
-		cells := figure.Text(f, s.frame(i), s.Width, pictureHeight, figure.Style{ASCII: s.ASCII})
+		cells := figure.Text(f, s.frame(i), s.Width, heightOf(f), figure.Style{ASCII: s.ASCII})
 		b.WriteString(strings.Join(figure.Lines(cells), "\n") + "\n\n")
 	}
 	say(strings.Join(s.Answer.Finding, " "))

@@ -4,6 +4,7 @@ import (
 	"bytes"
 	"context"
 	"encoding/json"
+	"fmt"
 	"strings"
 	"testing"
 
@@ -74,6 +75,28 @@ func TestFrameCounts(t *testing.T) {
 }
 
 // The keys of an object keep their order, and signs stay as they are.
+// On paper every bar has a row, however many there are.
+func TestEveryBarIsWritten(t *testing.T) {
+	s := sheet(t)
+	bars := figure.Figure{Key: "bars", Title: "costs", X: figure.Axis{Says: "cost", Unit: "%"}}
+	for i := range 2 * pictureHeight {
+		bars.Bars = append(bars.Bars, figure.Bar{Says: fmt.Sprintf("assumption %d", i+1), Value: float64(-i), Text: fmt.Sprintf("%d %%", -i)})
+	}
+	s.Answer.Figures = append(s.Answer.Figures, bars)
+	s.Picture = bars.Key
+	for _, format := range []string{"text", "svg"} {
+		var b bytes.Buffer
+		if err := s.Write(&b, format); err != nil {
+			t.Fatal(err)
+		}
+		for _, bar := range bars.Bars {
+			if !strings.Contains(b.String(), bar.Says) || !strings.Contains(b.String(), bar.Text) {
+				t.Errorf("the %s lacks %s, %s", format, bar.Says, bar.Text)
+			}
+		}
+	}
+}
+
 func TestObject(t *testing.T) {
 	got, err := json.Marshal(Object{{"b", 1}, {"a", []string{}}, {"c", nil}})
 	if want := `{"b":1,"a":[],"c":null}`; err != nil || string(got) != want {

@@ -9,6 +9,7 @@ import (
 	tea "github.com/charmbracelet/bubbletea"
 	"github.com/charmbracelet/x/ansi"
 
+	"dropcrest/ui/figure"
 	"dropcrest/ui/scenario"
 )
 
@@ -190,6 +191,37 @@ func TestNoRoomForAPicture(t *testing.T) {
 	}
 	if lines := m.draw(80, leastRows+1); !strings.Contains(strings.Join(lines, "\n"), "◆") {
 		t.Errorf("the picture is %q", lines)
+	}
+}
+
+// A picture of bars fits every window, and with held curves about too; where there
+// is no room for it its rows become words.
+func TestPictureOfBars(t *testing.T) {
+	m := opened(onTerminal("plain"), 80, 24)
+	press(m, "space pgup o")
+	bars := figure.Figure{Key: "bars", Title: "costs"}
+	for i := range 20 {
+		bars.Bars = append(bars.Bars, figure.Bar{Says: fmt.Sprintf("assumption %d", i+1), Value: float64(i - 9), Text: "a value", Chosen: i == 12})
+	}
+	m.answer.Figures = []figure.Figure{bars}
+	for _, w := range []int{60, 80, 100} {
+		for h := range 30 {
+			lines := m.draw(w, h)
+			says := strings.Join(lines, "\n")
+			for _, line := range lines {
+				if ansi.StringWidth(line) > w {
+					t.Errorf("%d x %d: %q is too wide", w, h, line)
+				}
+			}
+			switch {
+			case len(lines) > h:
+				t.Errorf("%d x %d: %d lines", w, h, len(lines))
+			case h > leastRows && !strings.Contains(says, "▸ 13  assumption 13"):
+				t.Errorf("%d x %d: the chosen bar is not in\n%s", w, h, says)
+			case h > 0 && h <= leastRows && !strings.HasPrefix(says, " assumption 1 a value"):
+				t.Errorf("%d x %d: words say\n%s", w, h, says)
+			}
+		}
 	}
 }
 

@@ -19,7 +19,7 @@ import (
 )
 
 // The page: as wide as the text of a journal page, the picture with its axes
-// 10 cm high, legend and notes below it as high as they need.
+// 10 cm high, or as high as its bars need, legend and notes below it likewise.
 const (
 	pageWidth     = 16 * vg.Centimeter
 	pictureHeight = 10 * vg.Centimeter
@@ -93,6 +93,8 @@ type sheet struct {
 	lines  []line
 	legend []entry
 	notes  []string
+
+	pictureHeight vg.Length
 }
 
 // entry is one line of the legend.
@@ -101,18 +103,12 @@ type entry interface {
 }
 
 func newSheet(f figure.Figure, fr figure.Frame) *sheet {
-	s := &sheet{f: f, fr: fr}
-	s.lines = linesOf(f)
-	for _, l := range s.lines {
-		if !l.AtEnd {
-			s.legend = append(s.legend, l)
-		}
-	}
-	if hasOwn(f.Points) {
-		s.legend = append(s.legend, measured{})
-	}
-	if len(s.legend) == 1 {
-		s.legend = nil // there is nothing to tell it from
+	s := &sheet{f: f, fr: fr, pictureHeight: pictureHeight}
+	if len(f.Bars) > 0 {
+		s.pictureHeight = heightOfBars(len(f.Bars))
+	} else {
+		s.lines = linesOf(f)
+		s.legend = legendOf(s.lines, f.Points)
 	}
 	for _, n := range f.Notes {
 		s.notes = append(s.notes, wrap(n, textStyle(noteSize), pageWidth-2*margin)...)
@@ -120,9 +116,27 @@ func newSheet(f figure.Figure, fr figure.Frame) *sheet {
 	return s
 }
 
+// legendOf is the legend of lines and points; none where there is nothing to tell
+// one entry from.
+func legendOf(lines []line, points []figure.Point) []entry {
+	var legend []entry
+	for _, l := range lines {
+		if !l.AtEnd {
+			legend = append(legend, l)
+		}
+	}
+	if hasOwn(points) {
+		legend = append(legend, measured{})
+	}
+	if len(legend) == 1 {
+		return nil
+	}
+	return legend
+}
+
 // height is the height of the page with everything on it.
 func (s *sheet) height() vg.Length {
-	h := pictureHeight + 2*margin
+	h := s.pictureHeight + 2*margin
 	if n := len(s.legend); n > 0 {
 		h += vg.Length(n)*legendLine + margin/2
 	}
@@ -138,8 +152,12 @@ func (s *sheet) draw(page draw.Canvas) {
 	page.Fill(page.Rectangle.Path())
 	inner := draw.Crop(page, margin, -margin, margin, -margin)
 	picture := inner
-	picture.Min.Y = picture.Max.Y - pictureHeight
-	s.plot().Draw(picture)
+	picture.Min.Y = picture.Max.Y - s.pictureHeight
+	if len(s.f.Bars) > 0 {
+		s.drawBars(picture)
+	} else {
+		s.plot().Draw(picture)
+	}
 	at := vg.Point{X: inner.Min.X, Y: picture.Min.Y - margin/2}
 	for _, l := range s.legend {
 		at.Y -= legendLine

@@ -5,6 +5,7 @@ import (
 	"encoding/xml"
 	"errors"
 	"fmt"
+	"image/color"
 	"image/png"
 	"io"
 	"math"
@@ -236,7 +237,7 @@ func TestColoursCanBeSeen(t *testing.T) {
 		}
 		return math.Pow((c+0.055)/1.055, 2.4)
 	}
-	for _, c := range heldColours {
+	for _, c := range append(heldColours[:], color.RGBAModel.Convert(barColour).(color.RGBA)) {
 		contrast := 1.05 / (0.2126*linear(c.R) + 0.7152*linear(c.G) + 0.0722*linear(c.B) + 0.05)
 		if contrast < 3 {
 			t.Errorf("%v: contrast %.2f", c, contrast)
