@@ -5,7 +5,7 @@ import (
 	"math"
 	"slices"
 
-	"dropcrest/atmos/aerosol"
+	"dropcrest/koehler/spectrum"
 )
 
 // Sensitivity is how the droplet number answers to what it depends on: the change of
@@ -100,23 +100,8 @@ func scaleSize(p *Parcel, by float64) bool {
 		if g.KappaBySize != nil {
 			return false
 		}
-		switch s := g.Sizes.(type) {
-		case aerosol.Mode:
-			s.Median *= by
-			g.Sizes = s
-		case aerosol.Modes:
-			s = slices.Clone(s)
-			for k := range s {
-				s[k].Median *= by
-			}
-			g.Sizes = s
-		case *aerosol.Bins:
-			b, err := s.Resized(func(d float64) float64 { return d * by })
-			if err != nil {
-				return false
-			}
-			g.Sizes = b
-		default:
+		var ok bool
+		if g.Sizes, ok = spectrum.Scaled(g.Sizes, by); !ok {
 			return false
 		}
 		g.From, g.To = g.From*by, g.To*by

@@ -31,15 +31,15 @@ type Assumption struct {
 func Assumptions() []Assumption {
 	return []Assumption{
 		{VapourPressureChange, "the vapour keeps its pressure",
-			"Deriving the Kelvin equation one drops the change of the vapour's own pressure beside the pressure jump at the drop's surface. " +
-				"In air of a fixed total pressure that term does not exist, because the flat surface stands under the same pressure; in pure vapour it is some millionths.",
+			"The Kelvin equation drops the change of the vapour's own pressure beside the pressure jump at the drop's surface. " +
+				"In air of a fixed total pressure that term does not exist; in pure vapour it is about 0.002 %.",
 			"exact Kelvin equation of a drop in its own vapour; vapour pressure by Murphy & Koop 2005, Q. J. R. Meteorol. Soc. 131, 1539", vapourRow},
 		{IncompressibleLiquid, "water cannot be compressed",
 			"The pressure inside a small drop is tens of bar and squeezes the water, so that a mole of it takes a little less room and feels the curvature less. " +
 				"Leaving that out makes the barrier too high, noticeably only for dry particles below some 20 nm.",
 			"compressibility by Kell 1975, J. Chem. Eng. Data 20, 97, integrated over the Laplace pressure", incompressibleRow},
-		{FlatSurfaceTension, "a curved surface has the tension of a flat one",
-			"The surface tension in the tables is that of a flat surface; the one of a very small drop differs by Tolman's length over its radius. " +
+		{FlatSurfaceTension, "the tension of a flat surface",
+			"Tables give the tension of a flat surface; that of a very small drop differs by Tolman's length over its radius. " +
 				"That length is disputed even in its sign, so the cost is known only for the length that you give.",
 			"Tolman 1949, J. Chem. Phys. 17, 333; -0.056 nm from a simulation with TIP4P/2005 water at 300 K for radii of 0.7 to 1.6 nm", flatRow},
 		{ConstantKappa, "one κ at every dilution",
@@ -50,11 +50,11 @@ func Assumptions() []Assumption {
 			"An ideal solution takes each ion as one free particle, three for ammonium sulfate. " +
 				"Real ions hold on to each other, so fewer count and the ideal barrier is too low.",
 			"van 't Hoff's factor as the number of ions; common textbook practice", idealRow},
-		{PureWaterSurfaceTension, "the drop has the surface tension of pure water",
+		{PureWaterSurfaceTension, "the surface tension of pure water",
 			"Dissolved salts raise the surface tension and surface-active organics lower it, most in small drops because these are the most concentrated. " +
 				"Taking pure water at the drop's temperature leaves that out.",
 			"IAPWS R1-76(2014); increments per molality of the catalogue's substances", pureWaterRow},
-		{Convention25C, "72.0 mN/m and 25 °C, whatever the drop's own",
+		{Convention25C, "72.0 mN/m and 25 °C throughout",
 			"Most published κ are worked out with 72.0 mN/m and 25 °C, and are then used at other temperatures. " +
 				"The barrier follows the surface tension over the temperature to the power 1.5, some 0.8 % for each kelvin; what the solute does to the surface tension is left out too.",
 			"convention of Petters & Kreidenweis 2007, Atmos. Chem. Phys. 7, 1961", conventionRow},
@@ -63,7 +63,7 @@ func Assumptions() []Assumption {
 				"The measured density of the solution tells the drop's true size.",
 			"Tang & Munkelwitz 1994, J. Geophys. Res. 99, 18801; Tang 1996, J. Geophys. Res. 101, 19245", additiveRow},
 		{Sphere, "the dry particle is a sphere",
-			"A classifier measures mobility, and an angular or fluffy particle holds less matter than the sphere of the same mobility. " +
+			"A classifier measures mobility, and an angular particle holds less matter than the sphere of the same mobility. " +
 				"Taking it for a sphere overstates its solute, so the barrier comes out too low.",
 			"DeCarlo et al. 2004, Aerosol Sci. Technol. 38, 1185; slip correction of ISO 15900", sphereRow},
 		{TextbookCubic, "the textbook cubic s = A/D - B/D³",
@@ -71,8 +71,8 @@ func Assumptions() []Assumption {
 				"It holds for large soluble particles and fails where the drop at its crest is not much larger than the dry particle.",
 			"common textbook form; Petters & Kreidenweis 2007, eq. 10", textbookRow},
 		{CompleteDissolution, "all that can dissolve is dissolved at once",
-			"A sparingly soluble substance dissolves only as water comes in, so a dry particle of it may have to cross a first barrier with hardly any solute. " +
-				"Taking all of it as dissolved holds for a haze drop that came from higher humidity, and is far too low for one that starts dry.",
+			"A sparingly soluble substance dissolves only as water comes in, so a dry particle may have to cross a first barrier with hardly any solute. " +
+				"Taking all of it as dissolved holds for a drop that came from higher humidity, not for one that starts dry.",
 			"Petters & Kreidenweis 2008, Atmos. Chem. Phys. 8, 6273", dissolutionRow},
 	}
 }

@@ -38,8 +38,8 @@ func Example() {
 	//  -16.2 %  false the textbook cubic s = A/D - B/D³
 	//  -15.3 %  false every ion counts in full (i = ν)
 	//   -7.4 %  true  one κ at every dilution
-	//   -1.3 %  true  the drop has the surface tension of pure water
-	//   -1.2 %  false 72.0 mN/m and 25 °C, whatever the drop's own
+	//   -1.3 %  true  the surface tension of pure water
+	//   -1.2 %  false 72.0 mN/m and 25 °C throughout
 	// 5.0 % linear, 5.0 % by trials, most by the dry diameter
 	// for 3 %: dry diameter to 0.33 nm
 }

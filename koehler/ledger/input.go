@@ -23,12 +23,12 @@ const (
 	FilmExcess                     // greatest surface excess, mol/m²
 	FilmConstant                   // adsorption constant of the film, m³/mol
 
-	// of populations and of rising air, as factors of what was given where no unit is named
+	// of populations and of rising air
 	Sizes           // all dry sizes alike
 	Numbers         // of all particles alike
-	Supersaturation // at which droplets were counted
-	Updraft
-	Pressure // Pa
+	Supersaturation // at which droplets were counted, a fraction
+	Updraft         // m/s
+	Pressure        // Pa
 	quantities
 )
 
@@ -62,10 +62,10 @@ var quantityWords = [quantities]struct{ key, says, unit string }{
 	{"adsorption_b", "adsorption constant B", "1"},
 	{"film_excess", "surface excess of the film", "mol/m²"},
 	{"film_constant", "adsorption constant of the film", "m³/mol"},
-	{"sizes", "all dry sizes", "1"},
+	{"sizes", "dry sizes", "1"},
 	{"numbers", "number of particles", "1"},
 	{"supersaturation", "supersaturation of the counter", "1"},
-	{"updraft", "updraft", "1"},
+	{"updraft", "updraft", "m/s"},
 	{"pressure", "pressure", "Pa"},
 }
 

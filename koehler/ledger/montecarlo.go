@@ -16,6 +16,9 @@ type Settings struct {
 	Coverage float64 // of the intervals, above 0 and up to 0.99; 0: 0.95
 	Seed     uint64
 	Workers  int // 0: as many as there are cores. The result is the same for any number
+	// Rough is what the polynomial of MonteCarlo may be off by, in standard
+	// uncertainties, before each trial is solved by itself; 0: 0.05.
+	Rough float64
 }
 
 // Distribution is what the trials say about one outcome.
@@ -47,7 +50,7 @@ const (
 	// pieceTrials is the unit of work. It must not depend on the number of cores.
 	pieceTrials = 4000
 	// compared is the number of trials by which the polynomial is judged, and
-	// largestDeviation what it may be off by there, of a standard uncertainty.
+	// largestDeviation what it usually may be off by there, of a standard uncertainty.
 	compared         = 32
 	largestDeviation = 0.05
 )
@@ -62,7 +65,12 @@ func (b *Budget) MonteCarlo(ctx context.Context, s Settings) (MonteCarlo, error)
 	if s.Coverage == 0 {
 		s.Coverage = 0.95
 	}
+	if s.Rough == 0 {
+		s.Rough = largestDeviation
+	}
 	switch {
+	case !(s.Rough > 0):
+		return MonteCarlo{}, &koehler.RangeError{What: "roughness", Value: s.Rough, Right: "above 0 standard uncertainties, or 0 for 0.05"}
 	case s.Trials < 100:
 		return MonteCarlo{}, &koehler.RangeError{What: "number of trials", Value: float64(s.Trials), Right: "100 or more, or 0 for 100000"}
 	case !(s.Coverage > 0 && s.Coverage <= 0.99):
@@ -73,7 +81,7 @@ func (b *Budget) MonteCarlo(ctx context.Context, s Settings) (MonteCarlo, error)
 	f := b.surface(varied)
 	m.Deviation = b.judge(f, varied, s.Seed)
 	trial := f.at
-	if !(m.Deviation <= 100*largestDeviation) {
+	if !(m.Deviation <= 100*s.Rough) {
 		m.Direct, m.Trials, m.Deviation = true, min(s.Trials, directTrials), 0
 		trial = func(z []float64) Values { return b.solved(varied, z) }
 	}

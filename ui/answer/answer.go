@@ -35,6 +35,8 @@ type Env struct {
 	// before the first row.
 	Columns func(table string, columns []Column) error
 	Row     func(table string, row []any) error
+
+	assuming *assuming // particles by the models that a ledger compares; nil: as asked
 }
 
 // Question is one page and one subcommand.
@@ -68,6 +70,37 @@ type Question struct {
 	Formats []string
 	// Tabled are the keys of the tables that the text form shows; nil: none.
 	Tabled func(Answer) []string
+	// Turns is the input that the keys of records go through; nil: the record of data.
+	Turns *Turns
+	// Counts tells whether an input or a list of rows counts with the other values as
+	// they are, beyond what Input.Used says; nil: all do.
+	Counts func(s scenario.Scenario, path scenario.Path) bool
+	// Means is the input that an option means with that value, where it is not the one
+	// of its group; nil: it always is.
+	Means func(option, text string) (scenario.Path, bool)
+}
+
+// Turns is a whole number that a page is gone through by.
+type Turns struct {
+	Path scenario.Path
+	Says string // "row"
+}
+
+// records is how the pages of data are gone through.
+var records = Turns{"record", "record"}
+
+// Through is what the keys of records go through.
+func (q Question) Through() Turns {
+	if q.Turns != nil {
+		return *q.Turns
+	}
+	return records
+}
+
+// Heeds reports whether an input or list of rows that the question looks at counts
+// with the other values as they are.
+func (q Question) Heeds(s scenario.Scenario, path scenario.Path) bool {
+	return q.Counts == nil || q.Counts(s, path)
 }
 
 // IsLive reports whether the question is answered at once for that scenario.

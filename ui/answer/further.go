@@ -17,7 +17,7 @@ func FurtherInputs(q Question, s *scenario.Scenario) []scenario.Input {
 	named := slots(q, *s)
 	var out []scenario.Input
 	for _, in := range q.Inputs(s) {
-		if in.Used() && !slices.Contains(named, in.Key()) {
+		if in.Used() && q.Heeds(*s, in.Path()) && !slices.Contains(named, in.Key()) {
 			out = append(out, in)
 		}
 	}
@@ -27,7 +27,9 @@ func FurtherInputs(q Question, s *scenario.Scenario) []scenario.Input {
 // FurtherLists are the lists of rows without a slot of their own.
 func FurtherLists(q Question, s *scenario.Scenario) []scenario.RowList {
 	named := slots(q, *s)
-	return slices.DeleteFunc(q.Lists(s), func(l scenario.RowList) bool { return slices.Contains(named, l.Key()) })
+	return slices.DeleteFunc(q.Lists(s), func(l scenario.RowList) bool {
+		return slices.Contains(named, l.Key()) || !q.Heeds(*s, scenario.Path(l.Key()))
+	})
 }
 
 // slots are the names of the slots of a statement in their order.

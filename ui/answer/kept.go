@@ -18,6 +18,38 @@ type Kept struct {
 	matters []*matter // the last one used first
 	data    *keptData // nil: none
 	rising  keptAscent
+
+	costs    *costs // of the last ledger; nil: none
+	costsKey ledgerKey
+}
+
+// ledgerKey is what the costs of a ledger depend on.
+type ledgerKey struct {
+	of        scenario.Scenario
+	catalogue *solutes.Catalogue
+	files     string // when measured files were changed
+}
+
+// costsOf are the costs of that question, nil where they are not kept.
+func (k *Kept) costsOf(key ledgerKey) *costs {
+	if k == nil {
+		return nil
+	}
+	k.mu.Lock()
+	defer k.mu.Unlock()
+	if k.costs == nil || k.costsKey.catalogue != key.catalogue || k.costsKey.files != key.files || !k.costsKey.of.Equal(key.of) {
+		return nil
+	}
+	return k.costs
+}
+
+func (k *Kept) keepCosts(key ledgerKey, c *costs) {
+	if k == nil {
+		return
+	}
+	k.mu.Lock()
+	defer k.mu.Unlock()
+	k.costs, k.costsKey = c, key
 }
 
 // mostKept is enough to go back and forth between neighbouring values.
@@ -88,5 +120,5 @@ func onlyMatter(s scenario.Scenario) scenario.Scenario {
 	s.Population, s.Bins, s.Modes, s.Data, s.Map = "", "", nil, nil, nil
 	s.Record, s.Every, s.Average, s.Composition = scenario.Measure{}, scenario.Measure{}, "", ""
 	s.Mixing, s.KappaSpread, s.Supersaturations, s.Fit, s.Axes = "", 0, nil, "", ""
-	return withoutAscent(s)
+	return scenario.WithoutLedger(withoutAscent(s))
 }

@@ -4,7 +4,7 @@ package answer
 // command line, help and README range over it; a question that is not here does
 // not exist.
 func Questions() []Question {
-	return []Question{curveQuestion(), spectrumQuestion(), kappaQuestion(), counterQuestion(), ascentQuestion()}
+	return []Question{curveQuestion(), spectrumQuestion(), kappaQuestion(), counterQuestion(), ascentQuestion(), ledgerQuestion()}
 }
 
 // Find returns the question of that key.

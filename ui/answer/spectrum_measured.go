@@ -31,6 +31,7 @@ type observation struct {
 
 // composer makes the compositions of records: what they share is made once.
 type composer struct {
+	env     Env
 	asked   scenario.Scenario
 	given   composed // for records whose composition is not known
 	noGiven error    // why there is none
@@ -39,7 +40,7 @@ type composer struct {
 }
 
 func newComposer(env Env, s scenario.Scenario) (*composer, error) {
-	c := &composer{asked: s}
+	c := &composer{env: env, asked: s}
 	c.given, c.noGiven = env.compose(s)
 	if s.Composition == "given" {
 		return c, c.noGiven
@@ -71,7 +72,11 @@ func (c *composer) of(o *observation) (composed, error) {
 		var mixture spectrum.External
 		for _, p := range o.species {
 			if p.Share > 0 {
-				one := c.ofKappa(p.Species.Kappa)
+				one, err := c.ofKappa(p.Species.Kappa)
+				if err != nil {
+					return one, err
+				}
+				out.ledgers = append(out.ledgers, one.ledgers...)
 				mixture = append(mixture, spectrum.Part{Share: p.Share, Of: one.of})
 				out.kelvin = one.kelvin
 			}
@@ -79,17 +84,19 @@ func (c *composer) of(o *observation) (composed, error) {
 		out.of, out.isOne, out.kappa = mixture, false, math.NaN()
 		return out, nil
 	}
-	return c.ofKappa(o.kappa), nil
+	return c.ofKappa(o.kappa)
 }
 
 // ofKappa makes particles of one κ.
-func (c *composer) ofKappa(kappa float64) composed {
+func (c *composer) ofKappa(kappa float64) (composed, error) {
 	out, p := c.kappas, c.base
 	p.Solution = solutes.Kappa(kappa)
 	out.kappa = kappa
-	out.of, out.kelvin = sharp(p)
+	if err := c.env.makeOf(&out, onlyKappa(c.asked, kappa), p); err != nil {
+		return out, err
+	}
 	out.of, out.isOne = spreadOf(out.of, c.asked.KappaSpread, out.kelvin)
-	return out
+	return out, nil
 }
 
 // ofRecord is the population of a record and what was counted of it.

@@ -7,6 +7,7 @@ import (
 
 	"dropcrest/atmos"
 	"dropcrest/koehler"
+	"dropcrest/koehler/ledger"
 	"dropcrest/koehler/spectrum"
 	"dropcrest/solutes"
 	"dropcrest/ui/scenario"
@@ -21,6 +22,8 @@ type composed struct {
 	isOne  bool    // all particles of one size activate at one supersaturation
 	models []string
 	notes  []atmos.Note
+
+	ledgers []*ledger.Ledger // of its particles, where assumptions are asked for
 }
 
 // anySize stands for the dry size of a particle whose composition alone matters.
@@ -49,6 +52,7 @@ func (env Env) compose(s scenario.Scenario) (composed, error) {
 		// Particles of one size have one volume: a share of the volume is one of the number.
 		mixture = append(mixture, spectrum.Part{Share: part.Volume, Of: one.of})
 		out.kelvin = one.kelvin
+		out.ledgers = append(out.ledgers, one.ledgers...)
 		out.models = append(out.models, one.models...)
 		out.notes = append(out.notes, one.notes...)
 	}
@@ -68,7 +72,9 @@ func (env Env) composeOne(s scenario.Scenario) (composed, error) {
 	}
 	out := composed{kappa: made.dissolved.Kappa, models: made.dissolved.Models,
 		notes: distinct(slices.Concat(made.notes, waterNotes(s), made.more))}
-	out.of, out.kelvin = sharp(p)
+	if err := env.makeOf(&out, s, p); err != nil {
+		return composed{}, err
+	}
 	if _, closed := out.of.(spectrum.Kappa); !closed {
 		out.kappa = math.NaN() // the model in use has none
 	}

@@ -32,7 +32,8 @@ func TestEveryInputIsAnOption(t *testing.T) {
 		var own []string
 		for _, g := range q.Groups {
 			for option, path := range g.Options() {
-				if slices.Contains(own, string(path)) {
+				// the ledger has the options of all its pages, which call bins otherwise
+				if slices.Contains(own, string(path)) && option != "bins-file" {
 					t.Errorf("%s: %s stands twice", q.Key, path)
 				}
 				if cmd.Flags().Lookup(option) == nil {

@@ -8,15 +8,15 @@ import (
 
 // implied lets an option that says something of one kind only choose that kind: --mode a
 // population of modes, and --kappa the kappa model where a population is asked for.
-// What contradicts each other is an error.
-func (o *options) implied(s *scenario.Scenario, given map[string]bool) error {
-	if !o.question.LooksAt("population") {
+// What contradicts each other is an error. given holds the options by what they set.
+func (o *options) implied(s *scenario.Scenario, given map[scenario.Path]string) error {
+	if !o.question.LooksAt("population") || !o.question.Heeds(*s, "population") {
 		return nil
 	}
 	var by []string
 	kinds := map[string]string{} // of populations, by option
 	for _, key := range scenario.PopulationKeys() {
-		if option := o.option(scenario.Path(key)); given[option] {
+		if option, ok := given[scenario.Path(key)]; ok {
 			by = append(by, option)
 			kinds[option] = scenario.PopulationOf(key)
 		}
@@ -26,12 +26,13 @@ func (o *options) implied(s *scenario.Scenario, given map[string]bool) error {
 	}
 	if len(by) == 1 {
 		kind := kinds[by[0]]
-		if given["population"] && s.Population != kind {
+		if _, ok := given["population"]; ok && s.Population != kind {
 			return misused("--population %s and --%s contradict each other: want --population %s, or no --%s", s.Population, by[0], kind, by[0])
 		}
 		s.Population = kind
 	}
-	if given["kappa"] && !given["water-activity"] && s.Kappa.Word == "" {
+	_, hasKappa := given["kappa"]
+	if _, hasModel := given["water-activity"]; hasKappa && !hasModel && s.Kappa.Word == "" {
 		s.WaterActivity = "kappa"
 	}
 	return nil

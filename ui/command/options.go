@@ -41,6 +41,16 @@ type options struct {
 // setting is one option as it was given.
 type setting struct{ key, text string }
 
+// pathOf is the input or the list of rows that a setting is about.
+func (o *options) pathOf(g setting) scenario.Path {
+	if o.question.Means != nil {
+		if p, ok := o.question.Means(g.key, g.text); ok {
+			return p
+		}
+	}
+	return o.path(g.key)
+}
+
 func newOptions(cmd *cobra.Command) *options {
 	cmd.Flags().SortFlags = false
 	return &options{set: cmd.Flags()}
@@ -205,13 +215,14 @@ func (o *options) scenario(w world) (scenario.Scenario, []atmos.Note, error) {
 		s = read
 	}
 	fresh := map[string]bool{}
+	given := map[scenario.Path]string{}
 	for _, g := range o.given {
-		if err := apply(&s, o.path(g.key), g.text, !fresh[g.key]); err != nil {
+		if err := apply(&s, o.pathOf(g), g.text, !fresh[g.key]); err != nil {
 			return s, nil, misused("--%s: %v", g.key, err)
 		}
-		fresh[g.key] = true
+		fresh[g.key], given[o.pathOf(g)] = true, g.key
 	}
-	if err := o.implied(&s, fresh); err != nil {
+	if err := o.implied(&s, given); err != nil {
 		return s, nil, err
 	}
 	if o.question.Given != nil {
@@ -254,8 +265,9 @@ func (o *options) unused(s *scenario.Scenario) []atmos.Note {
 	var notes []atmos.Note
 	said := map[string]bool{}
 	for _, g := range o.given {
-		in, ok := scenario.Find(s, o.path(g.key))
-		if said[g.key] || ok && o.question.Uses(in) || !ok && countsIn(string(o.path(g.key)), s) {
+		p := o.pathOf(g)
+		in, ok := scenario.Find(s, p)
+		if said[g.key] || o.question.Heeds(*s, p) && (ok && o.question.Uses(in) || !ok && countsIn(string(p), s)) {
 			continue
 		}
 		said[g.key] = true
@@ -265,12 +277,12 @@ func (o *options) unused(s *scenario.Scenario) []atmos.Note {
 		return notes
 	}
 	for _, in := range o.question.Inputs(s) {
-		if !o.question.Uses(in) && !in.IsDefault() && !said[string(in.Path())] {
+		if o.question.Heeds(*s, in.Path()) && !o.question.Uses(in) && !in.IsDefault() && !said[string(in.Path())] {
 			notes = append(notes, unusedNote(in.Path(), "The value of "+string(in.Path())+" in the scenario file"))
 		}
 	}
 	for _, l := range o.question.Lists(s) {
-		if !countsIn(l.Key(), s) && !said[l.Key()] && !hasDefaultRows(l) {
+		if o.question.Heeds(*s, scenario.Path(l.Key())) && !countsIn(l.Key(), s) && !said[l.Key()] && !hasDefaultRows(l) {
 			notes = append(notes, unusedNote(scenario.Path(l.Key()), "What the scenario file says of "+l.Key()))
 		}
 	}

@@ -57,6 +57,9 @@ func examples() map[string]string {
 		"curve":      "dropcrest curve --dry-diameter 50nm --component \"sodium chloride\"",
 		"spectrum":   "dropcrest spectrum --mode \"N=850/cm3 Dg=45nm gsd=1.6 kappa=0.3\" --supersaturation 0.1%,0.2%,0.5%",
 		"kappa":      "dropcrest kappa --dry-diameter 80nm±3%rel --supersaturation 0.25%±5%rel",
+		"counter":    "dropcrest counter --data scans.csv --as json --out calibration.json",
+		"ascent":     "dropcrest ascent --mode \"N=850/cm3 Dg=45nm gsd=1.6 kappa=0.3\" --updraft 0.3m/s",
+		"ledger":     "dropcrest ledger --of curve --dry-diameter 20nm --component \"ammonium sulfate\"",
 		"substances": "dropcrest substances \"ammonium sulfate\"",
 		"verify":     "dropcrest verify --as csv --out verify.csv",
 	}

@@ -104,9 +104,15 @@ func indent(w io.Writer, text []byte) error {
 func scenarioObject(q answer.Question, s *scenario.Scenario) Object {
 	var out Object
 	for _, in := range q.Inputs(s) {
+		if !q.Heeds(*s, in.Path()) {
+			continue
+		}
 		out = append(out, siMember(in))
 	}
 	for _, l := range q.Lists(s) {
+		if !q.Heeds(*s, scenario.Path(l.Key())) {
+			continue
+		}
 		rows := make([]Object, 0, l.Len())
 		for i := range l.Len() {
 			var row Object

@@ -3,7 +3,7 @@ package scenario
 import "slices"
 
 // fields declares the quantities of a scenario.
-var fields = slices.Concat(particleFields, populationFields, kappaFields, commonFields, counterFields, ascentFields, severalFields)
+var fields = slices.Concat(particleFields, populationFields, kappaFields, commonFields, counterFields, ascentFields, severalFields, ledgerFields)
 
 // particleFields declares the quantities of one particle.
 var particleFields = []field[Scenario]{

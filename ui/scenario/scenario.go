@@ -96,6 +96,14 @@ type Scenario struct {
 	PublishedTemperature float64   // K, and
 	PublishedTension     float64   // N/m: of the water that it was computed with
 
+	LedgerOf          string // curve | spectrum | ascent
+	ParticleOutcome   string // critical-supersaturation | critical-wet-radius | haze-radius
+	AtSupersaturation float64
+	AscentOutcome     string // droplets | peak-supersaturation
+	LedgerRow         int
+	Reach             Measure       // relative, or "half"
+	Uncertainties     []Uncertainty // of a ledger's inputs, where the usual is not meant
+
 	// Standard uncertainties that all measurements share.
 	TemperatureUncertainty float64 // K
 	TensionUncertainty     float64 // N/m
@@ -203,6 +211,12 @@ func Default() Scenario {
 		PublishedKappa:       Measure{Word: "none"},
 		PublishedTemperature: 298.15,
 		PublishedTension:     0.072,
+		LedgerOf:             LedgerOfCurve,
+		ParticleOutcome:      "critical-supersaturation",
+		AtSupersaturation:    0.004,
+		AscentOutcome:        "droplets",
+		LedgerRow:            1,
+		Reach:                Measure{Word: "half"},
 	}
 }
 
@@ -219,14 +233,14 @@ func (s Scenario) Clone() Scenario {
 	s.Adsorption = slices.Clone(s.Adsorption)
 	s.Modes, s.Data, s.Map = slices.Clone(s.Modes), slices.Clone(s.Data), slices.Clone(s.Map)
 	s.Supersaturations, s.Follow = slices.Clone(s.Supersaturations), slices.Clone(s.Follow)
-	s.Rules = slices.Clone(s.Rules)
+	s.Rules, s.Uncertainties = slices.Clone(s.Rules), slices.Clone(s.Uncertainties)
 	s.Measurements, s.Scans, s.ScansMap = slices.Clone(s.Measurements), slices.Clone(s.Scans), slices.Clone(s.ScansMap)
 	return s
 }
 
 // Equal reports whether both ask the same.
 func (s Scenario) Equal(other Scenario) bool {
-	return slices.Equal(s.Measurements, other.Measurements) && slices.Equal(s.Scans, other.Scans) && slices.Equal(s.ScansMap, other.ScansMap) &&
+	return slices.Equal(s.Uncertainties, other.Uncertainties) && slices.Equal(s.Measurements, other.Measurements) && slices.Equal(s.Scans, other.Scans) && slices.Equal(s.ScansMap, other.ScansMap) &&
 		slices.Equal(s.Rules, other.Rules) && slices.Equal(s.Modes, other.Modes) && slices.Equal(s.Data, other.Data) && slices.Equal(s.Map, other.Map) &&
 		slices.Equal(s.Components, other.Components) && slices.Equal(s.Szyszkowski, other.Szyszkowski) &&
 		slices.Equal(s.Adsorption, other.Adsorption) && reflect.DeepEqual(s.plain(), other.plain())
@@ -234,7 +248,7 @@ func (s Scenario) Equal(other Scenario) bool {
 
 // plain is the scenario without its rows and without where names are looked up.
 func (s Scenario) plain() Scenario {
-	s.Modes, s.Data, s.Map, s.Rules, s.Measurements, s.Scans, s.ScansMap = nil, nil, nil, nil, nil, nil, nil
+	s.Modes, s.Data, s.Map, s.Rules, s.Measurements, s.Scans, s.ScansMap, s.Uncertainties = nil, nil, nil, nil, nil, nil, nil, nil
 	s.Components, s.Szyszkowski, s.Adsorption, s.substances, s.anyName = nil, nil, nil, nil, false
 	return s
 }

@@ -17,6 +17,7 @@ type keyMap struct {
 	Hold, Release, Others    key.Binding
 	Picture                  key.Binding // where an answer has several
 	NextRecord, RecordBefore key.Binding // of data
+	Ledger                   key.Binding // and back
 	Table, Write, About      key.Binding
 	Undo, Redo, Help, Quit   key.Binding
 	Stop                     key.Binding // Esc while something is worked out
@@ -61,6 +62,7 @@ func newKeyMap(ascii bool, pages int) keyMap {
 		Picture:      bind("v", "view", "v"),
 		NextRecord:   bind("n", "record", "n"),
 		RecordBefore: bind("p", "record", "p"),
+		Ledger:       bind("l", "ledger", "l"),
 		Table:        bind("t", "table", "t"),
 		Write:        bind("w", "write to a file", "w"),
 		About:        bind("i", "about", "i"),
@@ -105,7 +107,7 @@ func bind(name, does string, keys ...string) key.Binding {
 func (k keyMap) page() []key.Binding {
 	return []key.Binding{
 		k.Left, k.Right, k.First, k.Last, k.Up, k.Down, k.BigUp, k.BigDown, k.Type, k.Open,
-		k.NextPage, k.PageBefore, k.NextRecord, k.RecordBefore, k.Picture, k.Hold, k.Release, k.Others, k.Table, k.Write, k.About,
+		k.NextPage, k.PageBefore, k.NextRecord, k.RecordBefore, k.Picture, k.Hold, k.Release, k.Others, k.Ledger, k.Table, k.Write, k.About,
 		k.Undo, k.Redo, k.Stop, k.Help, k.Quit,
 	}
 }
@@ -115,7 +117,7 @@ func (k keyMap) page() []key.Binding {
 func (k keyMap) short() []key.Binding {
 	return []key.Binding{
 		k.Stop, k.Left, k.Right, k.Up, k.Down, k.NextRecord, k.RecordBefore, k.Picture, k.Type, k.Open, k.Hold, k.NextPage,
-		k.Undo, k.Quit, k.Table, k.Write, k.About, k.Others, k.Help,
+		k.Undo, k.Quit, k.Table, k.Ledger, k.Write, k.About, k.Others, k.Help,
 	}
 }
 

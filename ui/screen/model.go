@@ -22,6 +22,7 @@ type model struct {
 	leaf             // of the open page
 	leaves    map[string]leaf
 	waiting   map[string][]session.Held // of a session, for pages that were not open yet
+	backTo    string                    // the page that the ledger was opened from; "": none
 	history   scenario.History
 	left      map[scenario.Path]string // what Esc left behind in an entry
 

@@ -3,6 +3,8 @@ package screen
 import (
 	"fmt"
 
+	"github.com/charmbracelet/bubbles/key"
+
 	"dropcrest/ui/answer"
 	"dropcrest/ui/figure"
 	"dropcrest/ui/scenario"
@@ -35,7 +37,7 @@ func (m *model) openPage(q answer.Question) {
 		m.leaf = newLeaf()
 	}
 	m.answer, m.unsolved, m.work.old = answer.Answer{}, "", false
-	if r := m.reply; r != nil && r.scenario.Equal(m.scenario) {
+	if r := m.reply; r != nil && sameFor(q, r.scenario, m.scenario) {
 		m.accept(r.answer)
 	} else {
 		m.answerFirst()
@@ -58,8 +60,18 @@ func (m *model) putAside() {
 // offerKeys makes the keys act that the answer has a use for.
 func (m *model) offerKeys() {
 	m.keys.Picture.SetEnabled(len(m.answer.Figures) > 1)
+	m.keys.Hold.SetEnabled(m.hasCurve())
 	m.keys.NextRecord.SetEnabled(m.answer.Records > 0)
 	m.keys.RecordBefore.SetEnabled(m.answer.Records > 0)
+	for _, b := range []*key.Binding{&m.keys.NextRecord, &m.keys.RecordBefore} {
+		b.SetHelp(b.Help().Key, m.question.Through().Says)
+	}
+	m.keys.Ledger.SetHelp(m.keys.Ledger.Help().Key, ledgerHelp(m.question.Key))
+}
+
+// hasCurve tells whether the answer has a line that can be held; bars have none.
+func (m *model) hasCurve() bool {
+	return len(m.answer.Figures) == 0 || len(m.answer.Figures[0].Bars) == 0
 }
 
 // nextPicture shows the next figure of the answer.
@@ -79,29 +91,27 @@ func (m *model) shownFigure() int {
 	return 0
 }
 
-// recordPath is the input that says which record is looked at.
-const recordPath scenario.Path = "record"
-
-// goToRecord looks at the next record or the one before; from all of them at the
-// first or the last one.
+// goToRecord looks at the next record of data, or row of a ledger, or the one before;
+// from all of them at the first or the last one.
 func (m *model) goToRecord(by int) {
 	last := m.answer.Records
-	at := m.scenario.Record
-	to := int(at.Number) + by
+	of := m.question.Through()
+	at, isNumber := m.turnedTo(of)
+	to := at + by
 	switch {
-	case at.Word != "" && by > 0:
+	case !isNumber && by > 0:
 		to = 1
-	case at.Word != "":
+	case !isNumber:
 		to = last
 	case to < 1:
-		m.say("this is the first record")
+		m.say("this is the first " + of.Says)
 		return
 	case to > last:
-		m.say(fmt.Sprintf("record %d is the last one", last))
+		m.say(fmt.Sprintf("%s %d is the last one", of.Says, last))
 		return
 	}
-	err := m.change(recordPath, true, func(s *scenario.Scenario) error {
-		in, err := find(s, recordPath)
+	err := m.change(of.Path, true, func(s *scenario.Scenario) error {
+		in, err := find(s, of.Path)
 		if err != nil {
 			return err
 		}
@@ -114,14 +124,27 @@ func (m *model) goToRecord(by int) {
 	m.say("")
 }
 
+// turnedTo is the record or row that is asked for; false where all are.
+func (m *model) turnedTo(of answer.Turns) (n int, isNumber bool) {
+	in, ok := scenario.Find(&m.scenario, of.Path)
+	if !ok {
+		return 0, false
+	}
+	_, value := in.SI()
+	x, isNumber := value.(float64)
+	return min(int(x), m.answer.Records), isNumber
+}
+
 // recordWords say which record is looked at, "" without data.
 func (m *model) recordWords() string {
+	of := m.question.Through()
+	at, isNumber := m.turnedTo(of)
 	switch n := m.answer.Records; {
 	case n == 0:
 		return ""
-	case m.scenario.Record.Word != "":
-		return fmt.Sprintf("all of %d records", n)
+	case !isNumber:
+		return fmt.Sprintf("all of %d %ss", n, of.Says)
 	default:
-		return fmt.Sprintf("record %.0f of %d", m.scenario.Record.Number, n)
+		return fmt.Sprintf("%s %d of %d", of.Says, at, n)
 	}
 }

@@ -75,8 +75,11 @@ func (m *model) slotValue(p scenario.Path) string {
 func (m *model) rangeWords() string {
 	if in, ok := m.input(); ok {
 		span := in.Range()
-		if n := m.answer.Records; in.Path() == recordPath && n > 0 {
-			span = fmt.Sprintf("1 to %d, or all", n)
+		if n := m.answer.Records; in.Path() == m.question.Through().Path && n > 0 {
+			span = fmt.Sprintf("1 to %d", n)
+			if len(in.Choices()) > 0 {
+				span += ", or all"
+			}
 		}
 		return m.text(in.Says() + ": " + span)
 	}

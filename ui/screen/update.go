@@ -170,6 +170,8 @@ func (m *model) pressOther(k tea.KeyMsg) bool {
 		m.release()
 	case key.Matches(k, m.keys.Others):
 		m.cycleOthers()
+	case key.Matches(k, m.keys.Ledger):
+		m.turnToLedger()
 	case key.Matches(k, m.keys.Table):
 		m.panel = newTable(m)
 	case key.Matches(k, m.keys.Write):

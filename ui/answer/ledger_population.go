@@ -1,0 +1,232 @@
+package answer
+
+import (
+	"math"
+
+	"dropcrest/atmos"
+	"dropcrest/koehler/ledger"
+	"dropcrest/ui/scenario"
+)
+
+// many is a ledger of many particles: its question, asked again and again.
+type many struct {
+	env     Env
+	asked   scenario.Scenario
+	known   []knownLedger
+	full    ledger.Values
+	ledgers []*ledger.Ledger // of the kinds of particles there are
+	rises   bool             // they are in rising air
+	// values answers a scenario, with the models that env assumes.
+	values func(env Env, s scenario.Scenario) (ledger.Values, error)
+}
+
+// by is the environment in which particles are made with an assumption, or as the
+// fullest model where key is "".
+func (m *many) by(key ledger.Key, against bool) Env {
+	env := m.env
+	env.assuming = &assuming{key: key, against: against, known: &m.known, noSqueeze: m.rises}
+	return env
+}
+
+// fullest is the answer to a scenario by the fullest models.
+func (m *many) fullest(s scenario.Scenario) (ledger.Values, error) {
+	return m.values(m.by("", false), s)
+}
+
+// change is simplified minus full in per cent of full.
+func change(simplified, full ledger.Values) ledger.Values {
+	var c ledger.Values
+	for o := range c {
+		c[o] = 100 * (simplified[o]/full[o] - 1)
+	}
+	return c
+}
+
+func noChange() ledger.Values { return ledger.Values{math.NaN(), math.NaN(), math.NaN()} }
+
+// ofParticles are the rows of what is assumed of single particles.
+func (m *many) ofParticles() []assumed {
+	var rows []assumed
+	for _, a := range ledger.Assumptions() {
+		if a.Key == ledger.Sphere {
+			continue // of the instrument here, not of the particles
+		}
+		row := m.status(a)
+		switch {
+		case row.status == ledger.Known && a.Key == ledger.TextbookCubic && m.rises:
+			row.status, row.reason = ledger.NotKnown, "An ascent follows each drop along its whole curve; the closed forms have rows of their own."
+		case row.status == ledger.Known:
+			m.compare(&row)
+		}
+		rows = append(rows, row)
+	}
+	return rows
+}
+
+// status is what the ledgers of the particles say of an assumption. One of several
+// kinds of particles that can make it is enough.
+func (m *many) status(a ledger.Assumption) assumed {
+	row := assumed{Assumption: a, status: ledger.NotApplicable, change: noChange(), ifChange: noChange()}
+	for i, l := range m.ledgers {
+		for _, r := range l.Rows {
+			if r.Key != a.Key {
+				continue
+			}
+			row.made = row.made || r.Made
+			if i == 0 || r.Status < row.status {
+				row.status, row.reason = r.Status, r.Reason
+			}
+		}
+	}
+	if row.status == ledger.Known {
+		row.reason = "" // it may name what belongs to one size
+	}
+	return row
+}
+
+// compare asks the question with the assumption, and with what it is compared with.
+func (m *many) compare(row *assumed) {
+	full := m.full
+	simplified, err := m.values(m.by(row.Key, false), m.asked)
+	if err == nil && (row.Key == ledger.CompleteDissolution || m.rises && row.Key == ledger.IncompressibleLiquid) {
+		full, err = m.values(m.by(row.Key, true), m.asked)
+	}
+	if err != nil {
+		row.status, row.reason = ledger.NotKnown, "It cannot be worked out: "+reason(err)+"."
+		return
+	}
+	row.change = change(simplified, full)
+	if m.rises && row.Key == ledger.Convention25C {
+		row.reason = "The air keeps its temperature: the surface tension alone is that of the convention."
+	}
+}
+
+// edited is the row of an assumption that is an edit of the scenario.
+func (m *many) edited(row assumed, edit func(*scenario.Scenario)) assumed {
+	s := m.asked.Clone()
+	edit(&s)
+	simplified, err := m.fullest(s)
+	if err != nil {
+		row.status, row.reason = ledger.NotKnown, "It cannot be worked out: "+reason(err)+"."
+		return row
+	}
+	row.change = change(simplified, m.full)
+	return row
+}
+
+// iffy is a row without a number of its own: what it would cost if the world were
+// as the edit says, which the answer is taken to simplify.
+func (m *many) iffy(row assumed, says string, edit func(*scenario.Scenario)) assumed {
+	row.status = ledger.NotKnown
+	s := m.asked.Clone()
+	edit(&s)
+	fuller, err := m.fullest(s)
+	if err != nil {
+		row.reason = "It cannot be worked out: " + reason(err) + "."
+		return row
+	}
+	row.ifSays, row.ifChange = says, change(m.full, fuller)
+	return row
+}
+
+// because gives a row its reason where it has none.
+func (r assumed) because(reason string) assumed {
+	if r.reason == "" {
+		r.reason = reason
+	}
+	return r
+}
+
+// mixing is the row of how components are shared out among the particles.
+func (m *many) mixing() assumed {
+	row := newAssumed(mixingState)
+	other, says := "external", "if each component were in particles of its own"
+	if m.asked.Mixing == "external" {
+		other, says = "internal", "if all particles of a size were alike"
+	}
+	row.made = m.asked.Mixing != "external"
+	row = m.iffy(row, says, func(s *scenario.Scenario) { s.Mixing = other })
+	if !m.isMixed() {
+		row.status, row.ifSays, row.ifChange = ledger.NotApplicable, "", noChange()
+		row.reason = "The particles are of one component each, as far as the question says."
+		return row
+	}
+	return row.because("Which of the two is nearer to the truth is not known from the data.")
+}
+
+// isMixed tells whether particles of several components are asked about.
+func (m *many) isMixed() bool {
+	s := m.asked
+	switch s.Population {
+	case "modes":
+		for _, mode := range s.Modes {
+			if !hasOwnMatter(mode) {
+				return len(s.Components) > 1
+			}
+		}
+		return false
+	case "bins":
+		return len(s.Components) > 1
+	}
+	return s.Composition == "measured" || len(s.Components) > 1
+}
+
+// spread is the row of κ that is the same in all particles.
+func (m *many) spread() assumed {
+	row := newAssumed(kappaSpread)
+	if m.asked.KappaSpread > 1 {
+		return m.edited(row, func(s *scenario.Scenario) { s.KappaSpread = 1 })
+	}
+	row.made = true
+	row = m.iffy(row, "if κ had a geometric standard deviation of "+shortest(otherSpread), func(s *scenario.Scenario) { s.KappaSpread = otherSpread })
+	return row.because("How κ differs between particles of one size is not given.")
+}
+
+// uncertain are the inputs that all particles share, with the uncertainties of the
+// fullest model of the first kind.
+func (m *many) uncertain(canBend bool) []ledger.Input {
+	const sizing = 0.03
+	in := []ledger.Input{{Quantity: ledger.Sizes, Value: 1, StandardUncertainty: sizing,
+		Source: "sizing within 3 % of a reference at 203 nm, Wiedensohler et al. 2018, Aerosol Sci. Technol. 52, 146"}}
+	const counting = 0.05
+	in = append(in, ledger.Input{Quantity: ledger.Numbers, Value: 1, StandardUncertainty: counting, Source: "common practice: 5 % of a particle counter"})
+	if len(m.ledgers) == 0 {
+		return in
+	}
+	for _, i := range m.ledgers[0].Inputs() {
+		switch i.Quantity {
+		case ledger.Hygroscopicity, ledger.Shares:
+			if canBend {
+				in = append(in, i)
+			}
+		case ledger.SurfaceTension, ledger.Temperature:
+			in = append(in, i)
+		}
+	}
+	return in
+}
+
+// factors are what the errors of the inputs make of the solute of a particle and of
+// its Kelvin length, which follows the tension over the temperature.
+func factors(inputs []ledger.Input, x *ledger.Deviation, givenTension bool) (solute, curvature float64) {
+	solute, curvature = 1, 1
+	for _, in := range inputs {
+		off := x[in.Quantity]
+		switch in.Quantity {
+		case ledger.Hygroscopicity, ledger.Shares:
+			solute *= 1 + off/in.Value
+		case ledger.SurfaceTension:
+			curvature *= 1 + off/in.Value
+		case ledger.Temperature:
+			T := in.Value + off
+			curvature *= in.Value / T
+			if !givenTension {
+				curvature *= atmos.SurfaceTension(T) / atmos.SurfaceTension(in.Value)
+			}
+		}
+	}
+	return solute, curvature
+}
+
+// givenTension tells whether the tension stays when the temperature does not.
+func givenTension(s scenario.Scenario) bool { return s.SurfaceTension.Word == "" }

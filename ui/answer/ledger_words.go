@@ -1,0 +1,259 @@
+package answer
+
+import (
+	"fmt"
+	"math"
+	"strings"
+
+	"dropcrest/koehler/ledger"
+	"dropcrest/ui/scenario"
+)
+
+// finding names the largest assumption and the largest uncertainty, explains the
+// chosen row, sets the two answers side by side, and says what would have to be
+// measured better.
+func (c *costs) finding() []string {
+	var out []string
+	for _, says := range []string{c.largestSentence(), c.sureSentence(), c.rowSentence(c.row()), c.sourceSentence(c.row()), c.detailSentence(c.row()),
+		c.answersSentence(), c.reachSentence()} {
+		if says != "" {
+			out = append(out, says)
+		}
+	}
+	return out
+}
+
+// largestSentence names the assumption that costs most, and beside it the one that
+// costs most of those that the page makes as it is asked.
+func (c *costs) largestSentence() string {
+	if math.IsNaN(c.full[c.chosen]) {
+		return fmt.Sprintf("The fullest model has no %s: nothing can be said of what it costs to simplify it.", c.figure().says)
+	}
+	r := c.rows[0]
+	if math.IsNaN(r.change[c.chosen]) {
+		return fmt.Sprintf("No assumption about the %s has a cost that is known.", c.figure().says)
+	}
+	says := fmt.Sprintf("Largest cost: \"%s\", %s", r.Says, signed(r.change[c.chosen]))
+	if r.made {
+		return says + ", and the " + c.page + " page assumes it."
+	}
+	for _, m := range c.rows[1:] {
+		if x := m.change[c.chosen]; m.made && !math.IsNaN(x) {
+			return fmt.Sprintf("%s; of what the %s page assumes: \"%s\", %s.", says, c.page, m.Says, signed(x))
+		}
+	}
+	return says + "; the " + c.page + " page does not assume it."
+}
+
+// sureSentence names the input that leaves most open.
+func (c *costs) sureSentence() string {
+	all := c.budget.Combined[c.chosen]
+	if math.IsNaN(all) || math.IsNaN(c.full[c.chosen]) || len(c.budget.Contributions) == 0 {
+		return ""
+	}
+	if all == 0 {
+		return "No input is uncertain."
+	}
+	top := c.budget.Ranked(c.chosen)[0]
+	says := fmt.Sprintf("Largest uncertainty: %s, %s of %s", top.Quantity, plusMinus(top.Percent[c.chosen]), plusMinus(all))
+	if c.trials != nil {
+		if p := c.trials.Outcomes[c.chosen].Percent; !math.IsNaN(p) {
+			says += fmt.Sprintf(" (%s by trials)", plusMinus(p))
+		}
+	}
+	return says + "."
+}
+
+// rowSentence is the explanation of a row, in two sentences; before them why a row
+// has no number.
+func (c *costs) rowSentence(i int) string {
+	r := c.rows[i]
+	says := fmt.Sprintf("Row %d, %s:", i+1, c.costWords(r))
+	if r.status != ledger.Known {
+		says += after(r.reason)
+	}
+	return says + after(r.Explains)
+}
+
+// detailSentence is what a row says of this very answer; "": nothing.
+func (c *costs) detailSentence(i int) string {
+	r := c.rows[i]
+	says := after(c.ifSentence(r)) + after(c.pressureSentence(r))
+	if r.status == ledger.Known {
+		says = after(r.reason) + says
+	}
+	return strings.TrimPrefix(says, " ")
+}
+
+func (c *costs) sourceSentence(i int) string { return "Source: " + c.rows[i].Source + "." }
+
+func after(sentence string) string {
+	if sentence == "" {
+		return ""
+	}
+	return " " + sentence
+}
+
+// costWords is what a row costs, or why that is not said.
+func (c *costs) costWords(r assumed) string {
+	if x := r.change[c.chosen]; !math.IsNaN(x) {
+		return signed(x)
+	}
+	if r.status == ledger.Known {
+		return "no such figure"
+	}
+	return r.status.String()
+}
+
+func (c *costs) ifSentence(r assumed) string {
+	if r.ifSays == "" || math.IsNaN(r.ifChange[c.chosen]) {
+		return ""
+	}
+	return fmt.Sprintf("It would be %s %s.", signed(r.ifChange[c.chosen]), r.ifSays)
+}
+
+func (c *costs) pressureSentence(r assumed) string {
+	if r.pressures == nil {
+		return ""
+	}
+	return fmt.Sprintf("At the crest the pressure jump is %s Pa, the vapour's change %s Pa.", digits(r.pressures.Laplace, 3), digits(r.pressures.Vapour, 3))
+}
+
+// answersSentence sets what the page answers beside the fullest answer.
+func (c *costs) answersSentence() string {
+	f := c.figure()
+	plain, full := c.plain[c.chosen], c.full[c.chosen]
+	if math.IsNaN(plain) || math.IsNaN(full) {
+		return ""
+	}
+	return fmt.Sprintf("The %s page answers %s, the fullest model %s (%s).", c.page, f.show(plain), f.show(full), signed(100*(plain/full-1)))
+}
+
+// reachSentence says what must be measured better, and how well.
+func (c *costs) reachSentence() string {
+	needs, percent := c.needs()
+	if len(needs) == 0 {
+		return ""
+	}
+	var all []string
+	for _, n := range needs {
+		better := n.Input
+		better.StandardUncertainty = n.Needed
+		all = append(all, fmt.Sprintf("the %s to %s", n.Quantity, uncertaintyWords(better)))
+	}
+	return fmt.Sprintf("To reach %s measure %s.", plusMinus(percent), list(all))
+}
+
+// needs are what must be measured better to come down to so many per cent.
+func (c *costs) needs() (needs []ledger.Need, percent float64) {
+	all := c.budget.Combined[c.chosen]
+	percent = 100 * c.asked.Reach.Number
+	if c.asked.Reach.Word != "" {
+		percent = all / 2
+	}
+	if !(percent > 0) {
+		return nil, percent
+	}
+	return c.budget.Reach(c.chosen, percent), percent
+}
+
+// uncertaintyWords is the standard uncertainty of an input as a person says it.
+func uncertaintyWords(in ledger.Input) string {
+	switch {
+	case in.Quantity == ledger.Temperature:
+		return "±" + digits(in.StandardUncertainty, 2) + " K"
+	case in.Quantity == ledger.Pressure:
+		return "±" + digits(in.StandardUncertainty/100, 2) + " hPa"
+	}
+	return plusMinus(100 * in.StandardUncertainty / in.Value)
+}
+
+// signed is a cost in per cent with its sign; nothing at all has none.
+func signed(percent float64) string {
+	switch a := math.Abs(percent); {
+	case a == 0:
+		return "0 %"
+	case a < 0.001:
+		return fmt.Sprintf("%+.1g %%", percent)
+	case a < 0.01:
+		return fmt.Sprintf("%+.4f %%", percent)
+	case a < 0.1:
+		return fmt.Sprintf("%+.3f %%", percent)
+	case a < 1:
+		return fmt.Sprintf("%+.2f %%", percent)
+	}
+	return fmt.Sprintf("%+.1f %%", percent)
+}
+
+func plusMinus(percent float64) string {
+	return "±" + strings.TrimPrefix(strings.TrimPrefix(signed(math.Abs(percent)), "+"), "-")
+}
+
+// componentWords names the matter in a few words.
+func componentWords(s scenario.Scenario) string {
+	for _, l := range scenario.Lists(&s) {
+		if l.Key() == "component" {
+			return l.Show(scenario.Style{})
+		}
+	}
+	return "matter"
+}
+
+// why is what stands behind the finding: what is compared, every row, every input.
+func (c *costs) why() []string {
+	out := []string{
+		fmt.Sprintf("Of %s each assumption is taken alone against the fullest model at hand: the simplified answer minus the fullest one, in per cent of the fullest.", c.subject),
+	}
+	for _, m := range c.models {
+		out = append(out, "Fullest model: "+m+".")
+	}
+	for i := range c.rows {
+		out = append(out, capital(c.rows[i].Says)+". "+c.rowSentence(i)+after(c.detailSentence(i))+" "+c.sourceSentence(i))
+	}
+	for _, in := range c.budget.Ranked(c.chosen) {
+		out = append(out, fmt.Sprintf("The %s, %s, is uncertain by %s (%s): %s of the %s.", in.Quantity, valueWords(in.Input), uncertaintyWords(in.Input), in.Source,
+			plusMinus(in.Percent[c.chosen]), c.figure().says))
+	}
+	out = append(out, c.propagationWords())
+	for _, n := range c.notes {
+		out = append(out, "Note: "+n.Text)
+	}
+	return out
+}
+
+// propagationWords say how the uncertainties were added.
+func (c *costs) propagationWords() string {
+	says := "Uncertainties are one standard deviation, propagated linearly (JCGM 100:2008)"
+	if c.trials != nil {
+		t := c.trials.Outcomes[c.chosen]
+		says += fmt.Sprintf(" and by %d trials of normal inputs (JCGM 101:2008)", c.trials.Trials)
+		if !math.IsNaN(t.Low) {
+			says += fmt.Sprintf(": %s to %s hold %.4g %% of them", c.figure().show(t.Low), c.figure().show(t.High), 100*c.trials.Coverage)
+		}
+		if !c.trials.Direct {
+			says += fmt.Sprintf("; trials take a polynomial of second degree that is off by at most %s of a standard uncertainty", plusMinus(c.trials.Deviation)[len("±"):])
+		}
+	}
+	if r := c.budget.Correlation; r != 0 {
+		says += fmt.Sprintf(". The tension of water falls with the temperature (correlation %.2f): that part is counted with the temperature", r)
+	}
+	return says + "."
+}
+
+// valueWords is the value of an input with its unit.
+func valueWords(in ledger.Input) string {
+	switch in.Quantity {
+	case ledger.DryDiameter:
+		return nanometres(in.Value) + " nm"
+	case ledger.Temperature:
+		return celsius(in.Value)
+	case ledger.SurfaceTension:
+		return digits(1e3*in.Value, 4) + " mN/m"
+	case ledger.Pressure:
+		return digits(in.Value/100, 4) + " hPa"
+	}
+	if u := in.Unit(); u != "1" {
+		return digits(in.Value, 3) + " " + u
+	}
+	return digits(in.Value, 3)
+}
