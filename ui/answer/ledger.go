@@ -43,7 +43,7 @@ func ledgerGroups() []Group {
 				if other, taken := there[option]; taken && other != path {
 					option = string(path) // such as bins, a file on one page and a number on another
 				}
-				if _, taken := there[option]; taken || leftOutOfLedger[path] {
+				if _, taken := there[option]; taken {
 					continue
 				}
 				there[option] = path
@@ -61,9 +61,11 @@ func ledgerGroups() []Group {
 	return groups
 }
 
-// leftOutOfLedger only concerns pictures, tables, or many answers at once.
+// leftOutOfLedger only concerns pictures, tables, or many answers at once. The options
+// are there, so that a command line of a page serves its ledger; a note says that they
+// do not count.
 var leftOutOfLedger = map[scenario.Path]bool{"points": true, "from-radius": true, "to-radius": true, "fit": true, "axes": true, "follow": true,
-	"sweep": true, "cases": true, "part": true, "supersaturation": true, "humidity-history": true, "refinement": true, "height": true}
+	"sweep": true, "cases": true, "part": true, "supersaturation": true, "humidity-history": true, "refinement": true}
 
 // ledgerMeans tells a number of bins from a file of them: the pages have the same
 // option for both.
@@ -84,7 +86,7 @@ func ledgerCounts(s scenario.Scenario, path scenario.Path) bool {
 		}
 	}
 	q, ok := Find(s.LedgerOf)
-	return ok && q.LooksAt(string(path))
+	return ok && q.LooksAt(string(path)) && !leftOutOfLedger[path]
 }
 
 // ledgerLive tells whether the answer takes no longer than a frame: air that rises

@@ -126,7 +126,11 @@ func (c *costs) answersSentence() string {
 	if math.IsNaN(plain) || math.IsNaN(full) {
 		return ""
 	}
-	return fmt.Sprintf("The %s page answers %s, the fullest model %s (%s).", c.page, f.show(plain), f.show(full), signed(100*(plain/full-1)))
+	off := signed(100 * (plain/full - 1))
+	if f.show(plain) == f.show(full) { // no further digits are earned
+		return fmt.Sprintf("The %s page answers %s, %s from the fullest model.", c.page, f.show(plain), off)
+	}
+	return fmt.Sprintf("The %s page answers %s, the fullest model %s (%s).", c.page, f.show(plain), f.show(full), off)
 }
 
 // reachSentence says what must be measured better, and how well.

@@ -3,6 +3,7 @@
 package command_test
 
 import (
+	"strconv"
 	"strings"
 	"testing"
 )
@@ -19,6 +20,7 @@ func TestPagesOnScreen(t *testing.T) {
 	}{
 		"spectrum": {1, `takes ([0-9.]+)\.`, []string{"kappa"}, []string{"dry diameter, nm"}},
 		"counter":  {3, `S = \(([0-9.]+) ±`, []string{"line", "slope_percent_per_k"}, []string{"activated fraction against mobility diameter", "scan less line"}},
+		"ledger":   {5, `Largest cost: "[^"]+", (-[0-9.]+) %`, []string{"assumptions", "0", "change_in_critical_supersaturation_percent"}, []string{"what each input leaves open"}},
 		"ascent":   {4, `peaks at ([0-9.]+) %`, []string{"peak_supersaturation_percent"}, []string{"wet radius", "updraft"}},
 	} {
 		t.Run(name, func(t *testing.T) {
@@ -35,11 +37,7 @@ func TestPagesOnScreen(t *testing.T) {
 			var facts any
 			u.facts(t, name, &facts)
 			for _, key := range c.key {
-				object, ok := facts.(map[string]any)
-				if !ok {
-					t.Fatalf("no key %s in %v", key, facts)
-				}
-				facts = object[key]
+				facts = within(t, facts, key)
 			}
 			x, ok := facts.(float64)
 			if !ok {
@@ -51,4 +49,19 @@ func TestPagesOnScreen(t *testing.T) {
 			s.restored()
 		})
 	}
+}
+
+// within is what a key or, of a list, a number leads to.
+func within(t *testing.T, facts any, key string) any {
+	t.Helper()
+	switch of := facts.(type) {
+	case map[string]any:
+		return of[key]
+	case []any:
+		if i, err := strconv.Atoi(key); err == nil && i < len(of) {
+			return of[i]
+		}
+	}
+	t.Fatalf("no key %s in %v", key, facts)
+	return nil
 }

@@ -1,6 +1,8 @@
 package command
 
 import (
+	"bytes"
+	"context"
 	"fmt"
 	"os"
 	"slices"
@@ -30,6 +32,7 @@ func TestReadme(t *testing.T) {
 		"keys":      keyRows(),
 		"questions": questionRows(),
 		"options":   optionRows(),
+		"ledger":    ledgerLines(t),
 	} {
 		want = between(t, want, mark, strings.Join(lines, "\n"))
 	}
@@ -57,6 +60,17 @@ func between(t *testing.T, text, mark, part string) string {
 		t.Fatalf("README.md has no part between %q and %q", strings.TrimSpace(first), strings.TrimSpace(last))
 	}
 	return before + first + part + last + after
+}
+
+// ledgerLines are what the program prints for the example of a ledger.
+func ledgerLines(t *testing.T) []string {
+	t.Helper()
+	var out, complaints bytes.Buffer
+	w := world{out: &out, err: &complaints, env: func(name string) string { return map[string]string{"LANG": "C.UTF-8", "COLUMNS": "100"}[name] }}
+	if code := run(context.Background(), []string{"ledger", "--dry-diameter", "20nm", "--temperature", "5C"}, w); code != done || complaints.Len() > 0 {
+		t.Fatalf("exit code %d: %s", code, complaints.String())
+	}
+	return slices.Concat([]string{"```", "$ dropcrest ledger --dry-diameter 20nm --temperature 5C"}, strings.Split(strings.TrimRight(out.String(), "\n"), "\n"), []string{"```"})
 }
 
 func keyRows() []string {

@@ -4,6 +4,7 @@ import (
 	"strings"
 	"testing"
 
+	tea "github.com/charmbracelet/bubbletea"
 	"github.com/charmbracelet/x/exp/golden"
 
 	"dropcrest/ui/scenario"
@@ -28,7 +29,7 @@ func look(t *testing.T, before string, sights map[string]sight) {
 				c.from(&o.Scenario)
 			}
 			m := opened(o, c.w, c.h)
-			press(m, before+c.keys)
+			worked(t, m, press(m, before+c.keys))
 			view := m.View()
 			golden.RequireEqual(t, []byte(view+"\n"))
 			if c.terminal != "colour" && strings.Contains(view, "\x1b") {
@@ -38,5 +39,14 @@ func look(t *testing.T, before string, sights map[string]sight) {
 				t.Error("the locale is ASCII and the screen is not")
 			}
 		})
+	}
+}
+
+// worked brings the answer of the last key where that is worked out beside the keys.
+func worked(t *testing.T, m *model, cmd tea.Cmd) {
+	t.Helper()
+	if m.work.cancel != nil {
+		m.Update(answerOf(t, cmd))
+		m.View()
 	}
 }

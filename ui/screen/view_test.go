@@ -95,6 +95,14 @@ func states() map[string]struct {
 		"kappa further": {"tab tab end left enter", points(grown)},
 		"kappa table":   {"tab tab t", points(activated, grown)},
 		"kappa why":     {"tab tab end i", nil},
+
+		"ledger":         {"l n n", nil},
+		"ledger budget":  {"l v", nil},
+		"ledger table":   {"l t", nil},
+		"ledger counts":  {"tab l end", nil},
+		"ledger further": {"l end left enter", nil},
+		"ledger long":    {"l", long},
+		"ledger modes":   {"tab l", modes},
 	}
 }
 
