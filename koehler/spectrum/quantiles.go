@@ -5,15 +5,15 @@ import (
 	"slices"
 )
 
-// exactRatios is how many values Quantiles keeps: 8 MB. Eight supersaturations
-// every five minutes of a year are 840 000.
-const exactRatios = 1 << 20
+// exactRatios is how many values Quantiles keeps: 1 MB. One supersaturation every
+// five minutes of a year is 105 120 values; a campaign has one of these a supersaturation.
+const exactRatios = 1 << 17
 
 // QuantileError is the largest relative error of a quantile once it is no longer
 // exact, for values from 1e-6 to 1e6.
 const QuantileError = 0.0005
 
-// Quantiles collects positive values. Up to 1 048 576 of them all are kept and a
+// Quantiles collects positive values. Up to 131 072 of them all are kept and a
 // quantile is exact: linear between the two order statistics around 1 + (n-1) p
 // (Hyndman & Fan 1996, type 7). Beyond that they are counted in bins of 0.1 % from
 // 1e-6 to 1e6, memory stays constant, and a quantile is the geometric middle of its
