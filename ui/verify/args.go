@@ -104,3 +104,18 @@ func (a Args) trouble() error {
 	}
 	return nil
 }
+
+// Numbers returns a list of finite numbers with commas between them, nil when it is
+// missing or one of them is none (errors of the row).
+func (a Args) Numbers(key string) []float64 {
+	var out []float64
+	for word := range strings.SplitSeq(a.Text(key), ",") {
+		x, err := strconv.ParseFloat(word, 64)
+		if err != nil || math.IsNaN(x) || math.IsInf(x, 0) {
+			a.fail(fmt.Errorf("argument %s: %q is not a finite number", key, word))
+			return nil
+		}
+		out = append(out, x)
+	}
+	return out
+}
