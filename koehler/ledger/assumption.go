@@ -35,7 +35,7 @@ func Assumptions() []Assumption {
 				"In air of a fixed total pressure that term does not exist; in pure vapour it is about 0.002 %.",
 			"exact Kelvin equation of a drop in its own vapour; vapour pressure by Murphy & Koop 2005, Q. J. R. Meteorol. Soc. 131, 1539", vapourRow},
 		{IncompressibleLiquid, "water cannot be compressed",
-			"The pressure inside a small drop is tens of bar and squeezes the water, so that a mole of it takes a little less room and feels the curvature less. " +
+			"Its curved surface puts the water of a small drop under some to tens of bar, so that a mole of it takes a little less room and feels the curvature less. " +
 				"Leaving that out makes the barrier too high, noticeably only for dry particles below some 20 nm.",
 			"compressibility by Kell 1975, J. Chem. Eng. Data 20, 97, integrated over the Laplace pressure", incompressibleRow},
 		{FlatSurfaceTension, "the tension of a flat surface",
@@ -47,8 +47,8 @@ func Assumptions() []Assumption {
 				"The tabulated κ is right near one size only: below it the barrier comes out too low, above it too high.",
 			"Petters & Kreidenweis 2007, Atmos. Chem. Phys. 7, 1961; against ion interaction, Pitzer & Mayorga 1973, J. Phys. Chem. 77, 2300", kappaRow},
 		{IdealSolute, "every ion counts in full (i = ν)",
-			"An ideal solution takes each ion as one free particle, three for ammonium sulfate. " +
-				"Real ions hold on to each other, so fewer count and the ideal barrier is too low.",
+			"An ideal solution takes each ion of a salt, and each molecule of an organic, as one free particle. " +
+				"Real ones hold on to each other, so fewer count, and the ideal particle takes up too much water.",
 			"van 't Hoff's factor as the number of ions; common textbook practice", idealRow},
 		{PureWaterSurfaceTension, "the surface tension of pure water",
 			"Dissolved salts raise the surface tension and surface-active organics lower it, most in small drops because these are the most concentrated. " +

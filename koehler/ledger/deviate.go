@@ -1,6 +1,8 @@
 package ledger
 
 import (
+	"fmt"
+
 	"dropcrest/atmos"
 	"dropcrest/koehler"
 	"dropcrest/solutes"
@@ -32,6 +34,16 @@ func (v *deviating) factor(x *Deviation, q Quantity) float64 {
 	return 1 + x[q]/v.values[q]
 }
 
+// errNothingLeft is what a particle gets whose inputs are off by all that they are.
+var errNothingLeft = fmt.Errorf("%w: an input is off by all of its value", koehler.ErrInput)
+
+// Deviated returns the particle of the fullest model with inputs that are off, of the
+// dry diameter asked for. Errors are those of koehler.Making.Of; an input that is off
+// by all of its value is one too.
+func (l *Ledger) Deviated(inputs []Input, x *Deviation) (koehler.Particle, error) {
+	return l.deviating(inputs).particle(x)
+}
+
 func (v *deviating) answer(x *Deviation) Answer {
 	p, err := v.particle(x)
 	if err != nil {
@@ -49,10 +61,16 @@ func (v *deviating) particle(x *Deviation) (koehler.Particle, error) {
 	a.Recipe.Temperature += x[Temperature]
 	making := a.making(dry)
 	solute := v.factor(x, Hygroscopicity) * v.factor(x, Shares)
+	if !(solute > 0) || !(v.factor(x, SurfaceTension) > 0) || !(v.factor(x, Solubility) > 0) {
+		return koehler.Particle{}, errNothingLeft
+	}
 	if d.Film != nil {
 		return v.film(making, *d.Film, x, solute)
 	}
 	d.Tension = v.tension(d.Tension, x)
+	if t, ok := d.Tension.(solutes.LinearTension); ok { // less solute adds less
+		d.Tension = solutes.LinearTension{Water: t.Water, PerDry: t.PerDry * solute}
+	}
 	if d.Core != nil {
 		c := *d.Core
 		c.A, c.B, c.Kappa = c.A+x[AdsorptionA], c.B+x[AdsorptionB], c.Kappa*solute

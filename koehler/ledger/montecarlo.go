@@ -13,12 +13,14 @@ import (
 // Settings of the Monte Carlo propagation.
 type Settings struct {
 	Trials   int     // 0: 100000
-	Coverage float64 // of the intervals, above 0 and up to 0.99; 0: 0.95
+	Coverage float64 // of the intervals, above 0 and up to 0.999; 0: 0.95
 	Seed     uint64
 	Workers  int // 0: as many as there are cores. The result is the same for any number
 	// Rough is what the polynomial of MonteCarlo may be off by, in standard
 	// uncertainties, before each trial is solved by itself; 0: 0.05.
 	Rough float64
+	// Solved is the largest number of trials that are solved one by one; 0: 4000.
+	Solved int
 }
 
 // Distribution is what the trials say about one outcome.
@@ -45,7 +47,7 @@ type MonteCarlo struct {
 
 const (
 	usualTrials = 100000
-	// directTrials is the largest number of trials that are solved one by one.
+	// directTrials is the largest number of trials that are usually solved one by one.
 	directTrials = 4000
 	// pieceTrials is the unit of work. It must not depend on the number of cores.
 	pieceTrials = 4000
@@ -68,13 +70,18 @@ func (b *Budget) MonteCarlo(ctx context.Context, s Settings) (MonteCarlo, error)
 	if s.Rough == 0 {
 		s.Rough = largestDeviation
 	}
+	if s.Solved == 0 {
+		s.Solved = directTrials
+	}
 	switch {
+	case s.Solved < 100:
+		return MonteCarlo{}, &koehler.RangeError{What: "number of solved trials", Value: float64(s.Solved), Right: "100 or more, or 0 for 4000"}
 	case !(s.Rough > 0):
 		return MonteCarlo{}, &koehler.RangeError{What: "roughness", Value: s.Rough, Right: "above 0 standard uncertainties, or 0 for 0.05"}
 	case s.Trials < 100:
 		return MonteCarlo{}, &koehler.RangeError{What: "number of trials", Value: float64(s.Trials), Right: "100 or more, or 0 for 100000"}
-	case !(s.Coverage > 0 && s.Coverage <= 0.99):
-		return MonteCarlo{}, &koehler.RangeError{What: "coverage", Value: s.Coverage, Right: "above 0 and at most 0.99"}
+	case !(s.Coverage > 0 && s.Coverage <= 0.999):
+		return MonteCarlo{}, &koehler.RangeError{What: "coverage", Value: s.Coverage, Right: "above 0 and at most 0.999"}
 	}
 	varied := slices.DeleteFunc(slices.Clone(b.inputs), func(in Input) bool { return in.StandardUncertainty == 0 })
 	m := MonteCarlo{Trials: s.Trials, Coverage: s.Coverage}
@@ -82,7 +89,7 @@ func (b *Budget) MonteCarlo(ctx context.Context, s Settings) (MonteCarlo, error)
 	m.Deviation = b.judge(f, varied, s.Seed)
 	trial := f.at
 	if !(m.Deviation <= 100*s.Rough) {
-		m.Direct, m.Trials, m.Deviation = true, min(s.Trials, directTrials), 0
+		m.Direct, m.Trials, m.Deviation = true, min(s.Trials, s.Solved), 0
 		trial = func(z []float64) Values { return b.solved(varied, z) }
 	}
 	all, err := draw(ctx, s, m.Trials, len(varied), trial)

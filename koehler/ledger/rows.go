@@ -103,7 +103,7 @@ func kappaRow(b *book) Row {
 	r := recipe{b.full.asked.Recipe}
 	switch {
 	case r.hasOneKappa():
-		return unknown("One κ is given for the whole particle: how it changes with the dilution is not known.")
+		return unknown("Only one κ is known for the whole particle: how it changes with the dilution is not.")
 	case b.full.dissolved.Core != nil:
 		return inapplicable("The published forms of adsorption know κ only.")
 	case r.isInsoluble():
@@ -138,7 +138,7 @@ func idealRow(b *book) Row {
 	r := recipe{b.full.asked.Recipe}
 	switch {
 	case r.hasOneKappa():
-		return inapplicable("One κ is given for the whole particle: no number of ions goes into it.")
+		return inapplicable("Only one κ is known for the whole particle: no number of ions goes into it.")
 	case r.isInsoluble():
 		return inapplicable("Nothing in the particle dissolves.")
 	case r.Model == solutes.VantHoff && math.IsNaN(r.VantHoffFactor):

@@ -24,6 +24,7 @@ type rising struct {
 	partOf  []int          // of which group of the population each is
 	lognorm []ascent.Group // the same in lognormal modes; nil: there are none
 	noForms error          // why
+	scale   float64        // of numbers, to the air at the start
 }
 
 // rising makes the population of a scenario, at the air of its start.
@@ -50,20 +51,33 @@ func (env Env) rising(ctx context.Context, s scenario.Scenario) (*rising, error)
 	if a.sizes == nil {
 		return nil, &InputError{Input: "data", Text: "nothing can rise: " + a.noSizes}
 	}
-	of := &rising{activated: a}
-	if of.air, of.partOf, err = ascent.FromSpectrum(unheld(a.population)); err != nil {
-		return nil, of.cannotRise(err)
+	of := &rising{activated: a, scale: scale}
+	kelvin := make([]float64, len(a.groups))
+	for i, g := range a.groups {
+		kelvin[i] = g.kelvin
 	}
-	for i := range of.air {
-		g := &of.air[i]
-		if g.Share == 0 {
-			g.Share = 1
-		}
-		g.Share *= scale
-		g.TensionFactor = tensionFactor(a.groups[of.partOf[i]].kelvin, s.Temperature)
+	if of.air, of.partOf, err = of.airOf(a.population, kelvin, s.Temperature); err != nil {
+		return nil, of.cannotRise(err)
 	}
 	of.findModes(env)
 	return of, nil
+}
+
+// airOf is a population as an ascent takes it, with the Kelvin length of each group at
+// the temperature T (K).
+func (of *rising) airOf(p spectrum.Population, kelvin []float64, T float64) (air []ascent.Group, partOf []int, err error) {
+	if air, partOf, err = ascent.FromSpectrum(unheld(p)); err != nil {
+		return nil, nil, err
+	}
+	for i := range air {
+		g := &air[i]
+		if g.Share == 0 {
+			g.Share = 1
+		}
+		g.Share *= of.scale
+		g.TensionFactor = tensionFactor(kelvin[partOf[i]], T)
+	}
+	return air, partOf, nil
 }
 
 // atStart brings numbers of standard air to that of the start.

@@ -3,10 +3,8 @@ package answer
 import (
 	"math"
 	"reflect"
-	"slices"
 
 	"dropcrest/koehler"
-	"dropcrest/koehler/ascent"
 	"dropcrest/koehler/ledger"
 	"dropcrest/koehler/spectrum"
 	"dropcrest/solutes"
@@ -20,10 +18,14 @@ type assuming struct {
 	against bool       // what that assumption is compared with, instead
 	known   *[]knownLedger
 
-	// noSqueeze leaves the liquid incompressible in all but the row about that: the
-	// ascent of particles of a κ is ten times faster then, and a κ can be spread.
-	noSqueeze bool
+	// rises: the particles are in rising air. It leaves the liquid incompressible in all
+	// but the row about that: the ascent of particles of a κ is ten times faster then,
+	// and a κ can be spread.
+	rises bool
 }
+
+// conventionTension is that of most published κ, N/m (Petters and Kreidenweis 2007).
+const conventionTension = 0.072
 
 // knownLedger is the ledger of one kind of particles, made once for all rows.
 type knownLedger struct {
@@ -58,8 +60,15 @@ func (m *assuming) ledgerFor(env Env, s scenario.Scenario) (*ledger.Ledger, erro
 // cannot make it, that of the fullest model.
 func (m *assuming) particle(l *ledger.Ledger) (p koehler.Particle, isCubic bool) {
 	p = l.Particle()
-	if m.noSqueeze && m.key != ledger.IncompressibleLiquid {
-		defer func() { p.Kelvin = koehler.Standard }()
+	if m.rises {
+		switch m.key {
+		case ledger.IncompressibleLiquid:
+		case ledger.Convention25C: // the air keeps its temperature
+			p.Kelvin, p.Tension = koehler.Standard, solutes.ConstantTension(conventionTension)
+			return p, false
+		default:
+			defer func() { p.Kelvin = koehler.Standard }()
+		}
 	}
 	for _, r := range l.Rows {
 		if r.Key != m.key || r.Status != ledger.Known {
@@ -122,82 +131,4 @@ func (c cubicForm) AddCounts(dst, s []float64, sizes spectrum.Sizes, share float
 		dst[i] += share * sizes.Above(d)
 	}
 	return nil
-}
-
-// bent is a composition with solute times the solute and curvature times the Kelvin
-// length, as ledger.Bend makes it of a particle.
-func bent(of spectrum.Composition, solute, curvature float64) spectrum.Composition {
-	switch c := of.(type) {
-	case spectrum.Kappa:
-		return spectrum.Kappa{Value: c.Value * solute, KelvinLength: c.KelvinLength * curvature}
-	case spectrum.Spread:
-		c.Median, c.KelvinLength = c.Median*solute, c.KelvinLength*curvature
-		return c
-	case *held:
-		return bent(c.of, solute, curvature)
-	case *spectrum.Matter:
-		return &spectrum.Matter{Particle: ledger.Bend(c.Particle, solute, curvature)}
-	case spreadMatter:
-		return spreadMatter{bent(c.of, solute, curvature), c.gsd, c.kelvin * curvature}
-	case spectrum.External:
-		mixture := make(spectrum.External, len(c))
-		for i, part := range c {
-			mixture[i] = spectrum.Part{Share: part.Share, Of: bent(part.Of, solute, curvature)}
-		}
-		return mixture
-	}
-	return of
-}
-
-// bentGroups are the groups of an ascent with other sizes, numbers, solute and Kelvin
-// length, each by a factor. ok is false where sizes cannot be scaled.
-func bentGroups(groups []ascent.Group, size, number, solute, curvature float64) (out []ascent.Group, ok bool) {
-	out = slices.Clone(groups)
-	for i := range out {
-		g := &out[i]
-		if g.Sizes, ok = spectrum.Scaled(g.Sizes, size); !ok {
-			return nil, false
-		}
-		g.From, g.To = g.From*size, g.To*size
-		g.Share = orOne(g.Share) * number
-		g.Kappa *= solute
-		g.TensionFactor = orOne(g.TensionFactor) * curvature
-		if g.Matter != nil {
-			p := ledger.Bend(*g.Matter, solute, curvature)
-			g.Matter = &p
-		}
-	}
-	return out, true
-}
-
-// orOne is x, or 1 where 0 stands for that.
-func orOne(x float64) float64 {
-	if x == 0 {
-		return 1
-	}
-	return x
-}
-
-// canBend tells whether the solute of a composition can be changed.
-func canBend(of spectrum.Composition) bool {
-	switch c := of.(type) {
-	case spectrum.Kappa:
-		return c.Value > 0
-	case spectrum.Spread:
-		return true
-	case *held:
-		return canBend(c.of)
-	case *spectrum.Matter:
-		kappa, isKappa := c.Particle.Solution.(solutes.Kappa)
-		return ledger.CanBend(c.Particle) && (!isKappa || kappa > 0)
-	case spreadMatter:
-		return canBend(c.of)
-	case spectrum.External:
-		for _, part := range c {
-			if canBend(part.Of) {
-				return true
-			}
-		}
-	}
-	return false
 }

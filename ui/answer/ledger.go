@@ -25,6 +25,11 @@ func ledgerQuestion() Question {
 		Turns:     &Turns{Path: "row", Says: "row"},
 		Counts:    ledgerCounts,
 		Means:     ledgerMeans,
+		Follow: func(s *scenario.Scenario, changed scenario.Path) {
+			if changed == "of" {
+				s.LedgerRow = 1 // rows of another answer
+			}
+		},
 	}
 }
 
@@ -136,7 +141,10 @@ type costs struct {
 	budget  ledger.Budget
 	trials  *ledger.MonteCarlo // nil: none were asked for
 	rough   float64            // what trials may be off by, in standard uncertainties, before each is solved; 0: the usual
+	solved  int                // trials that are solved one by one where they must; 0: the usual
 	notes   []atmos.Note
+
+	differing map[ledger.Quantity]bool // inputs that differ between kinds of particles
 }
 
 // ledgers are the answers that can be taken apart, by the keys of their questions.
@@ -221,12 +229,16 @@ func (c *costs) rank() {
 // draw propagates the uncertainties by trials.
 func (c *costs) draw(ctx context.Context, env Env) error {
 	n := int(c.asked.Trials.Number)
-	if c.asked.Trials.Word != "" {
-		n = 0 // as many as are usual
-	} else if n == 0 {
+	switch {
+	case c.asked.Trials.Word != "":
+		n = usualTrials
+		c.note("trials-usual", "trials", fmt.Sprintf("A ledger makes %d trials where as many as needed are asked for.", n))
+	case n == 0:
 		return nil
+	case n < leastTrials:
+		return &InputError{"trials", fmt.Sprintf("%d trials tell nothing: want %d or more, or 0 for linear propagation alone", n, leastTrials)}
 	}
-	m, err := c.budget.MonteCarlo(ctx, ledger.Settings{Trials: n, Coverage: c.asked.Coverage, Seed: uint64(c.asked.Seed), Workers: max(1, env.Workers), Rough: c.rough})
+	m, err := c.budget.MonteCarlo(ctx, ledger.Settings{Trials: n, Coverage: c.asked.Coverage, Seed: uint64(c.asked.Seed), Workers: max(1, env.Workers), Rough: c.rough, Solved: c.solved})
 	switch {
 	case ctx.Err() != nil:
 		return ctx.Err()
@@ -234,7 +246,28 @@ func (c *costs) draw(ctx context.Context, env Env) error {
 		return &InputError{"trials", reason(err)}
 	}
 	c.trials = &m
+	lost := 0
+	for i := range c.figures {
+		if !math.IsNaN(c.full[i]) {
+			lost = max(lost, m.Outcomes[i].Lost)
+		}
+	}
+	if lost > 0 {
+		c.note("trials-lost", "uncertainty", fmt.Sprintf("%d of %d trials have no answer, because an input is off by all of its value or nothing activates: "+
+			"the inputs are too uncertain for the numbers of this budget to be taken at their word.", lost, m.Trials))
+	}
+	if m.Direct && m.Trials < n {
+		c.note("trials-solved", "trials", fmt.Sprintf("The answer bends so much within the uncertainties that each trial was worked out by itself: %d of them instead of %d.", m.Trials, n))
+	}
 	return nil
+}
+
+// fewTrials is how many trials are solved where each takes milliseconds; their standard
+// deviation is good to 4 %.
+const usualTrials, leastTrials, fewTrials = 100000, 100, 400
+
+func (c *costs) note(code, input, text string) {
+	c.notes = append(c.notes, atmos.Note{Code: code, Input: input, Text: text})
 }
 
 // row is the one that is explained.
@@ -284,6 +317,10 @@ func unknownInputs(inputs []ledger.Input, s scenario.Scenario) []atmos.Note {
 			notes = append(notes, atmos.Note{Code: "uncertainty-unused", Input: "uncertainty",
 				Text: fmt.Sprintf("The uncertainty of %s is not used: this answer has no such input.", u.Input)})
 		}
+	}
+	if s.ShapeUncertainty > 0 && !slices.ContainsFunc(inputs, func(in ledger.Input) bool { return in.Quantity == ledger.ShapeFactor }) {
+		notes = append(notes, atmos.Note{Code: "uncertainty-unused", Input: "shape-factor-uncertainty",
+			Text: "The uncertainty of the shape factor is not used: this answer has no such input."})
 	}
 	return notes
 }

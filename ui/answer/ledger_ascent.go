@@ -9,6 +9,7 @@ import (
 	"dropcrest/atmos"
 	"dropcrest/koehler/ascent"
 	"dropcrest/koehler/ledger"
+	"dropcrest/koehler/spectrum"
 	"dropcrest/ui/scenario"
 )
 
@@ -39,31 +40,36 @@ func ascentCosts(ctx context.Context, env Env, s scenario.Scenario) (*costs, err
 	if err != nil {
 		return nil, err
 	}
-	c := &costs{asked: s, page: "Ascent", figures: ascentFigures(), plain: plain, rough: roughAscents,
+	c := &costs{asked: s, page: "Ascent", figures: ascentFigures(), plain: plain, rough: roughAscents, solved: fewTrials,
 		subject: "air that rises at " + shortest(of.parcel.Updraft) + " m/s"}
 	m := &many{env: quiet, asked: s.Clone(), rises: true, values: func(env Env, s scenario.Scenario) (ledger.Values, error) {
 		_, v, err := env.ascend(ctx, s)
 		return v, err
 	}}
+	m.asked = shaped(env, m.asked)
 	m.asked.MoistHeat, m.asked.Updraft, m.asked.UpdraftSpread = "on", of.parcel.Updraft, 0
 	if of, m.full, err = m.by("", false).ascend(ctx, m.asked); err != nil {
 		return nil, err
 	}
-	m.ledgers = ledgersOf(of.activated)
-	c.full, c.models = m.full, modelsOf(m.ledgers)
+	m.kinds = newKinds(ledgersOf(of.activated), s, true)
+	c.full, c.models, c.differing = m.full, modelsOf(m.kinds.of), m.kinds.differing
 	env.tell(0.1)
-	c.rows = append(m.ofParticles(), m.mixing(), m.spread())
+	c.rows = append(m.ofParticles(), m.sphere(s), m.mixing(), m.spread())
 	env.tell(0.4)
 	c.rows = append(c.rows, m.ofGrowth(ctx, of, s)...)
 	env.tell(0.6)
 	if err := ctx.Err(); err != nil {
 		return nil, err
 	}
-	inputs := known(append(m.uncertain(canBendAny(of.activated)), m.airInputs()...), s)
-	if c.budget, err = ledger.Propagate(m.full, inputs, dropletModel(ctx, of, inputs), slopeOfAscents); err != nil {
+	inputs := slices.Concat(known(append(m.sizeInputs(), m.airInputs()...), s), m.kinds.all)
+	if c.budget, err = ledger.Propagate(m.full, inputs, m.dropletModel(ctx, of), slopeOfAscents); err != nil {
 		return nil, &InputError{"uncertainty", reason(err)}
 	}
 	c.notes = distinct(slices.Concat(of.notes, unknownInputs(inputs, s)))
+	if s.UpdraftSpread > 0 {
+		c.notes = append(c.notes, atmos.Note{Code: "one-updraft", Input: "updraft-spread", Text: fmt.Sprintf(
+			"The ledger is of one ascent, at %s m/s: that of the distribution of updrafts with its mean number of droplets.", digits(of.parcel.Updraft, 3))})
+	}
 	return c, ctx.Err()
 }
 
@@ -104,7 +110,7 @@ const (
 	otherAccommodation = 0.5 // what a comparison of techniques found it to exceed
 	drierStart         = 0.10
 	lowerBy            = 500 // m, more than the air needs to come up to where it is asked to start
-	roughAscents       = 0.5 // standard uncertainties a single trial may be off by; 4000 ascents would take seconds
+	roughAscents       = 0.5 // standard uncertainties a single trial may be off by; each takes milliseconds
 	slopeOfAscents     = 0.5 // standard uncertainties: what the integration leaves open is small beside it
 )
 
@@ -143,7 +149,7 @@ func (m *many) bins(ctx context.Context, of *ascended) assumed {
 	row.made = true
 	r, err := ascent.Refine(ctx, of.parcel, of.options)
 	if err != nil {
-		row.status, row.reason = ledger.NotKnown, "It cannot be worked out: "+reason(err)+"."
+		row.fails(err)
 		return row
 	}
 	row.reason = fmt.Sprintf("There are %d bins a mode.", r.Bins)
@@ -161,15 +167,14 @@ func (m *many) start(ctx context.Context, of *ascended) assumed {
 	lower.Temperature, lower.Pressure = lowered(lower, drier)
 	lower.Humidity = drier
 	dense := lower.Pressure / of.parcel.Pressure * of.parcel.Temperature / lower.Temperature
-	var ok bool
-	if lower.Population, ok = bentGroups(lower.Population, 1, dense, 1, 1); !ok {
-		row.status, row.reason = ledger.NotKnown, "Its particles cannot be brought to the air below."
-		return row
+	lower.Population = slices.Clone(lower.Population)
+	for i := range lower.Population {
+		lower.Population[i].Share *= dense
 	}
 	o.Height += lowerBy
 	full, err := of.run(ctx, lower, o)
 	if err != nil {
-		row.status, row.reason = ledger.NotKnown, "It cannot be worked out: "+reason(err)+"."
+		row.fails(err)
 		return row
 	}
 	full[0] /= dense // numbers are of the air at the start
@@ -206,31 +211,59 @@ func (m *many) airInputs() []ledger.Input {
 }
 
 // dropletModel is the ascent as it follows its inputs, with as few bins as slopes
-// need. The tension of water follows the temperature of the air by itself.
-func dropletModel(ctx context.Context, of *ascended, inputs []ledger.Input) ledger.Model {
+// need; it goes through the answer with all of them.
+func (m *many) dropletModel(ctx context.Context, of *ascended) ledger.Model {
 	o := of.options
 	o.Bins = min(o.Bins, mostSlopeBins)
-	var own []ledger.Input
-	for _, in := range inputs {
-		if in.Quantity != ledger.Temperature {
-			own = append(own, in)
+	cut := of.critical(m.full[1], m.full[0])
+	raw := func(x *ledger.Deviation) ledger.Values {
+		population, kelvin, err := m.kinds.population(of.population, of.groups, x)
+		if err != nil {
+			return noChange()
 		}
-	}
-	return func(x *ledger.Deviation) ledger.Values {
 		p := of.parcel
+		if p.Population, _, err = of.airOf(population, kelvin, p.Temperature); err != nil {
+			return noChange()
+		}
 		p.Temperature += x[ledger.Temperature]
 		p.Pressure += x[ledger.Pressure]
 		p.Updraft += x[ledger.Updraft]
-		solute, curvature := factors(own, x, true)
-		population, ok := bentGroups(p.Population, 1+x[ledger.Sizes], 1+x[ledger.Numbers], solute, curvature)
-		if !ok {
-			return noChange()
+		given := m.keepsTension(of.parcel.Temperature, p.Temperature)
+		by := sizeFactor(m.asked, cut, x)
+		for i := range p.Population {
+			g := &p.Population[i]
+			var ok bool
+			if g.Sizes, ok = spectrum.Scaled(g.Sizes, by); !ok {
+				return noChange()
+			}
+			g.From, g.To = g.From*by, g.To*by
+			g.Share *= 1 + x[ledger.Numbers]
+			g.TensionFactor *= given
 		}
-		p.Population = population
 		v, err := of.run(ctx, p, o)
 		if err != nil {
 			return noChange()
 		}
 		return v
 	}
+	scale := noChange()
+	for i, y := range raw(&ledger.Deviation{}) {
+		scale[i] = m.full[i] / y
+	}
+	return func(x *ledger.Deviation) ledger.Values {
+		y := raw(x)
+		for i := range y {
+			y[i] *= scale[i]
+		}
+		return y
+	}
+}
+
+// keepsTension is the factor by which a tension that was given does not follow that
+// of water from one temperature to another (K).
+func (m *many) keepsTension(from, to float64) float64 {
+	if m.asked.SurfaceTension.Word != "" {
+		return 1
+	}
+	return atmos.SurfaceTension(from) / atmos.SurfaceTension(to)
 }

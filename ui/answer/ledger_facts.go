@@ -4,6 +4,7 @@ import (
 	"math"
 
 	"dropcrest/koehler/ledger"
+	"dropcrest/ui/scenario"
 )
 
 // LedgerFacts is the JSON object of the Ledger question. Scripts rely on its keys.
@@ -78,6 +79,18 @@ type BudgetRow struct {
 	Source              string `json:"source"`
 }
 
+// unitOf is the unit in which an input is told, and the factor to it: supersaturations
+// are in per cent, and what differs between kinds of particles is a factor.
+func (c *costs) unitOf(in ledger.Input) (unit string, scale float64) {
+	switch {
+	case c.differing[in.Quantity]:
+		return "1", 1
+	case in.Quantity == ledger.Supersaturation:
+		return "percent", 100
+	}
+	return in.Unit(), 1
+}
+
 // LedgerTrials is the outcome over all trials.
 type LedgerTrials struct {
 	Trials   int    `json:"trials"`
@@ -125,14 +138,18 @@ func (c *costs) facts() LedgerFacts {
 	needs, reach := c.needs()
 	f := LedgerFacts{Of: c.asked.LedgerOf, Outcome: c.figure().key, Reference: c.answerOf(c.full), Answer: c.answerOf(c.plain),
 		Change:         Number(100 * (c.plain[c.chosen]/c.full[c.chosen] - 1)),
-		CombinedLinear: Number(c.budget.Combined[c.chosen]), CombinedMonteCarlo: gap, TensionCorrelation: Number(c.budget.Correlation),
+		CombinedLinear: Number(c.budget.Combined[c.chosen]), CombinedMonteCarlo: gap, TensionCorrelation: gap,
 		Reach: Number(reach), Assumptions: []AssumptionRow{}, Budget: []BudgetRow{}, Needs: []NeedRow{}}
+	if c.asked.LedgerOf == scenario.LedgerOfCurve { // elsewhere it is not worked out
+		f.TensionCorrelation = Number(c.budget.Correlation)
+	}
 	for _, r := range c.rows {
 		f.Assumptions = append(f.Assumptions, c.assumption(r))
 	}
 	for _, in := range c.budget.Ranked(c.chosen) {
-		f.Budget = append(f.Budget, BudgetRow{in.Key(), Number(in.Value), in.Unit(), Number(in.StandardUncertainty),
-			Number(in.Sensitivity[c.chosen]), Number(in.Percent[c.chosen]), Number(100 * in.Share[c.chosen]), in.Source})
+		unit, scale := c.unitOf(in.Input)
+		f.Budget = append(f.Budget, BudgetRow{in.Key(), Number(scale * in.Value), unit, Number(scale * in.StandardUncertainty),
+			Number(in.Sensitivity[c.chosen] / scale), Number(in.Percent[c.chosen]), Number(100 * in.Share[c.chosen]), in.Source})
 	}
 	if t := c.trials; t != nil {
 		d, si := t.Outcomes[c.chosen], c.figure().si
@@ -140,7 +157,8 @@ func (c *costs) facts() LedgerFacts {
 		f.MonteCarlo = &LedgerTrials{t.Trials, Number(100 * t.Coverage), Number(si(d.Mean)), Number(si(d.Median)), Number(si(d.Low)), Number(si(d.High)), d.Lost}
 	}
 	for _, n := range needs {
-		f.Needs = append(f.Needs, NeedRow{n.Key(), n.Unit(), Number(n.StandardUncertainty), Number(n.Needed)})
+		unit, scale := c.unitOf(n.Input)
+		f.Needs = append(f.Needs, NeedRow{n.Key(), unit, Number(scale * n.StandardUncertainty), Number(scale * n.Needed)})
 	}
 	return f
 }
@@ -166,22 +184,35 @@ func (c *costs) tables() []Table {
 }
 
 func (c *costs) assumptionsTable() Table {
-	t := Table{Key: "assumptions", Title: "What each assumption costs", Columns: []Column{{"key", "key"}, {"says", "assumption"}}}
+	t := Table{Key: "assumptions", Title: "What each assumption costs", Columns: []Column{{"key", "key"}}}
 	for _, f := range c.figures {
 		t.Columns = append(t.Columns, Column{"change_in_" + f.key + "_percent", f.says + ", %"})
 	}
-	t.Columns = append(t.Columns, Column{"known", "known"}, Column{"made", "made by the answer"}, Column{"reason", "reason"},
-		Column{"explains", "what it means"}, Column{"source", "source"})
+	t.Columns = append(t.Columns, Column{"known", "known"}, Column{"made", "made"}, Column{"status", "status"}, Column{"says", "assumption"}, Column{"if", "if"})
+	for _, f := range c.figures {
+		t.Columns = append(t.Columns, Column{"if_change_in_" + f.key + "_percent", f.says + " then, %"})
+	}
+	t.Columns = append(t.Columns, Column{"reason", "reason"}, Column{"explains", "what it means"}, Column{"source", "source"})
+	words := func(text string) any {
+		if text == "" {
+			return nil
+		}
+		return text
+	}
 	for _, r := range c.rows {
-		row := []any{string(r.Key), r.Says}
+		row := []any{string(r.Key)}
 		for i := range c.figures {
 			row = append(row, cell(r.change[i]))
 		}
-		var reason any
-		if r.reason != "" {
-			reason = r.reason
+		row = append(row, r.status == ledger.Known, r.made, r.status.String(), r.Says, words(r.ifSays))
+		for i := range c.figures {
+			if r.ifSays == "" {
+				row = append(row, nil)
+				continue
+			}
+			row = append(row, cell(r.ifChange[i]))
 		}
-		t.Rows = append(t.Rows, append(row, r.status == ledger.Known, r.made, reason, r.Explains, r.Source))
+		t.Rows = append(t.Rows, append(row, words(r.reason), r.Explains, r.Source))
 	}
 	return t
 }
@@ -190,7 +221,8 @@ func (c *costs) budgetTable() Table {
 	t := Table{Key: "budget", Title: "What each input leaves open", Columns: []Column{{"input", "input"}, {"value", "value"}, {"unit", "unit"},
 		{"standard_uncertainty", "standard uncertainty"}, {"sensitivity", "sensitivity, 1 a unit"}, {"contribution_percent", "contribution, %"}, {"source", "source"}}}
 	for _, in := range c.budget.Ranked(c.chosen) {
-		t.Rows = append(t.Rows, []any{in.Key(), cell(in.Value), in.Unit(), cell(in.StandardUncertainty), cell(in.Sensitivity[c.chosen]),
+		unit, scale := c.unitOf(in.Input)
+		t.Rows = append(t.Rows, []any{in.Key(), cell(scale * in.Value), unit, cell(scale * in.StandardUncertainty), cell(in.Sensitivity[c.chosen] / scale),
 			cell(in.Percent[c.chosen]), in.Source})
 	}
 	return t

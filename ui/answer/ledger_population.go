@@ -10,12 +10,12 @@ import (
 
 // many is a ledger of many particles: its question, asked again and again.
 type many struct {
-	env     Env
-	asked   scenario.Scenario
-	known   []knownLedger
-	full    ledger.Values
-	ledgers []*ledger.Ledger // of the kinds of particles there are
-	rises   bool             // they are in rising air
+	env   Env
+	asked scenario.Scenario
+	known []knownLedger
+	full  ledger.Values
+	kinds *kinds // of particles there are
+	rises bool   // they are in rising air
 	// values answers a scenario, with the models that env assumes.
 	values func(env Env, s scenario.Scenario) (ledger.Values, error)
 }
@@ -24,7 +24,7 @@ type many struct {
 // fullest model where key is "".
 func (m *many) by(key ledger.Key, against bool) Env {
 	env := m.env
-	env.assuming = &assuming{key: key, against: against, known: &m.known, noSqueeze: m.rises}
+	env.assuming = &assuming{key: key, against: against, known: &m.known, rises: m.rises}
 	return env
 }
 
@@ -33,11 +33,14 @@ func (m *many) fullest(s scenario.Scenario) (ledger.Values, error) {
 	return m.values(m.by("", false), s)
 }
 
-// change is simplified minus full in per cent of full.
+// change is simplified minus full in per cent of full; what rounding leaves is nothing.
 func change(simplified, full ledger.Values) ledger.Values {
+	const rounding = 1e-9
 	var c ledger.Values
 	for o := range c {
-		c[o] = 100 * (simplified[o]/full[o] - 1)
+		if c[o] = 100 * (simplified[o]/full[o] - 1); math.Abs(c[o]) < rounding {
+			c[o] = 0
+		}
 	}
 	return c
 }
@@ -67,7 +70,7 @@ func (m *many) ofParticles() []assumed {
 // kinds of particles that can make it is enough.
 func (m *many) status(a ledger.Assumption) assumed {
 	row := assumed{Assumption: a, status: ledger.NotApplicable, change: noChange(), ifChange: noChange()}
-	for i, l := range m.ledgers {
+	for i, l := range m.kinds.of {
 		for _, r := range l.Rows {
 			if r.Key != a.Key {
 				continue
@@ -86,13 +89,21 @@ func (m *many) status(a ledger.Assumption) assumed {
 
 // compare asks the question with the assumption, and with what it is compared with.
 func (m *many) compare(row *assumed) {
-	full := m.full
-	simplified, err := m.values(m.by(row.Key, false), m.asked)
-	if err == nil && (row.Key == ledger.CompleteDissolution || m.rises && row.Key == ledger.IncompressibleLiquid) {
-		full, err = m.values(m.by(row.Key, true), m.asked)
+	asked, full := m.asked, m.full
+	alone := row.Key == ledger.CompleteDissolution
+	if m.rises && row.Key == ledger.IncompressibleLiquid {
+		alone = true
+		if asked.KappaSpread > 1 { // which the compressed liquid cannot have
+			asked.KappaSpread = 1
+			row.reason = "Both answers are without the spread of κ."
+		}
+	}
+	simplified, err := m.values(m.by(row.Key, false), asked)
+	if err == nil && alone {
+		full, err = m.values(m.by(row.Key, true), asked)
 	}
 	if err != nil {
-		row.status, row.reason = ledger.NotKnown, "It cannot be worked out: "+reason(err)+"."
+		row.fails(err)
 		return
 	}
 	row.change = change(simplified, full)
@@ -101,13 +112,18 @@ func (m *many) compare(row *assumed) {
 	}
 }
 
+// fails says why a row has no number.
+func (r *assumed) fails(err error) {
+	r.status, r.reason = ledger.NotKnown, "It cannot be worked out: "+reason(err)+"."
+}
+
 // edited is the row of an assumption that is an edit of the scenario.
 func (m *many) edited(row assumed, edit func(*scenario.Scenario)) assumed {
 	s := m.asked.Clone()
 	edit(&s)
 	simplified, err := m.fullest(s)
 	if err != nil {
-		row.status, row.reason = ledger.NotKnown, "It cannot be worked out: "+reason(err)+"."
+		row.fails(err)
 		return row
 	}
 	row.change = change(simplified, m.full)
@@ -122,7 +138,7 @@ func (m *many) iffy(row assumed, says string, edit func(*scenario.Scenario)) ass
 	edit(&s)
 	fuller, err := m.fullest(s)
 	if err != nil {
-		row.reason = "It cannot be worked out: " + reason(err) + "."
+		row.fails(err)
 		return row
 	}
 	row.ifSays, row.ifChange = says, change(m.full, fuller)
@@ -140,17 +156,15 @@ func (r assumed) because(reason string) assumed {
 // mixing is the row of how components are shared out among the particles.
 func (m *many) mixing() assumed {
 	row := newAssumed(mixingState)
-	other, says := "external", "if each component were in particles of its own"
-	if m.asked.Mixing == "external" {
-		other, says = "internal", "if all particles of a size were alike"
-	}
-	row.made = m.asked.Mixing != "external"
-	row = m.iffy(row, says, func(s *scenario.Scenario) { s.Mixing = other })
 	if !m.isMixed() {
-		row.status, row.ifSays, row.ifChange = ledger.NotApplicable, "", noChange()
-		row.reason = "The particles are of one component each, as far as the question says."
+		row.status, row.reason = ledger.NotApplicable, "The particles are of one component each, as far as the question says."
 		return row
 	}
+	if m.asked.Mixing == "external" {
+		return m.edited(row, func(s *scenario.Scenario) { s.Mixing = "internal" })
+	}
+	row.made = true
+	row = m.iffy(row, "if each component is in particles of its own", func(s *scenario.Scenario) { s.Mixing = "external" })
 	return row.because("Which of the two is nearer to the truth is not known from the data.")
 }
 
@@ -174,59 +188,45 @@ func (m *many) isMixed() bool {
 // spread is the row of κ that is the same in all particles.
 func (m *many) spread() assumed {
 	row := newAssumed(kappaSpread)
-	if m.asked.KappaSpread > 1 {
+	switch {
+	case !m.kinds.activates():
+		row.status, row.reason = ledger.NotApplicable, "Nothing in the particles takes up water by a κ that could differ."
+		return row
+	case m.asked.KappaSpread > 1:
 		return m.edited(row, func(s *scenario.Scenario) { s.KappaSpread = 1 })
 	}
 	row.made = true
-	row = m.iffy(row, "if κ had a geometric standard deviation of "+shortest(otherSpread), func(s *scenario.Scenario) { s.KappaSpread = otherSpread })
+	row = m.iffy(row, "if κ has a geometric standard deviation of "+shortest(otherSpread), func(s *scenario.Scenario) { s.KappaSpread = otherSpread })
 	return row.because("How κ differs between particles of one size is not given.")
 }
 
-// uncertain are the inputs that all particles share, with the uncertainties of the
-// fullest model of the first kind.
-func (m *many) uncertain(canBend bool) []ledger.Input {
-	const sizing = 0.03
-	in := []ledger.Input{{Quantity: ledger.Sizes, Value: 1, StandardUncertainty: sizing,
-		Source: "sizing within 3 % of a reference at 203 nm, Wiedensohler et al. 2018, Aerosol Sci. Technol. 52, 146"}}
-	const counting = 0.05
-	in = append(in, ledger.Input{Quantity: ledger.Numbers, Value: 1, StandardUncertainty: counting, Source: "common practice: 5 % of a particle counter"})
-	if len(m.ledgers) == 0 {
-		return in
+// sizeInputs are the uncertainties of sizes and numbers.
+func (m *many) sizeInputs() []ledger.Input {
+	const sizing, counting = 0.03, 0.05
+	in := []ledger.Input{
+		{Quantity: ledger.Sizes, Value: 1, StandardUncertainty: sizing,
+			Source: "sizing within 3 % of a reference at 203 nm, Wiedensohler et al. 2018, Aerosol Sci. Technol. 52, 146"},
+		{Quantity: ledger.Numbers, Value: 1, StandardUncertainty: counting, Source: "common practice: 5 % of a particle counter"},
 	}
-	for _, i := range m.ledgers[0].Inputs() {
-		switch i.Quantity {
-		case ledger.Hygroscopicity, ledger.Shares:
-			if canBend {
-				in = append(in, i)
-			}
-		case ledger.SurfaceTension, ledger.Temperature:
-			in = append(in, i)
-		}
+	if shape := m.asked.ShapeFactor; m.isMobility() && shape > 1 {
+		in = append(in, ledger.Input{Quantity: ledger.ShapeFactor, Value: shape, StandardUncertainty: math.Max(0.01, 0.3*(shape-1)),
+			Source: "common practice: a third of what it differs from 1 by"})
 	}
 	return in
 }
 
-// factors are what the errors of the inputs make of the solute of a particle and of
-// its Kelvin length, which follows the tension over the temperature.
-func factors(inputs []ledger.Input, x *ledger.Deviation, givenTension bool) (solute, curvature float64) {
-	solute, curvature = 1, 1
-	for _, in := range inputs {
-		off := x[in.Quantity]
-		switch in.Quantity {
-		case ledger.Hygroscopicity, ledger.Shares:
-			solute *= 1 + off/in.Value
-		case ledger.SurfaceTension:
-			curvature *= 1 + off/in.Value
-		case ledger.Temperature:
-			T := in.Value + off
-			curvature *= in.Value / T
-			if !givenTension {
-				curvature *= atmos.SurfaceTension(T) / atmos.SurfaceTension(in.Value)
-			}
-		}
-	}
-	return solute, curvature
+// isMobility tells whether sizes are measured mobility diameters.
+func (m *many) isMobility() bool {
+	return m.asked.DrySizeIs == "mobility" && m.asked.Population != "modes"
 }
 
-// givenTension tells whether the tension stays when the temperature does not.
-func givenTension(s scenario.Scenario) bool { return s.SurfaceTension.Word == "" }
+// sizeFactor is what errors of sizing and of the shape factor make of the
+// volume-equivalent size at a dry diameter (m).
+func sizeFactor(s scenario.Scenario, dry float64, x *ledger.Deviation) float64 {
+	by := 1 + x[ledger.Sizes]
+	if off := x[ledger.ShapeFactor]; off != 0 {
+		T, p := s.Temperature, atmos.StandardPressure
+		by *= atmos.VolumeEquivalent(dry, math.Max(1, s.ShapeFactor+off), T, p) / atmos.VolumeEquivalent(dry, s.ShapeFactor, T, p)
+	}
+	return by
+}

@@ -2,6 +2,7 @@ package answer
 
 import (
 	"context"
+	"fmt"
 	"math"
 	"slices"
 
@@ -26,27 +27,43 @@ func spectrumCosts(ctx context.Context, env Env, s scenario.Scenario) (*costs, e
 	if env.Kept == nil {
 		env.Kept = &Kept{} // rows share their data
 	}
-	m := &many{env: env, asked: s, values: func(env Env, s scenario.Scenario) (ledger.Values, error) { return countAt(ctx, env, s) }}
 	plain, err := countAt(ctx, env, s)
 	if err != nil {
 		return nil, err
 	}
-	of, err := newActivated(ctx, m.by("", false), s)
+	m := &many{env: env, asked: shaped(env, s), values: func(env Env, s scenario.Scenario) (ledger.Values, error) { return countAt(ctx, env, s) }}
+	of, err := newActivated(ctx, m.by("", false), m.asked)
 	if err != nil {
 		return nil, err
 	}
-	m.ledgers = ledgersOf(of)
-	m.full = ledger.Values{of.predicted[0].count, math.NaN(), math.NaN()}
-	c := &costs{asked: s, page: "Spectrum", figures: countFigures(), plain: plain, full: m.full, models: modelsOf(m.ledgers),
+	m.kinds = newKinds(ledgersOf(of), s, false)
+	m.full = countsOf(of)
+	c := &costs{asked: s, page: "Spectrum", figures: countFigures(), plain: plain, full: m.full, models: modelsOf(m.kinds.of), differing: m.kinds.differing,
 		subject: "the particles that activate at " + percent(s.AtSupersaturation)}
-	c.rows = append(m.ofParticles(), m.sphere(), m.mixing(), m.spread(), m.binWidth(of), m.sizes(of), m.setting())
-	inputs := known(append(m.uncertain(canBendAny(of)), m.settingInput()), s)
-	c.budget, err = ledger.Propagate(m.full, inputs, countModel(of, inputs, s), 0)
+	if len(s.Szyszkowski) > 0 {
+		c.solved = fewTrials
+	}
+	c.rows = append(m.ofParticles(), m.sphere(s), m.mixing(), m.spread(), m.binWidth(of), m.sizes(of), m.setting())
+	inputs := slices.Concat(known(append(m.sizeInputs(), m.settingInput()), s), m.kinds.all)
+	c.budget, err = ledger.Propagate(m.full, inputs, m.countModel(of), 0)
 	if err != nil {
 		return nil, &InputError{"uncertainty", reason(err)}
 	}
 	c.notes = distinct(slices.Concat(of.notes, unknownInputs(inputs, s)))
 	return c, nil
+}
+
+// shaped is the scenario with the shape factor of the catalogue, where sizes are
+// mobilities, none is given and the particles are of one substance that has one.
+func shaped(env Env, s scenario.Scenario) scenario.Scenario {
+	s = s.Clone()
+	if s.DrySizeIs != "mobility" || s.Population == "modes" || s.ShapeFactor > 1 || len(s.Components) != 1 || s.Population == "data" && s.Composition == "measured" {
+		return s
+	}
+	if of, ok := env.catalogue().Find(s.Components[0].Substance); ok && of.ShapeFactor.Value > 1 {
+		s.ShapeFactor = of.ShapeFactor.Value
+	}
+	return s
 }
 
 // countAt is the number that activates at the supersaturation of the ledger.
@@ -58,7 +75,19 @@ func countAt(ctx context.Context, env Env, s scenario.Scenario) (ledger.Values, 
 	if a.sizes == nil {
 		return noChange(), &InputError{"data", "nothing can be counted: " + a.noSizes}
 	}
-	return ledger.Values{a.predicted[0].count, math.NaN(), math.NaN()}, nil
+	return countsOf(a), nil
+}
+
+// leastCount is a number below which nothing is said of it, 1/m³.
+const leastCount = 1
+
+// countsOf is the number that activates; NaN where none does.
+func countsOf(a *activated) ledger.Values {
+	n := noChange()
+	if x := a.predicted[0].count; x >= leastCount {
+		n[0] = x
+	}
+	return n
 }
 
 // ledgersOf are the ledgers of the particles of a population.
@@ -86,33 +115,35 @@ func modelsOf(ledgers []*ledger.Ledger) []string {
 	return out
 }
 
-func canBendAny(a *activated) bool {
-	return slices.ContainsFunc(a.population, func(g spectrum.Group) bool { return canBend(g.Of) })
-}
-
 // countModel is the count as it follows its inputs.
-func countModel(of *activated, inputs []ledger.Input, s scenario.Scenario) ledger.Model {
-	fixed := givenTension(s)
+func (m *many) countModel(of *activated) ledger.Model {
+	at := m.asked.AtSupersaturation
+	cut := of.critical(at, m.full[0])
 	return func(x *ledger.Deviation) ledger.Values {
-		solute, curvature := factors(inputs, x, fixed)
-		p := slices.Clone(of.population)
-		for i := range p {
-			sizes, ok := spectrum.Scaled(p[i].Sizes, 1+x[ledger.Sizes])
-			if !ok {
-				return noChange()
-			}
-			p[i].Sizes, p[i].Of = sizes, bent(p[i].Of, solute, curvature)
-		}
-		n, err := p.Count(s.AtSupersaturation + x[ledger.Supersaturation])
+		out := noChange()
+		p, _, err := m.kinds.population(of.population, of.groups, x)
 		if err != nil {
-			return noChange()
+			return out
 		}
-		return ledger.Values{n * (1 + x[ledger.Numbers]), math.NaN(), math.NaN()}
+		for i := range p {
+			var ok bool
+			if p[i].Sizes, ok = spectrum.Scaled(p[i].Sizes, sizeFactor(m.asked, cut, x)); !ok {
+				return out
+			}
+		}
+		s := at + x[ledger.Supersaturation]
+		if !(s > 0) {
+			return out
+		}
+		if n, err := p.Count(s); err == nil && n >= leastCount {
+			out[0] = n * (1 + x[ledger.Numbers])
+		}
+		return out
 	}
 }
 
 // sphere is the row of sized particles that are taken for spheres.
-func (m *many) sphere() assumed {
+func (m *many) sphere(asked scenario.Scenario) assumed {
 	var row assumed
 	for _, a := range ledger.Assumptions() {
 		if a.Key == ledger.Sphere {
@@ -122,14 +153,21 @@ func (m *many) sphere() assumed {
 	switch {
 	case m.asked.Population == "modes":
 		row.status, row.reason = ledger.NotApplicable, "The modes are of volume-equivalent diameters, whatever the shape."
-	case m.asked.DrySizeIs != "mobility":
+		return row
+	case !m.isMobility():
 		row.status, row.reason = ledger.NotApplicable, "The dry sizes are volume-equivalent diameters, whatever the shape."
-	case m.asked.ShapeFactor <= 1:
-		row.status, row.reason, row.made = ledger.NotKnown, "No shape factor of the particles is given.", true
-	default:
-		return m.edited(row, func(s *scenario.Scenario) { s.ShapeFactor = 1 })
+		return row
 	}
-	return row
+	row.made = asked.ShapeFactor <= 1
+	if m.asked.ShapeFactor <= 1 {
+		row.status, row.reason = ledger.NotKnown, "No shape factor of the particles is known or given."
+		return row
+	}
+	row.reason = fmt.Sprintf("The shape factor is %.3g.", m.asked.ShapeFactor)
+	if row.made {
+		row.reason = fmt.Sprintf("The shape factor is %.3g, that of the catalogue.", m.asked.ShapeFactor)
+	}
+	return m.edited(row, func(s *scenario.Scenario) { s.ShapeFactor = 1 })
 }
 
 // binWidth is the row of bins that count whole.
@@ -145,7 +183,7 @@ func (m *many) binWidth(of *activated) assumed {
 	}
 	n, err := whole.Count(m.asked.AtSupersaturation)
 	if err != nil {
-		row.status, row.reason = ledger.NotKnown, "It cannot be worked out: "+reason(err)+"."
+		row.fails(err)
 		return row
 	}
 	row.change = change(ledger.Values{n, math.NaN(), math.NaN()}, m.full)
@@ -179,7 +217,7 @@ const sizingError = 0.03
 func (m *many) sizes(of *activated) assumed {
 	row := newAssumed(sizeError)
 	x := ledger.Deviation{ledger.Sizes: sizingError}
-	row.change = change(countModel(of, nil, m.asked)(&x), m.full)
+	row.change = change(m.countModel(of)(&x), m.full)
 	return row
 }
 

@@ -7,15 +7,15 @@ import "dropcrest/ui/scenario"
 func ledgerStatement(s scenario.Scenario) []string {
 	switch s.LedgerOf {
 	case scenario.LedgerOfSpectrum:
-		return append([]string{"What assumptions cost the count at {at-supersaturation} of {of}:"}, ledgerPopulation(s)+" in air of {temperature}, row {row} explained, all else {further}.")
+		return append([]string{"Each assumption's cost in the count at {at-supersaturation} of {of}:"}, ledgerPopulation(s)+" in air of {temperature}, row {row} explained, all else {further}.")
 	case scenario.LedgerOfAscent:
-		return append([]string{"What assumptions cost the {ascent-outcome} of {of}:"}, ledgerPopulation(s)+" rising at {updraft} from {temperature}, row {row} explained, all else {further}.")
+		return append([]string{"Each assumption's cost in the {ascent-outcome} of {of}:"}, ledgerPopulation(s)+" rising at {updraft} from {temperature}, row {row} explained, all else {further}.")
 	}
 	humidity := ""
 	if s.ParticleOutcome == "haze-radius" {
 		humidity = " and {relative-humidity} humidity"
 	}
-	return []string{"What assumptions cost the {particle-outcome} of {of}:",
+	return []string{"Each assumption's cost in the {particle-outcome} of {of}:",
 		"{dry-diameter} of {component} in air of {temperature}" + humidity + ", row {row} explained, all else {further}."}
 }
 

@@ -3,6 +3,7 @@ package answer
 import (
 	"fmt"
 	"math"
+	"slices"
 	"strings"
 
 	"dropcrest/koehler/ledger"
@@ -23,26 +24,57 @@ func (c *costs) finding() []string {
 	return out
 }
 
-// largestSentence names the assumption that costs most, and beside it the one that
-// costs most of those that the page makes as it is asked.
+// largestSentence names what costs most, and beside it the largest of what the page
+// assumes as it is asked: known, and known under a condition only.
 func (c *costs) largestSentence() string {
 	if math.IsNaN(c.full[c.chosen]) {
-		return fmt.Sprintf("The fullest model has no %s: nothing can be said of what it costs to simplify it.", c.figure().says)
+		return c.nothingSentence()
 	}
-	r := c.rows[0]
-	if math.IsNaN(r.change[c.chosen]) {
-		return fmt.Sprintf("No assumption about the %s has a cost that is known.", c.figure().says)
+	first := slices.IndexFunc(c.rows, func(r assumed) bool { return !isClosedForm(r.Key) })
+	r := c.rows[first]
+	switch x := r.change[c.chosen]; {
+	case math.IsNaN(x):
+		return fmt.Sprintf("No assumption about the %s has a cost that is known%s.", c.figure().says, c.perhaps(0))
+	case x == 0:
+		return fmt.Sprintf("No assumption changes the %s%s.", c.figure().says, c.perhaps(0))
+	case r.made:
+		return fmt.Sprintf("Largest cost: \"%s\", %s, and the %s page assumes it%s.", r.Says, signed(x), c.page, c.perhaps(x))
 	}
 	says := fmt.Sprintf("Largest cost: \"%s\", %s", r.Says, signed(r.change[c.chosen]))
-	if r.made {
-		return says + ", and the " + c.page + " page assumes it."
-	}
-	for _, m := range c.rows[1:] {
+	for _, m := range c.rows[first+1:] {
 		if x := m.change[c.chosen]; m.made && !math.IsNaN(x) {
-			return fmt.Sprintf("%s; of what the %s page assumes: \"%s\", %s.", says, c.page, m.Says, signed(x))
+			return fmt.Sprintf("%s; of what the %s page assumes: \"%s\", %s%s.", says, c.page, m.Says, signed(x), c.perhaps(x))
 		}
 	}
-	return says + "; the " + c.page + " page does not assume it."
+	return fmt.Sprintf("%s; the %s page does not assume it%s.", says, c.page, c.perhaps(0))
+}
+
+// nothingSentence says that there is nothing to take apart.
+func (c *costs) nothingSentence() string {
+	if c.asked.LedgerOf == scenario.LedgerOfSpectrum {
+		return fmt.Sprintf("Fewer than one particle per m³ activates at %s: nothing can be said of what it costs to simplify that.", percent(c.asked.AtSupersaturation))
+	}
+	return fmt.Sprintf("The fullest model has no %s: nothing can be said of what it costs to simplify it.", c.figure().says)
+}
+
+// isClosedForm tells a form that stands in place of an answer from what the answer
+// assumes.
+func isClosedForm(k ledger.Key) bool { return strings.HasPrefix(string(k), "closed_form_") }
+
+// perhaps names what the page assumes and what would cost more than that under a
+// condition, the largest of it.
+func (c *costs) perhaps(than float64) string {
+	var worst assumed
+	size := math.Abs(than)
+	for _, r := range c.rows {
+		if x := math.Abs(r.ifChange[c.chosen]); r.made && r.ifSays != "" && r.status != ledger.Known && x > size {
+			worst, size = r, x
+		}
+	}
+	if worst.ifSays == "" {
+		return ""
+	}
+	return fmt.Sprintf("; perhaps more: \"%s\", %s", worst.Says, signed(worst.ifChange[c.chosen]))
 }
 
 // sureSentence names the input that leaves most open.
@@ -55,7 +87,7 @@ func (c *costs) sureSentence() string {
 		return "No input is uncertain."
 	}
 	top := c.budget.Ranked(c.chosen)[0]
-	says := fmt.Sprintf("Largest uncertainty: %s, %s of %s", top.Quantity, plusMinus(top.Percent[c.chosen]), plusMinus(all))
+	says := fmt.Sprintf("Largest uncertainty: %s, %s, of %s in all", top.Quantity, plusMinus(top.Percent[c.chosen]), plusMinus(all))
 	if c.trials != nil {
 		if p := c.trials.Outcomes[c.chosen].Percent; !math.IsNaN(p) {
 			says += fmt.Sprintf(" (%s by trials)", plusMinus(p))
@@ -64,25 +96,23 @@ func (c *costs) sureSentence() string {
 	return says + "."
 }
 
-// rowSentence is the explanation of a row, in two sentences; before them why a row
-// has no number.
+// rowSentence is the explanation of a row, in two sentences; before them why it has
+// no number, or what it would cost under a condition.
 func (c *costs) rowSentence(i int) string {
 	r := c.rows[i]
-	says := fmt.Sprintf("Row %d, %s:", i+1, c.costWords(r))
-	if r.status != ledger.Known {
+	says := fmt.Sprintf("Row %d, %s:", i+1, c.costWords(r)) + after(c.ifSentence(r)) + after(c.pressureSentence(r))
+	if r.status != ledger.Known && r.ifSays == "" {
 		says += after(r.reason)
 	}
 	return says + after(r.Explains)
 }
 
-// detailSentence is what a row says of this very answer; "": nothing.
+// detailSentence is what else a row says of this very answer; "": nothing.
 func (c *costs) detailSentence(i int) string {
-	r := c.rows[i]
-	says := after(c.ifSentence(r)) + after(c.pressureSentence(r))
-	if r.status == ledger.Known {
-		says = after(r.reason) + says
+	if r := c.rows[i]; r.status == ledger.Known || r.ifSays != "" {
+		return r.reason
 	}
-	return strings.TrimPrefix(says, " ")
+	return ""
 }
 
 func (c *costs) sourceSentence(i int) string { return "Source: " + c.rows[i].Source + "." }
@@ -109,7 +139,7 @@ func (c *costs) ifSentence(r assumed) string {
 	if r.ifSays == "" || math.IsNaN(r.ifChange[c.chosen]) {
 		return ""
 	}
-	return fmt.Sprintf("It would be %s %s.", signed(r.ifChange[c.chosen]), r.ifSays)
+	return fmt.Sprintf("%s it would cost %s.", capital(r.ifSays), signed(r.ifChange[c.chosen]))
 }
 
 func (c *costs) pressureSentence(r assumed) string {
@@ -136,8 +166,15 @@ func (c *costs) answersSentence() string {
 // reachSentence says what must be measured better, and how well.
 func (c *costs) reachSentence() string {
 	needs, percent := c.needs()
-	if len(needs) == 0 {
+	switch all := c.budget.Combined[c.chosen]; {
+	case math.IsNaN(all) || math.IsNaN(c.full[c.chosen]) || all == 0:
 		return ""
+	case len(needs) == 0:
+		return fmt.Sprintf("It is within %s already.", plusMinus(percent))
+	}
+	together := ""
+	if len(needs) > 1 {
+		together = ", all together"
 	}
 	var all []string
 	for _, n := range needs {
@@ -145,7 +182,7 @@ func (c *costs) reachSentence() string {
 		better.StandardUncertainty = n.Needed
 		all = append(all, fmt.Sprintf("the %s to %s", n.Quantity, uncertaintyWords(better)))
 	}
-	return fmt.Sprintf("To reach %s measure %s.", plusMinus(percent), list(all))
+	return fmt.Sprintf("To reach %s measure %s.", plusMinus(percent), list(all)+together)
 }
 
 // needs are what must be measured better to come down to so many per cent.
@@ -175,6 +212,8 @@ func uncertaintyWords(in ledger.Input) string {
 // signed is a cost in per cent with its sign; nothing at all has none.
 func signed(percent float64) string {
 	switch a := math.Abs(percent); {
+	case math.IsNaN(percent) || math.IsInf(percent, 0):
+		return "none"
 	case a == 0:
 		return "0 %"
 	case a < 0.001:
@@ -215,7 +254,11 @@ func (c *costs) why() []string {
 		out = append(out, capital(c.rows[i].Says)+". "+c.rowSentence(i)+after(c.detailSentence(i))+" "+c.sourceSentence(i))
 	}
 	for _, in := range c.budget.Ranked(c.chosen) {
-		out = append(out, fmt.Sprintf("The %s, %s, is uncertain by %s (%s): %s of the %s.", in.Quantity, valueWords(in.Input), uncertaintyWords(in.Input), in.Source,
+		value := ", " + valueWords(in.Input) + ","
+		if c.differing[in.Quantity] || in.Value == 1 {
+			value = ""
+		}
+		out = append(out, fmt.Sprintf("The %s%s is uncertain by %s (%s): %s of the %s.", in.Quantity, value, uncertaintyWords(in.Input), in.Source,
 			plusMinus(in.Percent[c.chosen]), c.figure().says))
 	}
 	out = append(out, c.propagationWords())

@@ -3,6 +3,7 @@ package command
 import (
 	"context"
 	"errors"
+	"slices"
 	"time"
 
 	"github.com/spf13/cobra"
@@ -43,8 +44,10 @@ func (w world) newQuestion(q answer.Question) *cobra.Command {
 func questionHelp(q answer.Question) string {
 	chosen := ""
 	if q.LooksAt("population") {
-		chosen = "\n\n--mode, --bins or --data choose the population, and --kappa the kappa model. " +
-			"--record all takes the records of measured files one after the other: csv and jsonl hold a row for each record and supersaturation, " +
+		chosen = "\n\n--mode, --bins or --data choose the population, and --kappa the kappa model."
+	}
+	if slices.Contains(q.Formats, "icartt") {
+		chosen += " --record all takes the records of measured files one after the other: csv and jsonl hold a row for each record and supersaturation, " +
 			"json the same under records, icartt a column for each supersaturation."
 	}
 	return q.Says + chosen + "\n\nValues are written with their unit, such as 100nm, 20C, 293.15K, 72mN/m, 95%. " +

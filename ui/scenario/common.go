@@ -3,15 +3,15 @@ package scenario
 // commonFields declares how sure what is common to all measurements is.
 var commonFields = []field[Scenario]{
 	{key: "temperature-uncertainty", says: "uncertainty of the temperature", quantity: temperatureSpread,
-		help:   "The standard uncertainty of the temperature, common to all measurements.",
+		help:   "The standard uncertainty of the temperature, common to all measurements. On the Ledger page 0 stands for what is usual there; uncertainty with relative=0% leaves an input out.",
 		origin: "none is counted",
 		at:     func(s *Scenario) any { return &s.TemperatureUncertainty }},
 	{key: "surface-tension-uncertainty", says: "uncertainty of the surface tension", quantity: tensionSpread,
-		help:   "The standard uncertainty of the surface tension, common to all measurements.",
+		help:   "The standard uncertainty of the surface tension, common to all measurements. On the Ledger page 0 stands for what is usual there; uncertainty with relative=0% leaves an input out.",
 		origin: "none is counted",
 		at:     func(s *Scenario) any { return &s.TensionUncertainty }},
 	{key: "shape-factor-uncertainty", says: "uncertainty of the shape factor", quantity: shapeSpread,
-		help:   "The standard uncertainty of the shape factor, common to all measurements.",
+		help:   "The standard uncertainty of the shape factor, common to all measurements. On the Ledger page 0 stands for what is usual there; uncertainty with relative=0% leaves an input out.",
 		origin: "none is counted",
 		at:     func(s *Scenario) any { return &s.ShapeUncertainty },
 		used:   func(s *Scenario) bool { return s.DrySizeIs == "mobility" }},

@@ -23,6 +23,10 @@ type Uncertainty struct {
 var relativeUncertainty = &quantity{says: "share", units: []unit{perCent}, si: "percent", min: 0, max: 1, start: 0.05,
 	step: stepper{small: 1, big: 5, decimals: 1}}
 
+// reached is above 0: nothing is known without any uncertainty.
+var reached = &quantity{says: "share", units: []unit{perCent}, si: "percent", min: 0, open: true, max: 1, start: 0.03,
+	step: stepper{small: 1, big: 5, decimals: 1}}
+
 func ledgerOf(pages ...string) func(*Scenario) bool {
 	return func(s *Scenario) bool {
 		for _, page := range pages {
@@ -57,7 +61,7 @@ var ledgerFields = []field[Scenario]{
 		help:   "Which row is explained, counted from the largest.",
 		origin: "the largest",
 		at:     func(s *Scenario) any { return &s.LedgerRow }},
-	{key: "reach", says: "uncertainty to be reached", quantity: relativeUncertainty, words: []Option{{"half", "half of it"}},
+	{key: "reach", says: "uncertainty to be reached", quantity: reached, words: []Option{{"half", "half of it"}},
 		help:   "The standard uncertainty of the figure, relative, for which the ledger says what must be measured better.",
 		origin: "half of what it is",
 		at:     func(s *Scenario) any { return &s.Reach }},
@@ -66,13 +70,11 @@ var ledgerFields = []field[Scenario]{
 var rowNumber = &quantity{says: "number", units: []unit{bare}, min: 1, max: 40, whole: true, start: 1, step: stepper{small: 1, big: 5}}
 
 // uncertaintyWords are the inputs whose relative uncertainty can be given. That of
-// the temperature is a difference and has an input of its own.
+// the temperature is one of kelvins and has an input of its own as well.
 func uncertaintyWords() []Option {
 	var out []Option
 	for _, q := range ledger.Quantities() {
-		if q != ledger.Temperature {
-			out = append(out, Option{UncertaintyWord(q), q.String()})
-		}
+		out = append(out, Option{UncertaintyWord(q), q.String()})
 	}
 	return out
 }

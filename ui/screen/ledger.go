@@ -22,15 +22,20 @@ func (m *model) turnToLedger() {
 	from := m.question
 	m.backTo = from.Key
 	isOf := answer.HasLedger(from.Key)
+	isAnother := isOf && m.scenario.LedgerOf != from.Key
 	m.stopWork()
-	if isOf && m.scenario.LedgerOf != from.Key {
+	if isAnother {
 		before := m.scenario
 		m.scenario = before.Clone()
-		m.scenario.LedgerOf = from.Key
+		m.scenario.LedgerOf, m.scenario.LedgerRow = from.Key, 1
 		m.history.Add("of", before, m.scenario, false)
 		m.keep()
 	}
 	m.openPage(q)
+	if isAnother {
+		m.shown = 0
+		m.redraw()
+	}
 	if !isOf {
 		m.say(from.Title + " has no ledger of its own: this is that of " + m.titleOf(m.scenario.LedgerOf))
 	}
