@@ -19,6 +19,8 @@ type Settings struct {
 	// Rough is what the polynomial of MonteCarlo may be off by, in standard
 	// uncertainties, before each trial is solved by itself; 0: 0.05.
 	Rough float64
+	// Only are the outcomes that are wanted, which takes less time than all; nil: all.
+	Only []Outcome
 	// Solved is the largest number of trials that are solved one by one; 0: 4000.
 	Solved int
 }
@@ -34,7 +36,7 @@ type Distribution struct {
 
 // MonteCarlo is the result of a propagation by trials, JCGM 101:2008.
 type MonteCarlo struct {
-	Outcomes [outcomes]Distribution // NaN where the answer has none
+	Outcomes [outcomes]Distribution // NaN where the answer has none, or it is not wanted
 	Trials   int
 	Coverage float64
 	// Direct: every trial solved its own curve. Otherwise the logarithm of each
@@ -61,6 +63,35 @@ const (
 // the context ends, its error is returned. Other errors are those of the settings
 // and wrap koehler.ErrInput.
 func (b *Budget) MonteCarlo(ctx context.Context, s Settings) (MonteCarlo, error) {
+	s, err := s.completed()
+	if err != nil {
+		return MonteCarlo{}, err
+	}
+	varied := slices.DeleteFunc(slices.Clone(b.inputs), func(in Input) bool { return in.StandardUncertainty == 0 })
+	m := MonteCarlo{Trials: s.Trials, Coverage: s.Coverage}
+	f := b.surface(varied)
+	m.Deviation = b.judge(f, varied, s)
+	trial := func(z []float64) Values { return f.at(z, s.Only) }
+	if !(m.Deviation <= 100*s.Rough) {
+		m.Direct, m.Trials, m.Deviation = true, min(s.Trials, s.Solved), 0
+		trial = func(z []float64) Values { return b.solved(varied, z) }
+	}
+	all, err := draw(ctx, s, m.Trials, len(varied), trial)
+	if err != nil {
+		return MonteCarlo{}, err
+	}
+	for o := range m.Outcomes {
+		m.Outcomes[o] = nothing(0)
+	}
+	_, err = chunk.Run(ctx, len(s.Only), s.Workers, func(i int) {
+		o := s.Only[i]
+		m.Outcomes[o] = describe(all[o], s.Coverage, b.Answer.Values[o])
+	}, nil)
+	return m, err
+}
+
+// completed returns the settings with their defaults, or what is wrong with them.
+func (s Settings) completed() (Settings, error) {
 	if s.Trials == 0 {
 		s.Trials = usualTrials
 	}
@@ -70,41 +101,30 @@ func (b *Budget) MonteCarlo(ctx context.Context, s Settings) (MonteCarlo, error)
 	if s.Rough == 0 {
 		s.Rough = largestDeviation
 	}
+	if s.Only == nil {
+		s.Only = Outcomes()
+	}
 	if s.Solved == 0 {
 		s.Solved = directTrials
 	}
 	switch {
+	case slices.ContainsFunc(s.Only, func(o Outcome) bool { return o < 0 || o >= outcomes }):
+		return s, &koehler.RangeError{What: "outcome", Value: float64(slices.Max(s.Only)), Right: "one of Outcomes"}
 	case s.Solved < 100:
-		return MonteCarlo{}, &koehler.RangeError{What: "number of solved trials", Value: float64(s.Solved), Right: "100 or more, or 0 for 4000"}
+		return s, &koehler.RangeError{What: "number of solved trials", Value: float64(s.Solved), Right: "100 or more, or 0 for 4000"}
 	case !(s.Rough > 0):
-		return MonteCarlo{}, &koehler.RangeError{What: "roughness", Value: s.Rough, Right: "above 0 standard uncertainties, or 0 for 0.05"}
+		return s, &koehler.RangeError{What: "roughness", Value: s.Rough, Right: "above 0 standard uncertainties, or 0 for 0.05"}
 	case s.Trials < 100:
-		return MonteCarlo{}, &koehler.RangeError{What: "number of trials", Value: float64(s.Trials), Right: "100 or more, or 0 for 100000"}
+		return s, &koehler.RangeError{What: "number of trials", Value: float64(s.Trials), Right: "100 or more, or 0 for 100000"}
 	case !(s.Coverage > 0 && s.Coverage <= 0.999):
-		return MonteCarlo{}, &koehler.RangeError{What: "coverage", Value: s.Coverage, Right: "above 0 and at most 0.999"}
+		return s, &koehler.RangeError{What: "coverage", Value: s.Coverage, Right: "above 0 and at most 0.999"}
 	}
-	varied := slices.DeleteFunc(slices.Clone(b.inputs), func(in Input) bool { return in.StandardUncertainty == 0 })
-	m := MonteCarlo{Trials: s.Trials, Coverage: s.Coverage}
-	f := b.surface(varied)
-	m.Deviation = b.judge(f, varied, s.Seed)
-	trial := f.at
-	if !(m.Deviation <= 100*s.Rough) {
-		m.Direct, m.Trials, m.Deviation = true, min(s.Trials, s.Solved), 0
-		trial = func(z []float64) Values { return b.solved(varied, z) }
-	}
-	all, err := draw(ctx, s, m.Trials, len(varied), trial)
-	if err != nil {
-		return MonteCarlo{}, err
-	}
-	_, err = chunk.Run(ctx, int(outcomes), s.Workers, func(o int) {
-		m.Outcomes[o] = describe(all[o], s.Coverage, b.Answer.Values[o])
-	}, nil)
-	return m, err
+	return s, nil
 }
 
 // draw runs the trials in pieces, each with its own generator.
 func draw(ctx context.Context, s Settings, trials, inputs int, trial func(z []float64) Values) (all [outcomes][]float64, err error) {
-	for o := range all {
+	for _, o := range s.Only {
 		all[o] = make([]float64, trials)
 	}
 	pieces := (trials + pieceTrials - 1) / pieceTrials
@@ -112,8 +132,9 @@ func draw(ctx context.Context, s Settings, trials, inputs int, trial func(z []fl
 		random := chunk.Generator(s.Seed, 1, uint64(piece))
 		z := make([]float64, inputs)
 		for i := piece * pieceTrials; i < min(trials, (piece+1)*pieceTrials); i++ {
-			for o, y := range trial(normal(random, z)) {
-				all[o][i] = y
+			y := trial(normal(random, z))
+			for _, o := range s.Only {
+				all[o][i] = y[o]
 			}
 		}
 	}, nil)
@@ -136,14 +157,19 @@ func (b *Budget) solved(varied []Input, z []float64) Values {
 	return b.model(&x)
 }
 
+// nothing is the distribution of an outcome that there is not.
+func nothing(lost int) Distribution {
+	nan := math.NaN()
+	return Distribution{Mean: nan, Median: nan, StandardUncertainty: nan, Percent: nan, Low: nan, High: nan, Lost: lost}
+}
+
 // describe sums up the trials of one outcome, whose order it changes.
 func describe(y []float64, coverage, value float64) Distribution {
 	n := len(y)
 	y = slices.DeleteFunc(y, math.IsNaN)
 	d := Distribution{Lost: n - len(y)}
 	if len(y) < 2 || math.IsNaN(value) {
-		nan := math.NaN()
-		return Distribution{Mean: nan, Median: nan, StandardUncertainty: nan, Percent: nan, Low: nan, High: nan, Lost: d.Lost}
+		return nothing(d.Lost)
 	}
 	sum, square := 0.0, 0.0
 	for _, v := range y { // about the value: narrow distributions keep their digits

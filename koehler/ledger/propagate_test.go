@@ -58,3 +58,22 @@ func TestPropagateErrors(t *testing.T) {
 		}
 	}
 }
+
+// Wanting one outcome changes nothing of it.
+func TestOnlyOneOutcome(t *testing.T) {
+	_, b := budgetOf(t, asked(t, "ammonium sulfate", 50e-9))
+	all, err := b.MonteCarlo(context.Background(), Settings{Trials: 5000})
+	if err != nil {
+		t.Fatal(err)
+	}
+	one, err := b.MonteCarlo(context.Background(), Settings{Trials: 5000, Only: []Outcome{CriticalWetSize}})
+	if err != nil {
+		t.Fatal(err)
+	}
+	if one.Outcomes[CriticalWetSize] != all.Outcomes[CriticalWetSize] || !math.IsNaN(one.Outcomes[HazeSize].Median) {
+		t.Errorf("%+v, with all %+v", one.Outcomes, all.Outcomes[CriticalWetSize])
+	}
+	if _, err := b.MonteCarlo(context.Background(), Settings{Only: []Outcome{outcomes}}); !errors.Is(err, koehler.ErrInput) {
+		t.Errorf("an outcome that there is not: %v", err)
+	}
+}

@@ -63,40 +63,35 @@ func logs(v Values) Values {
 	return v
 }
 
-// at evaluates the polynomial.
-func (f *surface) at(z []float64) Values {
-	y, k := f.zero, 0
-	for i := range f.inputs {
-		zi := z[i]
-		g := &f.g[i]
-		for o := range y {
-			y[o] += zi * g[o]
-		}
-		for j := i; j < f.inputs; j++ {
-			zz, h := zi*z[j], &f.h[k]
-			for o := range y {
-				y[o] += zz * h[o]
+// at evaluates the polynomial for the outcomes that are wanted.
+func (f *surface) at(z []float64, want []Outcome) (y Values) {
+	for _, o := range want {
+		sum, k := f.zero[o], 0
+		for i := range f.inputs {
+			row := f.g[i][o]
+			for j := i; j < f.inputs; j++ {
+				row += z[j] * f.h[k][o]
+				k++
 			}
-			k++
+			sum += z[i] * row
 		}
-	}
-	for o := range y {
-		y[o] = math.Exp(y[o])
+		y[o] = math.Exp(sum)
 	}
 	return y
 }
 
 // judge returns the largest difference between polynomial and solved curves over a
-// few trials, in percent of the linear standard uncertainty. An outcome that the
+// few trials, in percent of the linear standard uncertainty. A wanted outcome that the
 // answer does not have counts for nothing; one that a trial loses is too much.
-func (b *Budget) judge(f *surface, varied []Input, seed uint64) float64 {
-	random := chunk.Generator(seed, 0)
+func (b *Budget) judge(f *surface, varied []Input, s Settings) float64 {
+	random := chunk.Generator(s.Seed, 0)
 	z := make([]float64, len(varied))
 	worst := 0.0
 	for range compared {
 		normal(random, z)
-		want, got := b.solved(varied, z), f.at(z)
-		for o, y := range b.Answer.Values {
+		want, got := b.solved(varied, z), f.at(z, Outcomes())
+		for _, o := range s.Only {
+			y := b.Answer.Values[o]
 			if math.IsNaN(y) || b.Combined[o] == 0 {
 				continue
 			}

@@ -123,12 +123,5 @@ func (c cubicForm) Critical(s float64) (float64, error) {
 
 // AddCounts implements spectrum.Composition.
 func (c cubicForm) AddCounts(dst, s []float64, sizes spectrum.Sizes, share float64) error {
-	for i, x := range s {
-		d, err := c.Critical(x)
-		if err != nil {
-			return err
-		}
-		dst[i] += share * sizes.Above(d)
-	}
-	return nil
+	return addWider(c, dst, s, sizes, share)
 }

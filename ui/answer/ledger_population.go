@@ -28,8 +28,10 @@ func (m *many) by(key ledger.Key, against bool) Env {
 	return env
 }
 
-// fullest is the answer to a scenario by the fullest models.
-func (m *many) fullest(s scenario.Scenario) (ledger.Values, error) {
+// fullest is the answer to the question with an edit, by the fullest models.
+func (m *many) fullest(edit func(*scenario.Scenario)) (ledger.Values, error) {
+	s := m.asked.Clone()
+	edit(&s)
 	return m.values(m.by("", false), s)
 }
 
@@ -119,9 +121,7 @@ func (r *assumed) fails(err error) {
 
 // edited is the row of an assumption that is an edit of the scenario.
 func (m *many) edited(row assumed, edit func(*scenario.Scenario)) assumed {
-	s := m.asked.Clone()
-	edit(&s)
-	simplified, err := m.fullest(s)
+	simplified, err := m.fullest(edit)
 	if err != nil {
 		row.fails(err)
 		return row
@@ -134,9 +134,7 @@ func (m *many) edited(row assumed, edit func(*scenario.Scenario)) assumed {
 // as the edit says, which the answer is taken to simplify.
 func (m *many) iffy(row assumed, says string, edit func(*scenario.Scenario)) assumed {
 	row.status = ledger.NotKnown
-	s := m.asked.Clone()
-	edit(&s)
-	fuller, err := m.fullest(s)
+	fuller, err := m.fullest(edit)
 	if err != nil {
 		row.fails(err)
 		return row

@@ -109,8 +109,13 @@ func (h *held) Critical(s float64) (float64, error) {
 
 // AddCounts implements spectrum.Composition.
 func (h *held) AddCounts(dst, s []float64, sizes spectrum.Sizes, share float64) error {
+	return addWider(h, dst, s, sizes, share)
+}
+
+// addWider counts where all particles wider than one diameter activate.
+func addWider(of spectrum.Composition, dst, s []float64, sizes spectrum.Sizes, share float64) error {
 	for i, x := range s {
-		d, err := h.Critical(x)
+		d, err := of.Critical(x)
 		if err != nil {
 			return err
 		}

@@ -40,3 +40,15 @@ func BenchmarkRecord(b *testing.B) {
 	press(m, "tab")
 	hold(b, m, "n", "p")
 }
+
+// A key that changes the particle whose answer is taken apart, and one that goes to
+// the next row, which keeps what was worked out.
+func BenchmarkLedger(b *testing.B) {
+	for name, keys := range map[string][2]string{"size": {"up", "down"}, "row": {"n", "p"}} {
+		b.Run(name, func(b *testing.B) {
+			m := opened(onTerminal("colour"), 80, 24)
+			press(m, "l right right")
+			hold(b, m, keys[0], keys[1])
+		})
+	}
+}
