@@ -65,6 +65,7 @@ func TestRowsOfCountsByHand(t *testing.T) {
 		asked := edited(c.full, func(s *scenario.Scenario) { // the page as it usually is
 			s.Kelvin, s.SurfaceTension, s.SolutionDensity = "standard", scenario.Measure{Word: "water"}, "additive"
 		})
+		asked.Trials.Number = 0
 		_, f := takesApart(t, asked)
 		full := countOf(t, c.full)
 		want := 100 * (countOf(t, edited(c.full, c.simplified))/full - 1)
@@ -159,6 +160,7 @@ func TestRowsOfAscentsByHand(t *testing.T) {
 		"ideal":         {ledger.IdealSolute, edited(salt, moist), func(s *scenario.Scenario) { s.WaterActivity = "vant-hoff" }},
 		"pure water":    {ledger.PureWaterSurfaceTension, edited(salt, moist), func(s *scenario.Scenario) { s.SurfaceTension.Word = "water" }},
 	} {
+		c.full.Trials.Number = 0
 		_, f := takesApart(t, c.full)
 		n, s := of(c.full)
 		n1, s1 := of(edited(c.full, c.simplified))
@@ -210,6 +212,7 @@ func TestBudgetsOfAllKinds(t *testing.T) {
 		"mobility": {scene(t, "of=spectrum", "composition=given", "component=sodium chloride", "dry-size-is=mobility"),
 			[]ledger.Quantity{ledger.ShapeFactor, ledger.Hygroscopicity}},
 	} {
+		c.s.Trials.Number = 0
 		_, f := takesApart(t, c.s)
 		for _, q := range c.want {
 			i := slices.IndexFunc(f.Budget, func(b BudgetRow) bool { return b.Input == q.Key() })

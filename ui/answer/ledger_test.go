@@ -60,6 +60,7 @@ func ledgerScenes(t testing.TB) map[string]scenario.Scenario {
 func TestRowsAreExplained(t *testing.T) {
 	for name, s := range ledgerScenes(t) {
 		t.Run(name, func(t *testing.T) {
+			s.Trials.Number = 1000
 			a, f := takesApart(t, s)
 			for i, r := range f.Assumptions {
 				if n := strings.Count(r.Explains+" ", ". "); n < 2 || n > 3 || r.Says == "" || r.Source == "" {

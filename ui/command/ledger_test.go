@@ -36,6 +36,9 @@ func printed(t *testing.T, args ...string) map[string]any {
 
 // A row of the ledger is the difference of two answers that a person gets by options.
 func TestLedgerRowsAreDifferencesOfAnswers(t *testing.T) {
+	if testing.Short() {
+		t.Skip("starts the program twenty times")
+	}
 	t.Parallel()
 	const sc, wet = "critical_supersaturation_percent", "critical_wet_radius_m"
 	modes := []string{"--mode", "N=850/cm3 Dg=45nm gsd=1.6", "--mode", "N=400/cm3 Dg=150nm gsd=1.6"}
