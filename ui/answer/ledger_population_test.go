@@ -140,6 +140,9 @@ func TestTemperatureOfCounts(t *testing.T) {
 
 // Each row of an ascent is the difference of two ascents.
 func TestRowsOfAscentsByHand(t *testing.T) {
+	if testing.Short() {
+		t.Skip("makes hundreds of ascents")
+	}
 	kappa := edited(modesOfKappa(t, "of=ascent"), func(s *scenario.Scenario) { s.MassAccommodation, s.KappaSpread = 0.6, 1.3 })
 	salt := edited(ledgerScenes(t)["ascent of modes"], fuller)
 	of := func(s scenario.Scenario) (droplets, peak float64) {
@@ -252,6 +255,9 @@ func TestKindsOfParticles(t *testing.T) {
 
 // What rises is taken apart about its own answer: the trials lie around it.
 func TestTrialsLieAroundTheAnswer(t *testing.T) {
+	if testing.Short() {
+		t.Skip("makes hundreds of ascents")
+	}
 	s := withRows(t, scene(t, "of=ascent", "population=modes", "ascent-bins=200"), "mode", "N=1000/cm3 Dg=30nm gsd=1.2 kappa=0.3")
 	_, f := takesApart(t, s)
 	if ratio := float64(f.MonteCarlo.Median / f.Reference.Droplets); !(math.Abs(ratio-1) < 0.02) {

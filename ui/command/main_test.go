@@ -34,6 +34,9 @@ func TestMain(m *testing.M) {
 }
 
 func TestScripts(t *testing.T) {
+	if testing.Short() {
+		t.Skip("every command of a script starts the program, which takes long with the race detector")
+	}
 	data, err := filepath.Abs("../../testdata")
 	if err != nil {
 		t.Fatal(err)
