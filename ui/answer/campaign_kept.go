@@ -33,11 +33,18 @@ func dataKey(s scenario.Scenario) string {
 // they may be written to while they are looked at. Where nothing is kept no file is
 // opened for it: a pipe can be read only once.
 func stampOf(env Env, s scenario.Scenario) string {
+	return stampOfFiles(env, append([]scenario.DataFile{{Name: s.Penetration}}, s.Data...))
+}
+
+// stampOfScans is stampOf for files of scans.
+func stampOfScans(env Env, s scenario.Scenario) string { return stampOfFiles(env, s.Scans) }
+
+func stampOfFiles(env Env, files []scenario.DataFile) string {
 	var stamp strings.Builder
 	if env.Kept == nil {
 		return ""
 	}
-	for _, f := range append([]scenario.DataFile{{Name: s.Penetration}}, s.Data...) {
+	for _, f := range files {
 		if f.Name == "" || f.Name == scenario.DemoData || env.Open == nil {
 			continue
 		}

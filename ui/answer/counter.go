@@ -2,6 +2,7 @@ package answer
 
 import (
 	"context"
+	"fmt"
 	"slices"
 
 	"dropcrest/atmos"
@@ -13,13 +14,17 @@ import (
 
 func counterQuestion() Question {
 	return Question{
-		Key:       "counter",
-		Title:     "Counter",
-		Says:      "Which supersaturation did the CCN counter really have?",
-		Groups:    counterGroups,
-		Live:      counterIsLive,
-		Always:    []string{"shape-factor", "bins"},
-		Tabled:    func(Answer) []string { return []string{"left_out"} },
+		Key:    "counter",
+		Title:  "Counter",
+		Says:   "Which supersaturation did the CCN counter really have?",
+		Groups: counterGroups,
+		Live:   counterIsLive,
+		Always: []string{"shape-factor", "bins"},
+		Tabled: func(Answer) []string { return []string{"left_out"} },
+		Turns:  &Turns{"scan", "scan"},
+		Counts: func(s scenario.Scenario, path scenario.Path) bool {
+			return len(s.Counted) == 0 || path != "scans" && path != "scans-map" // rows take the place of files
+		},
 		Statement: counterStatement,
 		Ask:       askCounter,
 	}
@@ -27,14 +32,17 @@ func counterQuestion() Question {
 
 // counterGroups are the inputs of the Counter question.
 var counterGroups = []Group{
-	{"The scans", []string{"data=scans", "map=scans-map", "activation-curve", "plateau", "double-charged", "polarity",
+	{"The scans", []string{"data=scans", "map=scans-map", "counted", "activation-curve", "plateau", "double-charged", "polarity",
 		"cn-delay", "settling", "cn-cut-off", "bins"}},
 	{"The salt", []string{"component", "shares-by", "shape-factor", "water-activity", "kappa", "vant-hoff-factor", "temperature", "surface-tension"}},
 	{"The uncertainty", []string{"bootstrap", "seed"}},
+	{"Picture", []string{"scan"}},
 }
 
 // counterIsLive: without bootstrap the demo's scans are fitted within a frame.
-func counterIsLive(s scenario.Scenario) bool { return s.Bootstrap == 0 && onlyDemo(s.Scans) }
+func counterIsLive(s scenario.Scenario) bool {
+	return s.Bootstrap == 0 && (len(s.Counted) > 0 || onlyDemo(s.Scans))
+}
 
 func onlyDemo(files []scenario.DataFile) bool {
 	return !slices.ContainsFunc(files, func(f scenario.DataFile) bool { return f.Name != scenario.DemoData })
@@ -49,8 +57,12 @@ func counterStatement(s scenario.Scenario) []string {
 	case "vant-hoff":
 		water += " factor {vant-hoff-factor}"
 	}
+	scans := "{scans}"
+	if len(s.Counted) > 0 {
+		scans = "{counted}"
+	}
 	return []string{
-		"A counter that was scanned as in {scans}, {polarity} particles selected,",
+		"A counter that was scanned as in " + scans + ", {polarity} particles selected,",
 		"with an activation curve of {activation-curve}, plateau {plateau},",
 		"on particles of {component}, shape factor {shape-factor},",
 		water + ", surface tension of {surface-tension},",
@@ -68,33 +80,79 @@ type calibrated struct {
 }
 
 func askCounter(ctx context.Context, env Env, s scenario.Scenario) (Answer, error) {
+	c, err := env.calibrate(ctx, s)
+	if c == nil {
+		return Answer{}, err
+	}
+	line := c.lineFigure()
+	line.Notes = append(c.finding(), c.account(env.Version)...)
+	a := Answer{
+		Finding: c.finding(),
+		Why:     c.why(),
+		Facts:   c.facts(),
+		Figures: []figure.Figure{line, c.curvesFigure(), c.residualFigure()},
+		Tables:  c.tables(),
+		Notes:   c.notes,
+		Account: c.account(env.Version),
+		Records: len(c.drawn()),
+	}
+	if s.Scan.Word == "" {
+		a.Record = min(int(s.Scan.Number), a.Records)
+		if a.Record < int(s.Scan.Number) {
+			a.Notes = append(slices.Clone(a.Notes), atmos.Note{Code: "no-such-scan", Input: "scan",
+				Text: fmt.Sprintf("There is no scan %.0f: %d have an activation curve over sizes, and the last one of them is drawn.", s.Scan.Number, a.Records)})
+		}
+	}
+	return a, err
+}
+
+// calibrate makes the calibration of a scenario, or takes the last one where nothing
+// but the picture has changed. With the error of a context that has ended it returns
+// what there is by then; nil: nothing.
+func (env Env) calibrate(ctx context.Context, s scenario.Scenario) (*calibrated, error) {
+	asked := s.Clone()
+	asked.Scan = scenario.Measure{}
+	key := askedKey{scenario.WithoutLedger(asked), env.catalogue(), stampOfScans(env, s)}
+	if c := env.Kept.calibrationOf(key); c != nil {
+		known := *c
+		known.asked = s
+		return &known, nil
+	}
+	c, err := env.newCalibration(ctx, s)
+	if err == nil && s.Bins == "" {
+		env.Kept.keepCalibration(key, c)
+	}
+	return c, err
+}
+
+func (env Env) newCalibration(ctx context.Context, s scenario.Scenario) (*calibrated, error) {
 	standard, notes, err := newStandard(env, s)
 	if err != nil {
-		return Answer{}, err
+		return nil, err
 	}
 	log, err := readScans(ctx, env, s)
 	if err != nil {
-		return Answer{}, err
+		return nil, err
 	}
 	if s.Settling > 0 {
 		log.rows = counter.Settle(log.rows, s.Settling, counter.Tolerances{})
 	}
 	if s.CNDelay > 0 {
 		if slices.ContainsFunc(log.rows, func(r counter.Row) bool { return !(r.Duration > 0) }) {
-			return Answer{}, &InputError{Input: "cn-delay", Text: "counts can be moved in time only where the length of each sample is known: want a column of sampling time, or of start and end"}
+			return nil, &InputError{Input: "cn-delay", Text: "counts can be moved in time only where the length of each sample is known: want a column of sampling time, or of start and end"}
 		}
 		log.rows = counter.Delay(log.rows, s.CNDelay)
 	}
 	options, sized, err := fitOptions(ctx, env, s)
 	if err != nil {
-		return Answer{}, err
+		return nil, err
 	}
 	log.notes = append(log.notes, sized...)
 	axis := counter.DetectAxis(log.rows, counter.Tolerances{})
 	scans, salts := counter.Gather(log.rows, axis, counter.Tolerances{})
 	standards, scans, more, err := standardsOf(env, s, standard, scans, salts)
 	if err != nil {
-		return Answer{}, err
+		return nil, err
 	}
 	c := &calibrated{asked: s, rows: len(log.rows), mapping: log.mapping}
 	c.Calibration, err = counter.Calibrate(ctx, counter.Request{
@@ -104,24 +162,14 @@ func askCounter(ctx context.Context, env Env, s scenario.Scenario) (Answer, erro
 	stopped := ctx.Err()
 	switch {
 	case stopped != nil && c.Line == nil: // too early to have something to say
-		return Answer{}, stopped
+		return nil, stopped
 	case stopped != nil:
 		c.Notes = append(c.Notes, c.stoppedNote())
 	case err != nil:
-		return Answer{}, &InputError{Input: "scans", Text: reason(err)}
+		return nil, &InputError{Input: "scans", Text: reason(err)}
 	}
 	c.notes = distinct(slices.Concat(notes, log.notes, more, c.Calibration.Notes, waterNotes(s)))
-	line := c.lineFigure()
-	line.Notes = append(c.finding(), c.account(env.Version)...)
-	return Answer{
-		Finding: c.finding(),
-		Why:     c.why(),
-		Facts:   c.facts(),
-		Figures: []figure.Figure{line, c.curvesFigure(), c.residualFigure()},
-		Tables:  c.tables(),
-		Notes:   c.notes,
-		Account: c.account(env.Version),
-	}, stopped
+	return c, stopped
 }
 
 // newStandard is the salt of the question with its Köhler model.

@@ -43,17 +43,32 @@ func (c *calibrated) lineFigure() figure.Figure {
 	return f
 }
 
-// curvesFigure is every activation curve with its points.
+// drawn are the places of the scans that have an activation curve over sizes.
+func (c *calibrated) drawn() []int {
+	var at []int
+	for i, s := range c.Scans {
+		if s.Fault == "" && s.Over == counter.OverDiameter {
+			at = append(at, i)
+		}
+	}
+	return at
+}
+
+// curvesFigure is every activation curve with its points, or the one that is asked for.
 func (c *calibrated) curvesFigure() figure.Figure {
 	f := figure.Figure{
 		Key: "curves", Title: "activated fraction against mobility diameter, nm",
 		X: figure.Axis{Says: "mobility diameter", Unit: "nm", Log: true},
 		Y: figure.Axis{Says: "activated fraction", Unit: ""},
 	}
-	for i, s := range c.Scans {
-		if s.Fault != "" || s.Over != counter.OverDiameter {
-			continue
-		}
+	drawn := c.drawn()
+	if n := c.asked.Scan; n.Word == "" && len(drawn) > 0 {
+		at := min(int(n.Number), len(drawn)) - 1
+		drawn = drawn[at : at+1]
+		f.Title += ", " + c.Scans[drawn[0]].Name
+	}
+	for _, i := range drawn {
+		s := c.Scans[i]
 		line := figure.Line{Says: digits(s.TemperatureDifference, 3) + " K"}
 		for _, p := range s.Points {
 			x := p.Setting * 1e9

@@ -28,6 +28,12 @@ type scanLog struct {
 // and marked, so that the record says why it was left out.
 func readScans(ctx context.Context, env Env, s scenario.Scenario) (scanLog, error) {
 	var log scanLog
+	for i, c := range s.Counted {
+		log.rows = append(log.rows, counter.Row{TemperatureDifference: c.Difference, DryDiameter: c.Diameter, CN: c.CN, CCN: c.CCN, Line: i + 1})
+	}
+	if len(log.rows) > 0 {
+		return log, nil
+	}
 	for _, f := range s.Scans {
 		if err := log.read(ctx, env, s, f); err != nil {
 			return log, scanError(err)

@@ -19,31 +19,59 @@ type Kept struct {
 	data    *keptData // nil: none
 	rising  keptAscent
 
-	costs    *costs // of the last ledger; nil: none
-	costsKey ledgerKey
+	costs          *costs // of the last ledger; nil: none
+	costsKey       askedKey
+	calibration    *calibrated // the last one of the counter; nil: none
+	calibrationKey askedKey
 }
 
-// ledgerKey is what the costs of a ledger depend on.
-type ledgerKey struct {
+// askedKey is what an answer that takes long depends on.
+type askedKey struct {
 	of        scenario.Scenario
 	catalogue *solutes.Catalogue
 	files     string // when measured files were changed
 }
 
+func (key askedKey) equal(other askedKey) bool {
+	return key.catalogue == other.catalogue && key.files == other.files && key.of.Equal(other.of)
+}
+
 // costsOf are the costs of that question, nil where they are not kept.
-func (k *Kept) costsOf(key ledgerKey) *costs {
+func (k *Kept) costsOf(key askedKey) *costs {
 	if k == nil {
 		return nil
 	}
 	k.mu.Lock()
 	defer k.mu.Unlock()
-	if k.costs == nil || k.costsKey.catalogue != key.catalogue || k.costsKey.files != key.files || !k.costsKey.of.Equal(key.of) {
+	if k.costs == nil || !k.costsKey.equal(key) {
 		return nil
 	}
 	return k.costs
 }
 
-func (k *Kept) keepCosts(key ledgerKey, c *costs) {
+// calibrationOf is the calibration of that question, nil where it is not kept.
+func (k *Kept) calibrationOf(key askedKey) *calibrated {
+	if k == nil {
+		return nil
+	}
+	k.mu.Lock()
+	defer k.mu.Unlock()
+	if k.calibration == nil || !k.calibrationKey.equal(key) {
+		return nil
+	}
+	return k.calibration
+}
+
+func (k *Kept) keepCalibration(key askedKey, c *calibrated) {
+	if k == nil {
+		return
+	}
+	k.mu.Lock()
+	defer k.mu.Unlock()
+	k.calibration, k.calibrationKey = c, key
+}
+
+func (k *Kept) keepCosts(key askedKey, c *costs) {
 	if k == nil {
 		return
 	}

@@ -134,10 +134,10 @@ func askLedger(ctx context.Context, env Env, s scenario.Scenario) (Answer, error
 
 // ledgerAsked is what the costs of a scenario depend on: which of them is looked at,
 // and how, changes nothing.
-func (env Env) ledgerAsked(s scenario.Scenario) ledgerKey {
+func (env Env) ledgerAsked(s scenario.Scenario) askedKey {
 	s = s.Clone()
 	s.LedgerRow, s.ParticleOutcome, s.AscentOutcome, s.Reach = 0, "", "", scenario.Measure{}
-	key := ledgerKey{of: s, catalogue: env.catalogue()}
+	key := askedKey{of: s, catalogue: env.catalogue()}
 	if s.LedgerOf != scenario.LedgerOfCurve {
 		key.files = stampOf(env, s)
 	}

@@ -25,7 +25,7 @@ var componentList = list[Component]{
 func tables(s *Scenario) []table {
 	return []table{rowsOf[Component]{&componentList, s}, rowsOf[Film]{&filmList, s}, rowsOf[Isotherm]{&isothermList, s},
 		rowsOf[Mode]{&modeList, s}, rowsOf[DataFile]{&dataList, s}, rowsOf[MapLine]{&mapList, s}, rowsOf[Rule]{&ruleList, s},
-		rowsOf[Point]{&pointList, s}, rowsOf[DataFile]{&scanList, s}, rowsOf[MapLine]{&scanMapList, s}, rowsOf[Uncertainty]{&uncertaintyList, s}}
+		rowsOf[Point]{&pointList, s}, rowsOf[DataFile]{&scanList, s}, rowsOf[MapLine]{&scanMapList, s}, rowsOf[Uncertainty]{&uncertaintyList, s}, rowsOf[Counted]{&countedList, s}}
 }
 
 // anotherComponent is a substance that is not there yet, the most common ones

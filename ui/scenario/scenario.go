@@ -68,11 +68,13 @@ type Scenario struct {
 	Coverage         float64    // fraction
 	Scans            []DataFile // salt scans of the counter; "demo" is the invented station
 	ScansMap         []MapLine
-	Activation       string  // two-step | gaussian | sigmoid
-	Polarity         string  // positive | negative, of the classifier
-	Plateau          Measure // efficiency of the counter, or "fitted"
-	DoubleCharged    Measure // share of doubly charged particles, or "fitted"
-	Bootstrap        int     // replicates, 0: none
+	Counted          []Counted // scans that were typed, in place of files
+	Scan             Measure   // number of the scan whose curve is drawn, or "all"
+	Activation       string    // two-step | gaussian | sigmoid
+	Polarity         string    // positive | negative, of the classifier
+	Plateau          Measure   // efficiency of the counter, or "fitted"
+	DoubleCharged    Measure   // share of doubly charged particles, or "fitted"
+	Bootstrap        int       // replicates, 0: none
 
 	Updraft              float64 // m/s
 	UpdraftSpread        float64 // m/s, 0: one updraft
@@ -186,6 +188,7 @@ func Default() Scenario {
 		Seed:             1,
 		Coverage:         0.95,
 		Scans:            []DataFile{{Name: DemoData}},
+		Scan:             Measure{Word: "all"},
 		Activation:       "two-step",
 		Polarity:         "positive",
 		Plateau:          Measure{Word: "fitted"},
@@ -233,13 +236,13 @@ func (s Scenario) Clone() Scenario {
 	s.Modes, s.Data, s.Map = slices.Clone(s.Modes), slices.Clone(s.Data), slices.Clone(s.Map)
 	s.Supersaturations, s.Follow = slices.Clone(s.Supersaturations), slices.Clone(s.Follow)
 	s.Rules, s.Uncertainties = slices.Clone(s.Rules), slices.Clone(s.Uncertainties)
-	s.Measurements, s.Scans, s.ScansMap = slices.Clone(s.Measurements), slices.Clone(s.Scans), slices.Clone(s.ScansMap)
+	s.Measurements, s.Scans, s.ScansMap, s.Counted = slices.Clone(s.Measurements), slices.Clone(s.Scans), slices.Clone(s.ScansMap), slices.Clone(s.Counted)
 	return s
 }
 
 // Equal reports whether both ask the same.
 func (s Scenario) Equal(other Scenario) bool {
-	return slices.Equal(s.Uncertainties, other.Uncertainties) && slices.Equal(s.Measurements, other.Measurements) && slices.Equal(s.Scans, other.Scans) && slices.Equal(s.ScansMap, other.ScansMap) &&
+	return slices.Equal(s.Uncertainties, other.Uncertainties) && slices.Equal(s.Counted, other.Counted) && slices.Equal(s.Measurements, other.Measurements) && slices.Equal(s.Scans, other.Scans) && slices.Equal(s.ScansMap, other.ScansMap) &&
 		slices.Equal(s.Rules, other.Rules) && slices.Equal(s.Modes, other.Modes) && slices.Equal(s.Data, other.Data) && slices.Equal(s.Map, other.Map) &&
 		slices.Equal(s.Components, other.Components) && slices.Equal(s.Szyszkowski, other.Szyszkowski) &&
 		slices.Equal(s.Adsorption, other.Adsorption) && reflect.DeepEqual(s.plain(), other.plain())
@@ -247,7 +250,7 @@ func (s Scenario) Equal(other Scenario) bool {
 
 // plain is the scenario without its rows and without where names are looked up.
 func (s Scenario) plain() Scenario {
-	s.Modes, s.Data, s.Map, s.Rules, s.Measurements, s.Scans, s.ScansMap, s.Uncertainties = nil, nil, nil, nil, nil, nil, nil, nil
+	s.Modes, s.Data, s.Map, s.Rules, s.Measurements, s.Scans, s.ScansMap, s.Uncertainties, s.Counted = nil, nil, nil, nil, nil, nil, nil, nil, nil
 	s.Components, s.Szyszkowski, s.Adsorption, s.substances, s.anyName = nil, nil, nil, nil, false
 	return s
 }
