@@ -6,6 +6,7 @@ import (
 	"slices"
 	"strings"
 
+	"dropcrest/solutes"
 	"dropcrest/ui/plain"
 )
 
@@ -67,6 +68,9 @@ func (i slot[R]) Choices() []Option {
 		says := x.Name
 		if x.Formula != "" {
 			says += ", " + x.Formula
+		}
+		if _, embedded := solutes.Standard().Find(x.Name); !embedded {
+			says += " (your own)"
 		}
 		names = append(names, Option{x.Name, says})
 	}
