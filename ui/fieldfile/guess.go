@@ -21,7 +21,7 @@ func (f *File) guess() []Role {
 			}
 		}
 		if ask != "" {
-			f.notes.add("ask", 0, "column %s is not used: say %s", quoted(f.Columns[i].Name), ask)
+			f.asks = append(f.asks, question{i, ask})
 			r = Role{}
 		}
 		if r.Quantity == Unused || r.Quantity == Flag {

@@ -3,8 +3,10 @@ package fieldfile
 import (
 	"bytes"
 	"errors"
+	"fmt"
 	"io"
 	"io/fs"
+	"slices"
 	"strings"
 	"time"
 
@@ -90,6 +92,7 @@ type File struct {
 	texts   bool
 	clock   clock
 	notes   notes
+	asks    []question // columns that are not used, until Use says what they hold
 	flags   flagCount
 	failure error
 	last    time.Time // start of the last record
@@ -199,7 +202,18 @@ func (f *File) Name() string { return f.name }
 
 // Notes is what is worth knowing about what was read so far.
 func (f *File) Notes() []Note {
-	return append(append([]Note(nil), f.notes.list...), f.flags.notes()...)
+	all := slices.Clone(f.notes.list)
+	if n := len(f.asks); n > 0 {
+		first := f.asks[0]
+		all = append(all, Note{Code: "ask", Count: n, Text: fmt.Sprintf("column %s is not used: say %s", quoted(f.Columns[first.column].Name), first.say)})
+	}
+	return append(all, f.flags.notes()...)
+}
+
+// question is about a column whose meaning cannot be told.
+type question struct {
+	column int
+	say    string // what to say
 }
 
 // uniqueNames gives a second column of the same name a number.

@@ -71,6 +71,7 @@ func (f *File) use(roles []Role, line string) error {
 			return fmt.Errorf("column %s holds no flags: want a numflag column of NASA Ames", quoted(f.Columns[c].Name))
 		}
 		roles[c] = r
+		f.asks = slices.DeleteFunc(f.asks, func(q question) bool { return q.column == c }) // answered
 	}
 	if found {
 		return nil
