@@ -75,7 +75,7 @@ func TestOneScanAtATime(t *testing.T) {
 	if err != nil {
 		t.Fatal(err)
 	}
-	first := env.Kept.calibration
+	first := env.Kept.calibration.kept
 	for n := range all.Records {
 		s.Scan = scenario.Measure{Number: float64(n + 1)}
 		one, err := askCounter(context.Background(), env, s)
@@ -87,7 +87,7 @@ func TestOneScanAtATime(t *testing.T) {
 			t.Errorf("scan %d: %d lines, %d marks, record %d", n+1, len(curves.Lines), len(curves.Marks), one.Record)
 		}
 	}
-	if env.Kept.calibration != first {
+	if env.Kept.calibration.kept != first {
 		t.Error("the calibration was made again")
 	}
 	s.Scan.Number = 99
@@ -95,7 +95,7 @@ func TestOneScanAtATime(t *testing.T) {
 		t.Errorf("beyond the last one: scan %d, %v", last.Record, err)
 	}
 	s.Temperature++
-	if _, err := askCounter(context.Background(), env, s); err != nil || env.Kept.calibration == first {
+	if _, err := askCounter(context.Background(), env, s); err != nil || env.Kept.calibration.kept == first {
 		t.Errorf("at another temperature: %v", err)
 	}
 }

@@ -113,14 +113,14 @@ func (env Env) calibrate(ctx context.Context, s scenario.Scenario) (*calibrated,
 	asked := s.Clone()
 	asked.Scan = scenario.Measure{}
 	key := askedKey{scenario.WithoutLedger(asked), env.catalogue(), stampOfScans(env, s)}
-	if c := env.Kept.calibrationOf(key); c != nil {
+	if c := env.Kept.lastCalibration().of(key); c != nil {
 		known := *c
 		known.asked = s
 		return &known, nil
 	}
 	c, err := env.newCalibration(ctx, s)
 	if err == nil && s.Bins == "" {
-		env.Kept.keepCalibration(key, c)
+		env.Kept.lastCalibration().keep(key, c)
 	}
 	return c, err
 }

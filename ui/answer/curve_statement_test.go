@@ -19,27 +19,7 @@ func TestStatementSlots(t *testing.T) {
 		"kelvin":      {"kelvin=pure-vapour"},
 		"density":     {"solution-density=measured"},
 	} {
-		s := scene(t, values...)
-		for _, line := range curveStatement(s) {
-			Fill(line, func(slot string) string {
-				for _, l := range scenario.Lists(&s) {
-					if l.Key() == slot {
-						return ""
-					}
-				}
-				if scenario.Path(slot) == Further {
-					return ""
-				}
-				in, ok := scenario.Find(&s, scenario.Path(slot))
-				switch {
-				case !ok:
-					t.Errorf("%s: no input {%s}", name, slot)
-				case !in.Used():
-					t.Errorf("%s: {%s} stands in the statement but is not used", name, slot)
-				}
-				return ""
-			})
-		}
+		clausesServe(t, name, curveQuestion(), scene(t, values...), 0)
 	}
 }
 

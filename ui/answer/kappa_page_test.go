@@ -4,7 +4,6 @@ import (
 	"context"
 	"slices"
 	"testing"
-	"unicode/utf8"
 
 	"dropcrest/ui/scenario"
 )
@@ -21,29 +20,7 @@ func TestKappaStatement(t *testing.T) {
 		"linear":   points(t, []string{long}, "trials=0"),
 		"mobility": points(t, []string{long, long}, "dry-size-is=mobility", "trials=0"),
 	} {
-		for _, clause := range kappaStatement(s) {
-			text := Fill(clause, func(slot string) string {
-				if scenario.Path(slot) == Further {
-					return "[" + FurtherWords(kappaQuestion(), s) + "]"
-				}
-				if in, ok := scenario.Find(&s, scenario.Path(slot)); ok {
-					if !in.Used() {
-						t.Errorf("%s: {%s} stands in the statement but is not used", name, slot)
-					}
-					return "[" + in.Show(scenario.Style{}) + "]"
-				}
-				for _, l := range scenario.Lists(&s) {
-					if l.Key() == slot {
-						return "[" + l.Show(scenario.Style{}) + "]"
-					}
-				}
-				t.Errorf("%s: no input {%s}", name, slot)
-				return ""
-			})
-			if n := utf8.RuneCountInString(text); n > 74 {
-				t.Errorf("%s: %d columns: %s", name, n, text)
-			}
-		}
+		clausesServe(t, name, kappaQuestion(), s, usualBudget)
 	}
 }
 

@@ -19,10 +19,8 @@ type Kept struct {
 	data    *keptData // nil: none
 	rising  keptAscent
 
-	costs          *costs // of the last ledger; nil: none
-	costsKey       askedKey
-	calibration    *calibrated // the last one of the counter; nil: none
-	calibrationKey askedKey
+	costs       last[costs]      // of the last ledger
+	calibration last[calibrated] // the last one of the counter
 }
 
 // askedKey is what an answer that takes long depends on.
@@ -36,48 +34,49 @@ func (key askedKey) equal(other askedKey) bool {
 	return key.catalogue == other.catalogue && key.files == other.files && key.of.Equal(other.of)
 }
 
-// costsOf are the costs of that question, nil where they are not kept.
-func (k *Kept) costsOf(key askedKey) *costs {
-	if k == nil {
-		return nil
-	}
-	k.mu.Lock()
-	defer k.mu.Unlock()
-	if k.costs == nil || !k.costsKey.equal(key) {
-		return nil
-	}
-	return k.costs
+// last keeps what was worked out last. A nil one keeps nothing.
+type last[T any] struct {
+	mu   sync.Mutex
+	key  askedKey
+	kept *T // nil: nothing yet
 }
 
-// calibrationOf is the calibration of that question, nil where it is not kept.
-func (k *Kept) calibrationOf(key askedKey) *calibrated {
-	if k == nil {
+// of is what was kept under that key; nil: nothing.
+func (l *last[T]) of(key askedKey) *T {
+	if l == nil {
 		return nil
 	}
-	k.mu.Lock()
-	defer k.mu.Unlock()
-	if k.calibration == nil || !k.calibrationKey.equal(key) {
+	l.mu.Lock()
+	defer l.mu.Unlock()
+	if l.kept == nil || !l.key.equal(key) {
 		return nil
 	}
-	return k.calibration
+	return l.kept
 }
 
-func (k *Kept) keepCalibration(key askedKey, c *calibrated) {
-	if k == nil {
+func (l *last[T]) keep(key askedKey, made *T) {
+	if l == nil {
 		return
 	}
-	k.mu.Lock()
-	defer k.mu.Unlock()
-	k.calibration, k.calibrationKey = c, key
+	l.mu.Lock()
+	defer l.mu.Unlock()
+	l.key, l.kept = key, made
 }
 
-func (k *Kept) keepCosts(key askedKey, c *costs) {
+// lastCosts is where the costs of a ledger are kept; nil: nowhere.
+func (k *Kept) lastCosts() *last[costs] {
 	if k == nil {
-		return
+		return nil
 	}
-	k.mu.Lock()
-	defer k.mu.Unlock()
-	k.costs, k.costsKey = c, key
+	return &k.costs
+}
+
+// lastCalibration is where the calibration of a counter is kept; nil: nowhere.
+func (k *Kept) lastCalibration() *last[calibrated] {
+	if k == nil {
+		return nil
+	}
+	return &k.calibration
 }
 
 // mostKept is enough to go back and forth between neighbouring values.

@@ -48,7 +48,6 @@ func ledgerLive(s scenario.Scenario) bool {
 type figureOf struct {
 	key  string // of its change in JSON and tables: "critical_supersaturation"
 	says string // "critical supersaturation"
-	unit string // suffix of its key in JSON: "percent"
 	show func(x float64) string
 	si   func(x float64) float64 // as JSON has it
 }
@@ -109,7 +108,7 @@ func askLedger(ctx context.Context, env Env, s scenario.Scenario) (Answer, error
 		return Answer{}, &InputError{"of", fmt.Sprintf("no answer %q to take apart: want curve, spectrum or ascent", s.LedgerOf)}
 	}
 	asked := env.ledgerAsked(s)
-	kept := env.Kept.costsOf(asked)
+	kept := env.Kept.lastCosts().of(asked)
 	if kept == nil {
 		c, err := of(ctx, env, s)
 		if err != nil {
@@ -126,7 +125,7 @@ func askLedger(ctx context.Context, env Env, s scenario.Scenario) (Answer, error
 		}
 	}
 	if s.Population != "bins" || s.LedgerOf == scenario.LedgerOfCurve { // whose file may change
-		env.Kept.keepCosts(asked, &c)
+		env.Kept.lastCosts().keep(asked, &c)
 	}
 	c.rank()
 	return c.answer(), nil

@@ -16,8 +16,8 @@ import (
 // ascentFigures are those of rising air.
 func ascentFigures() []figureOf {
 	return []figureOf{
-		{"droplets", "number of droplets", "per_m3", func(x float64) string { return cubic(x) + " per cm³" }, func(x float64) float64 { return x }},
-		{"peak_supersaturation", "peak supersaturation", "percent", percent, func(x float64) float64 { return 100 * x }},
+		{"droplets", "number of droplets", func(x float64) string { return cubic(x) + " per cm³" }, func(x float64) float64 { return x }},
+		{"peak_supersaturation", "peak supersaturation", percent, func(x float64) float64 { return 100 * x }},
 	}
 }
 

@@ -14,7 +14,7 @@ func BenchmarkLedger(b *testing.B) {
 			env.Kept, env.Workers = &Kept{}, 2
 			b.ReportAllocs()
 			for b.Loop() {
-				env.Kept.costs = nil
+				env.Kept.costs.kept = nil
 				if _, err := askLedger(context.Background(), env, s); err != nil {
 					b.Fatal(err)
 				}

@@ -16,9 +16,9 @@ func particleFigures() []figureOf {
 	half := func(x float64) float64 { return x / 2 }
 	radius := func(x float64) string { return micrometres(x / 2) }
 	return []figureOf{
-		{"critical_supersaturation", "critical supersaturation", "percent", percent, func(x float64) float64 { return 100 * x }},
-		{"critical_wet_radius", "critical wet radius", "m", radius, half},
-		{"haze_radius", "haze radius", "m", radius, half},
+		{"critical_supersaturation", "critical supersaturation", percent, func(x float64) float64 { return 100 * x }},
+		{"critical_wet_radius", "critical wet radius", radius, half},
+		{"haze_radius", "haze radius", radius, half},
 	}
 }
 

@@ -15,7 +15,7 @@ import (
 // countFigures is the one figure of a count.
 func countFigures() []figureOf {
 	same := func(x float64) float64 { return x }
-	return []figureOf{{"ccn", "count", "per_m3", func(x float64) string { return cubic(x) + " per cm³" }, same}}
+	return []figureOf{{"ccn", "count", func(x float64) string { return cubic(x) + " per cm³" }, same}}
 }
 
 // spectrumCosts is the ledger of the Spectrum question, at one supersaturation.

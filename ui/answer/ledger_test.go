@@ -171,13 +171,13 @@ func TestLedgerIsKept(t *testing.T) {
 	if _, err := askLedger(context.Background(), env, s); err != nil {
 		t.Fatal(err)
 	}
-	first := env.Kept.costs.budget.Contributions
+	first := env.Kept.costs.kept.budget.Contributions
 	s.LedgerRow, s.AscentOutcome, s.Reach = 3, "peak-supersaturation", scenario.Measure{Number: 0.01}
 	a, err := askLedger(context.Background(), env, s)
 	if err != nil {
 		t.Fatal(err)
 	}
-	if &env.Kept.costs.budget.Contributions[0] != &first[0] {
+	if &env.Kept.costs.kept.budget.Contributions[0] != &first[0] {
 		t.Error("the ascents were made again")
 	}
 	f := a.Facts.(LedgerFacts)
@@ -185,7 +185,7 @@ func TestLedgerIsKept(t *testing.T) {
 		t.Errorf("%s, to reach %g %%, row %d", f.Outcome, f.Reach, a.Record)
 	}
 	s.Updraft *= 2
-	if _, err := askLedger(context.Background(), env, s); err != nil || &env.Kept.costs.budget.Contributions[0] == &first[0] {
+	if _, err := askLedger(context.Background(), env, s); err != nil || &env.Kept.costs.kept.budget.Contributions[0] == &first[0] {
 		t.Errorf("another updraft: %v", err)
 	}
 }

@@ -4,7 +4,6 @@ import (
 	"slices"
 	"strings"
 	"testing"
-	"unicode/utf8"
 
 	"dropcrest/ui/scenario"
 )
@@ -42,32 +41,8 @@ func statements(t testing.TB) map[string]scenario.Scenario {
 // Every slot of a statement is an input that counts, and a clause fits its budget
 // with usual values.
 func TestSpectrumStatementSlots(t *testing.T) {
-	const budget = 74
 	for name, s := range statements(t) {
-		for _, clause := range spectrumStatement(s) {
-			text := Fill(clause, func(slot string) string {
-				if scenario.Path(slot) == Further {
-					return "[as usual]"
-				}
-				for _, l := range scenario.Lists(&s) {
-					if l.Key() == slot {
-						return "[" + l.Show(scenario.Style{}) + "]"
-					}
-				}
-				in, ok := scenario.Find(&s, scenario.Path(slot))
-				switch {
-				case !ok:
-					t.Errorf("%s: no input {%s}", name, slot)
-					return ""
-				case !in.Used():
-					t.Errorf("%s: {%s} stands in the statement but is not used", name, slot)
-				}
-				return "[" + in.Show(scenario.Style{}) + "]"
-			})
-			if n := utf8.RuneCountInString(text); n > budget {
-				t.Errorf("%s: %d columns, want at most %d: %q", name, n, budget, text)
-			}
-		}
+		clausesServe(t, name, spectrumQuestion(), s, usualBudget)
 	}
 }
 
