@@ -5,6 +5,7 @@ import (
 
 	"dropcrest/atmos"
 	"dropcrest/koehler"
+	"dropcrest/koehler/kappa"
 	"dropcrest/solutes"
 )
 
@@ -53,18 +54,15 @@ func (a Asked) dry(diameter, shape float64) float64 {
 	return atmos.VolumeEquivalent(diameter, shape, a.Recipe.Temperature, atmos.StandardPressure)
 }
 
-// convention is the water of most published κ, 72.0 mN/m and 25 °C (Petters and
-// Kreidenweis 2007).
-const (
-	conventionTension     = 0.072  // N/m
-	conventionTemperature = 298.15 // K
-	// sameTension is what a given tension may differ by from the convention and
-	// still be taken for it: the rounding of 72.0 mN/m.
-	sameTension = 0.5e-4 // N/m
-)
+// convention is the water of most published κ.
+var convention = kappa.At25C()
+
+// sameTension is what a given tension (N/m) may differ by from the convention and
+// still be taken for it: the rounding of 72.0 mN/m.
+const sameTension = 0.5e-4
 
 func (r recipe) takesConvention() bool {
-	return r.TensionRule == solutes.FixedTension && math.Abs(r.Tension-conventionTension) < sameTension
+	return r.TensionRule == solutes.FixedTension && math.Abs(r.Tension-convention.Tension) < sameTension
 }
 
 // recipe adds to a solutes.Recipe what the ledger asks about it.

@@ -27,6 +27,16 @@ type Assumption struct {
 	row      func(b *book) Row
 }
 
+// Find returns the assumption of that key.
+func Find(k Key) (Assumption, bool) {
+	for _, a := range Assumptions() {
+		if a.Key == k {
+			return a, true
+		}
+	}
+	return Assumption{}, false
+}
+
 // Assumptions returns all assumptions in the order of the rows.
 func Assumptions() []Assumption {
 	return []Assumption{

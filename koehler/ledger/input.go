@@ -101,10 +101,9 @@ const commonPractice = "common practice"
 func (l *Ledger) Inputs() []Input {
 	a, d := l.full.asked, l.full.dissolved
 	r := recipe{a.Recipe}
-	in := []Input{{DryDiameter, a.DryDiameter, usualSize * a.DryDiameter,
-		"sizing within 3 % of a reference at 203 nm, Wiedensohler et al. 2018, Aerosol Sci. Technol. 52, 146"}}
+	in := []Input{SizingInput(DryDiameter, a.DryDiameter)}
 	if a.Mobility && a.ShapeFactor > 0 {
-		in = append(in, shapeInput(a.ShapeFactor, r))
+		in = append(in, r.shapeInput(a.ShapeFactor))
 	}
 	in = append(in,
 		Input{Temperature, a.Recipe.Temperature, usualTemperature, commonPractice},
@@ -142,13 +141,28 @@ func bounded(d solutes.Datum) float64 {
 
 const boundsSource = "published bounds, all between them equally likely (JCGM 100, 4.3.7)"
 
-func shapeInput(shape float64, r recipe) Input {
+// SizingSource says where the usual uncertainty of sizes is from.
+const SizingSource = "sizing within 3 % of a reference at 203 nm, Wiedensohler et al. 2018, Aerosol Sci. Technol. 52, 146"
+
+// SizingInput is a size, or a factor of sizes, with the uncertainty that is usual: 3 %
+// (SizingSource).
+func SizingInput(q Quantity, value float64) Input {
+	return Input{q, value, usualSize * value, SizingSource}
+}
+
+// ShapeInput is a shape factor with the uncertainty that is usual: a third of what it
+// differs from 1 by, 0.01 at least (common practice).
+func ShapeInput(shape float64) Input {
+	return Input{ShapeFactor, shape, math.Max(0.01, 0.3*(shape-1)), commonPractice + ": a third of what it differs from 1 by"}
+}
+
+func (r recipe) shapeInput(shape float64) Input {
 	if len(r.Parts) == 1 && r.Parts[0].Substance.ShapeFactor.Value == shape {
 		if u := bounded(r.Parts[0].Substance.ShapeFactor); u > 0 {
 			return Input{ShapeFactor, shape, u, boundsSource}
 		}
 	}
-	return Input{ShapeFactor, shape, math.Max(0.01, 0.3*(shape-1)), commonPractice + ": a third of what it differs from 1 by"}
+	return ShapeInput(shape)
 }
 
 func (l *Ledger) tensionInput() Input {

@@ -171,16 +171,16 @@ func conventionRow(b *book) Row {
 	a, p := b.full.asked, b.full.particle
 	if b.full.dissolved.Film != nil {
 		p.Solution = b.full.dissolved.Solution
-		p.Temperature = conventionTemperature
-		p.Tension = solutes.ConstantTension(conventionTension)
+		p.Temperature = convention.Temperature
+		p.Tension = solutes.ConstantTension(convention.Tension)
 		return b.against(p)
 	}
-	if a.Recipe.Temperature == conventionTemperature {
-		p.Tension = solutes.ConstantTension(conventionTension)
+	if a.Recipe.Temperature == convention.Temperature {
+		p.Tension = solutes.ConstantTension(convention.Tension)
 		return b.against(p)
 	}
-	a.Recipe.Temperature = conventionTemperature
-	a.Recipe.TensionRule, a.Recipe.Tension = solutes.FixedTension, conventionTension
+	a.Recipe.Temperature = convention.Temperature
+	a.Recipe.TensionRule, a.Recipe.Tension = solutes.FixedTension, convention.Tension
 	return b.remade(a)
 }
 

@@ -202,15 +202,7 @@ func TestTwoStepsThroughNoise(t *testing.T) {
 	r, failed := noise(9), 0
 	const rows = 20
 	for range rows {
-		var points []Point
-		for i := range 8 {
-			s := 0.0007 * math.Pow(20, float64(i)/7)
-			n, err := p.Count(s)
-			if err != nil {
-				t.Fatal(err)
-			}
-			points = append(points, Point{s, n * (1 + 0.02*r.next()), 0.02 * n})
-		}
+		points := noisyCounts(t, p, &r, 0.02)
 		f, err := FitErrorFunctions(points, 2, 0)
 		if err != nil {
 			failed++
@@ -223,6 +215,22 @@ func TestTwoStepsThroughNoise(t *testing.T) {
 	}
 }
 
+// noisyCounts are counts of a population at eight supersaturations, each off by that
+// share of itself.
+func noisyCounts(t *testing.T, p Population, r *noise, share float64) []Point {
+	t.Helper()
+	var points []Point
+	for i := range 8 {
+		s := 0.0007 * math.Pow(20, float64(i)/7)
+		n, err := p.Count(s)
+		if err != nil {
+			t.Fatal(err)
+		}
+		points = append(points, Point{s, n * (1 + share*r.next()), share * n})
+	}
+	return points
+}
+
 // The spectrum of two modes has no best exponent: it is held, and said to be.
 func TestCohardOfTwoModes(t *testing.T) {
 	var p Population
@@ -231,15 +239,7 @@ func TestCohardOfTwoModes(t *testing.T) {
 	}
 	r := noise(9)
 	for range 5 {
-		var points []Point
-		for i := range 8 {
-			s := 0.0007 * math.Pow(20, float64(i)/7)
-			n, err := p.Count(s)
-			if err != nil {
-				t.Fatal(err)
-			}
-			points = append(points, Point{s, n * (1 + 0.03*r.next()), 0.03 * n})
-		}
+		points := noisyCounts(t, p, &r, 0.03)
 		f, err := FitCohard(points)
 		if err != nil {
 			t.Fatal(err)

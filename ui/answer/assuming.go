@@ -5,6 +5,7 @@ import (
 	"reflect"
 
 	"dropcrest/koehler"
+	"dropcrest/koehler/kappa"
 	"dropcrest/koehler/ledger"
 	"dropcrest/koehler/spectrum"
 	"dropcrest/solutes"
@@ -23,9 +24,6 @@ type assuming struct {
 	// and a κ can be spread.
 	rises bool
 }
-
-// conventionTension is that of most published κ, N/m (Petters and Kreidenweis 2007).
-const conventionTension = 0.072
 
 // knownLedger is the ledger of one kind of particles, made once for all rows.
 type knownLedger struct {
@@ -64,7 +62,7 @@ func (m *assuming) particle(l *ledger.Ledger) (p koehler.Particle, isCubic bool)
 		switch m.key {
 		case ledger.IncompressibleLiquid:
 		case ledger.Convention25C: // the air keeps its temperature
-			p.Kelvin, p.Tension = koehler.Standard, solutes.ConstantTension(conventionTension)
+			p.Kelvin, p.Tension = koehler.Standard, solutes.ConstantTension(kappa.At25C().Tension)
 			return p, false
 		default:
 			defer func() { p.Kelvin = koehler.Standard }()

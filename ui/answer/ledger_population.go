@@ -200,15 +200,11 @@ func (m *many) spread() assumed {
 
 // sizeInputs are the uncertainties of sizes and numbers.
 func (m *many) sizeInputs() []ledger.Input {
-	const sizing, counting = 0.03, 0.05
-	in := []ledger.Input{
-		{Quantity: ledger.Sizes, Value: 1, StandardUncertainty: sizing,
-			Source: "sizing within 3 % of a reference at 203 nm, Wiedensohler et al. 2018, Aerosol Sci. Technol. 52, 146"},
-		{Quantity: ledger.Numbers, Value: 1, StandardUncertainty: counting, Source: "common practice: 5 % of a particle counter"},
-	}
+	const counting = 0.05
+	in := []ledger.Input{ledger.SizingInput(ledger.Sizes, 1),
+		{Quantity: ledger.Numbers, Value: 1, StandardUncertainty: counting, Source: "common practice: 5 % of a particle counter"}}
 	if shape := m.asked.ShapeFactor; m.isMobility() && shape > 1 {
-		in = append(in, ledger.Input{Quantity: ledger.ShapeFactor, Value: shape, StandardUncertainty: math.Max(0.01, 0.3*(shape-1)),
-			Source: "common practice: a third of what it differs from 1 by"})
+		in = append(in, ledger.ShapeInput(shape))
 	}
 	return in
 }

@@ -144,12 +144,8 @@ func (m *many) countModel(of *activated) ledger.Model {
 
 // sphere is the row of sized particles that are taken for spheres.
 func (m *many) sphere(asked scenario.Scenario) assumed {
-	var row assumed
-	for _, a := range ledger.Assumptions() {
-		if a.Key == ledger.Sphere {
-			row = assumed{Assumption: a, change: noChange(), ifChange: noChange()}
-		}
-	}
+	a, _ := ledger.Find(ledger.Sphere)
+	row := assumed{Assumption: a, change: noChange(), ifChange: noChange()}
 	switch {
 	case m.asked.Population == "modes":
 		row.status, row.reason = ledger.NotApplicable, "The modes are of volume-equivalent diameters, whatever the shape."
@@ -211,18 +207,19 @@ func (b wholeBins) AddAbove(dst, diameters []float64, share float64) {
 	}
 }
 
-const sizingError = 0.03
-
 // sizes is the row of sizes that are off.
 func (m *many) sizes(of *activated) assumed {
 	row := newAssumed(sizeError)
-	x := ledger.Deviation{ledger.Sizes: sizingError}
+	x := ledger.Deviation{ledger.Sizes: ledger.SizingInput(ledger.Sizes, 1).StandardUncertainty}
 	row.change = change(m.countModel(of)(&x), m.full)
 	return row
 }
 
 // settingError is what a counter repeats its supersaturation within in the field.
-const settingError = 0.05
+const (
+	settingError  = 0.05
+	settingSource = "repeatability of 5 % in the field, Rose et al. 2008, Atmos. Chem. Phys. 8, 1153 (volume and page from memory)"
+)
 
 // setting is the row of a counter whose supersaturation is off.
 func (m *many) setting() assumed {
@@ -235,5 +232,5 @@ func (m *many) setting() assumed {
 
 func (m *many) settingInput() ledger.Input {
 	return ledger.Input{Quantity: ledger.Supersaturation, Value: m.asked.AtSupersaturation, StandardUncertainty: settingError * m.asked.AtSupersaturation,
-		Source: "repeatability in the field, Rose et al. 2008, Atmos. Chem. Phys. 8, 1153 (volume and page from memory)"}
+		Source: settingSource}
 }

@@ -39,11 +39,11 @@ var otherAssumptions = map[ledger.Key]ledger.Assumption{
 	sizeError: {Says: "sizes that are 3 % too large",
 		Explains: "A mobility spectrometer that sizes 3 % too large lifts more particles above the critical size. " +
 			"The count follows sizes by several times their error where the distribution is steep.",
-		Source: "sizing within 3 % of a reference at 203 nm, Wiedensohler et al. 2018, Aerosol Sci. Technol. 52, 146"},
+		Source: ledger.SizingSource},
 	calibration: {Says: "a counter that is set 5 % too high",
 		Explains: "The supersaturation of a counter is known by its calibration only, and repeats itself within some 5 % in the field. " +
 			"A higher one activates smaller particles too.",
-		Source: "repeatability of 5 % in the field, Rose et al. 2008, Atmos. Chem. Phys. 8, 1153 (volume and page from memory)"},
+		Source: settingSource},
 	massAccommodation: {Says: "every molecule that hits a drop stays",
 		Explains: "A smaller accommodation slows the growth of small drops, so the supersaturation climbs higher and more particles activate. " +
 			"Measurements span 0.04 to 1: growth of drops agrees with 1, a comparison of techniques found more than 0.5.",

@@ -8,19 +8,26 @@ import (
 	tea "github.com/charmbracelet/bubbletea"
 )
 
+// underWay presses keys, of which the last one begins work, and returns once some of
+// it has been done. Its answer arrives at the channel.
+func underWay(t *testing.T, m *model, keys string) <-chan tea.Msg {
+	t.Helper()
+	cmd := press(m, keys)
+	arrived := make(chan tea.Msg)
+	go func() { arrived <- answerOf(t, cmd) }()
+	for m.work.done.Load() == 0 {
+		time.Sleep(time.Millisecond)
+	}
+	return arrived
+}
+
 // The bootstrap is a job: it says how far it is, and Esc keeps the fits and what
 // there is of it.
 func TestBootstrapIsStopped(t *testing.T) {
 	o := onTerminal("plain")
 	o.Scenario.Bootstrap = 1000000
 	m := opened(o, 80, 24)
-	press(m, "tab tab")
-	_, cmd := m.Update(keyOf("tab"))
-	arrived := make(chan tea.Msg)
-	go func() { arrived <- answerOf(t, cmd) }()
-	for m.work.done.Load() == 0 { // some replicates must have been made
-		time.Sleep(time.Millisecond)
-	}
+	arrived := underWay(t, m, "tab tab tab")
 	m.Update(lookAtWork{m.work.revision})
 	if view := m.View(); !strings.Contains(view, "Esc stops it") {
 		t.Errorf("no progress in\n%s", view)

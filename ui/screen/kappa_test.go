@@ -6,8 +6,6 @@ import (
 	"strings"
 	"testing"
 
-	tea "github.com/charmbracelet/bubbletea"
-
 	"dropcrest/ui/answer"
 	"dropcrest/ui/scenario"
 )
@@ -137,12 +135,7 @@ func TestLongTrialsAreStopped(t *testing.T) {
 	o := onTerminal("plain")
 	o.Scenario.Trials.Number = 10000000
 	m := opened(o, 80, 24)
-	press(m, "tab")
-	_, cmd := m.Update(keyOf("tab"))
-	arrived := make(chan tea.Msg)
-	go func() { arrived <- answerOf(t, cmd) }()
-	for m.work.done.Load() == 0 { // some trials must have been made
-	}
+	arrived := underWay(t, m, "tab tab")
 	press(m, "esc")
 	m.Update(<-arrived)
 	press(m, "end")
